@@ -1,0 +1,77 @@
+// How the page, the command line and the tests are put together.
+//
+// 1. `vite build` writes the page to dist/page, `vite build --mode cli` the command line to dist/cli/main.js, with nothing left to install.
+// 2. The policy of the page stands in index.html: no inline script, no inline style, no eval. So no font or style is inlined here.
+// 3. Fonts are shipped as woff2 alone; every browser that runs the page reads it.
+// 4. The script of the first screen has a limit, and the build fails beyond it.
+// Not here: the linter (.biome.jsonc) and the order of the steps of a full test (test/run.mjs).
+
+import { gzipSync } from 'node:zlib';
+import type { Plugin } from 'vite';
+import { defineConfig } from 'vitest/config';
+
+/** kB = 1000 bytes, gzip level 9: the script that must arrive before the first screen stands. */
+const firstScreenLimit = 250;
+
+const woff2Only: Plugin = {
+  name: 'woff2-only',
+  enforce: 'pre',
+  transform(code, id) {
+    if (!/\.css($|\?)/.test(id) || !code.includes('woff')) return null;
+    return { code: code.replace(/,\s*url\([^)]*\.(?:woff|ttf)\)\s*format\(["'](?:woff|truetype)["']\)/g, ''), map: null };
+  },
+};
+
+const firstScreenSize: Plugin = {
+  name: 'first-screen-size',
+  generateBundle(_options, bundle) {
+    const seen = new Set<string>();
+    const visit = (file: string): number => {
+      const chunk = bundle[file];
+      if (seen.has(file) || chunk?.type !== 'chunk') return 0;
+      seen.add(file);
+      return chunk.imports.reduce((sum, next) => sum + visit(next), gzipSync(chunk.code, { level: 9 }).length);
+    };
+    const bytes = Object.values(bundle)
+      .filter((part) => part.type === 'chunk' && part.isEntry)
+      .reduce((sum, entry) => sum + visit(entry.fileName), 0);
+    const size = (bytes / 1000).toFixed(1);
+    if (bytes > firstScreenLimit * 1000)
+      this.error(`the first screen's script is ${size} kB compressed, more than ${firstScreenLimit} kB`);
+    this.info(`first screen's script: ${size} kB compressed, ${firstScreenLimit} kB allowed`);
+  },
+};
+
+export default defineConfig(({ mode }) => ({
+  base: './',
+  resolve: { tsconfigPaths: false },
+  plugins: [woff2Only, ...(mode === 'cli' ? [] : [firstScreenSize])],
+  build:
+    mode === 'cli'
+      ? {
+          ssr: 'src/cli/main.ts',
+          outDir: 'dist/cli',
+          target: 'node20',
+          emptyOutDir: true,
+          minify: false,
+          rolldownOptions: { output: { entryFileNames: 'main.js' } },
+        }
+      : { outDir: 'dist/page', target: 'es2022', emptyOutDir: true, assetsInlineLimit: 0, modulePreload: { polyfill: false } },
+  ssr: { noExternal: true as const },
+  test: {
+    projects: [
+      { extends: true, test: { name: 'node', include: ['test/**/*.test.ts'], exclude: ['test/browser/**'] } },
+      {
+        extends: true,
+        test: {
+          name: 'browser',
+          include: ['test/browser/**/*.test.ts'],
+          globalSetup: ['test/browser/setup.ts'],
+          fileParallelism: false,
+          testTimeout: 60_000,
+          hookTimeout: 120_000,
+        },
+      },
+    ],
+  },
+}));
