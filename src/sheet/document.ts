@@ -25,6 +25,10 @@ export interface NoteCell extends CellBase {
   readonly text: string;
   /** What the note is for in the record; none: a plain note. */
   readonly role?: 'assumption' | 'limit' | 'caution';
+  /** Where an assumption comes from. */
+  readonly source?: string;
+  /** Tracking number of an assumption while it awaits confirmation. */
+  readonly toConfirm?: string;
 }
 export interface GivenCell extends CellBase {
   readonly kind: 'given';
@@ -40,6 +44,7 @@ export interface GivenCell extends CellBase {
   readonly source?: string;
   /** `0.1 to 0.8`: outside it the sheet warns. */
   readonly range?: string;
+  /** Tracking number while the value awaits confirmation. */
   readonly toConfirm?: string;
   readonly carriedOver?: boolean;
 }
@@ -60,7 +65,10 @@ export interface CriterionCell extends CellBase {
   /** Unit in which both sides are printed. */
   readonly unit?: string;
   readonly source?: string;
+  /** Lets a criterion that is not met stand; printed. */
   readonly justification?: string;
+  /** What the reader must know while it is not met: "F_1 and F_2 are then no running values." */
+  readonly ifNotMet?: string;
 }
 export interface SoughtCell extends CellBase {
   readonly kind: 'sought';
@@ -125,6 +133,7 @@ export interface TitleBlock {
   readonly supplementaryTitle?: string;
   readonly classification?: string;
   readonly language?: string;
+  readonly client?: string;
   readonly project?: string;
   readonly documentNumber?: string;
   readonly revision?: string;
@@ -149,6 +158,19 @@ export interface TemplateInfo {
   readonly limits: readonly string[];
   readonly caution: string;
 }
+/** The template that a sheet was made from; the fingerprint tells whether a formula still is the template's. */
+export interface TemplateOrigin {
+  readonly id: string;
+  readonly version: number;
+  readonly fingerprint?: string;
+}
+/** The earlier sheet that this one was made from: what its carried-over values stem from. */
+export interface EarlierSheet {
+  readonly title: string;
+  readonly documentNumber?: string;
+  readonly revision?: string;
+  readonly fingerprint?: string;
+}
 export interface Sheet {
   readonly format: string;
   readonly title: string;
@@ -159,7 +181,8 @@ export interface Sheet {
   readonly references?: readonly Reference[];
   readonly titleBlock?: TitleBlock;
   readonly settings?: Settings;
-  readonly template?: { readonly id: string; readonly version: number };
+  readonly template?: TemplateOrigin;
+  readonly carriedFrom?: EarlierSheet;
   readonly cases?: readonly LoadCase[];
   readonly cells: readonly Cell[];
   readonly conclusion?: string;

@@ -1,0 +1,110 @@
+// A quantity gets another name: its cell, and every place that names it.
+//
+// 1. Formulas are rewritten by their tokens: `F_1` in `F_10`, in a quoted literal or as a table or column is left alone.
+// 2. A name is found in whatever alphabet it was typed (μ_1, mu_1) and replaced by the new one as typed.
+// 3. Everything else in a text stays as it stands, spaces included.
+// Not here: whether the new name may be taken (nameFault says so; edit.ts does what it is told).
+
+import { canonicalName, isName, reserved, tokenize } from '../formula/index.ts';
+import type { Cell, NoteCell, Sheet } from './document.ts';
+import { liveNames } from './reading.ts';
+
+/** What keeps a name from being that of a quantity of the sheet, in words; `own`: the cell that is to have it. */
+export function nameFault(sheet: Sheet, typed: string, own?: string): string | undefined {
+  const name = canonicalName(typed.trim());
+  if (reserved.has(name)) return `“${name}” has a fixed meaning in formulas; take another name, as in ${name}_1`;
+  if (!isName(name)) return `“${typed.slice(0, 60)}” is no name; a name is a letter, then letters, digits or _, as in F_1`;
+  for (const cell of sheet.cells) {
+    if (cell.id !== own && definesName(cell) && canonicalName(cell.name) === name) return `${name} is already defined; names are unique in a sheet`;
+  }
+  return undefined;
+}
+
+type Naming = Extract<Cell, { readonly kind: 'given' | 'derived' | 'sought' }>;
+
+function definesName(cell: Cell): cell is Naming {
+  return cell.kind === 'given' || cell.kind === 'derived' || cell.kind === 'sought';
+}
+
+/** The cells that change when quantity `from` becomes `to`. */
+export function renamedCells(sheet: Sheet, from: string, to: string): Cell[] {
+  const name = canonicalName(from);
+  const cells: Cell[] = [];
+  for (const cell of sheet.cells) {
+    const next = renamedCell(cell, name, to);
+    if (next !== cell) cells.push(next);
+  }
+  return cells;
+}
+
+function renamedCell(cell: Cell, from: string, to: string): Cell {
+  const inText = (text: string): string => renameInFormula(text, from, to);
+  const whole = (text: string): string => (canonicalName(text.trim()) === from ? to : text);
+  switch (cell.kind) {
+    case 'given':
+      return changed(cell, { name: whole(cell.name) });
+    case 'derived':
+      return changed(cell, { name: whole(cell.name), formula: inText(cell.formula) });
+    case 'criterion':
+      return changed(cell, { left: inText(cell.left), right: inText(cell.right) });
+    case 'sought':
+      return changed(cell, {
+        name: whole(cell.name),
+        where: inText(cell.where),
+        ...(cell.instead === undefined ? {} : { instead: whole(cell.instead) }),
+      });
+    case 'note':
+      return changed(cell, { text: renameInNote(cell, from, to) });
+    case 'drawing': {
+      const uses = Object.entries(cell.uses).map(([part, name]) => [part, whole(name)] as const);
+      return uses.every(([part, name]) => cell.uses[part] === name) ? cell : { ...cell, uses: Object.fromEntries(uses) };
+    }
+    case 'chart': {
+      const show = cell.show.map(whole);
+      const next = changed(cell, { vary: whole(cell.vary) });
+      return show.every((name, i) => name === cell.show[i]) ? next : { ...next, show };
+    }
+    default:
+      return cell;
+  }
+}
+
+/** The cell itself where no text differs. */
+function changed<Kind extends Cell>(cell: Kind, texts: Partial<Record<keyof Kind, string>>): Kind {
+  const differs = Object.entries(texts).some(([key, text]) => cell[key as keyof Kind] !== text);
+  return differs ? { ...cell, ...texts } : cell;
+}
+
+export function renameInFormula(text: string, from: string, to: string): string {
+  const tokens = tokenize(text);
+  let result = '';
+  let copied = 0;
+  // Open brackets; for those of a table function, how many arguments still name a table or a column.
+  const brackets: number[] = [];
+  for (const [i, token] of tokens.entries()) {
+    if (token.kind === 'open') {
+      const before = tokens[i - 1];
+      brackets.push(before?.kind === 'name' && (before.text === 'entry' || before.text === 'interpolate') ? 2 : 0);
+    } else if (token.kind === 'close') {
+      brackets.pop();
+    } else if (token.kind === 'comma') {
+      const left = brackets.pop();
+      if (left !== undefined) brackets.push(Math.max(0, left - 1));
+    } else if (token.kind === 'name' && (brackets.at(-1) ?? 0) === 0 && canonicalName(token.text) === from) {
+      result += text.slice(copied, token.from) + to;
+      copied = token.to;
+    }
+  }
+  return result + text.slice(copied);
+}
+
+function renameInNote(cell: NoteCell, from: string, to: string): string {
+  let result = '';
+  let copied = 0;
+  for (const live of liveNames(cell)) {
+    if (live.name !== from) continue;
+    result += `${cell.text.slice(copied, live.from)}{${to}}`;
+    copied = live.to;
+  }
+  return result + cell.text.slice(copied);
+}
