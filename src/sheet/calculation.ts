@@ -1,0 +1,460 @@
+// The engine: keeps every cell of a sheet calculated while the sheet is edited.
+//
+// 1. After `update` the states are those that a fresh calculation of the same sheet would give.
+// 2. A cell is computed when its own text, its type or the number of a cell that it uses has moved, and only then;
+//    a result that comes out the same, bit for bit, stops there.
+// 3. Cells are visited in the order of the graph, so each is computed at most once; no recursion anywhere.
+// 4. A problem is a value of its cell: the rest of the sheet goes on.
+//
+// An update goes through four steps: read what changed; if the shape moved (names, formulas, order), resolve names and
+// order anew and analyse what that touches; compile what was analysed; run what is stale. A change of numbers alone skips
+// to the last step. Not here: single cells (reading.ts, analyse.ts), columns (columns.ts), snapshots (snapshot.ts).
+
+import { explain, type Lookup } from '../formula/index.ts';
+import type { Problem } from '../quantity/index.ts';
+import { analyse, type Surroundings, waitsFor } from './analyse.ts';
+import { Columns } from './columns.ts';
+import type { LoadCase, Sheet } from './document.ts';
+import { buildGraph, type Graph } from './graph.ts';
+import { type Names, resolveNames, usedNodes } from './names.ts';
+import { computedFormulas, newNode, type Node, typeKey } from './node.ts';
+import { lineNumbers } from './numbering.ts';
+import { readCell } from './reading.ts';
+import { snapshotOf } from './snapshot.ts';
+import type { CellProblem, CellState, QuantityState, TableState } from './state.ts';
+import { readTable } from './table.ts';
+import { prepareWhatIf, type WhatIf, type WhatIfRequest } from './whatif.ts';
+
+export interface Changed extends Iterable<string> {
+  readonly size: number;
+  has(cell: string): boolean;
+}
+
+export interface Calculation {
+  readonly sheet: Sheet;
+  /** The load cases; one case `base` where the sheet has none. */
+  readonly cases: readonly LoadCase[];
+  readonly style: { readonly decimalSign: '.' | ',' };
+  readonly digits: number;
+  state(cell: string): CellState | undefined;
+  named(name: string): QuantityState | undefined;
+  table(name: string): TableState | undefined;
+  /** Number of a section or a line: '3.2'. */
+  numberOf(cell: string): string;
+  /** Cells that this one uses, and cells that use it: direct neighbours, by id. */
+  origin(cell: string): readonly string[];
+  use(cell: string): readonly string[];
+  /** In the order of the sheet. */
+  problems(): readonly CellProblem[];
+  /** Values of one case, for explaining and typesetting a formula. */
+  lookup(caseIndex: number): Lookup;
+  /** Takes the next state of the sheet; returns the cells whose state moved. */
+  update(next: Sheet): Changed;
+  /** Cells computed by the last update, in order: what the tests of recalculation look at. */
+  readonly ran: readonly string[];
+  /** Givens varied over samples, the sheet untouched. */
+  whatIf(request: WhatIfRequest): WhatIf;
+}
+
+const defaultCases: readonly LoadCase[] = [{ id: 'base' }];
+
+/** Reads and calculates a sheet. Never throws for what a sheet says. */
+export function calculate(sheet: Sheet): Calculation {
+  return new Engine(sheet);
+}
+
+class Engine implements Calculation {
+  sheet: Sheet;
+  cases: readonly LoadCase[] = defaultCases;
+  style: { readonly decimalSign: '.' | ',' } = { decimalSign: '.' };
+
+  private nodes: Node[] = [];
+  private byId = new Map<string, Node>();
+  private names: Names = { quantities: new Map(), tables: new Map() };
+  private twice: ReadonlyMap<string, CellProblem> = new Map();
+  private looped: ReadonlyMap<string, CellProblem> = new Map();
+  private numbers: ReadonlyMap<string, string> = new Map();
+  private graph: Graph = buildGraph([]);
+  private columns: Columns;
+  private lookups: Lookup[] = [];
+  private listed: readonly CellProblem[] | undefined;
+
+  /** Nodes to run, marked at their place in the order; those that ran last; those whose state moved. */
+  private stale = new Uint8Array(0);
+  private ranNodes = new Int32Array(0);
+  private ranCount = 0;
+  private moved = new Uint8Array(0);
+  private before = new Float64Array(2);
+
+  constructor(sheet: Sheet) {
+    this.sheet = { ...sheet, cells: [] };
+    this.columns = new Columns(1);
+    this.update(sheet);
+  }
+
+  get digits(): number {
+    return this.sheet.settings?.digits ?? 4;
+  }
+
+  get ran(): readonly string[] {
+    return Array.from(this.ranNodes.subarray(0, this.ranCount), (index) => this.nodes[index]!.cell.id);
+  }
+
+  update(next: Sheet): Changed {
+    const previous = this.sheet;
+    this.sheet = next;
+    this.listed = undefined;
+    this.ranCount = 0;
+    const decimalSign = next.settings?.decimalSign ?? '.';
+    const cases = next.cases !== undefined && next.cases.length > 0 ? next.cases : defaultCases;
+    const sameCases = cases.length === this.cases.length && cases.every((one, index) => one.id === this.cases[index]!.id);
+    const sameSign = decimalSign === this.style.decimalSign;
+    const sameRows =
+      sameCases && sameSign && next.cells.length === previous.cells.length && next.cells.every((cell, index) => cell.id === this.nodes[index]?.cell.id);
+    this.cases = cases;
+    this.style = { decimalSign };
+    if (sameRows) this.moved.fill(0);
+    if (sameRows && this.updateNumbersOnly(next)) return this.changed();
+    this.updateShape(next, sameCases && sameSign);
+    return this.changed();
+  }
+
+  // ---- numbers only ----
+
+  /** True when every change was one of numbers, titles or sources; false leaves the nodes that were read marked as changed. */
+  private updateNumbersOnly(next: Sheet): boolean {
+    const touched: Node[] = [];
+    for (let index = 0; index < this.nodes.length; index += 1) {
+      const node = this.nodes[index]!;
+      const cell = next.cells[index]!;
+      if (cell === node.cell) continue;
+      if (!sameMeaningBesidesNumbers(node.cell, cell)) return false;
+      touched.push(node);
+    }
+    const keys: string[] = [];
+    for (const node of touched) {
+      const cell = next.cells[node.index]!;
+      const old = node.reading;
+      keys.push(typeKey(node));
+      node.cell = cell;
+      node.reading = readCell(cell, this.style.decimalSign);
+      node.snapshot = undefined;
+      this.moved[node.index] = 1;
+      if (cell.kind === 'given' || old !== node.reading) analyse(node, this.around());
+    }
+    if (touched.some((node, at) => typeKey(node) !== keys[at])) {
+      for (const node of touched) this.pending.add(node);
+      return false;
+    }
+    for (const node of touched) if (node.cell.kind === 'given') this.stale[this.graph.place[node.index]!] = 1;
+    this.run();
+    return true;
+  }
+
+  /** Nodes that took their new cell already when the shape turned out to move: the next step takes them as changed. */
+  private readonly pending = new Set<Node>();
+
+  // ---- shape ----
+
+  private updateShape(next: Sheet, sameReading: boolean): void {
+    const previousNodes = this.byId;
+    const fresh = new Set<Node>();
+    const nodes: Node[] = [];
+    const byId = new Map<string, Node>();
+    for (const [index, cell] of next.cells.entries()) {
+      let node = previousNodes.get(cell.id);
+      if (node === undefined || byId.has(cell.id)) {
+        node = newNode(cell, readCell(cell, this.style.decimalSign), index);
+        fresh.add(node);
+      } else if (node.cell !== cell || !sameReading || this.pending.has(node)) {
+        node.cell = cell;
+        node.reading = readCell(cell, this.style.decimalSign);
+        fresh.add(node);
+      }
+      if (node.cell.kind === 'table' && fresh.has(node)) node.table = readTable(node.cell, this.style.decimalSign).data;
+      node.index = index;
+      nodes.push(node);
+      byId.set(cell.id, node);
+    }
+    this.pending.clear();
+    const removed = [...previousNodes.values()].filter((node) => byId.get(node.cell.id) !== node);
+    this.nodes = nodes;
+    this.byId = byId;
+    this.numbers = lineNumbers(next);
+    const numberOf = (cell: string) => this.numbers.get(cell) ?? '';
+    const resolved = resolveNames(nodes, numberOf);
+    const oldTwice = this.twice;
+    const oldLooped = this.looped;
+    this.names = resolved;
+    this.twice = resolved.twice;
+
+    const stale = new Set<Node>(fresh);
+    const uses: number[][] = [];
+    for (const node of nodes) {
+      const used = usedNodes(node, resolved);
+      if (!sameNodes(used, node.uses)) stale.add(node);
+      node.uses = used;
+      uses.push(used.map((other) => other.index));
+    }
+    this.graph = buildGraph(uses);
+    this.looped = this.describeLoops();
+    for (const node of nodes) {
+      const id = node.cell.id;
+      if (oldTwice.has(id) !== this.twice.has(id) || oldLooped.has(id) !== this.looped.has(id)) stale.add(node);
+      if (misspelt(node, resolved)) stale.add(node);
+      if (node.placed.some((problem) => problem.code === 'used-above') || node.uses.some((used) => used.index > node.index)) stale.add(node);
+    }
+    this.stale = new Uint8Array(nodes.length);
+    this.moved = new Uint8Array(nodes.length);
+    this.ranNodes = new Int32Array(nodes.length);
+    if (!sameReading || this.columns.width !== this.cases.length) {
+      this.columns = new Columns(this.cases.length);
+      for (const node of nodes) stale.add(node);
+    }
+    for (const node of removed) this.columns.forget(node.cell.id);
+    this.lookups = this.cases.map((_, index) => this.makeLookup(index));
+    this.before = new Float64Array(2 * this.cases.length);
+    this.analyseStale(stale);
+    this.columns.build();
+    this.run();
+  }
+
+  private analyseStale(stale: Set<Node>): void {
+    const around = this.around();
+    const { order, userStart, userList } = this.graph;
+    for (let place = 0; place < order.length; place += 1) {
+      const node = this.nodes[order[place]!]!;
+      if (!stale.has(node)) continue;
+      const key = typeKey(node);
+      analyse(node, around);
+      node.failed = [];
+      node.warned = [];
+      node.snapshot = undefined;
+      this.moved[node.index] = 1;
+      this.columns.place(node, this.names);
+      this.stale[place] = 1;
+      if (typeKey(node) === key && node.cell.kind !== 'table') continue;
+      for (let edge = userStart[node.index]!; edge < userStart[node.index + 1]!; edge += 1) stale.add(this.nodes[userList[edge]!]!);
+    }
+  }
+
+  private around(): Surroundings {
+    return {
+      names: this.names,
+      cases: this.cases,
+      numberOf: (cell) => this.numbers.get(cell) ?? '',
+      twice: this.twice,
+      looped: this.looped,
+      decimalSign: this.style.decimalSign,
+    };
+  }
+
+  private describeLoops(): ReadonlyMap<string, CellProblem> {
+    const problems = new Map<string, CellProblem>();
+    for (let index = 0; index < this.nodes.length; index += 1) {
+      const loop = this.graph.loopOf[index]!;
+      if (loop < 0) continue;
+      const node = this.nodes[index]!;
+      const path = this.graph.loops[loop]!.map((member) => this.nodes[member]!);
+      const shown = path.slice(0, 8).map((member) => {
+        const number = this.numbers.get(member.cell.id);
+        return `${member.name ?? member.cell.id}${number === undefined ? '' : ` (${number})`}`;
+      });
+      const rest = path.length > 8 ? ` → … ${path.length - 8} more` : '';
+      const message =
+        path.length === 1
+          ? `${shown[0]} is defined by itself; make it a sought cell with an equation, or name the value on the right differently`
+          : `${shown.join(' → ')}${rest} → ${path[0]!.name ?? path[0]!.cell.id} use each other in a loop; break it, or make one of them a sought cell with an equation`;
+      problems.set(node.cell.id, { code: 'loop', severity: 'error', message, cell: node.cell.id, field: 'formula' });
+    }
+    return problems;
+  }
+
+  // ---- running ----
+
+  /** Runs the stale nodes in order, and whoever uses a number that moved. */
+  private run(): void {
+    const { order, place, userStart, userList } = this.graph;
+    const { columns, before, stale } = this;
+    const width = this.cases.length;
+    for (let at = 0; at < order.length; at += 1) {
+      if (stale[at] === 0) continue;
+      stale[at] = 0;
+      const index = order[at]!;
+      const node = this.nodes[index]!;
+      const slots = columns.slotsOf(node);
+      const first = columns.slotOf(node);
+      for (let entry = 0; entry < slots * width; entry += 1) before[entry] = columns.memory[first * width + entry]!;
+      this.compute(node);
+      this.ranNodes[this.ranCount] = index;
+      this.ranCount += 1;
+      let same = true;
+      for (let entry = 0; entry < slots * width; entry += 1) {
+        const was = before[entry]!;
+        const is = columns.memory[first * width + entry]!;
+        if (was !== is && !(Number.isNaN(was) && Number.isNaN(is))) same = false;
+      }
+      if (same) continue;
+      this.moved[index] = 1;
+      node.snapshot = undefined;
+      for (let edge = userStart[index]!; edge < userStart[index + 1]!; edge += 1) stale[place[userList[edge]!]!] = 1;
+    }
+  }
+
+  private compute(node: Node): void {
+    if (node.cell.kind === 'given') {
+      this.columns.writeGiven(node);
+      return;
+    }
+    if (computedFormulas(node).length === 0) return;
+    if (node.broken) {
+      this.columns.clear(node);
+      return;
+    }
+    const clean = this.columns.run(node);
+    if (clean && node.failed.length === 0 && !node.jumps && !lacksText(node)) return;
+    this.explainCases(node);
+  }
+
+  /** Case by case, in doubles: what failed and why, or the value where only an untaken branch failed. */
+  private explainCases(node: Node): void {
+    const failed: (CellProblem | undefined)[] = [];
+    const warned: CellProblem[] = [];
+    for (let index = 0; index < this.cases.length; index += 1) {
+      const lookup = this.lookups[index]!;
+      for (const [side, formula] of computedFormulas(node).entries()) {
+        if (formula === undefined) continue;
+        const field = node.cell.kind === 'criterion' ? (side === 0 ? 'left' : 'right') : 'formula';
+        const locate = (problem: Problem): CellProblem => ({ ...problem, cell: node.cell.id, case: this.cases[index]!.id, field });
+        const missing = node.uses.find((used) => formula.names.includes(used.name ?? '') && !this.hasValue(used, index));
+        const result = explain(formula.expr, lookup);
+        const value = result.ok ? result.value : Number.NaN;
+        if (!result.ok) failed[index] ??= locate(missing ? waitsFor(missing, this.around()) : result.problem);
+        this.columns.write(node, side, index, value);
+        for (const warning of result.warnings ?? []) {
+          if (!warned.some((known) => known.message === warning.message && known.field === field)) warned.push({ ...warning, cell: node.cell.id, field });
+        }
+      }
+    }
+    node.failed = failed;
+    node.warned = warned;
+    node.snapshot = undefined;
+    this.moved[node.index] = 1;
+  }
+
+  private hasValue(node: Node, caseIndex: number): boolean {
+    if (node.cell.kind === 'table') return node.table !== undefined;
+    return node.texts !== undefined ? node.texts[caseIndex] !== undefined : !Number.isNaN(this.columns.read(node, 0, caseIndex));
+  }
+
+  // ---- looking ----
+
+  private changed(): Changed {
+    const { moved, nodes, byId } = this;
+    return {
+      get size() {
+        let count = 0;
+        for (const mark of moved) count += mark;
+        return count;
+      },
+      has: (cell) => {
+        const node = byId.get(cell);
+        return node !== undefined && moved[node.index] === 1;
+      },
+      *[Symbol.iterator]() {
+        for (const node of nodes) if (moved[node.index] === 1) yield node.cell.id;
+      },
+    };
+  }
+
+  state(cell: string): CellState | undefined {
+    const node = this.byId.get(cell);
+    return node && this.snapshot(node);
+  }
+
+  private snapshot(node: Node): CellState {
+    node.snapshot ??= snapshotOf(node, this.columns);
+    return node.snapshot;
+  }
+
+  named(name: string): QuantityState | undefined {
+    const node = this.names.quantities.get(name);
+    const state = node && this.snapshot(node);
+    return state?.kind === 'given' || state?.kind === 'derived' || state?.kind === 'sought' ? state : undefined;
+  }
+
+  table(name: string): TableState | undefined {
+    const node = this.names.tables.get(name);
+    const state = node && this.snapshot(node);
+    return state?.kind === 'table' ? state : undefined;
+  }
+
+  numberOf(cell: string): string {
+    return this.numbers.get(cell) ?? '';
+  }
+
+  origin(cell: string): readonly string[] {
+    return this.byId.get(cell)?.uses.map((used) => used.cell.id) ?? [];
+  }
+
+  use(cell: string): readonly string[] {
+    const node = this.byId.get(cell);
+    if (node === undefined) return [];
+    const { userStart, userList } = this.graph;
+    return Array.from(userList.subarray(userStart[node.index]!, userStart[node.index + 1]!), (user) => this.nodes[user]!.cell.id);
+  }
+
+  problems(): readonly CellProblem[] {
+    this.listed ??= this.nodes.flatMap((node) => this.snapshot(node).problems);
+    return this.listed;
+  }
+
+  lookup(caseIndex: number): Lookup {
+    return this.lookups[caseIndex]!;
+  }
+
+  private makeLookup(caseIndex: number): Lookup {
+    return {
+      value: (name) => {
+        const node = this.names.quantities.get(name);
+        return node === undefined || node.texts !== undefined ? Number.NaN : this.columns.read(node, 0, caseIndex);
+      },
+      text: (name) => this.names.quantities.get(name)?.texts?.[caseIndex],
+      table: (name) => this.names.tables.get(name)?.table,
+      unit: (name) => this.names.quantities.get(name)?.unit,
+      decimalSign: this.style.decimalSign,
+    };
+  }
+
+  whatIf(request: WhatIfRequest): WhatIf {
+    return prepareWhatIf(request, { nodes: this.nodes, names: this.names, graph: this.graph, columns: this.columns, byId: this.byId, cases: this.cases, lookup: (index) => this.lookups[index]! });
+  }
+}
+
+function sameNodes(a: readonly Node[], b: readonly Node[]): boolean {
+  return a.length === b.length && a.every((node, index) => node === b[index]);
+}
+
+/** Reaches for a name that nobody answers to: its message proposes the nearest, which any change of names may move. */
+function misspelt(node: Node, names: Names): boolean {
+  return (
+    node.reading.formulas.some((formula) => formula?.names.some((name) => !names.quantities.has(name)) || formula?.tables.some((name) => !names.tables.has(name))) ||
+    node.reading.mentions.some((live) => !names.quantities.has(live.name)) ||
+    (node.reading.choices !== undefined && !names.tables.has(node.reading.choices.table))
+  );
+}
+
+/** A choice without a text compares as a number would: only the exact walk tells. */
+function lacksText(node: Node): boolean {
+  return node.usesTexts && node.uses.some((used) => used.texts?.includes(undefined));
+}
+
+/** Cells that differ in values, titles, sources … but not in names, formulas, units or rows. */
+function sameMeaningBesidesNumbers(a: Node['cell'], b: Node['cell']): boolean {
+  if (a.kind === 'given' && b.kind === 'given') return a.name === b.name && a.unit === b.unit && a.choices === b.choices;
+  if (a.kind === 'derived' && b.kind === 'derived') return a.name === b.name && a.unit === b.unit && a.formula === b.formula;
+  if (a.kind === 'criterion' && b.kind === 'criterion') {
+    return a.left === b.left && a.relation === b.relation && a.right === b.right && a.unit === b.unit;
+  }
+  return a.kind === 'figure' && b.kind === 'figure';
+}

@@ -1,0 +1,91 @@
+// The public state of a node, made when somebody looks.
+//
+// Problems stand in the order: of the cell by itself, of its place among others, of calculation, warnings of calculation.
+// Not here: how they came about (reading.ts, analyse.ts, calculation.ts).
+
+import type { Columns } from './columns.ts';
+import { judge } from './criterion.ts';
+import type { Node } from './node.ts';
+import type { CellProblem, CellState } from './state.ts';
+import { readTable } from './table.ts';
+
+export function snapshotOf(node: Node, columns: Columns): CellState {
+  const { cell, index, reading } = node;
+  const own = cell.kind === 'table' ? readTable(cell, reading.decimalSign).problems : reading.problems;
+  const problems: CellProblem[] = [
+    ...own.map((problem) => ({ ...problem, cell: cell.id })),
+    ...node.placed,
+    ...node.failed.filter((problem) => problem !== undefined),
+    ...node.warned,
+  ];
+  const type = node.type === undefined ? {} : { type: node.type };
+  const unit = node.unit === undefined ? {} : { unit: node.unit };
+  switch (cell.kind) {
+    case 'given':
+      return {
+        kind: 'given',
+        cell,
+        index,
+        problems,
+        ...type,
+        ...unit,
+        values: node.values,
+        ...(node.texts === undefined ? {} : { texts: node.texts }),
+        si: node.texts === undefined ? columns.copy(node, 0) : columns.empty(),
+      };
+    case 'derived': {
+      const formula = reading.formulas[0];
+      return {
+        kind: 'derived',
+        cell,
+        index,
+        problems,
+        ...type,
+        ...unit,
+        ...(formula === undefined ? {} : { formula }),
+        si: columns.copy(node, 0),
+        ...(node.words === undefined ? {} : { words: node.words }),
+      };
+    }
+    case 'sought': {
+      const [left, right] = reading.formulas;
+      return {
+        kind: 'sought',
+        cell,
+        index,
+        problems,
+        ...type,
+        ...unit,
+        ...(left === undefined ? {} : { left }),
+        ...(right === undefined ? {} : { right }),
+        si: columns.empty(),
+      };
+    }
+    case 'criterion': {
+      const [left, right] = reading.formulas;
+      const leftSi = columns.copy(node, 0);
+      const rightSi = columns.copy(node, 1);
+      const verdicts = Array.from(leftSi, (value, at) => judge(value, cell.relation, rightSi[at]!));
+      return {
+        kind: 'criterion',
+        cell,
+        index,
+        problems,
+        ...type,
+        ...unit,
+        ...(left === undefined ? {} : { left }),
+        ...(right === undefined ? {} : { right }),
+        leftSi,
+        rightSi,
+        met: verdicts.map((verdict) => verdict.met),
+        utilisation: verdicts.map((verdict) => verdict.utilisation),
+      };
+    }
+    case 'table':
+      return { kind: 'table', cell, index, problems, ...(node.table === undefined ? {} : { data: node.table }) };
+    case 'note':
+      return { kind: 'note', cell, index, problems, live: reading.mentions };
+    default:
+      return { kind: 'plain', cell, index, problems };
+  }
+}
