@@ -1,0 +1,9 @@
+// What other rooms may use of the formulas. Only exports stand here.
+
+export { canonicalName, greekLetter, isName, reserved } from './names.ts';
+export { nearestNames } from './nearest.ts';
+export type { BinaryOperator, CompareOperator, Expr, FunctionName, Span } from './expr.ts';
+export { functionNames, tableFunctions } from './functions.ts';
+export { type Formula, longestFormula, parseFormula } from './parse.ts';
+export { type Token, type TokenKind, tokenize } from './tokens.ts';
+export { nothingTaken, type Taken, type TakenRow } from './taken.ts';

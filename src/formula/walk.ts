@@ -1,0 +1,170 @@
+// From the grammar's nodes to the syntax tree of a formula: only what is listed here passes.
+//
+// 1. A node that is not listed is refused; nothing is passed on unread.
+// 2. Every tree node gets its span: leaves know their token, inner nodes reach from their first to their last token.
+// 3. The first refusal is kept; after it the walk goes on without effect and its tree is thrown away.
+// 4. At most `nodeBudget` nodes are walked.
+// Not here: the token list (tokens.ts), calls (calls.ts), products without a sign (products.ts), meaning and units.
+
+import type { Problem } from '../quantity/index.ts';
+import { readCall } from './calls.ts';
+import type { BinaryOperator, CompareOperator, Expr, Span } from './expr.ts';
+import type { Node, OperatorNode, RawNumber } from './parser.ts';
+import { checkQuotient, product } from './products.ts';
+import { excerpt, refusal, writeInstead } from './refusal.ts';
+import type { Token } from './tokens.ts';
+
+export const nodeBudget = 2000;
+
+export interface Walk {
+  readonly source: string;
+  readonly tokens: readonly Token[];
+  /** Index of the closing bracket for each opening one. */
+  readonly closing: ReadonlyMap<number, number>;
+  readonly names: Set<string>;
+  readonly tables: Set<string>;
+  budget: number;
+  problem: Problem | undefined;
+  /** First and last token of the node walked last. */
+  first: number;
+  last: number;
+}
+
+const nothing: Expr = { kind: 'number', text: '0', value: 0, at: [0, 0] };
+const arithmetic = new Map<string, BinaryOperator>([['add', '+'], ['subtract', '-'], ['multiply', '*'], ['divide', '/'], ['pow', '^']]);
+const comparisons = new Map<string, CompareOperator>([
+  ['smaller', '<'], ['smallerEq', '<='], ['larger', '>'], ['largerEq', '>='], ['equal', '=='], ['unequal', '!='],
+]);
+
+export function refuse(walk: Walk, problem: Problem): Expr {
+  walk.problem ??= problem;
+  return nothing;
+}
+
+export function spanOf(walk: Walk, first: number, last: number): Span {
+  return [walk.tokens[first]?.from ?? 0, walk.tokens[last]?.to ?? walk.source.length];
+}
+
+/** The token of a placeholder name such as `_12`; undefined where the grammar made up a name. */
+export function tokenIndex(node: Node): number | undefined {
+  return node.type === 'SymbolNode' && /^_[0-9]+$/.test(node.name) ? Number(node.name.slice(1)) : undefined;
+}
+
+export function walkNode(walk: Walk, node: Node): Expr {
+  if (walk.problem) return nothing;
+  if (--walk.budget < 0) {
+    return refuse(walk, refusal('formula-too-long', 'The formula has too many parts: split it into quantities of their own.', [0, walk.source.length]));
+  }
+  switch (node.type) {
+    case 'SymbolNode':
+      return leafName(walk, node);
+    case 'ConstantNode':
+      return leafConstant(walk, node.value);
+    case 'ParenthesisNode': {
+      const inner = walkNode(walk, node.content);
+      walk.first--;
+      walk.last++;
+      return { kind: 'parens', inner, at: spanOf(walk, walk.first, walk.last) };
+    }
+    case 'OperatorNode':
+      return operator(walk, node);
+    case 'RelationalNode':
+      return compare(walk, node.conditionals, node.params);
+    case 'ConditionalNode': {
+      const test = walkNode(walk, node.condition);
+      const first = walk.first;
+      const then = walkNode(walk, node.trueExpr);
+      const otherwise = walkNode(walk, node.falseExpr);
+      walk.first = first;
+      return { kind: 'choose', test, then, otherwise, at: spanOf(walk, first, walk.last) };
+    }
+    case 'FunctionNode':
+      return node.optional ? unlisted(walk, node) : readCall(walk, node.fn, node.args);
+    default:
+      return unlisted(walk, node);
+  }
+}
+
+function unlisted(walk: Walk, node: Node): Expr {
+  // The one way to reach a range: a colon without its question mark.
+  const colon = walk.tokens.find((t) => t.kind === 'operator' && t.text === ':');
+  const at: Span = colon ? [colon.from, colon.to] : [0, walk.source.length];
+  if (node.type === 'RangeNode') {
+    return refuse(walk, refusal('stray-colon', 'A “:” stands only in a choice: write test ? this : that.', at));
+  }
+  return refuse(walk, refusal('not-in-formulas', `“${excerpt(walk.source)}” says something that is not part of formulas: use + - * / ^, parentheses, comparisons, choices and functions.`, at));
+}
+
+function leafName(walk: Walk, node: Node): Expr {
+  const index = tokenIndex(node);
+  const token = index === undefined ? undefined : walk.tokens[index];
+  if (index === undefined || token === undefined) return unlisted(walk, node);
+  walk.first = walk.last = index;
+  const at: Span = [token.from, token.to];
+  if (token.text === 'pi' || token.text === 'e') return { kind: 'constant', name: token.text, at };
+  walk.names.add(token.text);
+  return { kind: 'name', name: token.text, at };
+}
+
+function leafConstant(walk: Walk, value: unknown): Expr {
+  const index = typeof value === 'string' ? Number(value) : Number((value as RawNumber).raw);
+  const token = walk.tokens[index];
+  if (token === undefined) return nothing;
+  walk.first = walk.last = index;
+  const at: Span = [token.from, token.to];
+  if (typeof value === 'string') return { kind: 'quoted', text: token.text, at };
+  return { kind: 'number', text: token.text, value: Number(token.text), at };
+}
+
+function operator(walk: Walk, node: OperatorNode): Expr {
+  const [left, right] = node.args;
+  if (left === undefined || node.isPercentage) return unlisted(walk, node);
+  if (right === undefined) return prefixed(walk, node, left);
+  if (node.implicit) return product(walk, node);
+  const compared = comparisons.get(node.fn);
+  if (compared !== undefined) return compare(walk, [node.fn], node.args);
+  const sign = arithmetic.get(node.fn);
+  const logic = node.fn === 'and' || node.fn === 'or' ? node.fn : undefined;
+  if (sign === undefined && logic === undefined) return unlisted(walk, node);
+  const a = walkNode(walk, left);
+  const first = walk.first;
+  const b = walkNode(walk, right);
+  walk.first = first;
+  const at = spanOf(walk, first, walk.last);
+  if (logic !== undefined) return { kind: 'logic', operator: logic, left: a, right: b, at };
+  if (sign === '/') checkQuotient(walk, a, b, at);
+  return { kind: 'binary', operator: sign as BinaryOperator, implicit: false, left: a, right: b, at };
+}
+
+function prefixed(walk: Walk, node: OperatorNode, operand: Node): Expr {
+  const inner = walkNode(walk, operand);
+  walk.first--;
+  const at = spanOf(walk, walk.first, walk.last);
+  if (node.fn === 'unaryMinus') return { kind: 'minus', inner, at };
+  if (node.fn === 'not') return { kind: 'not', inner, at };
+  // A plus in front changes nothing and is not kept.
+  if (node.fn === 'unaryPlus') return inner;
+  return unlisted(walk, node);
+}
+
+function compare(walk: Walk, functions: readonly string[], nodes: readonly Node[]): Expr {
+  const sides: Expr[] = [];
+  let first = 0;
+  nodes.forEach((side, i) => {
+    sides.push(walkNode(walk, side));
+    if (i === 0) first = walk.first;
+  });
+  walk.first = first;
+  const at = spanOf(walk, first, walk.last);
+  const head = sides[0];
+  if (head?.kind === 'not' && nodes[0]?.type === 'OperatorNode') {
+    const text = walk.source.slice(...at);
+    const inner = walk.source.slice(head.inner.at[0], at[1]);
+    const rest = walk.source.slice(head.at[1], at[1]);
+    const wide = `not (${inner})`;
+    const narrow = `(${walk.source.slice(...head.at)})${rest}`;
+    return refuse(walk, refusal('ambiguous-not', `“${excerpt(text)}” can be read as ${excerpt(wide)} or as ${excerpt(narrow)}: write the one that is meant.`, at, [writeInstead(at, wide), writeInstead(at, narrow)]));
+  }
+  return { kind: 'compare', operators: functions.map((f) => comparisons.get(f) as CompareOperator), sides, at };
+}
+
