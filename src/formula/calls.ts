@@ -9,7 +9,7 @@ import { nearestNames } from './nearest.ts';
 import type { Node } from './parser.ts';
 import { excerpt, operand, refusal, writeInstead } from './refusal.ts';
 import type { Token } from './tokens.ts';
-import { refuse, spanOf, tokenIndex, type Walk, walkNode } from './walk.ts';
+import { refuse, spanOf, tokenIndex, type Walk } from './walking.ts';
 
 const words = ['no', 'one', 'two', 'three', 'four', 'five'];
 
@@ -22,7 +22,7 @@ export function readCall(walk: Walk, callee: Node, argumentNodes: readonly Node[
   const last = walk.closing.get(first + 1) ?? first + 1;
   const at = spanOf(walk, first, last);
   if (isTableFunction(name.text)) return tableCall(walk, name.text, argumentNodes, first, last, at);
-  const args = argumentNodes.map((node) => walkNode(walk, node));
+  const args = argumentNodes.map((node) => walk.read(node));
   walk.first = first;
   walk.last = last;
   if (!isFunctionName(name.text)) {
@@ -105,7 +105,7 @@ function tableCall(walk: Walk, name: 'interpolate' | 'entry', nodes: readonly No
     if (token === undefined) return refuse(walk, notAWord(walk, node, what, first, at, shape));
     spelled.push(walk.source.slice(token.from, token.to).normalize('NFC'));
   }
-  const key = walkNode(walk, keyNode);
+  const key = walk.read(keyNode);
   walk.first = first;
   walk.last = last;
   walk.tables.add(spelled[0] as string);

@@ -11,7 +11,8 @@ import { type Node, parseNodes } from './parser.ts';
 import { refusal } from './refusal.ts';
 import { checkTokens, deepestNesting, operatorMissing } from './refusals.ts';
 import { type Token, tokenize } from './tokens.ts';
-import { nodeBudget, type Walk, walkNode } from './walk.ts';
+import { readNode } from './walk.ts';
+import { nodeBudget, type Walk } from './walking.ts';
 
 export const longestFormula = 2000;
 export const mostTokens = 500;
@@ -26,8 +27,13 @@ export interface Formula {
   readonly tables: readonly string[];
 }
 
+export interface ReadingOptions {
+  /** The sheet's decimal sign. A formula has the point; its quoted quantities, read elsewhere, have this one. */
+  readonly decimalSign?: '.' | ',';
+}
+
 /** Reads a formula. The problem of a refusal has its place in `text` and, where there is one, what to write instead. */
-export function parseFormula(text: string): Result<Formula> {
+export function parseFormula(text: string, options: ReadingOptions = {}): Result<Formula> {
   if (text.length > longestFormula) {
     return refused(refusal('formula-too-long', `The formula has ${text.length} characters, more than ${longestFormula}: split it into quantities of their own.`, [0, text.length]));
   }
@@ -38,15 +44,16 @@ export function parseFormula(text: string): Result<Formula> {
   if (tokens.length > mostTokens) {
     return refused(refusal('formula-too-long', `The formula has ${tokens.length} words and signs, more than ${mostTokens}: split it into quantities of their own.`, [0, text.length]));
   }
-  const checked = checkTokens(text, tokens);
+  const checked = checkTokens(text, tokens, options.decimalSign ?? '.');
   if (checked.problem) return refused(checked.problem);
   const nodes = parsePlaceholders(text, tokens);
   if (!nodes.ok) return nodes;
   const walk: Walk = {
+    read: (node) => readNode(walk, node),
     source: text, tokens, closing: checked.closing, names: new Set(), tables: new Set(),
     budget: nodeBudget, problem: undefined, first: 0, last: 0,
   };
-  const expr = walkNode(walk, nodes.value);
+  const expr = readNode(walk, nodes.value);
   if (walk.problem) return refused(walk.problem);
   return { ok: true, value: { text, expr, names: [...walk.names], tables: [...walk.tables] } };
 }

@@ -7,7 +7,7 @@
 import type { Expr, Span } from './expr.ts';
 import type { Node, OperatorNode } from './parser.ts';
 import { excerpt, refusal, writeInstead } from './refusal.ts';
-import { refuse, spanOf, type Walk, walkNode } from './walk.ts';
+import { refuse, spanOf, type Walk } from './walking.ts';
 
 /** Reads a whole chain of factors without signs, from the left. */
 export function product(walk: Walk, node: OperatorNode): Expr {
@@ -19,11 +19,11 @@ export function product(walk: Walk, node: OperatorNode): Expr {
     head = left as Node;
     walk.budget--;
   }
-  let tree = walkNode(walk, head);
+  let tree = walk.read(head);
   const first = walk.first;
   const factors: Expr[] = [tree];
   for (const factor of nodes) {
-    const right = walkNode(walk, factor);
+    const right = walk.read(factor);
     factors.push(right);
     tree = { kind: 'binary', operator: '*', implicit: true, left: tree, right, at: spanOf(walk, first, walk.last) };
   }

@@ -4,14 +4,14 @@
 // 1. The first trouble in the order of the text is reported, and only it.
 // 2. A list that passes holds only words and signs of the formula language, its brackets match, and every operator has
 //    a value on each side. What the grammar can still say beyond it is for walk.ts.
-// Not here: single signs and characters (strange.ts), the rules for products, `not` and calls (walk.ts).
+// Not here: single signs and characters (strange-signs.ts), the rules for products, `not` and calls (walk.ts).
 
 import type { Problem } from '../quantity/index.ts';
 import { arity, isFunctionName, isTableFunction } from './functions.ts';
 import { excerpt, refusal, writeInstead } from './refusal.ts';
-import { strangeOperator, strangeSign } from './strange.ts';
+import { strangeOperator, strangeSign } from './strange-signs.ts';
 import { endsValue, type Token } from './tokens.ts';
-import { strangeWord } from './words.ts';
+import { strangeWord } from './strange-words.ts';
 
 const binary = new Set(['+', '-', '*', '/', '^', '<', '<=', '>', '>=', '==', '!=', '?', ':', 'and', 'or']);
 const prefix = new Set(['+', '-', 'not']);
@@ -30,7 +30,7 @@ export interface Checked {
   readonly closing: ReadonlyMap<number, number>;
 }
 
-export function checkTokens(source: string, tokens: readonly Token[]): Checked {
+export function checkTokens(source: string, tokens: readonly Token[], decimalSign: '.' | ','): Checked {
   const closing = new Map<number, number>();
   const frames: Frame[] = [];
   let wantsValue = true;
@@ -59,7 +59,7 @@ export function checkTokens(source: string, tokens: readonly Token[]): Checked {
         break;
       }
       case 'comma':
-        if (frame === undefined || frame.call === '') return { problem: strayComma(source, tokens, i), closing };
+        if (frame === undefined || frame.call === '') return { problem: strayComma(source, tokens, i, decimalSign), closing };
         if (wantsValue) return { problem: valueMissing(source, tokens, i), closing };
         frame.commas++;
         wantsValue = true;
@@ -202,14 +202,15 @@ function superscript(source: string, tokens: readonly Token[], i: number, wantsV
   return undefined;
 }
 
-function strayComma(source: string, tokens: readonly Token[], i: number): Problem {
+function strayComma(source: string, tokens: readonly Token[], i: number, decimalSign: '.' | ','): Problem {
   const before = tokens[i - 1];
   const comma = tokens[i] as Token;
   const after = tokens[i + 1];
   if (before?.kind === 'number' && after?.kind === 'number' && before.to === comma.from && comma.to === after.from) {
     const both = [before.from, after.to] as const;
     const instead = `${before.text}.${after.text}`;
-    return refusal('decimal-comma', `“${source.slice(...both)}”: in a formula the decimal sign is a point, also where the sheet prints a comma: write ${instead}.`, both, [writeInstead(both, instead)]);
+    const but = decimalSign === ',' ? ', unlike in the values of this sheet' : '';
+    return refusal('decimal-comma', `“${source.slice(...both)}”: in a formula the decimal sign is a point${but}: write ${instead}.`, both, [writeInstead(both, instead)]);
   }
   return refusal('stray-comma', 'A comma stands only between the arguments of a function: leave it out, or write the function before the parentheses.', [comma.from, comma.to]);
 }

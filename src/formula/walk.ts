@@ -3,54 +3,23 @@
 // 1. A node that is not listed is refused; nothing is passed on unread.
 // 2. Every tree node gets its span: leaves know their token, inner nodes reach from their first to their last token.
 // 3. The first refusal is kept; after it the walk goes on without effect and its tree is thrown away.
-// 4. At most `nodeBudget` nodes are walked.
+// 4. At most `nodeBudget` nodes are walked (walking.ts).
 // Not here: the token list (tokens.ts), calls (calls.ts), products without a sign (products.ts), meaning and units.
 
-import type { Problem } from '../quantity/index.ts';
 import { readCall } from './calls.ts';
 import type { BinaryOperator, CompareOperator, Expr, Span } from './expr.ts';
 import type { Node, OperatorNode, RawNumber } from './parser.ts';
 import { checkQuotient, product } from './products.ts';
 import { excerpt, refusal, writeInstead } from './refusal.ts';
-import type { Token } from './tokens.ts';
+import { nothing, refuse, spanOf, tokenIndex, type Walk } from './walking.ts';
 
-export const nodeBudget = 2000;
-
-export interface Walk {
-  readonly source: string;
-  readonly tokens: readonly Token[];
-  /** Index of the closing bracket for each opening one. */
-  readonly closing: ReadonlyMap<number, number>;
-  readonly names: Set<string>;
-  readonly tables: Set<string>;
-  budget: number;
-  problem: Problem | undefined;
-  /** First and last token of the node walked last. */
-  first: number;
-  last: number;
-}
-
-const nothing: Expr = { kind: 'number', text: '0', value: 0, at: [0, 0] };
 const arithmetic = new Map<string, BinaryOperator>([['add', '+'], ['subtract', '-'], ['multiply', '*'], ['divide', '/'], ['pow', '^']]);
 const comparisons = new Map<string, CompareOperator>([
   ['smaller', '<'], ['smallerEq', '<='], ['larger', '>'], ['largerEq', '>='], ['equal', '=='], ['unequal', '!='],
 ]);
 
-export function refuse(walk: Walk, problem: Problem): Expr {
-  walk.problem ??= problem;
-  return nothing;
-}
-
-export function spanOf(walk: Walk, first: number, last: number): Span {
-  return [walk.tokens[first]?.from ?? 0, walk.tokens[last]?.to ?? walk.source.length];
-}
-
-/** The token of a placeholder name such as `_12`; undefined where the grammar made up a name. */
-export function tokenIndex(node: Node): number | undefined {
-  return node.type === 'SymbolNode' && /^_[0-9]+$/.test(node.name) ? Number(node.name.slice(1)) : undefined;
-}
-
-export function walkNode(walk: Walk, node: Node): Expr {
+/** Reads one node and what hangs on it. `walk.read` is this function. */
+export function readNode(walk: Walk, node: Node): Expr {
   if (walk.problem) return nothing;
   if (--walk.budget < 0) {
     return refuse(walk, refusal('formula-too-long', 'The formula has too many parts: split it into quantities of their own.', [0, walk.source.length]));
@@ -61,7 +30,7 @@ export function walkNode(walk: Walk, node: Node): Expr {
     case 'ConstantNode':
       return leafConstant(walk, node.value);
     case 'ParenthesisNode': {
-      const inner = walkNode(walk, node.content);
+      const inner = walk.read(node.content);
       walk.first--;
       walk.last++;
       return { kind: 'parens', inner, at: spanOf(walk, walk.first, walk.last) };
@@ -71,10 +40,10 @@ export function walkNode(walk: Walk, node: Node): Expr {
     case 'RelationalNode':
       return compare(walk, node.conditionals, node.params);
     case 'ConditionalNode': {
-      const test = walkNode(walk, node.condition);
+      const test = walk.read(node.condition);
       const first = walk.first;
-      const then = walkNode(walk, node.trueExpr);
-      const otherwise = walkNode(walk, node.falseExpr);
+      const then = walk.read(node.trueExpr);
+      const otherwise = walk.read(node.falseExpr);
       walk.first = first;
       return { kind: 'choose', test, then, otherwise, at: spanOf(walk, first, walk.last) };
     }
@@ -126,9 +95,9 @@ function operator(walk: Walk, node: OperatorNode): Expr {
   const sign = arithmetic.get(node.fn);
   const logic = node.fn === 'and' || node.fn === 'or' ? node.fn : undefined;
   if (sign === undefined && logic === undefined) return unlisted(walk, node);
-  const a = walkNode(walk, left);
+  const a = walk.read(left);
   const first = walk.first;
-  const b = walkNode(walk, right);
+  const b = walk.read(right);
   walk.first = first;
   const at = spanOf(walk, first, walk.last);
   if (logic !== undefined) return { kind: 'logic', operator: logic, left: a, right: b, at };
@@ -137,7 +106,7 @@ function operator(walk: Walk, node: OperatorNode): Expr {
 }
 
 function prefixed(walk: Walk, node: OperatorNode, operand: Node): Expr {
-  const inner = walkNode(walk, operand);
+  const inner = walk.read(operand);
   walk.first--;
   const at = spanOf(walk, walk.first, walk.last);
   if (node.fn === 'unaryMinus') return { kind: 'minus', inner, at };
@@ -151,7 +120,7 @@ function compare(walk: Walk, functions: readonly string[], nodes: readonly Node[
   const sides: Expr[] = [];
   let first = 0;
   nodes.forEach((side, i) => {
-    sides.push(walkNode(walk, side));
+    sides.push(walk.read(side));
     if (i === 0) first = walk.first;
   });
   walk.first = first;

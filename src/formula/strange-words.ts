@@ -1,5 +1,5 @@
 // Words of the grammar that are no words of the formula language: each with what to write instead.
-// Not here: functions of other languages (functions.ts), signs (strange.ts).
+// Not here: functions of other languages (functions.ts), signs (strange-signs.ts).
 
 import type { Problem } from '../quantity/index.ts';
 import { excerpt, operand, refusal, writeInstead } from './refusal.ts';

@@ -1,5 +1,5 @@
 // Signs that are no signs of the formula language: each with what it was probably meant to be and what to write.
-// Not here: words (words.ts), missing values and brackets (refusals.ts).
+// Not here: words (strange-words.ts), missing values and brackets (refusals.ts).
 
 import type { Problem } from '../quantity/index.ts';
 import { excerpt, operand, refusal, writeInstead } from './refusal.ts';
