@@ -12,6 +12,7 @@ import {
   type Numeral,
   numeralInUnit,
   numeralOfDouble,
+  readUnit,
   type Rounding,
   roundAtPlace,
   roundSignificant,
@@ -39,7 +40,7 @@ export function computedNumber(value: number, unit: Unit, whole = false, roundin
   if (isZeroNumeral(full)) return typedNumber(full, unit);
   // A whole number in its unit: three quarters in percent are 75, and 300 turns out of 3 revolutions stay whole.
   if (whole && lastPlace(full) >= 0) return typedNumber(roundAtPlace(full, 0), unit);
-  const fullDigits = significantDigits(full);
+  const fullDigits = full.digits.replace(/0+$/u, '').length;
   const numerals: (Numeral | undefined)[] = [];
   const doubles: (number | undefined)[] = [];
   const numeral = (digits: number) => (numerals[digits] ??= roundSignificant(full, digits, rounding));
@@ -51,11 +52,18 @@ export function computedNumber(value: number, unit: Unit, whole = false, roundin
  * The result of a calculator line: the true value in coherent SI at the printed number of digits. A reading of temperature
  * keeps its last place instead: 20.1 °C is 293.2 K.
  */
-export function calculatorNumeral(value: number, printed: Numeral, unit: Unit): Numeral {
+export function calculatorNumeral(value: number, printed: Numeral, unit: Unit, rounding: Rounding = 'half-even'): Numeral {
   const full = numeralOfDouble(value);
   if (isZeroNumeral(full)) return full;
-  if (unit.reading !== undefined) return roundAtPlace(full, lastPlace(printed));
-  return roundSignificant(full, significantDigits(printed));
+  if (unit.reading !== undefined) return roundAtPlace(full, lastPlace(printed), rounding);
+  return roundSignificant(full, significantDigits(printed), rounding);
+}
+
+/** A unit that the catalogue is known to have. */
+export function unitNamed(text: string): Unit {
+  const read = readUnit(text);
+  if (!read.ok) throw new Error(`the catalogue lacks ${text}`);
+  return read.value;
 }
 
 /** A given's calculator result: exact, with the zeros that were typed (`0.200` for 200 mm). */

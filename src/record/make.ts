@@ -1,0 +1,145 @@
+// Makes the record of a calculated sheet.
+//
+// 1. A pure function of the calculation: the same sheet gives the same record, on every machine.
+// 2. Every cell has its line, failed ones with their problem; nothing is left out and nothing throws for what a sheet says.
+// Not here: the steps (steps.ts), their digits (case-print.ts), the lists at the head (heads.ts), forms (html.ts, json.ts).
+
+import { printNumeral, readNumeral } from '../quantity/index.ts';
+import type { Calculation, CellState, LoadCase, NoteState, TableState } from '../sheet/index.ts';
+import { type CasePrint, printCases } from './case-print.ts';
+import { assumptionsOf, openPointsOf, referencesOf, summaryOf } from './heads.ts';
+import type { Line, RecordModel, Step } from './model.ts';
+import { readProse } from './prose.ts';
+import { makeStep, printedValue } from './steps.ts';
+import { citations, inCases, isBlank, noSource, replaceLive } from './words.ts';
+
+export function makeRecord(calculation: Calculation): RecordModel {
+  const { sheet } = calculation;
+  const prints = printCases(calculation);
+  const titles = calculation.cases.map(caseTitle);
+  const lines: Line[] = [];
+  for (const cell of sheet.cells) {
+    const state = calculation.state(cell.id);
+    if (state !== undefined) lines.push(lineOf(calculation, state, prints, titles));
+  }
+  const steps = lines.flatMap((line) => (line.kind === 'step' ? [line.step] : []));
+  const problems = calculation.problems();
+  const assumptions = assumptionsOf(calculation, steps, lines, titles);
+  const live = (text: string | undefined) => readProse(text ?? '');
+  return {
+    title: sheet.title,
+    titleBlock: sheet.titleBlock ?? {},
+    settings: sheet.settings ?? {},
+    status: sheet.status ?? 'in preparation',
+    purpose: live(sheet.purpose),
+    method: live(sheet.method),
+    conclusion: live(sheet.conclusion),
+    origin: originOf(calculation),
+    limits: sheet.templateInfo?.limits ?? [],
+    caution: sheet.templateInfo?.caution ?? '',
+    cases: calculation.cases.map((each, k) => ({ id: each.id, title: titles[k] ?? each.id })),
+    summary: summaryOf(steps),
+    assumptions,
+    references: referencesOf(calculation, lines),
+    openPoints: openPointsOf(calculation, lines, problems, assumptions),
+    lines,
+    steps,
+    problems,
+  };
+}
+
+function caseTitle(each: LoadCase, _index: number, all: readonly LoadCase[]): string {
+  if (!isBlank(each.title)) return each.title ?? '';
+  return all.length === 1 && each.id === 'base' ? '' : each.id;
+}
+
+function originOf(calculation: Calculation): string {
+  const { template, carriedFrom } = calculation.sheet;
+  const parts: string[] = [];
+  if (template !== undefined) parts.push(`template ${template.id}, version ${template.version}`);
+  if (carriedFrom !== undefined) {
+    parts.push([carriedFrom.documentNumber ?? '', carriedFrom.revision ? `rev ${carriedFrom.revision}` : '', carriedFrom.title].filter((part) => part !== '').join(' '));
+  }
+  return parts.join('; ');
+}
+
+function lineOf(calculation: Calculation, state: CellState, prints: readonly CasePrint[], titles: readonly string[]): Line {
+  switch (state.kind) {
+    case 'given':
+    case 'derived':
+    case 'sought':
+    case 'criterion':
+      return { kind: 'step', step: makeStep(calculation, state, prints) };
+    case 'note':
+      return noteLine(calculation, state, prints, titles);
+    case 'table':
+      return tableLine(calculation, state);
+    case 'plain':
+      return plainLine(calculation, state);
+  }
+}
+
+function noteLine(calculation: Calculation, state: NoteState, prints: readonly CasePrint[], titles: readonly string[]): Line {
+  const { cell } = state;
+  const text = replaceLive(cell.text, state.live, (name) => {
+    const quantity = calculation.named(name);
+    if (quantity === undefined) return undefined;
+    return inCases(prints.map((print) => printedValue(calculation, quantity, print)), titles);
+  });
+  const role = cell.role === undefined ? {} : { role: cell.role };
+  return { kind: 'note', cell: cell.id, ...role, text, blocks: readProse(text), notes: messages(state), source: cell.source ?? '' };
+}
+
+function tableLine(calculation: Calculation, state: TableState): Line {
+  const { cell, data } = state;
+  const heads = cell.columns.map((column) => {
+    const unit = column.unit === undefined || column.unit === '1' ? '' : column.unit;
+    const read = data?.columns.find((each) => each.name === column.name)?.unit;
+    return { title: column.title ?? column.name, unit: unit === '' ? '' : (read?.text ?? unit), numeric: column.unit !== undefined };
+  });
+  const rows = cell.rows.map((row) => row.map((text, k) => (heads[k]?.numeric ? asPrinted(text, calculation.style.decimalSign) : text)));
+  const notes = [...messages(state), ...(isBlank(cell.source) ? [noSource] : []), ...unknownCitations(calculation, cell.source)];
+  return { kind: 'table', cell: cell.id, title: cell.title ?? '', name: cell.name, source: cell.source ?? '', heads, rows, notes };
+}
+
+/** A typed number with the signs and groups of print; all its digits stay. */
+function asPrinted(text: string, decimalSign: '.' | ','): string {
+  const read = readNumeral(text, decimalSign);
+  return read.ok ? printNumeral(read.value, { decimalSign }) : text;
+}
+
+function plainLine(calculation: Calculation, state: Extract<CellState, { kind: 'plain' }>): Line {
+  const { cell } = state;
+  switch (cell.kind) {
+    case 'heading':
+      return { kind: 'heading', cell: cell.id, number: calculation.numberOf(cell.id), level: cell.level ?? 1, text: cell.text };
+    case 'figure':
+      return { kind: 'other', cell: cell.id, what: 'figure', title: cell.title ?? '', source: cell.source ?? '', image: cell.image, text: 'The picture of this figure cannot be shown.' };
+    case 'drawing':
+      return { kind: 'other', cell: cell.id, what: 'drawing', title: cell.title ?? cell.layout, source: '', text: `Drawing “${cell.layout}”: not drawn in this version.` };
+    case 'chart':
+      return {
+        kind: 'other',
+        cell: cell.id,
+        what: 'chart',
+        title: cell.title ?? '',
+        source: '',
+        text: `Chart of ${cell.show.join(', ')} over ${cell.vary} from ${cell.from} to ${cell.to}: not drawn in this version.`,
+      };
+  }
+}
+
+function messages(state: CellState): readonly string[] {
+  return [...new Set(state.problems.map((problem) => problem.message))];
+}
+
+export function unknownCitations(calculation: Calculation, source: string | undefined): readonly string[] {
+  const known = new Set((calculation.sheet.references ?? []).map((entry) => entry.id));
+  return citations(source)
+    .filter((id) => !known.has(id))
+    .map((id) => `[${id}] is not in the list of sources`);
+}
+
+export function stepsOf(model: RecordModel): ReadonlyMap<string, Step> {
+  return new Map(model.steps.map((step) => [step.cell, step]));
+}
