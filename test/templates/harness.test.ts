@@ -1,0 +1,166 @@
+// What every built-in template must be: complete, typed, sourced, closed, and able to say no.
+//
+// One harness for all files of templates/, by their own data; what outside programs rely on stands in names.ts.
+// Not here: agreement with published examples (test/reference).
+
+import { readdirSync, readFileSync } from 'node:fs';
+import { describe, expect, test } from 'vitest';
+import { fromSI } from '../../src/quantity/index.ts';
+import { makeRecord } from '../../src/record/index.ts';
+import { type Calculation, calculate, type DerivedCell, type GivenCell, readSheet, type Sheet, writeSheet } from '../../src/sheet/index.ts';
+import { fault } from './lines.ts';
+import { listOf, publishedNames } from './names.ts';
+import { randomFrom, rangeOf, varied, variedInOne } from './vary.ts';
+
+const folder = new URL('../../templates/', import.meta.url);
+const ending = '.sheet.json';
+const ids = readdirSync(folder).filter((file) => file.endsWith(ending)).map((file) => file.slice(0, -ending.length));
+const seed = Number(process.env['TIGHTSIDE_SEED'] ?? 20_261_201);
+const variations = 200;
+
+function textOf(id: string): string {
+  return readFileSync(new URL(`${id}${ending}`, folder), 'utf8');
+}
+
+function sheetOf(id: string): Sheet {
+  const read = readSheet(textOf(id));
+  if (!read.ok) throw new Error(read.problems.map((problem) => problem.message).join('\n'));
+  return read.value;
+}
+
+const said = (calculation: Calculation) => calculation.problems().map((problem) => `${problem.cell}: ${problem.code}: ${problem.message}`);
+
+/** Faults of all numeric steps that have a value, one line each. */
+function faultsOf(calculation: Calculation): string[] {
+  return makeRecord(calculation).steps.flatMap((step) =>
+    step.kind !== 'derived' || !step.numeric
+      ? []
+      : step.cases.flatMap((one, index) => {
+          const state = calculation.named(step.name ?? '');
+          const si = state?.si[index] ?? Number.NaN;
+          if (Number.isNaN(si) || !state?.unit) return [];
+          const found = fault(step, one, si, fromSI(si, state.unit));
+          return found === '' ? [] : [found];
+        }),
+  );
+}
+
+test('every published template is there, and no other', () => {
+  expect([...ids].sort()).toEqual([...publishedNames.keys()].sort());
+});
+
+describe.each(ids)('template %s', (id) => {
+  const sheet = sheetOf(id);
+  const calculation = calculate(sheet);
+  const givens = sheet.cells.filter((cell): cell is GivenCell => cell.kind === 'given');
+  const derived = sheet.cells.filter((cell): cell is DerivedCell => cell.kind === 'derived');
+  const names = publishedNames.get(id) ?? { givens: '', results: '' };
+
+  test('the file is written as the program writes it', () => {
+    expect(writeSheet(sheet)).toBe(textOf(id));
+  });
+
+  test('states its job, purpose, method, references, limits and cautions', () => {
+    expect(sheet.templateInfo?.id).toBe(id);
+    expect(sheet.templateInfo?.job).not.toBe('');
+    expect(sheet.templateInfo?.limits.length).toBeGreaterThan(0);
+    expect(sheet.templateInfo?.caution.length).toBeGreaterThan(80);
+    expect(sheet.purpose?.length).toBeGreaterThan(40);
+    expect(sheet.method?.length).toBeGreaterThan(40);
+    expect(sheet.references?.length).toBeGreaterThan(0);
+    const roles = new Set(sheet.cells.flatMap((cell) => (cell.kind === 'note' && cell.role ? [cell.role] : [])));
+    expect([...roles].sort()).toEqual(['assumption', 'caution', 'limit']);
+  });
+
+  test('has the published names', () => {
+    const have = new Set(givens.map((cell) => cell.name));
+    const results = new Set(derived.map((cell) => cell.name));
+    expect(listOf(names.givens).filter((name) => !have.has(name))).toEqual([]);
+    expect(listOf(names.results).filter((name) => !results.has(name))).toEqual([]);
+  });
+
+  test('has no problem as it stands: every unit inferred, no number without a source, nothing used above its line', () => {
+    expect(said(calculation)).toEqual([]);
+    for (const cell of derived) {
+      expect(cell.unit, cell.name).toBeDefined();
+      expect(calculation.named(cell.name)?.type?.kind, cell.name).toBe('quantity');
+    }
+  });
+
+  test('every given has title, basis, source or range, a value in its range, and waits to be confirmed', () => {
+    for (const cell of givens) {
+      expect(cell.title, cell.name).toBeTruthy();
+      expect(cell.basis, cell.name).toBeTruthy();
+      expect(cell.source || cell.range, cell.name).toBeTruthy();
+      expect(cell.carriedOver, cell.name).toBe(true);
+      if (cell.choices !== undefined) continue;
+      const range = rangeOf(cell);
+      expect(cell.unit, cell.name).toBeDefined();
+      expect(range, cell.name).toBeDefined();
+      for (const si of calculation.named(cell.name)?.si ?? []) {
+        expect(si, cell.name).toBeGreaterThanOrEqual(range?.[0] ?? Number.NaN);
+        expect(si, cell.name).toBeLessThanOrEqual(range?.[1] ?? Number.NaN);
+      }
+    }
+  });
+
+  test('every derived line and criterion has a title and names where it comes from', () => {
+    for (const cell of sheet.cells) {
+      if (cell.kind !== 'derived' && cell.kind !== 'criterion') continue;
+      expect(cell.title, cell.id).toBeTruthy();
+      expect(cell.source, cell.id).toBeTruthy();
+    }
+  });
+
+  test('every reference is cited and every citation has its reference', () => {
+    const references = new Set((sheet.references ?? []).map((one) => one.id));
+    const cited = new Set([...JSON.stringify({ ...sheet, references: [] }).matchAll(/\[(R\d+)\]/g)].map((match) => match[1] ?? ''));
+    expect([...cited].sort()).toEqual([...references].sort());
+  });
+
+  test('every given and every derived line is used, or is a result', () => {
+    const results = new Set([...listOf(names.results), ...listOf(names.further)]);
+    const computing = (cellId: string) => ['derived', 'criterion', 'sought'].includes(sheet.cells.find((cell) => cell.id === cellId)?.kind ?? '');
+    const idle = [...givens, ...derived].filter((cell) => !results.has(cell.name) && !calculation.use(cell.id).some(computing));
+    expect(idle.map((cell) => cell.name)).toEqual([]);
+  });
+
+  test('its own values close: lines evaluated by another program, printed numbers are the true ones rounded', () => {
+    expect(faultsOf(calculation)).toEqual([]);
+  });
+
+  test(`${variations} variations within the ranges (seed ${seed}) close, and each criterion is seen met and not met`, () => {
+    const random = randomFrom(seed);
+    const verdicts = new Map<string, Set<boolean>>();
+    const faults: string[] = [];
+    const errors: string[] = [];
+    let whole = 0;
+    for (let round = 0; round < variations; round += 1) {
+      const one = calculate(varied(sheet, random));
+      // An impossible geometry is an error of its cells; whatever has a value must still close.
+      const failed = one.problems().filter((problem) => problem.severity === 'error');
+      if (failed.length === 0) whole += 1;
+      else errors.push(...failed.map((problem) => `${problem.cell}: ${problem.code}`));
+      for (const cell of sheet.cells) {
+        const state = one.state(cell.id);
+        if (state?.kind !== 'criterion') continue;
+        const seen = verdicts.get(cell.id) ?? new Set();
+        for (const met of state.met) if (met !== null) seen.add(met);
+        verdicts.set(cell.id, seen);
+      }
+      faults.push(...faultsOf(one).map((text) => `round ${round}: ${text}`));
+    }
+    expect(faults.slice(0, 10)).toEqual([]);
+    expect(whole, `variations without an error; errors: ${[...new Set(errors)].join(', ')}`).toBeGreaterThanOrEqual(variations / 2);
+    const oneSided = [...verdicts].filter(([, seen]) => seen.size < 2).map(([cell, seen]) => `${cell}: only ${[...seen].join()}`);
+    expect(oneSided).toEqual([]);
+  }, 120_000);
+
+  test(`a single given moved within its range (seed ${seed}) leaves every step closed`, () => {
+    const random = randomFrom(seed + 1);
+    const faults = givens.flatMap((cell) =>
+      [1, 2, 3].flatMap(() => faultsOf(calculate(variedInOne(sheet, cell.name, random))).map((text) => `${cell.name}: ${text}`)),
+    );
+    expect(faults.slice(0, 10)).toEqual([]);
+  }, 120_000);
+});
