@@ -1,0 +1,54 @@
+// Bare numbers in formulas: what a checker could not trace is better a given with a source.
+//
+// 1. Passed without a word: whole numbers up to 12, 0.5, the divisors of section properties and beam deflections, all exponents.
+// 2. Everything else is a warning, once a literal.
+
+import type { Expr } from './expr.ts';
+import { report } from './report.ts';
+import type { Context } from './term.ts';
+
+/** Divisors of geometry and elasticity: second moments of area (64, 32, 16), deflections of beams (48, 384), 24 of a moment of a third degree. */
+const usual: ReadonlySet<number> = new Set([0.5, 16, 24, 32, 48, 64, 384]);
+const largestSmall = 12;
+
+export function checkNumbers(ctx: Context, expr: Expr): void {
+  switch (expr.kind) {
+    case 'number': {
+      const small = Number.isInteger(expr.value) && expr.value <= largestSmall;
+      if (small || usual.has(expr.value) || ctx.spoken.has(expr)) return;
+      report(ctx, 'number-without-source', `${expr.text} is a number without a source: make it a given, with its unit and where it comes from`, expr.at, [], 'warning');
+      return;
+    }
+    case 'parens':
+    case 'minus':
+    case 'not':
+      return checkNumbers(ctx, expr.inner);
+    case 'binary':
+      checkNumbers(ctx, expr.left);
+      if (expr.operator !== '^') checkNumbers(ctx, expr.right);
+      else if (!isLiteral(expr.right)) checkNumbers(ctx, expr.right);
+      return;
+    case 'logic':
+      checkNumbers(ctx, expr.left);
+      return checkNumbers(ctx, expr.right);
+    case 'compare':
+      for (const side of expr.sides) checkNumbers(ctx, side);
+      return;
+    case 'choose':
+      for (const branch of [expr.test, expr.then, expr.otherwise]) checkNumbers(ctx, branch);
+      return;
+    case 'call':
+      for (const argument of expr.args) checkNumbers(ctx, argument);
+      return;
+    case 'table':
+      return checkNumbers(ctx, expr.key);
+    default:
+  }
+}
+
+/** An exponent of nothing but literals. */
+function isLiteral(expr: Expr): boolean {
+  if (expr.kind === 'parens' || expr.kind === 'minus') return isLiteral(expr.inner);
+  if (expr.kind === 'binary') return isLiteral(expr.left) && isLiteral(expr.right);
+  return expr.kind === 'number';
+}

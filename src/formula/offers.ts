@@ -1,0 +1,237 @@
+// Corrections offered where revolutions or temperatures do not fit: each is tried out before it is offered.
+//
+// 1. A changed text is read and inferred anew, a changed unit is inferred with the unit changed; what still does not fit is not offered.
+// 2. While an offer is being tried out nothing is offered in turn.
+// Not here: when a problem arises (infer-rules.ts, infer-target.ts).
+
+import { addR, type Fix, isDimensionless, isZeroR, negR, oneR, type Rational } from '../quantity/index.ts';
+import type { Expr, Span } from './expr.ts';
+import type { Side } from './messages.ts';
+import type { TemperatureFault } from './temperature.ts';
+import type { Context, QuantityType, Scope } from './term.ts';
+import type { Type } from './type.ts';
+import { plainName } from './symbols.ts';
+
+export interface Offer {
+  /** '; write …, or …', ready to follow the first half of the sentence. */
+  readonly sentence: string;
+  readonly fixes: readonly Fix[];
+}
+
+const nothing: Offer = { sentence: '', fixes: [] };
+const general: Offer = {
+  sentence: '; multiply by 2*pi where an angle is meant, give the other factor a unit per revolution such as mm/r, or divide by "1 r"',
+  fixes: [],
+};
+
+/** What turns counted revolutions into what is wanted; `parts` are the expressions that do not fit. */
+export function proposeForRevolutions(ctx: Context, parts: readonly Expr[]): Offer {
+  if (!ctx.propose || ctx.prove === undefined) return nothing;
+  const names = namesIn(parts);
+  const phrases: string[] = [];
+  const fixes: Fix[] = [];
+  const offer = (phrase: string, edits: readonly Fix[]): void => {
+    phrases.push(phrase);
+    if (edits.length === 1) fixes.push(edits[0]!);
+    else if (edits.length > 1) fixes.push(joined(ctx.text, edits, edits[0]!.label));
+  };
+
+  const turning = turnNames(ctx, names);
+  if (turning) offer(`write ${turning.shown} where an angular speed or an angle is meant`, turning.edits);
+  for (const part of parts) {
+    const edit = append(ctx.text, part, '/(2*pi)', 'divide by 2*pi');
+    if (ctx.prove(applied(ctx.text, [edit]), ctx.scope)) {
+      offer('divide by 2*pi where the formula gives rad/s', [edit]);
+      break;
+    }
+  }
+  const unit = otherUnit(ctx, names);
+  if (unit) phrases.push(unit);
+  if (isCountTarget(ctx)) phrases.push('declare the unit r');
+  for (const part of parts) {
+    const found = (['/"1 r"', '*"1 r"'] as const).map((tail) => ({
+      tail,
+      edit: append(ctx.text, part, tail, tail.startsWith('/') ? 'divide by "1 r"' : 'multiply by "1 r"'),
+    })).find(({ edit }) => ctx.prove!(applied(ctx.text, [edit]), ctx.scope));
+    if (found === undefined) continue;
+    offer(found.edit.label, [found.edit]);
+    break;
+  }
+  if (phrases.length === 0) return general;
+  const last = phrases.pop()!;
+  const sentence = phrases.length === 0 ? `; ${last}` : `; ${phrases.join(', ')}, or ${last}`;
+  return { sentence, fixes };
+}
+
+interface Named {
+  readonly name: string;
+  readonly type: QuantityType;
+  readonly places: readonly Expr[];
+}
+
+type Sought = { readonly places: Expr[]; readonly name: string };
+
+function namesIn(parts: readonly Expr[]): Sought[] {
+  const found = new Map<string, Sought>();
+  const visit = (expr: Expr): void => {
+    switch (expr.kind) {
+      case 'name': {
+        const known = found.get(expr.name) ?? { name: expr.name, places: [] };
+        known.places.push(expr);
+        found.set(expr.name, known);
+        return;
+      }
+      case 'parens':
+      case 'minus':
+      case 'not':
+        return visit(expr.inner);
+      case 'binary':
+      case 'logic':
+        visit(expr.left);
+        return visit(expr.right);
+      case 'compare':
+        return expr.sides.forEach(visit);
+      case 'choose':
+        return [expr.test, expr.then, expr.otherwise].forEach(visit);
+      case 'call':
+        return expr.args.forEach(visit);
+      case 'table':
+        return visit(expr.key);
+      default:
+    }
+  };
+  parts.forEach(visit);
+  return [...found.values()];
+}
+
+function typed(ctx: Context, names: readonly Sought[]): Named[] {
+  return names.flatMap((sought) => {
+    const type = ctx.scope.typeOf(sought.name);
+    return typeof type === 'object' && type.kind === 'quantity' ? [{ ...sought, type }] : [];
+  });
+}
+
+/** 2*pi at each counted name: one name alone where that is enough, otherwise all of them. */
+function turnNames(ctx: Context, names: readonly Sought[]): { readonly shown: string; readonly edits: readonly Fix[] } | undefined {
+  const counted = typed(ctx, names).filter(({ type }) => !isZeroR(type.counts.r) || !isZeroR(type.counts.hz));
+  const sets = counted.length > 1 ? [...counted.map((one) => [one]), counted] : [counted];
+  for (const set of sets) {
+    if (set.length === 0) continue;
+    const edits = set.flatMap(({ places }) => places.map((place) => turn(ctx.text, place)));
+    if (!ctx.prove!(applied(ctx.text, edits), ctx.scope)) continue;
+    return { shown: set.map(({ places }) => `2*pi*${ctx.text.slice(...places[0]!.at)}`).join(' and '), edits };
+  }
+  return undefined;
+}
+
+function turn(text: string, place: Expr): Fix {
+  const [from, to] = place.at;
+  const before = text.slice(0, from).trimEnd().at(-1) ?? '(';
+  const after = text.slice(to).trimStart()[0] ?? '';
+  const bare = after !== '^' && '(*+-,?:<>='.includes(before);
+  const name = text.slice(from, to);
+  return { from, to, text: bare ? `2*pi*${name}` : `(2*pi*${name})`, label: `write 2*pi*${name}` };
+}
+
+function append(text: string, part: Expr, tail: string, label: string): Fix {
+  const [from, to] = part.at;
+  const old = text.slice(from, to);
+  const loose = part.kind === 'choose' || part.kind === 'compare' || part.kind === 'logic' || part.kind === 'not'
+    || (part.kind === 'binary' && (part.operator === '+' || part.operator === '-'));
+  // A quotient by what was there before binds tighter than a sign and as tight as a product.
+  return { from, to, text: loose ? `(${old})${tail}` : `${old}${tail}`, label };
+}
+
+/** A unit of another quantity that would make the formula fit: per revolution, or counted. */
+function otherUnit(ctx: Context, names: readonly Sought[]): string | undefined {
+  for (const { name, type } of typed(ctx, names)) {
+    if (isDimensionless(type.dimension) || type.temperature !== 'none' || !isZeroR(type.counts.r) || !isZeroR(type.counts.hz)) continue;
+    const unit = type.unitText;
+    if (unit === undefined || !isZeroR(type.counts.rad)) continue;
+    if (ctx.prove!(ctx.text, recounted(ctx.scope, name, negR(oneR)))) {
+      return `give ${plainName(name)} a unit per revolution (${perRevolution(unit)})`;
+    }
+    if (isPerTime(type) && ctx.prove!(ctx.text, recounted(ctx.scope, name, oneR))) {
+      return `give ${plainName(name)} in r/s or Hz if it counts revolutions`;
+    }
+  }
+  return undefined;
+}
+
+function isPerTime(type: QuantityType): boolean {
+  return type.dimension.every((exponent, index) => (index === 2 ? exponent.n === -1 && exponent.d === 1 : exponent.n === 0));
+}
+
+function recounted(scope: Scope, name: string, by: Rational): Scope {
+  const changed = (type: Type): Type => (type.kind === 'quantity' ? { ...type, counts: { ...type.counts, r: addR(type.counts.r, by) } } : type);
+  return {
+    typeOf: (asked) => {
+      const type = scope.typeOf(asked);
+      return asked === name && typeof type === 'object' ? changed(type) : type;
+    },
+    table: (table) => scope.table(table),
+    names: () => scope.names(),
+    tableNames: () => scope.tableNames(),
+    ...(scope.decimalSign && { decimalSign: scope.decimalSign }),
+  };
+}
+
+/** 'mm' → 'mm/r', 'm/s' → 'm/(s·r)'. */
+function perRevolution(unit: string): string {
+  const slash = unit.indexOf('/');
+  if (slash < 0) return `${unit}/r`;
+  const below = unit.slice(slash + 1).replace(/^\(|\)$/g, '');
+  return `${unit.slice(0, slash)}/(${below}·r)`;
+}
+
+function isCountTarget(ctx: Context): boolean {
+  const target = ctx.target;
+  return target !== undefined && isDimensionless(target.dimension) && isZeroR(target.counts.r) && isZeroR(target.counts.rad)
+    && ctx.proveTarget?.('r') === true;
+}
+
+export function applied(text: string, edits: readonly Fix[]): string {
+  let changed = text;
+  for (const edit of [...edits].sort((a, b) => b.from - a.from)) changed = changed.slice(0, edit.from) + edit.text + changed.slice(edit.to);
+  return changed;
+}
+
+/** Several edits as one, over the span from the first to the last. */
+function joined(text: string, edits: readonly Fix[], label: string): Fix {
+  const from = Math.min(...edits.map((edit) => edit.from));
+  const to = Math.max(...edits.map((edit) => edit.to));
+  const changed = applied(text, edits);
+  return { from, to, text: changed.slice(from, changed.length - (text.length - to)), label };
+}
+
+const absolute = '"-273.15 degC"';
+
+export function proposeForTemperature(ctx: Context, fault: TemperatureFault, sides: readonly Side[], at: Span): readonly Fix[] {
+  if (!ctx.propose) return [];
+  const written = (side: Side): string => ctx.text.slice(...side.expr.at);
+  const reading = sides.find((side) => side.type.temperature === 'reading');
+  const other = sides.find((side) => side.type.temperature !== 'reading');
+  if (fault === 'reading and difference' && other?.type.zero) {
+    const text = `"0 ${reading?.type.unitText ?? 'degC'}"`;
+    return [{ from: other.expr.at[0], to: other.expr.at[1], text, label: `write ${text}` }];
+  }
+  if (fault === 'difference - reading' && reading && other && isAtom(other.expr) && isAtom(reading.expr)) {
+    const turned = `${written(reading)} - ${written(other)}`;
+    const kelvin = `${written(other)} - (${written(reading)} - ${absolute})`;
+    return [turned, kelvin].map((text) => ({ from: at[0], to: at[1], text, label: `write ${text}` }));
+  }
+  if (fault === 'reading + reading' && sides.length === 2 && sides.every((side) => isAtom(side.expr))) {
+    const before = ctx.text.slice(0, at[0]);
+    const after = ctx.text.slice(at[1]);
+    const head = /\(\s*$/.exec(before);
+    const tail = /^\s*\)\s*(?:\/\s*2|\*\s*0\.5)(?![\d.])/.exec(after);
+    if (!head || !tail) return [];
+    const [a, b] = sides.map(written);
+    const text = `${a} + (${b} - ${a})/2`;
+    const inside = head.index > 0 || tail[0].length < after.length;
+    return [{ from: head.index, to: at[1] + tail[0].length, text: inside ? `(${text})` : text, label: `write ${text}` }];
+  }
+  return [];
+}
+
+const isAtom = (expr: Expr): boolean => expr.kind === 'name' || expr.kind === 'parens' || expr.kind === 'quoted';
