@@ -1,0 +1,140 @@
+// What to propose for a unit that is not known.
+//
+// 1. A proposal is never taken by itself: 'KW' is refused, and kW offered.
+// 2. Order: what the trade writes instead of it, the same letters in other cases, two symbols run together, its name in words,
+//    then the fewest changed letters. Three proposals at most.
+// Not here: the catalogue (catalogue.ts).
+
+import { misusedPrefix, symbolOfText, unitRows, usualSymbols, allSpellings } from './catalogue.ts';
+import { either, type Failure, fail, quote } from './problem.ts';
+
+const most = 3;
+const longestCompared = 24;
+
+/** Spellings in use that are no symbols, or not safely one, and what to write. */
+const instead: ReadonlyMap<string, readonly string[]> = new Map([
+  ['mph', ['mi/h']], ['kph', ['km/h']], ['kmh', ['km/h']], ['kmph', ['km/h']], ['mps', ['m/s']], ['fps', ['ft/s']], ['fpm', ['ft/min']],
+  ['cfm', ['ft³/min']], ['gpm', ['gal/min']], ['lpm', ['L/min']], ['rps', ['r/s']], ['cc', ['cm³']], ['ccm', ['cm³']], ['cbm', ['m³']],
+  ['sqm', ['m²']], ['sqmm', ['mm²']], ['qmm', ['mm²']], ['sqft', ['ft²']], ['sqin', ['in²']], ['cuft', ['ft³']], ['cuin', ['in³']],
+  ['psf', ['lbf/ft²']], ['ksf', ['kip/ft²']], ['plf', ['lbf/ft']], ['klf', ['kip/ft']], ['pli', ['lbf/in']], ['pcf', ['lb/ft³']], ['pci', ['lb/in³']],
+  ['ton', ['ton_short', 'ton_long', 't']], ['tons', ['ton_short', 'ton_long', 't']], ['short', ['ton_short']], ['long', ['ton_long']],
+  ['gr', ['g', 'grain']], ['grs', ['g', 'grain']], ['gms', ['g']], ['gm', ['g']], ['mtr', ['m']], ['mtrs', ['m']], ['metric', ['t']],
+  ['turn', ['r']], ['turns', ['r']], ['revs', ['r']], ['U', ['r']], ['upm', ['r/min']], ['grad', ['gon', '°']], ['degrees', ['°']],
+  ['percent', ['%']], ['pct', ['%']], ['pound', ['lb', 'lbf']], ['pounds', ['lb', 'lbf']], ['ounces', ['oz', 'ozf']], ['feet', ['ft']],
+  ['inches', ['in']], ['R', ['°R', 'r']], ['Ra', ['°R']], ['centigrade', ['°C']], ['celsius', ['°C']], ['fahrenheit', ['°F']], ['ata', ['at']], ['atü', ['at']],
+  ['barg', ['bar']], ['bara', ['bar']], ['psig', ['psi']], ['psia', ['psi']], ['Nm3', ['m³']], ['Sm3', ['m³']], ['VA', ['V·A']], ['kVA', ['kV·A']],
+  ['CV', ['hp_metric']], ['cv', ['hp_metric']], ['tonf', ['kip']], ['micron', ['µm']], ['microns', ['µm']], ['Nw', ['N']], ['secs', ['s']],
+  ['hour', ['h']], ['hours', ['h']], ['minutes', ['min', 'arcmin']], ['days', ['d']], ['Kelvin', ['K']], ['amp', ['A']], ['amps', ['A']],
+]);
+
+let spelledAlike: Map<string, string[]> | undefined;
+
+/** Symbols that differ from the text in the case of letters alone, the most alike first. */
+function otherCase(text: string): readonly string[] {
+  if (!spelledAlike) {
+    spelledAlike = new Map();
+    for (const [spelling, symbol] of allSpellings()) {
+      const key = spelling.toLowerCase();
+      const known = spelledAlike.get(key);
+      if (!known) spelledAlike.set(key, [symbol]);
+      else if (!known.includes(symbol)) known.push(symbol);
+    }
+  }
+  const usual = new Set(usualSymbols);
+  const rank = (symbol: string) => (usual.has(symbol) ? 0 : 10) + [...symbol].filter((char, place) => char !== text[place]).length;
+  const all = spelledAlike.get(text.toLowerCase()) ?? [];
+  const known = all.filter((symbol) => usual.has(symbol));
+  return [...(known.length > 0 ? known : all)].sort((a, b) => rank(a) - rank(b));
+}
+
+/** "Nm" → "N·m", "kWh" → "kW·h": two symbols that stand together without a sign, each with a usual spelling. */
+function runTogether(text: string): readonly string[] {
+  const usual = new Set(usualSymbols);
+  const pairs: string[] = [];
+  for (let cut = 1; cut < text.length; cut++) {
+    const [left, right] = [symbolOfText(text.slice(0, cut)), symbolOfText(text.slice(cut))];
+    if (left && right && usual.has(left.text) && usual.has(right.text)) pairs.push(`${left.text}·${right.text}`);
+  }
+  return pairs;
+}
+
+function byName(text: string): readonly string[] {
+  const word = text.toLowerCase().replace(/meter/, 'metre').replace(/liter/, 'litre').replace(/(?<=[a-z]{3})s$/, '');
+  if (word.length < 3) return [];
+  return unitRows.filter((row) => row.name.toLowerCase() === word || row.name.toLowerCase() === text.toLowerCase()).map((row) => row.symbol);
+}
+
+/** Changed, missing, added or swapped letters between two texts; gives up above `limit`. */
+function editDistance(a: string, b: string, limit: number): number {
+  if (Math.abs(a.length - b.length) > limit) return limit + 1;
+  let beforeLast: number[] = [];
+  let last = Array.from({ length: b.length + 1 }, (_, place) => place);
+  for (let i = 1; i <= a.length; i++) {
+    const row = [i];
+    for (let j = 1; j <= b.length; j++) {
+      const same = a[i - 1] === b[j - 1];
+      let cost = Math.min((last[j] ?? 0) + 1, (row[j - 1] ?? 0) + 1, (last[j - 1] ?? 0) + (same ? 0 : 1));
+      if (i > 1 && j > 1 && a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1]) cost = Math.min(cost, (beforeLast[j - 2] ?? 0) + 1);
+      row.push(cost);
+    }
+    beforeLast = last;
+    last = row;
+  }
+  return last[b.length] ?? limit + 1;
+}
+
+function byLetters(text: string): readonly string[] {
+  const limit = text.length <= 2 ? 1 : text.length <= 5 ? 1 : 2;
+  const ranked: { symbol: string; distance: number }[] = [];
+  for (const symbol of usualSymbols) {
+    if (symbol.length < 2) continue;
+    const distance = editDistance(text, symbol, limit) + editDistance(text.toLowerCase(), symbol.toLowerCase(), limit) / 10;
+    if (distance <= limit + limit / 10) ranked.push({ symbol, distance });
+  }
+  // A stable sort: of two at the same distance the one that stands first in the catalogue.
+  return ranked.sort((a, b) => a.distance - b.distance).map(({ symbol }) => symbol);
+}
+
+/** The nearest known units to a text that is not one; [] where none is near. */
+export function nearestUnits(text: string): string[] {
+  const word = text.trim();
+  if (word === '' || word.length > longestCompared) return [];
+  const written = instead.get(word) ?? instead.get(word.toLowerCase());
+  if (written) return [...written];
+  const prefixed = misusedPrefix(word)?.instead ?? [];
+  const exact = [...prefixed, ...otherCase(word), ...runTogether(word), ...byName(word)];
+  const all = exact.length > 0 ? exact : byLetters(word);
+  return [...new Set(all)].slice(0, most);
+}
+
+const annotation = /^(.+?)_[\p{L}\d]+$/u;
+const attachedAnnotation = /^(.+?)(?:el|th|mech|rms|eff|max|min|DC|AC|pk|abs|g|a)$/u;
+const pressureAnnotations = new Set(['barg', 'bara', 'psig', 'psia']);
+
+/** The unit before what was added to it: "kW" of "kW_el"; undefined where nothing was. */
+function annotated(text: string): string | undefined {
+  const base = annotation.exec(text)?.[1];
+  if (base !== undefined) return symbolOfText(base)?.text;
+  if (pressureAnnotations.has(text)) return text.slice(0, -1);
+  const attached = /^k?[VAW]/.test(text) || /^M?W/.test(text) ? attachedAnnotation.exec(text)?.[1] : undefined;
+  return attached === undefined || symbolOfText(text) ? undefined : symbolOfText(attached)?.text;
+}
+
+/** The failure for a symbol at [from, to) of a unit text. */
+export function unknownSymbol(word: string, from: number, to: number, text: string): Failure {
+  const base = annotated(word);
+  if (base !== undefined) {
+    const message = `${quote(word)} adds something to the unit ${base}: what it tells belongs to the name of the quantity. Write ${base}.`;
+    return fail('unit-annotation', message, from, to, [base]);
+  }
+  const prefix = misusedPrefix(word);
+  if (prefix && prefix.instead.length > 0) {
+    return fail('unit-prefix', `${prefix.message}: write ${either(prefix.instead)}.`, from, to, prefix.instead);
+  }
+  const near = nearestUnits(word);
+  const inside = word === text.trim() ? '' : ` in ${quote(text)}`;
+  if (near.length > 0) return fail('unknown-unit', `The unit ${quote(word)}${inside} is not known: write ${either(near)}.`, from, to, near);
+  if (prefix) return fail('unit-prefix', `In the unit ${quote(text)}, ${prefix.message}.`, from, to);
+  const message = `The unit ${quote(word)}${inside} is not known, and none is near to it: write a unit such as N, mm, kW, lbf or psi.`;
+  return fail('unknown-unit', message, from, to);
+}
