@@ -7,3 +7,8 @@ export { functionNames, tableFunctions } from './functions.ts';
 export { type Formula, longestFormula, parseFormula } from './parse.ts';
 export { type Token, type TokenKind, tokenize } from './tokens.ts';
 export { nothingTaken, type Taken, type TakenRow } from './taken.ts';
+export { type Substitution, texSubstituted, texSymbols } from './typeset.ts';
+export { plainName, speakName, texName, texText } from './symbols.ts';
+export { calculatorLine, evaluateWith, lineNumber } from './calculator.ts';
+export { calculate } from './calculate.ts';
+export { readLiteral } from './literal.ts';

@@ -62,8 +62,13 @@ export const reserved: ReadonlySet<string> = new Set([
   'pi', 'e', 'and', 'or', 'not', 'in', 'to', 'mod', 'xor', 'true', 'false', 'null', 'undefined', 'NaN', 'Infinity', 'end',
 ]);
 
+/** Whether a canonical text is a letter, then letters, digits, `_`: a name, if it is not reserved. */
+export function isWord(text: string): boolean {
+  return canonical.test(text);
+}
+
 /** Whether a text, in canonical form, can name a quantity: a letter, then letters, digits, `_`; not reserved. */
 export function isName(text: string): boolean {
   const name = canonicalName(text);
-  return canonical.test(name) && !reserved.has(name);
+  return isWord(name) && !reserved.has(name);
 }

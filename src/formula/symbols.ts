@@ -1,11 +1,11 @@
 // How the name of a quantity looks and sounds: typeset, as plain text, read aloud.
 //
 // 1. By ISO 80000-1: the symbol italic, its subscript upright unless it is a running index; Greek by its letter.
-// 2. Two different names never look the same: what cannot be told apart otherwise keeps its `_` as a comma.
+// 2. Two different names never have the same TeX: a second `_` is a comma, digits without `_` stay in the symbol.
 // 3. Whatever the name or text, the TeX passes KaTeX at `strict: 'error'`, `trust: false`.
 // Not here: which texts are names (names.ts), units (the quantity room).
 
-import { canonicalName, greekLetter } from './names.ts';
+import { canonicalName, greekLetter, isWord } from './names.ts';
 
 const slantedCapitals = new Set(['Gamma', 'Delta', 'Theta', 'Lambda', 'Xi', 'Pi', 'Sigma', 'Upsilon', 'Phi', 'Psi', 'Omega']);
 const longestGreek = 7;
@@ -17,7 +17,10 @@ export function texName(name: string): string {
   const known = cache.get(name);
   if (known !== undefined) return known;
   const [head, subscript] = split(name);
-  const tex = subscript === undefined ? texHead(head) : `${texHead(head)}_{${subscript.split('_').map(texPiece).join(',\\,')}}`;
+  const tex =
+    !isWord(name) ? texText(name)
+    : subscript === undefined ? texHead(head)
+    : `${texHead(head)}_{${subscript.split('_').map(texPiece).join(',\\,')}}`;
   if (cache.size >= cacheSize) cache.clear();
   cache.set(name, tex);
   return tex;
@@ -94,7 +97,8 @@ function texPiece(piece: string): string {
   if (piece === '') return '\\_';
   return runs(piece).map((run) => {
     if (/^[0-9]+$/.test(run) || /^[ijk]$/.test(run)) return run;
-    if (greekLetter(run) !== undefined) return texGreek(run);
+    const word = run.replace(/[0-9]+$/, '');
+    if (greekLetter(word) !== undefined) return `${texGreek(word)} ${run.slice(word.length)}`.trim();
     return /^[A-Za-z0-9]+$/.test(run) ? `\\mathrm{${run}}` : `\\text{${run}}`;
   }).join('\\,');
 }
