@@ -7,12 +7,12 @@
 // Not here: raising digits (closing.ts), TeX (steps.ts), the criterion's own numbers (verdict.ts).
 
 import { canonicalName, type Formula, type Taken } from '../formula/index.ts';
-import { isAngleUnit, type Numeral, one, type Unit } from '../quantity/index.ts';
+import { isAngleUnit, type Numeral, one, type Unit, unitOf } from '../quantity/index.ts';
 import type { Calculation, CriterionState, DerivedState } from '../sheet/index.ts';
 import { type ClosingItem, type ClosingStep, closeSteps, type OpenReason, type Verdict } from './closing.ts';
 import { comesOut } from './comes-out.ts';
 import { type Line, type Operand, readLine } from './line.ts';
-import { calculatorNumeral, computedNumber, type PrintedNumber, typedNumber, unitNamed } from './numerals.ts';
+import { calculatorNumeral, computedNumber, type PrintedNumber, typedNumber } from './numerals.ts';
 import { type ComputedState, stepOrder } from './step-order.ts';
 import { demandIsLeft, holds, room, utilisationNumeral } from './verdict.ts';
 
@@ -29,6 +29,7 @@ export interface PrintedVerdict {
   readonly result: Printed;
   readonly calculator: Numeral;
   readonly isUtilisation: boolean;
+  readonly met: boolean;
   /** True where no printed digits can show which side is greater. */
   readonly tooClose: boolean;
 }
@@ -53,8 +54,8 @@ interface Slot {
   readonly item: number;
 }
 
-const radian = unitNamed('rad');
-const kelvin = unitNamed('K');
+const radian = unitOf('rad');
+const kelvin = unitOf('K');
 
 function printCase(calculation: Calculation, index: number, order: readonly ComputedState[]): CasePrint {
   const items: ClosingItem[] = [];
@@ -228,6 +229,7 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
       result: { numeral: result.numeral(start), unit: resultUnit, si: result.si(start) },
       calculator,
       isUtilisation: utilisation !== null,
+      met,
     }));
   };
 

@@ -4,14 +4,17 @@
 
 const entities: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' };
 
-/** For element content and quoted attributes. Characters that no document may hold (C0 controls, lone surrogates) become U+FFFD. */
+/** C0 controls and halves of characters. */
+const unfit = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f\p{Surrogate}]/gu;
+
+/** For element content and quoted attributes. What no document may hold becomes U+FFFD. */
 export function escapeHtml(text: string): string {
-  return text.toWellFormed().replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/gu, '\ufffd').replace(/[&<>"']/gu, (sign) => entities[sign] ?? sign);
+  return text.replace(unfit, '\ufffd').replace(/[&<>"']/gu, (sign) => entities[sign] ?? sign);
 }
 
 /** A CSS string, quotes included; everything but letters, digits and spaces is written as a code point. */
 export function cssString(text: string): string {
-  const safe = text.toWellFormed().replace(/[^\p{L}\p{N} ]/gu, (sign) => `\\${(sign.codePointAt(0) ?? 0xfffd).toString(16)} `);
+  const safe = text.replace(unfit, '\ufffd').replace(/[^\p{L}\p{N} ]/gu, (sign) => `\\${(sign.codePointAt(0) ?? 0xfffd).toString(16)} `);
   return `"${safe}"`;
 }
 

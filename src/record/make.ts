@@ -8,10 +8,10 @@ import { printNumeral, readNumeral } from '../quantity/index.ts';
 import type { Calculation, CellState, LoadCase, NoteState, TableState } from '../sheet/index.ts';
 import { type CasePrint, printCases } from './case-print.ts';
 import { assumptionsOf, openPointsOf, referencesOf, summaryOf } from './heads.ts';
-import type { Line, RecordModel, Step } from './model.ts';
+import type { Line, RecordModel } from './model.ts';
 import { readProse } from './prose.ts';
 import { makeStep, printedValue } from './steps.ts';
-import { citations, inCases, isBlank, noSource, replaceLive } from './words.ts';
+import { citationNotes, inCases, isBlank, noSource, replaceLive } from './words.ts';
 
 export function makeRecord(calculation: Calculation): RecordModel {
   const { sheet } = calculation;
@@ -92,13 +92,14 @@ function noteLine(calculation: Calculation, state: NoteState, prints: readonly C
 
 function tableLine(calculation: Calculation, state: TableState): Line {
   const { cell, data } = state;
+  const { sheet } = calculation;
   const heads = cell.columns.map((column) => {
     const unit = column.unit === undefined || column.unit === '1' ? '' : column.unit;
     const read = data?.columns.find((each) => each.name === column.name)?.unit;
     return { title: column.title ?? column.name, unit: unit === '' ? '' : (read?.text ?? unit), numeric: column.unit !== undefined };
   });
   const rows = cell.rows.map((row) => row.map((text, k) => (heads[k]?.numeric ? asPrinted(text, calculation.style.decimalSign) : text)));
-  const notes = [...messages(state), ...(isBlank(cell.source) ? [noSource] : []), ...unknownCitations(calculation, cell.source)];
+  const notes = [...messages(state), ...(isBlank(cell.source) ? [noSource] : []), ...citationNotes(cell.source, sheet)];
   return { kind: 'table', cell: cell.id, title: cell.title ?? '', name: cell.name, source: cell.source ?? '', heads, rows, notes };
 }
 
@@ -131,15 +132,4 @@ function plainLine(calculation: Calculation, state: Extract<CellState, { kind: '
 
 function messages(state: CellState): readonly string[] {
   return [...new Set(state.problems.map((problem) => problem.message))];
-}
-
-export function unknownCitations(calculation: Calculation, source: string | undefined): readonly string[] {
-  const known = new Set((calculation.sheet.references ?? []).map((entry) => entry.id));
-  return citations(source)
-    .filter((id) => !known.has(id))
-    .map((id) => `[${id}] is not in the list of sources`);
-}
-
-export function stepsOf(model: RecordModel): ReadonlyMap<string, Step> {
-  return new Map(model.steps.map((step) => [step.cell, step]));
 }

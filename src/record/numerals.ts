@@ -12,7 +12,6 @@ import {
   type Numeral,
   numeralInUnit,
   numeralOfDouble,
-  readUnit,
   type Rounding,
   roundAtPlace,
   roundSignificant,
@@ -57,13 +56,6 @@ export function calculatorNumeral(value: number, printed: Numeral, unit: Unit, r
   if (isZeroNumeral(full)) return full;
   if (unit.reading !== undefined) return roundAtPlace(full, lastPlace(printed), rounding);
   return roundSignificant(full, significantDigits(printed), rounding);
-}
-
-/** A unit that the catalogue is known to have. */
-export function unitNamed(text: string): Unit {
-  const read = readUnit(text);
-  if (!read.ok) throw new Error(`the catalogue lacks ${text}`);
-  return read.value;
 }
 
 /** A given's calculator result: exact, with the zeros that were typed (`0.200` for 200 mm). */

@@ -5,7 +5,7 @@
 // 3. Temperature readings have no ratio (20 °C is not twice 10 °C): their criteria show the room in K.
 // Not here: the comparison itself (src/sheet), the digits of the sides (closing.ts).
 
-import { lastPlace, type Numeral, numeralOfDouble, plainNumeral, roundAtPlace, significantDigits } from '../quantity/index.ts';
+import { firstPlace, lastPlace, type Numeral, numeralOfDouble, plainNumeral, roundAtPlace, roundSignificant } from '../quantity/index.ts';
 import type { Relation } from '../sheet/index.ts';
 
 export const hundredths = -2;
@@ -13,14 +13,11 @@ export const hundredths = -2;
 /** `utilisation` is positive and finite; `met` the verdict on the unrounded sides. */
 export function utilisationNumeral(utilisation: number, relation: Relation, met: boolean): Numeral {
   const full = numeralOfDouble(utilisation);
-  const firstPlace = lastPlace(full) + significantDigits(full) - 1;
-  let place = Math.min(hundredths, firstPlace - 1);
-  let printed = roundAtPlace(full, place, 'up');
+  let printed = firstPlace(full) < hundredths + 1 ? roundSignificant(full, 2, 'up') : roundAtPlace(full, hundredths, 'up');
   const strict = relation === '<' || relation === '>';
   // Met with < or >: the true value is below 1, and so is the printed one, with as many decimals as that takes.
-  while (met && strict && utilisation < 1 && Number(plainNumeral(printed)) >= 1 && place > -18) {
-    place -= 1;
-    printed = roundAtPlace(full, place, 'up');
+  while (met && strict && utilisation < 1 && Number(plainNumeral(printed)) >= 1 && lastPlace(printed) > -18) {
+    printed = roundAtPlace(full, lastPlace(printed) - 1, 'up');
   }
   // Not met by less than a double can tell from 1.
   if (!met && !strict && Number(plainNumeral(printed)) <= 1) return { negative: false, digits: '101', exponent: hundredths };
@@ -45,4 +42,5 @@ export function holds(left: number, relation: Relation, right: number): boolean 
 }
 
 export const texRelation: Readonly<Record<Relation, string>> = { '<': '<', '<=': '\\le', '>': '>', '>=': '\\ge' };
-export const plainRelation: Readonly<Record<Relation, string>> = { '<': '<', '<=': '≤', '>': '>', '>=': '≥' };
+/** What holds instead where the relation does not. */
+export const texUnmet: Readonly<Record<Relation, string>> = { '<': '\\ge', '<=': '>', '>': '\\le', '>=': '<' };

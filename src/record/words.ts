@@ -42,6 +42,14 @@ export function citations(source: string | undefined): readonly string[] {
   return [...found];
 }
 
+/** What is cited without being in the list of references. */
+export function citationNotes(source: string | undefined, sheet: Sheet): readonly string[] {
+  const known = new Set((sheet.references ?? []).map((entry) => entry.id));
+  return citations(source)
+    .filter((id) => !known.has(id))
+    .map((id) => `[${id}] is not in the list of sources`);
+}
+
 /** One text where all cases agree, otherwise 'Steady running 15.2 m/s; Start-up 3 m/s'; null stands for no value. */
 export function inCases(texts: readonly (string | null)[], titles: readonly string[]): string {
   const shown = texts.map((text) => text ?? 'no value');

@@ -1,0 +1,21 @@
+// What other rooms may use of the record. Only exports stand here.
+
+export type { OpenReason } from './closing.ts';
+export { criteriaWords, footerCaution, recordHtml } from './html.ts';
+export type { Face, RecordAssets } from './html-style.ts';
+export { type JsonRecord, type JsonStep, type JsonStepCase, recordJson } from './json.ts';
+export { makeRecord } from './make.ts';
+export type {
+  Assumption,
+  CriterionSummary,
+  Line,
+  OpenPoint,
+  RecordCase,
+  RecordModel,
+  RecordReference,
+  Step,
+  StepCase,
+  StepKind,
+  TableColumnHead,
+} from './model.ts';
+export { type ProseBlock, type ProseSpan, readProse } from './prose.ts';
