@@ -48,6 +48,8 @@ export function faultOf(fault: JsonFault): Found {
       return { path: place, code: 'syntax', what: `expected ${fault.expected}, but ${fault.found}` };
     case 'too-deep':
       return { path: place, code: 'too-deep', what: `nested deeper than a sheet can be (${fault.expected})` };
+    case 'too-many':
+      return { path: place, code: 'too-many', what: `an object with more keys than a sheet can have (${fault.expected})` };
     case 'duplicate-key':
       return { path: fault.path.slice(0, -1), code: 'duplicate-key', what: `the key \`${shorten(fault.found)}\` stands there twice (${place}); keep one` };
     case 'unknown-key':

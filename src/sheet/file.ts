@@ -23,10 +23,13 @@ export type ReadSheet = { readonly ok: true; readonly value: Sheet } | { readonl
 
 /** Files beyond this many UTF-16 units are not read: a sheet of 10 000 cells has about two million. */
 export const largestFile = 64 * 1024 * 1024;
+/** Longer texts are left at their first problem: a list of a million would take longer to make than anybody waits. */
+const longestForList = 1_000_000;
 const mostProblems = 20;
+const endsReading: ReadonlySet<string> = new Set(['syntax', 'too-deep', 'too-many']);
 
 /**
- * Reads the text of a sheet file. Codes: 'too-large', 'syntax', 'too-deep', 'duplicate-key', 'unknown-key', 'bad-character',
+ * Reads the text of a sheet file. Codes: 'too-large', 'syntax', 'too-deep', 'too-many', 'duplicate-key', 'unknown-key', 'bad-character',
  * 'not-a-sheet', 'newer-format', 'missing-key', 'wrong-type', 'bad-value', 'duplicate-id'.
  */
 export function readSheet(text: string): ReadSheet {
@@ -37,13 +40,13 @@ export function readSheet(text: string): ReadSheet {
   }
   const json = text.startsWith('\uFEFF') ? text.slice(1) : text;
   const faults = scanJson(json);
-  const syntax = faults.find((fault) => fault.code === 'syntax' || fault.code === 'too-deep');
-  if (syntax) return refused([faultOf(syntax)]);
+  const [end] = faults;
+  if (end && endsReading.has(end.code)) return refused([faultOf(end)]);
   const value: unknown = JSON.parse(json);
   const notSheet = wrongFormat(value);
   if (notSheet) return refused([notSheet]);
   const found: Found[] = faults.map(faultOf);
-  const parsed = v.safeParse(sheetSchema, value);
+  const parsed = v.safeParse(sheetSchema, value, { abortEarly: json.length > longestForList });
   if (!parsed.success) found.push(...parsed.issues.map((issue) => issueOf(issue, value)));
   else found.push(...duplicates(parsed.output as Sheet));
   if (found.length > 0) return refused(withoutRepeats(found), value);

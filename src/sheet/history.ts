@@ -2,13 +2,13 @@
 //
 // 1. A history is plain JSON and belongs to one sheet: kept with it, it lives across reloads.
 // 2. `past` and `future` are stacks; the last entry is the next to undo or redo. A new step empties the future.
-// 3. Typing in one place becomes one step: steps with the same `key`, none longer than `pause` after the one before, are joined.
+// 3. Typing in one place becomes one step: steps with the same `key`, none later than `typingPause` after the one before, are joined.
 // Not here: what an edit does (edit.ts), where the history is kept (src/store).
 
 import type { Cell, Sheet } from './document.ts';
 import { applyEdit, type Edit } from './edit.ts';
 
-export interface Step {
+export interface HistoryStep {
   /** What was changed, in words: 'value of d_1'. */
   readonly label: string;
   readonly edit: Edit;
@@ -18,10 +18,10 @@ export interface Step {
   readonly time?: number;
 }
 export interface History {
-  readonly past: readonly Step[];
-  readonly future: readonly Step[];
+  readonly past: readonly HistoryStep[];
+  readonly future: readonly HistoryStep[];
 }
-export interface Changed {
+export interface Performed {
   readonly sheet: Sheet;
   readonly history: History;
   readonly label: string;
@@ -29,7 +29,7 @@ export interface Changed {
 
 export const emptyHistory: History = { past: [], future: [] };
 /** Longest pause within one run of typing, in milliseconds. */
-export const pause = 2000;
+export const typingPause = 2000;
 
 /** Applies an edit and notes it. `key` marks typing in one place, `time` is the moment of the key stroke. */
 export function perform(
@@ -37,24 +37,24 @@ export function perform(
   history: History,
   edit: Edit,
   options: { readonly label?: string; readonly key?: string; readonly time?: number } = {},
-): Changed {
+): Performed {
   const edited = applyEdit(sheet, edit);
-  const step: Step = { ...options, label: options.label ?? labelOf(sheet, edit), edit, inverse: edited.inverse };
+  const step: HistoryStep = { ...options, label: options.label ?? labelOf(sheet, edit), edit, inverse: edited.inverse };
   return { sheet: edited.sheet, history: note(history, step), label: step.label };
 }
 
-function note(history: History, step: Step): History {
+function note(history: History, step: HistoryStep): History {
   const last = history.past.at(-1);
   if (last && history.future.length === 0 && continues(last, step)) return { past: [...history.past.slice(0, -1), joined(last, step)], future: [] };
   return { past: [...history.past, step], future: [] };
 }
 
-function continues(last: Step, step: Step): boolean {
+function continues(last: HistoryStep, step: HistoryStep): boolean {
   if (step.key === undefined || last.key !== step.key || step.time === undefined || last.time === undefined) return false;
-  return step.time - last.time <= pause && step.time >= last.time;
+  return step.time - last.time <= typingPause && step.time >= last.time;
 }
 
-function joined(last: Step, step: Step): Step {
+function joined(last: HistoryStep, step: HistoryStep): HistoryStep {
   const overwrites = placeOf(last.edit) !== undefined && placeOf(last.edit) === placeOf(step.edit);
   if (overwrites) return { ...step, inverse: last.inverse };
   return {
@@ -70,7 +70,7 @@ function placeOf(edit: Edit): string | undefined {
   return edit.kind === 'set-head' ? `head ${edit.key}` : undefined;
 }
 
-export function undo(sheet: Sheet, history: History): Changed | undefined {
+export function undo(sheet: Sheet, history: History): Performed | undefined {
   const step = history.past.at(-1);
   if (!step) return undefined;
   return {
@@ -80,7 +80,7 @@ export function undo(sheet: Sheet, history: History): Changed | undefined {
   };
 }
 
-export function redo(sheet: Sheet, history: History): Changed | undefined {
+export function redo(sheet: Sheet, history: History): Performed | undefined {
   const step = history.future.at(-1);
   if (!step) return undefined;
   // The step taken back and done again begins no run of typing: `key` is dropped.

@@ -9,7 +9,7 @@
 export type JsonPath = readonly (string | number)[];
 
 export interface JsonFault {
-  readonly code: 'syntax' | 'too-deep' | 'duplicate-key' | 'unknown-key' | 'bad-character';
+  readonly code: 'syntax' | 'too-deep' | 'too-many' | 'duplicate-key' | 'unknown-key' | 'bad-character';
   readonly path: JsonPath;
   /** From 1; the column counts characters as an editor does. */
   readonly line: number;
@@ -22,6 +22,8 @@ export interface JsonFault {
 
 /** Deeper than any sheet: marks and log nest a few levels, a sheet four. */
 export const deepest = 64;
+/** More keys than any object of a sheet has: values by case are the most. */
+export const mostKeys = 10_000;
 const mostFaults = 20;
 /** Keys that mean something to objects of the language: never a key of a sheet. */
 const refusedKeys: ReadonlySet<string> = new Set(['__proto__', 'constructor', 'prototype']);
@@ -104,6 +106,7 @@ export function scanJson(text: string): readonly JsonFault[] {
         else if (refusedKeys.has(key)) faults.push(faultAt('unknown-key', keyAt, 'a key of a sheet', key));
       }
       keys.add(key);
+      if (keys.size > mostKeys) throw new Stop(faultAt('too-many', keyAt, `at most ${mostKeys} keys`, key));
       checkCharacters(key, keyAt);
       space();
       if (text[at] !== ':') stop('a colon after the key');

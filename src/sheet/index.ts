@@ -1,0 +1,13 @@
+export * from './criterion.ts';
+export * from './document.ts';
+export * from './numbering.ts';
+export * from './state.ts';
+export * from './cases.ts';
+export * from './edit.ts';
+export { type FileProblem, type ReadSheet, readSheet, writeSheet } from './file.ts';
+export { buildGraph, type Graph } from './graph.ts';
+export * from './history.ts';
+export { badCharacters } from './json-text.ts';
+export { nameFault } from './rename.ts';
+export { cellSchema, idPattern, isSheet, sheetSchema } from './schema.ts';
+export * from './template.ts';
