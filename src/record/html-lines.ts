@@ -9,8 +9,22 @@ import { escapeHtml, safeImage } from './escape.ts';
 import { renderTex } from './html-math.ts';
 import type { Line, RecordModel, Step, StepCase } from './model.ts';
 import type { ProseBlock, ProseSpan } from './prose.ts';
+import { noSource } from './words.ts';
 
 export const mostColumns = 3;
+
+/** Short mark of a case on its lines: A, B, C …; '' where there is only one. */
+export function caseMark(index: number, count: number): string {
+  if (count < 2) return '';
+  return index < 26 ? String.fromCharCode(65 + index) : String(index + 1);
+}
+
+/** The head of a case: its mark and its title. */
+export function caseHead(model: RecordModel, index: number): string {
+  const mark = caseMark(index, model.cases.length);
+  const title = escapeHtml(model.cases[index]?.title ?? '');
+  return mark === '' ? title : `<span class="mark">${mark}</span> ${title}`;
+}
 
 export function prose(blocks: readonly ProseBlock[]): string {
   return blocks
@@ -31,15 +45,15 @@ function spans(list: readonly ProseSpan[]): string {
 
 export function stepsTable(model: RecordModel): string {
   const wide = model.cases.length <= mostColumns;
-  const titles = model.cases.map((each) => each.title);
-  const heads = wide && titles.length > 1 ? titles : ['Result'];
+  const heads = wide && model.cases.length > 1 ? model.cases.map((_, k) => caseHead(model, k)) : ['Result'];
   const result = heads.length === 1 ? 17 : heads.length === 2 ? 15 : 13.5;
   const columns = `<colgroup><col style="width:15%"><col>${heads.map(() => `<col style="width:${result}%">`).join('')}</colgroup>`;
   const head = `<thead><tr><th scope="col">Source</th><th scope="col">Calculation</th>${heads
-    .map((title) => `<th scope="col" class="res">${escapeHtml(title)}</th>`)
+    .map((title) => `<th scope="col" class="res">${title}</th>`)
     .join('')}</tr></thead>`;
   const rows = model.lines.map((line) => row(line, model, heads.length)).join('\n');
-  return `<table class="steps">${columns}${head}<tbody>\n${rows}\n</tbody></table>`;
+  const legend = wide ? '' : `<p class="legend">${model.cases.map((_, k) => `<span>${caseHead(model, k)}</span>`).join(' ')}</p>`;
+  return `${legend}<table class="steps">${columns}${head}<tbody>\n${rows}\n</tbody></table>`;
 }
 
 function row(line: Line, model: RecordModel, results: number): string {
@@ -65,50 +79,52 @@ function row(line: Line, model: RecordModel, results: number): string {
 }
 
 function stepRow(step: Step, model: RecordModel, results: number): string {
-  const tags = step.notes.filter((note) => isState(note)).map((note) => `<span class="tag${openState(note) ? ' open' : ''}">${escapeHtml(note)}</span>`);
-  const basis = step.basis === 'specified' || step.basis === 'tabulated' ? ` <span class="basis">(${step.basis})</span>` : '';
-  const source = `<td class="src">${escapeHtml(step.source)}${basis}${tags.length > 0 ? `<br>${tags.join(' ')}` : ''}</td>`;
-  const title = `<p class="t"><span class="n">${escapeHtml(step.number)}</span> ${escapeHtml(step.title)}</p>`;
-  const many = model.cases.length > mostColumns;
-  const lines = many ? `<div class="eq"><span>${renderTex(step.symbols)}</span></div>` : equations(step, model);
+  const count = model.cases.length;
+  const basis = step.basis === undefined ? '' : step.basis === 'assumed' ? ' <span class="tag">assumed</span>' : ` <span class="basis">${step.basis}</span>`;
+  const missing = step.notes.includes(noSource) ? ` <span class="tag open">${noSource}</span>` : '';
+  const source = `<td class="src">${escapeHtml(step.source)}${missing}${basis}</td>`;
+  const tags = step.notes.filter(isOpenState).map((note) => `<span class="tag open">${escapeHtml(note)}</span>`);
+  const title = `<p class="t"><span class="n">${escapeHtml(step.number)}</span> ${escapeHtml(step.title)}${tags.length === 0 ? '' : ` <span class="states">${tags.join(' ')}</span>`}</p>`;
   const remarks = noteLines([
-    ...step.notes.filter((note) => !isState(note)),
+    ...step.notes.filter((note) => note !== noSource && note !== step.basis && !isOpenState(note)),
     ...(step.justification === undefined ? [] : [`Justification: ${step.justification}`]),
   ]);
-  const troubles = problems(step, model);
-  const kind = step.kind === 'criterion' ? ' criterion' : '';
-  const id = ` id="step-${escapeHtml(step.number)}"`;
-  const same = step.cases.every((each) => each.result === step.cases[0]?.result && each.met === step.cases[0]?.met && each.problem === undefined);
-  if (many && !(same && step.cases.every((each) => each.substituted === step.cases[0]?.substituted))) {
-    const first = `<tr class="step${kind}"${id}>${source}<td class="calc">${title}${lines}${troubles}${remarks}</td><td class="res"></td></tr>`;
+  const above = `${title}${problems(step)}${remarks}`;
+  const open = `<tr class="step${step.kind === 'criterion' ? ' criterion' : ''}" id="step-${escapeHtml(step.number)}">${source}`;
+  if (count > mostColumns && !sameInAll(step)) {
     const rest = step.cases.map((each, k) => {
-      const label = `<span class="case">${escapeHtml(model.cases[k]?.title ?? each.case)}</span>`;
-      return `<tr class="step each"><td class="src"></td><td class="calc"><div class="eq">${label}${numbers(each, step)}</div></td>${result(each, '')}</tr>`;
+      const label = `<span class="case">${caseMark(k, count)}</span>`;
+      return `<tr class="step each"><td class="src"></td><td class="calc"><div class="eq">${label}${numbers(each, step)}</div></td>${result(each, caseMark(k, count))}</tr>`;
     });
-    return [first, ...rest].join('\n');
+    return `${open}<td class="calc">${above}<div class="eq"><span>${renderTex(step.symbols)}</span></div></td><td class="res"></td></tr>\n${rest.join('\n')}`;
   }
-  const cells = (many || results === 1 ? step.cases.slice(0, 1) : step.cases).map((each, k) => result(each, model.cases[k]?.title ?? ''));
-  const text = many ? equations(step, model) : lines;
-  return `<tr class="step${kind}"${id}>${source}<td class="calc">${title}${text}${troubles}${remarks}</td>${cells.join('')}</tr>`;
+  const shown = results === 1 ? step.cases.slice(0, 1) : step.cases;
+  const cells = shown.map((each, k) => result(each, results === 1 ? '' : caseMark(k, count)));
+  return `${open}<td class="calc">${above}${equations(step, count)}</td>${cells.join('')}</tr>`;
+}
+
+function sameInAll(step: Step): boolean {
+  const [first] = step.cases;
+  return step.cases.every((each) => each.result === first?.result && each.met === first?.met && each.substituted === first?.substituted && each.problem === undefined);
 }
 
 /** Symbols, then the numbers of each case; once where all cases share them. */
-function equations(step: Step, model: RecordModel): string {
+function equations(step: Step, count: number): string {
   const symbols = `<span>${renderTex(step.symbols)}</span>`;
-  const groups = new Map<string, { first: StepCase; titles: string[] }>();
+  const groups = new Map<string, { first: StepCase; marks: string[] }>();
   step.cases.forEach((each, k) => {
     const key = `${each.sides ?? ''}\n${each.substituted}`;
     if (key === '\n') return;
-    const group = groups.get(key) ?? { first: each, titles: [] };
-    group.titles.push(model.cases[k]?.title ?? each.case);
+    const group = groups.get(key) ?? { first: each, marks: [] };
+    group.marks.push(caseMark(k, count));
     groups.set(key, group);
   });
   if (groups.size === 0) return `<div class="eq">${symbols}</div>`;
-  if (groups.size === 1 && [...groups.values()][0]?.titles.length === step.cases.length) {
+  if (groups.size === 1 && [...groups.values()][0]?.marks.length === step.cases.length) {
     return `<div class="eq">${symbols}${[...groups.values()].map((group) => numbers(group.first, step)).join('')}</div>`;
   }
   const lines = [...groups.values()].map(
-    (group) => `<div class="eq"><span class="case">${escapeHtml(group.titles.join(', '))}</span>${numbers(group.first, step)}</div>`,
+    (group) => `<div class="eq"><span class="case">${group.marks.join(', ')}</span>${numbers(group.first, step)}</div>`,
   );
   return `<div class="eq">${symbols}</div>${lines.join('')}`;
 }
@@ -121,8 +137,8 @@ function numbers(each: StepCase, step: Step): string {
   return `${sides}<span>${renderTex(`\\text{${word}} = ${each.substituted}`)}</span>`;
 }
 
-function result(each: StepCase, title: string): string {
-  const label = title === '' ? '' : ` data-case="${escapeHtml(title)}"`;
+function result(each: StepCase, mark: string): string {
+  const label = mark === '' ? '' : ` data-case="${mark}"`;
   if (each.result === null) return `<td class="res"${label}><span class="wrong">no value</span></td>`;
   const shown = each.resultTex === null ? escapeHtml(each.result) : renderTex(each.resultTex);
   if (each.met === undefined || each.met === null) return `<td class="res"${label}><span>${shown}</span></td>`;
@@ -136,12 +152,12 @@ export function verdict(met: boolean, utilisation: number | null): string {
   return `${word} <span class="bar${met ? '' : ' over'}" aria-hidden="true"><i style="width:${width}%"></i></span>`;
 }
 
-function problems(step: Step, model: RecordModel): string {
+function problems(step: Step): string {
   const texts = new Map<string, string[]>();
   step.cases.forEach((each, k) => {
     if (each.problem === undefined) return;
     const titles = texts.get(each.problem.message) ?? [];
-    titles.push(model.cases[k]?.title ?? '');
+    titles.push(caseMark(k, step.cases.length));
     texts.set(each.problem.message, titles);
   });
   return [...texts]
@@ -156,10 +172,8 @@ function noteLines(notes: readonly string[]): string {
   return notes.map((note) => `<p class="note">${escapeHtml(note)}</p>`).join('');
 }
 
-function isState(note: string): boolean {
-  return note === 'assumed' || note === 'measured' || note === 'no source' || openState(note);
-}
-function openState(note: string): boolean {
+/** States that somebody still has to change stand beside the title, where a reader runs into them. */
+function isOpenState(note: string): boolean {
   return note.startsWith('carried over') || note.startsWith('to be confirmed');
 }
 

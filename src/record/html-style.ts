@@ -64,6 +64,7 @@ main{padding:0 0 1rem}
 .front,.back{padding:0 1rem}
 h2{font-size:12pt;margin:1.1rem 0 .35rem;line-height:1.25;break-after:avoid}
 h3,h4{font-size:10pt;margin:.8rem 0 .25rem;break-after:avoid}
+a{color:var(--author)}
 p{margin:.25rem 0}
 ul,ol{margin:.25rem 0;padding-left:1.3rem}
 .fields{display:grid;grid-template-columns:repeat(auto-fill,minmax(11rem,1fr));margin:0 -1rem;border-bottom:1px solid var(--rule)}
@@ -93,7 +94,13 @@ tr.section{break-after:avoid}
 .eq{margin:.15rem 0 0;overflow-wrap:anywhere}
 .eq .katex{font-size:1.12em}
 .eq>span{display:inline-block;max-width:100%;vertical-align:middle;margin:.1rem .3em .1rem 0}
-.case{color:var(--second);font-size:8.5pt;margin-right:.5em!important}
+.case,.mark{color:var(--ink);font-weight:700;font-size:8.5pt}
+.case{min-width:1.4em}
+.states{float:right;margin-left:.6em}
+.basis{white-space:nowrap}
+.basis::before{content:"· "}
+.legend{padding:0 .7rem;font-size:8.5pt;color:var(--second)}
+.legend span+span{margin-left:1em}
 .res .katex{font-size:1.12em}
 .met{font-weight:700}
 .notmet{font-weight:700;color:var(--checker)}
@@ -121,9 +128,10 @@ body{background:none;font-size:9pt}
 .record{display:table;width:100%;max-width:none;margin:0;border:0;background:none}
 .head{display:table-header-group;break-inside:avoid}
 .head>div{border:1px solid var(--ink);margin-bottom:3mm}
+.front{margin-top:-1px}
 main{display:table-row-group;padding:0}
 .front,.back{padding:0}
-.fields{margin:0;border:1px solid var(--rule);border-top:0}
+.fields{margin:0;border:1px solid var(--rule)}
 .fields>div{padding:.2rem .8rem}
 :root{--rule:#b9b4a6;--paper:#fff;--second:#45453f}
 p,li{orphans:2;widows:2}
@@ -141,8 +149,8 @@ a{color:inherit;text-decoration:none}
 .steps>tbody>tr>td{padding:.1rem .8rem}
 .steps td.src{order:9}
 .steps td.res{text-align:left;display:flex;gap:.6rem;align-items:baseline}
-.steps td.res[data-case]::before{content:attr(data-case);color:var(--second);font-size:8.5pt;min-width:7rem}
-.eq{overflow-x:auto}
-.scroll{overflow-x:auto}
+.steps td.res[data-case]::before{content:attr(data-case);color:var(--second);font-size:8.5pt;min-width:1.2rem;font-weight:700}
+.eq{overflow-x:auto;overflow-y:hidden}
+.scroll{overflow:auto hidden}
 }
 `;

@@ -6,7 +6,7 @@
 // Not here: what the record says (make.ts), rows of the steps (html-lines.ts), style (html-style.ts).
 
 import { escapeHtml } from './escape.ts';
-import { prose, stepsTable, verdict } from './html-lines.ts';
+import { caseHead, prose, stepsTable, verdict } from './html-lines.ts';
 import { renderTex } from './html-math.ts';
 import { type RecordAssets, recordStyle } from './html-style.ts';
 import type { CriterionSummary, RecordModel } from './model.ts';
@@ -102,16 +102,15 @@ function section(title: string, body: string): string {
 function criteria(model: RecordModel): string {
   if (model.summary.length === 0) return '';
   const several = model.cases.length > 1;
-  const title = new Map(model.cases.map((each) => [each.id, each.title]));
-  const heads = several ? model.cases.map((each) => `<th scope="col">${escapeHtml(each.title)}</th>`).join('') : '<th scope="col">Utilisation</th>';
+  const heads = several ? model.cases.map((_, k) => `<th scope="col">${caseHead(model, k)}</th>`).join('') : '<th scope="col">Utilisation</th>';
   const rows = model.summary.map((line) => {
     const cells = line.cases.map((each) => {
       if (each.met === null) return '<td><span class="wrong">no verdict</span></td>';
       return `<td>${verdict(each.met, each.utilisation)} ${escapeHtml(each.printed ?? '')}</td>`;
     });
-    const governing = several ? `<td>${line.governing === null ? '—' : escapeHtml(title.get(line.governing) ?? line.governing)}</td>` : '';
+    const governing = several ? `<td>${line.governing === null ? '—' : caseHead(model, model.cases.findIndex((each) => each.id === line.governing))}</td>` : '';
     const justification = line.justification === '' ? '' : `<p class="note">Justification: ${escapeHtml(line.justification)}</p>`;
-    return `<tr><td><a href="#step-${escapeHtml(line.number)}">${escapeHtml(line.number)}</a></td><td>${escapeHtml(line.title)} <span class="limit">${renderTex(line.symbols, false)}</span>${justification}</td>${cells.join('')}${governing}</tr>`;
+    return `<tr><td>${stepLink(line.number)}</td><td>${escapeHtml(line.title)} <span class="limit">${renderTex(line.symbols, false)}</span>${justification}</td>${cells.join('')}${governing}</tr>`;
   });
   return `<section><h2>Criteria</h2><p>${escapeHtml(criteriaWords(model.summary))}</p><div class="scroll"><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Criterion</th>${heads}${several ? '<th scope="col">Governing case</th>' : ''}</tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
 }
@@ -126,12 +125,24 @@ export function criteriaWords(summary: readonly CriterionSummary[]): string {
   return summary.length === 1 ? 'The criterion is met.' : `All ${summary.length} criteria are met.`;
 }
 
+/** Values that wait for the same thing share a row; what is not met or fails has its own. */
 function openPoints(model: RecordModel): string {
   if (model.openPoints.length === 0) return '';
-  const rows = model.openPoints.map(
-    (point) => `<tr><td>${point.number === '' ? '' : escapeHtml(point.number)}</td><td>${escapeHtml(point.kind)}</td><td>${escapeHtml(point.text)}</td></tr>`,
-  );
-  return `<section><h2>Open points</h2><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">What</th><th scope="col">Where</th></tr></thead><tbody>${rows.join('')}</tbody></table></section>`;
+  const rows: { kind: string; numbers: string[]; text: string }[] = [];
+  for (const point of model.openPoints) {
+    const shared = point.kind === 'carried over' || point.kind === 'no source';
+    const row = shared ? rows.find((each) => each.kind === point.kind) : undefined;
+    if (row) row.numbers.push(point.number);
+    else rows.push({ kind: point.kind, numbers: [point.number], text: shared ? sharedText[point.kind] : point.text });
+  }
+  const markup = rows.map((row) => `<tr><td>${row.kind}</td><td>${row.numbers.map(stepLink).join(', ')}</td><td>${escapeHtml(row.text)}</td></tr>`);
+  return `<section><h2>Open points</h2><table class="list"><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col"></th></tr></thead><tbody>${markup.join('')}</tbody></table></section>`;
+}
+
+const sharedText = { 'carried over': 'not confirmed for this sheet', 'no source': 'nothing says where these come from' } as const;
+
+function stepLink(number: string): string {
+  return number === '' ? '' : `<a href="#step-${escapeHtml(number)}">${escapeHtml(number)}</a>`;
 }
 
 function assumptions(model: RecordModel): string {
@@ -139,7 +150,7 @@ function assumptions(model: RecordModel): string {
   const rows = model.assumptions.map((each) => {
     const value = each.symbol === '' ? '' : `${renderTex(each.symbol, false)} = ${escapeHtml(each.value)}`;
     const confirm = each.toConfirm === '' ? '' : ` <span class="tag open">to be confirmed: ${escapeHtml(each.toConfirm)}</span>`;
-    return `<tr><td>${escapeHtml(each.number)}</td><td>${escapeHtml(each.text)}${confirm}</td><td>${value}</td><td>${escapeHtml(each.source)}</td></tr>`;
+    return `<tr><td>${stepLink(each.number)}</td><td>${escapeHtml(each.text)}${confirm}</td><td>${value}</td><td>${escapeHtml(each.source)}</td></tr>`;
   });
   return `<section><h2>Assumptions</h2><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Assumption</th><th scope="col">Value</th><th scope="col">Source</th></tr></thead><tbody>${rows.join('')}</tbody></table></section>`;
 }
