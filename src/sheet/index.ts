@@ -9,5 +9,3 @@ export { buildGraph, type Graph } from './graph.ts';
 export * from './history.ts';
 export { badCharacters } from './json-text.ts';
 export { nameFault } from './rename.ts';
-export { cellSchema, idPattern, isSheet, sheetSchema } from './schema.ts';
-export * from './template.ts';

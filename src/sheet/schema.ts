@@ -8,7 +8,7 @@
 // Not here: the text of the file and the wording of its problems (file.ts).
 
 import * as v from 'valibot';
-import { currentFormat, type Sheet } from './document.ts';
+import { currentFormat } from './document.ts';
 
 /** Ids of cells, cases and references: short, plain, and safe in a path, a link and a command line. */
 export const idPattern = /^[A-Za-z0-9][A-Za-z0-9._-]{0,63}$/;
@@ -118,9 +118,7 @@ const figure = v.strictObject({
   source: optionalText,
 });
 
-export const cellSchemas = { heading, note, given, derived, criterion, sought, table, drawing, chart, figure };
-
-export const cellSchema = v.variant('kind', [heading, note, given, derived, criterion, sought, table, drawing, chart, figure]);
+const cell = v.variant('kind', [heading, note, given, derived, criterion, sought, table, drawing, chart, figure]);
 
 const titleBlock = v.strictObject({
   organisation: optionalText,
@@ -165,7 +163,7 @@ export const sheetSchema = v.strictObject({
     v.strictObject({ title: text, documentNumber: optionalText, revision: optionalText, fingerprint }),
   ),
   cases: v.exactOptional(v.pipe(v.array(v.strictObject({ id, title: optionalText })), v.minLength(1))),
-  cells: v.array(cellSchema),
+  cells: v.array(cell),
   conclusion: optionalText,
   marks: plainList,
   revisions: plainList,
@@ -174,11 +172,6 @@ export const sheetSchema = v.strictObject({
 
 /** What the schema lets through; a test holds it equal to the hand-written `Sheet`. */
 export type SheetOfSchema = v.InferOutput<typeof sheetSchema>;
-
-/** True where `value` is a sheet by the schema; says nothing about duplicates and tables, which file.ts looks at. */
-export function isSheet(value: unknown): value is Sheet {
-  return v.is(sheetSchema, value);
-}
 
 /** A schema of the library as plain data: only what is walked here. */
 export type SchemaData = Readonly<Record<string, unknown>>;

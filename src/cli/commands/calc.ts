@@ -1,0 +1,122 @@
+// `tightside calc`: a sheet recalculated, as a listing or as JSON.
+//
+// 1. Printed numbers are those of the record: one numeral for a quantity in a case, everywhere.
+// 2. `values` are in the unit of the quantity, unrounded; `si` in coherent SI; null where a case has none.
+// 3. Errors go to standard error; the listing shows a dash where they leave no value, and the warnings at its end.
+
+import { fingerprints } from '../../check/index.ts';
+import { canonicalName, plainName } from '../../formula/index.ts';
+import { fromSI, type Unit } from '../../quantity/index.ts';
+import { makeRecord, type RecordModel, type Step } from '../../record/index.ts';
+import { type Calculation, calculate, type QuantityState } from '../../sheet/index.ts';
+import type { Io } from '../io.ts';
+import { loadSheet, withValues } from '../load.ts';
+import { stateExit, writeProblems } from '../outcome.ts';
+import { oneLine, problemLine, tableLines } from '../report.ts';
+import { readArguments } from '../usage.ts';
+
+export async function calc(argv: readonly string[], io: Io): Promise<number> {
+  const args = readArguments('calc', argv, ['set', 'case', 'json'], ['FILE']);
+  const path = args.positionals[0]!;
+  const calculation = calculate(withValues(await loadSheet(io, path), args.assignments, path));
+  const model = makeRecord(calculation);
+  io.out(args.json ? `${JSON.stringify(calculationJson(calculation, model), null, 2)}\n` : listing(path, calculation, model));
+  writeProblems(io, path, calculation);
+  return stateExit(calculation);
+}
+
+export interface CalculationJson {
+  readonly title: string;
+  readonly fingerprint: string;
+  readonly cases: readonly string[];
+  readonly quantities: Readonly<Record<string, QuantityJson>>;
+  readonly criteria: readonly {
+    readonly id: string;
+    readonly title: string;
+    readonly met: readonly (boolean | null)[];
+    readonly utilisation: readonly (number | null)[];
+  }[];
+  readonly problems: readonly { readonly cell: string; readonly severity: string; readonly code: string; readonly message: string }[];
+}
+export interface QuantityJson {
+  readonly unit: string;
+  readonly values: readonly (number | null)[];
+  readonly si: readonly (number | null)[];
+  readonly printed: readonly (string | null)[];
+}
+
+export function calculationJson(calculation: Calculation, model: RecordModel): CalculationJson {
+  const steps = new Map(model.steps.map((step) => [step.cell, step]));
+  const quantities = new Map<string, QuantityJson>();
+  const criteria: CalculationJson['criteria'][number][] = [];
+  for (const cell of calculation.sheet.cells) {
+    const state = calculation.state(cell.id);
+    if (state?.kind === 'criterion') {
+      criteria.push({ id: cell.id, title: state.cell.title ?? '', met: state.met, utilisation: state.utilisation.map(number) });
+    } else if (state?.kind === 'given' || state?.kind === 'derived' || state?.kind === 'sought') {
+      const name = canonicalName(state.cell.name);
+      if (!quantities.has(name)) quantities.set(name, quantityJson(state, steps.get(cell.id)));
+    }
+  }
+  return {
+    title: calculation.sheet.title,
+    fingerprint: fingerprints(calculation).sheet,
+    cases: calculation.cases.map(({ id }) => id),
+    quantities: Object.fromEntries(quantities),
+    criteria,
+    problems: calculation.problems().map(({ cell, severity, code, message }) => ({ cell, severity, code, message })),
+  };
+}
+
+function quantityJson(state: QuantityState, step: Step | undefined): QuantityJson {
+  const { unit } = state;
+  const si = Array.from(state.si, number);
+  return {
+    unit: unit?.text ?? '',
+    values: unit === undefined ? si.map(() => null) : si.map((value) => inUnit(value, unit)),
+    si,
+    printed: si.map((_, i) => step?.cases[i]?.result ?? null),
+  };
+}
+
+function inUnit(si: number | null, unit: Unit): number | null {
+  return si === null ? null : number(fromSI(si, unit));
+}
+
+function number(value: number | null): number | null {
+  return value === null || !Number.isFinite(value) ? null : value;
+}
+
+function listing(path: string, calculation: Calculation, model: RecordModel): string {
+  const { cases } = calculation;
+  const several = cases.length > 1;
+  const columns = [{ align: 'left' }, { align: 'left' }, { align: 'left' }, ...cases.map(() => ({ align: 'right' }) as const)] as const;
+  const rows: string[][] = [];
+  // A section stands as a line of its own, outside the columns.
+  const sections = new Map<number, string>();
+  if (several) rows.push(['', '', '', ...cases.map(({ id }) => id)]);
+  for (const line of model.lines) {
+    if (line.kind === 'heading' && line.level === 1) {
+      sections.set(rows.length, oneLine(`${line.number} ${line.text}`.trim()));
+      rows.push([]);
+    } else if (line.kind === 'step') {
+      rows.push([line.step.number, symbolOf(line.step), oneLine(line.step.title), ...line.step.cases.map((each) => shown(line.step, each))]);
+    }
+  }
+  const cells = new Map(calculation.sheet.cells.map((cell) => [cell.id, cell]));
+  const warnings = calculation.problems().filter((problem) => problem.severity === 'warning');
+  const lines = tableLines(rows, columns).map((line, i) => (sections.has(i) ? `\n${sections.get(i)}` : line));
+  const head = oneLine(`${model.title} (${model.status})`);
+  const foot = warnings.length === 0 ? [] : ['', 'Warnings', ...warnings.map((problem) => problemLine(path, calculation, cells, problem))];
+  return `${[head, '', ...lines, ...foot].join('\n')}\n`;
+}
+
+function symbolOf(step: Step): string {
+  return step.name === undefined ? '' : plainName(step.name);
+}
+
+function shown(step: Step, each: Step['cases'][number]): string {
+  if (step.kind !== 'criterion') return each.result ?? '—';
+  if (each.met === undefined || each.met === null) return '—';
+  return `${each.met ? 'met' : 'not met'} ${each.result ?? ''}`.trimEnd();
+}

@@ -1,0 +1,125 @@
+// What the command line takes: its help, and arguments read into plain data.
+//
+// 1. Help lists what this version does; a command of the plan that is not there yet says so and ends with wrong usage.
+// 2. Wrong usage is a UsageTrouble with one sentence.
+// Not here: what a command does (commands/).
+
+import { parseArgs } from 'node:util';
+import { nearestNames } from '../formula/index.ts';
+import type { Assignment } from '../sheet/index.ts';
+
+export const exits = { fine: 0, notMet: 1, sheetErrors: 2, fileTrouble: 3, wrongUsage: 4 } as const;
+
+export class UsageTrouble extends Error {}
+
+export const help = `tightside: calculation sheets for belt drives, band brakes, capstans and ropes
+
+  tightside templates [--json]
+      the built-in templates, their givens and results
+  tightside new TEMPLATE -o FILE [--set NAME="VALUE" …] [--case ID:NAME="VALUE" …] [--force]
+      a new sheet from a template; what --set names is confirmed, the rest stays carried over;
+      a file that is there already is replaced only with --force
+  tightside calc FILE [--set NAME="VALUE" …] [--case ID:NAME="VALUE" …] [--json]
+      values, criteria and problems of a sheet; the file stays as it is
+  tightside record FILE --to html|json [-o OUT]
+      the calculation record, to OUT or standard output
+
+  --set NAME="VALUE"      the value for all cases: --set n_1="1450 r/min" --set μ_1="0.28 ± 0.04"
+  --case ID:NAME="VALUE"  then the value for one case: --case start:K_A="1.5"
+  A value that is set loses the basis and the source of the old one.
+  FILE and OUT may be - for standard input and output.
+
+Exit: 0 fine · 1 a criterion is not met · 2 the sheet has errors · 3 a file cannot be read or written · 4 wrong usage
+`;
+
+/** Commands of the plan that this version does not have. */
+const later: ReadonlySet<string> = new Set(['compare', 'check', 'study']);
+const commands = ['templates', 'new', 'calc', 'record', 'help'];
+
+export function unknownCommand(word: string): UsageTrouble {
+  if (later.has(word)) return new UsageTrouble(`${word} is not in this version; tightside --help lists what is`);
+  const near = nearestNames(word, commands)[0];
+  return new UsageTrouble(`there is no command ${clip(word)}${near === undefined ? '' : `; did you mean ${near}?`} tightside --help lists the commands`);
+}
+
+type OptionName = 'json' | 'force' | 'output' | 'set' | 'case' | 'to';
+const optionTypes = {
+  json: { type: 'boolean' },
+  force: { type: 'boolean' },
+  output: { type: 'string', short: 'o' },
+  set: { type: 'string', multiple: true },
+  case: { type: 'string', multiple: true },
+  to: { type: 'string' },
+} as const;
+
+export interface Arguments {
+  readonly positionals: readonly string[];
+  readonly json: boolean;
+  readonly force: boolean;
+  readonly output?: string;
+  readonly to?: string;
+  readonly assignments: readonly Assignment[];
+}
+
+/** Reads the arguments behind the command; `takes` lists its options, `names` its positional arguments. */
+export function readArguments(command: string, argv: readonly string[], takes: readonly OptionName[], names: readonly string[]): Arguments {
+  const options = Object.fromEntries(takes.map((name) => [name, optionTypes[name]]));
+  const read = parsed(command, argv, options, takes);
+  if (read.positionals.length > names.length) {
+    throw new UsageTrouble(`${command} takes ${names.length === 0 ? 'no argument' : names.join(' ')}; ${clip(read.positionals[names.length]!)} is one too many (a value with spaces wants quotes)`);
+  }
+  const missing = names[read.positionals.length];
+  if (missing !== undefined) throw new UsageTrouble(`${command} wants ${missing}; tightside --help shows how`);
+  const { json, force, output, to, set, case: one } = read.values as {
+    readonly json?: boolean;
+    readonly force?: boolean;
+    readonly output?: string;
+    readonly to?: string;
+    readonly set?: readonly string[];
+    readonly case?: readonly string[];
+  };
+  return {
+    positionals: read.positionals,
+    json: json ?? false,
+    force: force ?? false,
+    ...(output === undefined ? {} : { output }),
+    ...(to === undefined ? {} : { to }),
+    assignments: [...(set ?? []).map(forAll), ...(one ?? []).map(forOne)],
+  };
+}
+
+function parsed(command: string, argv: readonly string[], options: Record<string, (typeof optionTypes)[OptionName]>, takes: readonly string[]) {
+  try {
+    return parseArgs({ args: [...argv], options, allowPositionals: true, strict: true });
+  } catch (thrown) {
+    const code = (thrown as { code?: string }).code ?? '';
+    if (!code.startsWith('ERR_PARSE_ARGS')) throw thrown;
+    const text = thrown instanceof Error ? thrown.message : '';
+    const option = /'(-[^' ]*)/.exec(text)?.[1] ?? '';
+    if (code === 'ERR_PARSE_ARGS_UNKNOWN_OPTION') {
+      const near = nearestNames(option.replace(/^-+/, ''), takes)[0];
+      const all = takes.map((name) => (name === 'output' ? '-o' : `--${name}`)).join(', ');
+      throw new UsageTrouble(`${command} has no option ${clip(option)}; ${near === undefined ? `it has ${all}` : `did you mean --${near}?`}`);
+    }
+    const wants = /argument missing|argument is ambiguous/.test(text) ? 'wants a value behind it' : 'takes no value';
+    throw new UsageTrouble(`${option === '' ? 'an option' : option.replace(/,$/, '')} ${wants}; tightside --help shows how`);
+  }
+}
+
+function forAll(text: string): Assignment {
+  const sign = text.indexOf('=');
+  if (sign <= 0) throw new UsageTrouble(`--set wants NAME="VALUE", as in --set d_1="200 mm", but got ${clip(text)}`);
+  return { name: text.slice(0, sign).trim(), value: text.slice(sign + 1) };
+}
+
+function forOne(text: string): Assignment {
+  const colon = text.indexOf(':');
+  const sign = text.indexOf('=');
+  if (colon <= 0 || sign <= colon + 1) throw new UsageTrouble(`--case wants ID:NAME="VALUE", as in --case start:K_A="1.5", but got ${clip(text)}`);
+  return { case: text.slice(0, colon).trim(), name: text.slice(colon + 1, sign).trim(), value: text.slice(sign + 1) };
+}
+
+export function clip(text: string): string {
+  const line = text.replace(/[\s\p{Cc}]+/gu, ' ');
+  return [...line].length > 60 ? `${[...line].slice(0, 60).join('')}…` : line;
+}
