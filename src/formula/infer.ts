@@ -28,8 +28,9 @@ export interface Inferred {
 }
 
 export interface ComparedTypes extends Inferred {
-  /** The problems again, each with the side whose text it points into; 'both' where it is about the two together. */
-  readonly sides: readonly { readonly side: 'left' | 'right' | 'both'; readonly problem: Problem }[];
+  /** The problems of each side, with places in its text; those about both sides together have no place and stand on the left. */
+  readonly leftProblems: readonly Problem[];
+  readonly rightProblems: readonly Problem[];
 }
 
 /** The type of a derived quantity's formula, checked against its declared unit. */
@@ -47,7 +48,7 @@ function inferred(formula: Formula, scope: Scope, target: Unit | undefined, prop
   if (value === undefined) return { problems: ctx.problems, failedNames };
   const type = value.type;
   if (!fits || !propose) return { type, problems: ctx.problems, failedNames };
-  return { type, problems: ctx.problems, failedNames, words: unitCheck(ctx, formula.expr, typeOfResult(type, target)) };
+  return { type, problems: ctx.problems, failedNames, words: unitCheck(ctx, formula.expr, typeOfResult({ type }, target)) };
 }
 
 /** A derived quantity has a value: neither a text nor a truth value. */
@@ -82,7 +83,7 @@ const holds = (tried: Inferred): boolean => !tried.problems.some((problem) => pr
  * With `target`, the unit in which both are printed, each side must fit it as well.
  */
 export function inferComparison(left: Formula, right: Formula, scope: Scope, target?: Unit): ComparedTypes {
-  const contexts = [left, right].map((formula) => contextOf(formula, scope, target, target !== undefined));
+  const contexts = [left, right].map((formula) => contextOf(formula, scope, target, true));
   const parts = [left, right].map((formula, index) => {
     const ctx = contexts[index]!;
     const term = infer(ctx, formula.expr);
@@ -95,15 +96,11 @@ export function inferComparison(left: Formula, right: Formula, scope: Scope, tar
   if (met !== undefined && target !== undefined) {
     for (const [index, part] of parts.entries()) checkTarget(contexts[index]!, part.expr, part.term!, target);
   }
-  const sides = [
-    ...contexts[0]!.problems.map((problem) => ({ side: 'left' as const, problem })),
-    ...contexts[1]!.problems.map((problem) => ({ side: 'right' as const, problem })),
-    ...both.problems.map(({ at: _, ...problem }) => ({ side: 'both' as const, problem })),
-  ];
+  const leftProblems = [...contexts[0]!.problems, ...both.problems.map(({ at: _, ...problem }) => problem)];
+  const rightProblems = contexts[1]!.problems;
   const names = [...new Set([...left.names, ...right.names])];
   const failedNames = names.filter((name) => contexts.some((ctx) => ctx.failed.has(name)));
-  const problems = sides.map(({ problem }) => problem);
-  if (met === undefined) return { problems, sides, failedNames };
-  const words = `${unitCheck(contexts[0]!, left.expr, met.type)}`;
-  return { type: met.type, problems, sides, failedNames, words };
+  const found = { problems: [...leftProblems, ...rightProblems], leftProblems, rightProblems, failedNames };
+  if (met === undefined) return found;
+  return { ...found, type: met.type, words: unitCheck(contexts[0]!, left.expr, met.type) };
 }

@@ -74,6 +74,8 @@ export function rowOfNumber(keys: Float64Array, x: number): number {
 
 /** The texts of a column, where the table's data are at hand. */
 export function textsOf(table: TableType | TableData, column: string): readonly string[] | undefined {
-  const found = table.columns.find((each) => each.name === column);
-  return found !== undefined && 'texts' in found ? found.texts : undefined;
+  for (const each of table.columns) {
+    if (each.name === column) return (each as Partial<TableColumnData>).texts;
+  }
+  return undefined;
 }

@@ -69,11 +69,12 @@ export function typeOfUnit(unit: Unit): QuantityType {
 }
 
 /** What a derived cell passes on: its declared unit's type alone; without one, the inferred type with its counts settled. */
-export function typeOfResult(inferred: Type, declared?: Unit): Type {
+export function typeOfResult(inferred: { readonly type?: Type }, declared?: Unit): Type {
   if (declared !== undefined) return typeOfUnit(declared);
-  if (inferred.kind !== 'quantity') return inferred;
-  const { zero: _, ...rest } = inferred;
-  return { ...rest, counts: settled(inferred.counts) };
+  const type = inferred.type ?? number;
+  if (type.kind !== 'quantity') return type;
+  const { zero: _, ...rest } = type;
+  return { ...rest, counts: settled(type.counts) };
 }
 
 /** Dimensionless and without counts: a factor that leaves the other factor's kind as it is. */

@@ -1,0 +1,212 @@
+// Running a program: the same instructions for one case, several cases or a million samples.
+//
+// 1. Nothing is allocated while running.
+// 2. Up to `few` entries are computed entry by entry, which spares the loop of each kernel; more by one kernel an instruction.
+// 3. Both branches of a choice are computed and one is selected: errors are nobody's business here (explain.ts).
+
+import { roundEven } from './arithmetic.ts';
+import { entryOfText, kernels } from './kernels.ts';
+import { op, stride } from './opcode.ts';
+import type { Program, ProgramTable } from './program.ts';
+import { interpolateAt, rowOfNumber } from './table.ts';
+
+const few = 4;
+
+/** Computes the first `count` entries (at most `width`) of the destinations of the instructions [start, end). */
+export function run(
+  program: Program,
+  memory: Float64Array,
+  width: number,
+  count: number,
+  start = 0,
+  end = program.code.length,
+): void {
+  if (count <= few) {
+    for (let entry = 0; entry < count; entry++) runOne(program.code, program.tables, memory, width, entry, start, end);
+  } else {
+    runMany(program.code, program.tables, memory, width, count, start, end);
+  }
+}
+
+function runMany(
+  code: Int32Array, tables: readonly ProgramTable[], m: Float64Array, width: number, count: number, start: number, end: number,
+): void {
+  for (let at = start; at < end; at += stride) {
+    const operation = code[at]!;
+    const b = code[at + 3]!;
+    const isLookup = operation >= op.interpolate && operation <= op.entryOfText;
+    kernels[operation]!(
+      m, code[at + 1]! * width, code[at + 2]! * width, isLookup ? b : b * width, code[at + 4]! * width, count, tables,
+    );
+  }
+}
+
+function runOne(
+  code: Int32Array, tables: readonly ProgramTable[], m: Float64Array, width: number, entry: number, start: number, end: number,
+): void {
+  for (let at = start; at < end; at += stride) {
+    const d = code[at + 1]! * width + entry;
+    const x = m[code[at + 2]! * width + entry]!;
+    const b = code[at + 3]!;
+    switch (code[at]) {
+      case op.copy:
+        m[d] = x;
+        break;
+      case op.minus:
+        m[d] = -x;
+        break;
+      case op.add:
+      case op.addK:
+        m[d] = x + m[b * width + entry]!;
+        break;
+      case op.subtract:
+      case op.subtractK:
+      case op.subtractFromK:
+        m[d] = x - m[b * width + entry]!;
+        break;
+      case op.multiply:
+      case op.multiplyK:
+      case op.and:
+        m[d] = x * m[b * width + entry]!;
+        break;
+      case op.divide:
+      case op.divideK:
+      case op.divideIntoK:
+        m[d] = x / m[b * width + entry]!;
+        break;
+      case op.power:
+        m[d] = x ** m[b * width + entry]!;
+        break;
+      case op.square:
+        m[d] = x * x;
+        break;
+      case op.cube:
+        m[d] = x * x * x;
+        break;
+      case op.fourth: {
+        const square = x * x;
+        m[d] = square * square;
+        break;
+      }
+      case op.inverse:
+        m[d] = 1 / x;
+        break;
+      case op.inverseSquare:
+        m[d] = 1 / (x * x);
+        break;
+      case op.exp:
+        m[d] = Math.exp(x);
+        break;
+      case op.ln:
+        m[d] = Math.log(x);
+        break;
+      case op.log10:
+        m[d] = Math.log10(x);
+        break;
+      case op.sqrt:
+        m[d] = Math.sqrt(x);
+        break;
+      case op.cbrt:
+        m[d] = Math.cbrt(x);
+        break;
+      case op.abs:
+        m[d] = Math.abs(x);
+        break;
+      case op.sign:
+        m[d] = Math.sign(x);
+        break;
+      case op.sin:
+        m[d] = Math.sin(x);
+        break;
+      case op.cos:
+        m[d] = Math.cos(x);
+        break;
+      case op.tan:
+        m[d] = Math.tan(x);
+        break;
+      case op.asin:
+        m[d] = Math.asin(x);
+        break;
+      case op.acos:
+        m[d] = Math.acos(x);
+        break;
+      case op.atan:
+        m[d] = Math.atan(x);
+        break;
+      case op.sinh:
+        m[d] = Math.sinh(x);
+        break;
+      case op.cosh:
+        m[d] = Math.cosh(x);
+        break;
+      case op.tanh:
+        m[d] = Math.tanh(x);
+        break;
+      case op.floor:
+        m[d] = Math.floor(x);
+        break;
+      case op.ceil:
+        m[d] = Math.ceil(x);
+        break;
+      case op.round:
+        m[d] = roundEven(x);
+        break;
+      case op.min:
+        m[d] = Math.min(x, m[b * width + entry]!);
+        break;
+      case op.max:
+      case op.or:
+        m[d] = Math.max(x, m[b * width + entry]!);
+        break;
+      case op.hypot:
+        m[d] = Math.hypot(x, m[b * width + entry]!);
+        break;
+      case op.hypot3:
+        m[d] = Math.hypot(x, m[b * width + entry]!, m[code[at + 4]! * width + entry]!);
+        break;
+      case op.atan2:
+        m[d] = Math.atan2(x, m[b * width + entry]!);
+        break;
+      case op.less:
+        m[d] = x < m[b * width + entry]! ? 1 : 0;
+        break;
+      case op.lessEqual:
+        m[d] = x <= m[b * width + entry]! ? 1 : 0;
+        break;
+      case op.greater:
+        m[d] = x > m[b * width + entry]! ? 1 : 0;
+        break;
+      case op.greaterEqual:
+        m[d] = x >= m[b * width + entry]! ? 1 : 0;
+        break;
+      case op.equal:
+        m[d] = x === m[b * width + entry]! ? 1 : 0;
+        break;
+      case op.unequal:
+        m[d] = x !== m[b * width + entry]! ? 1 : 0;
+        break;
+      case op.not:
+        m[d] = 1 - x;
+        break;
+      case op.choose:
+        m[d] = x !== 0 ? m[b * width + entry]! : m[code[at + 4]! * width + entry]!;
+        break;
+      case op.interpolate: {
+        const { keys, values, direction } = tables[b]!;
+        m[d] = direction === 0 ? Number.NaN : interpolateAt(keys, values, direction, x);
+        break;
+      }
+      case op.entryOfNumber: {
+        const { keys, values } = tables[b]!;
+        const row = rowOfNumber(keys, x);
+        m[d] = row < 0 ? Number.NaN : values[row]!;
+        break;
+      }
+      case op.entryOfText:
+        m[d] = entryOfText(tables[b]!.values, x);
+        break;
+      default:
+        throw new Error(`no operation has the number ${code[at]}`);
+    }
+  }
+}
