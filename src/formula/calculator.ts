@@ -150,7 +150,8 @@ export function evaluateWith(
       case 'minus':
         return -value(e.inner, inExponent);
       case 'binary':
-        if (e.operator === '^') return isE(e.left) ? Math.exp(value(e.right, true)) : value(e.left, inExponent) ** value(e.right, true);
+        if (e.operator === '^')
+          return isE(e.left) ? Math.exp(value(e.right, true)) : value(e.left, inExponent) ** value(e.right, true);
         return operate(e.operator, value(e.left, inExponent), value(e.right, inExponent));
       case 'choose': {
         const branch = taken.branch(e);
@@ -158,12 +159,17 @@ export function evaluateWith(
       }
       case 'call': {
         const inside = inExponent || e.name === 'exp';
-        return callNumber(e.name, e.args.map((a) => value(a, inside)));
+        return callNumber(
+          e.name,
+          e.args.map((a) => value(a, inside)),
+        );
       }
       case 'table': {
         const row = taken.table(e);
         if (row === undefined) return Number.NaN;
-        return row.kind === 'entry' ? row.value : row.y0 + ((row.y1 - row.y0) * (value(e.key, inExponent) - row.x0)) / (row.x1 - row.x0);
+        return row.kind === 'entry'
+          ? row.value
+          : row.y0 + ((row.y1 - row.y0) * (value(e.key, inExponent) - row.x0)) / (row.x1 - row.x0);
       }
       case 'compare':
       case 'logic':

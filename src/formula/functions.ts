@@ -5,12 +5,33 @@
 import type { FunctionName } from './expr.ts';
 
 /** Least and greatest number of arguments. */
-export const arity: ReadonlyMap<string, readonly [least: number, greatest: number]> = new Map<FunctionName, readonly [number, number]>([
-  ['exp', [1, 1]], ['ln', [1, 1]], ['log10', [1, 1]], ['sqrt', [1, 1]], ['cbrt', [1, 1]], ['abs', [1, 1]], ['sign', [1, 1]],
-  ['min', [2, Infinity]], ['max', [2, Infinity]],
-  ['sin', [1, 1]], ['cos', [1, 1]], ['tan', [1, 1]], ['asin', [1, 1]], ['acos', [1, 1]], ['atan', [1, 1]], ['atan2', [2, 2]],
-  ['sinh', [1, 1]], ['cosh', [1, 1]], ['tanh', [1, 1]],
-  ['floor', [1, 1]], ['ceil', [1, 1]], ['round', [1, 1]], ['hypot', [2, Infinity]],
+export const arity: ReadonlyMap<string, readonly [least: number, greatest: number]> = new Map<
+  FunctionName,
+  readonly [number, number]
+>([
+  ['exp', [1, 1]],
+  ['ln', [1, 1]],
+  ['log10', [1, 1]],
+  ['sqrt', [1, 1]],
+  ['cbrt', [1, 1]],
+  ['abs', [1, 1]],
+  ['sign', [1, 1]],
+  ['min', [2, Infinity]],
+  ['max', [2, Infinity]],
+  ['sin', [1, 1]],
+  ['cos', [1, 1]],
+  ['tan', [1, 1]],
+  ['asin', [1, 1]],
+  ['acos', [1, 1]],
+  ['atan', [1, 1]],
+  ['atan2', [2, 2]],
+  ['sinh', [1, 1]],
+  ['cosh', [1, 1]],
+  ['tanh', [1, 1]],
+  ['floor', [1, 1]],
+  ['ceil', [1, 1]],
+  ['round', [1, 1]],
+  ['hypot', [2, Infinity]],
 ]);
 
 export const functionNames: readonly FunctionName[] = [...arity.keys()] as FunctionName[];
@@ -33,7 +54,14 @@ export interface Instead {
 
 /** Functions that the language does not have, with what says the same in it. */
 export const otherFunctions: ReadonlyMap<string, readonly Instead[]> = new Map<string, readonly Instead[]>([
-  ['log', [{ arguments: 1, write: 'ln($1)' }, { arguments: 1, write: 'log10($1)' }, { arguments: 2, write: 'ln($1)/ln($2)' }]],
+  [
+    'log',
+    [
+      { arguments: 1, write: 'ln($1)' },
+      { arguments: 1, write: 'log10($1)' },
+      { arguments: 2, write: 'ln($1)/ln($2)' },
+    ],
+  ],
   ['log2', [{ arguments: 1, write: 'ln($1)/ln(2)' }]],
   ['ld', [{ arguments: 1, write: 'ln($1)/ln(2)' }]],
   ['lg', [{ arguments: 1, write: 'log10($1)' }]],
@@ -43,8 +71,20 @@ export const otherFunctions: ReadonlyMap<string, readonly Instead[]> = new Map<s
   ['power', [{ arguments: 2, write: '$(1)^$(2)' }]],
   ['square', [{ arguments: 1, write: '$(1)^2' }]],
   ['cube', [{ arguments: 1, write: '$(1)^3' }]],
-  ['root', [{ arguments: 2, write: '$(1)^(1/$(2))' }, { arguments: 1, write: 'sqrt($1)' }]],
-  ['nthRoot', [{ arguments: 2, write: '$(1)^(1/$(2))' }, { arguments: 1, write: 'sqrt($1)' }]],
+  [
+    'root',
+    [
+      { arguments: 2, write: '$(1)^(1/$(2))' },
+      { arguments: 1, write: 'sqrt($1)' },
+    ],
+  ],
+  [
+    'nthRoot',
+    [
+      { arguments: 2, write: '$(1)^(1/$(2))' },
+      { arguments: 1, write: 'sqrt($1)' },
+    ],
+  ],
   ['arcsin', [{ arguments: 1, write: 'asin($1)' }]],
   ['arccos', [{ arguments: 1, write: 'acos($1)' }]],
   ['arctan', [{ arguments: 1, write: 'atan($1)' }]],
@@ -69,7 +109,13 @@ export const otherFunctions: ReadonlyMap<string, readonly Instead[]> = new Map<s
   ['ceiling', [{ arguments: 1, write: 'ceil($1)' }]],
   ['roundup', [{ arguments: 1, write: 'ceil($1)' }]],
   ['rounddown', [{ arguments: 1, write: 'floor($1)' }]],
-  ['sqr', [{ arguments: 1, write: '$(1)^2' }, { arguments: 1, write: 'sqrt($1)' }]],
+  [
+    'sqr',
+    [
+      { arguments: 1, write: '$(1)^2' },
+      { arguments: 1, write: 'sqrt($1)' },
+    ],
+  ],
   ['sum', [{ arguments: 2, write: '$1 + $2' }]],
   ['mean', [{ arguments: 2, write: '($1 + $2)/2' }]],
   ['average', [{ arguments: 2, write: '($1 + $2)/2' }]],

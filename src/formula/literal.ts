@@ -1,7 +1,8 @@
 // Quoted quantities of a formula, read once: the same text is printed and computed many times.
 // Not here: whether the text is a quantity at all, which its place decides (infer.ts).
 
-import { readValue, type Result, type Value } from '../quantity/index.ts';
+import type { Result, Value } from '../quantity/index.ts';
+import { readValue } from '../quantity/index.ts';
 
 const caches: Readonly<Record<'.' | ',', Map<string, Result<Value>>>> = { '.': new Map(), ',': new Map() };
 const cacheSize = 2000;

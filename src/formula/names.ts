@@ -7,7 +7,8 @@
 
 import { functionNames, tableFunctions } from './functions.ts';
 
-const lower = 'alpha beta gamma delta epsilon zeta eta theta iota kappa lambda mu nu xi omicron pi rho sigma tau upsilon phi chi psi omega';
+const lower =
+  'alpha beta gamma delta epsilon zeta eta theta iota kappa lambda mu nu xi omicron pi rho sigma tau upsilon phi chi psi omega';
 const letters = 'αβγδεζηθικλμνξοπρστυφχψω';
 
 const greekWords = lower.split(' ');
@@ -21,8 +22,15 @@ greekWords.forEach((word, i) => {
 });
 // Letter forms that stand for the same letter: micro sign, final sigma, the symbol forms, the increment sign.
 const variants: readonly (readonly [string, string])[] = [
-  ['\u00b5', 'mu'], ['ς', 'sigma'], ['ϑ', 'theta'], ['ϕ', 'phi'], ['ϵ', 'epsilon'], ['ϰ', 'kappa'], ['ϱ', 'rho'],
-  ['\u2206', 'Delta'], ['ℓ', 'ell'],
+  ['\u00b5', 'mu'],
+  ['ς', 'sigma'],
+  ['ϑ', 'theta'],
+  ['ϕ', 'phi'],
+  ['ϵ', 'epsilon'],
+  ['ϰ', 'kappa'],
+  ['ϱ', 'rho'],
+  ['\u2206', 'Delta'],
+  ['ℓ', 'ell'],
 ];
 for (const [letter, word] of variants) greekToWord.set(letter, word);
 
@@ -32,9 +40,11 @@ export function greekLetter(word: string): string | undefined {
 }
 
 /** One character that may begin a typed name; digits and `_` may follow. */
-export const nameLetter = /[A-Za-z\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u01ba\u01bc-\u01bf\u01cd-\u01f0\u01f4-\u024f\u00b5\u2126\u212a\u212b\u2206ℓΑ-ΡΣ-Ϋά-ώϑϕϵϰϱΆΈ-ΊΌΎΏΐΰ]/;
+export const nameLetter =
+  /[A-Za-z\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u01ba\u01bc-\u01bf\u01cd-\u01f0\u01f4-\u024f\u00b5\u2126\u212a\u212b\u2206ℓΑ-ΡΣ-Ϋά-ώϑϕϵϰϱΆΈ-ΊΌΎΏΐΰ]/;
 
-const canonical = /^[A-Za-z\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u01ba\u01bc-\u01bf\u01cd-\u01f0\u01f4-\u024f][A-Za-z\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u01ba\u01bc-\u01bf\u01cd-\u01f0\u01f4-\u024f0-9_]*$/;
+const canonical =
+  /^[A-Za-z\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u01ba\u01bc-\u01bf\u01cd-\u01f0\u01f4-\u024f][A-Za-z\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u01ba\u01bc-\u01bf\u01cd-\u01f0\u01f4-\u024f0-9_]*$/;
 const plainAscii = /^[A-Za-z0-9_]*$/;
 const subscriptDigits = '₀₁₂₃₄₅₆₇₈₉';
 
@@ -58,8 +68,24 @@ export function canonicalName(text: string): string {
 
 /** Words that a formula uses itself, in any spelling of the language behind it. */
 export const reserved: ReadonlySet<string> = new Set([
-  ...functionNames, ...tableFunctions,
-  'pi', 'e', 'and', 'or', 'not', 'in', 'to', 'mod', 'xor', 'true', 'false', 'null', 'undefined', 'NaN', 'Infinity', 'end',
+  ...functionNames,
+  ...tableFunctions,
+  'pi',
+  'e',
+  'and',
+  'or',
+  'not',
+  'in',
+  'to',
+  'mod',
+  'xor',
+  'true',
+  'false',
+  'null',
+  'undefined',
+  'NaN',
+  'Infinity',
+  'end',
 ]);
 
 /** Whether a canonical text is a letter, then letters, digits, `_`: a name, if it is not reserved. */

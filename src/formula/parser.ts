@@ -13,7 +13,15 @@ declare module 'mathjs/number' {
   export function createParse(parts: Readonly<Record<string, unknown>>): (text: string) => Node;
 }
 
-export type Node = SymbolNode | ConstantNode | ParenthesisNode | OperatorNode | FunctionNode | ConditionalNode | RelationalNode | OtherNode;
+export type Node =
+  | SymbolNode
+  | ConstantNode
+  | ParenthesisNode
+  | OperatorNode
+  | FunctionNode
+  | ConditionalNode
+  | RelationalNode
+  | OtherNode;
 
 abstract class Base {
   declare readonly isNode: true;
@@ -110,7 +118,14 @@ export class RelationalNode extends Base {
 }
 
 type OtherType =
-  | 'AccessorNode' | 'ArrayNode' | 'AssignmentNode' | 'BlockNode' | 'FunctionAssignmentNode' | 'IndexNode' | 'ObjectNode' | 'RangeNode';
+  | 'AccessorNode'
+  | 'ArrayNode'
+  | 'AssignmentNode'
+  | 'BlockNode'
+  | 'FunctionAssignmentNode'
+  | 'IndexNode'
+  | 'ObjectNode'
+  | 'RangeNode';
 
 /** A node that no formula may hold: matrices, ranges, assignments, blocks, members. Its parts are not kept. */
 export abstract class OtherNode extends Base {
@@ -158,7 +173,19 @@ export const parseNodes: (text: string) => Node = createParse({
   typed,
   numeric: (text: string): RawNumber => ({ raw: text }),
   config: { number: 'number' },
-  SymbolNode, ConstantNode, ParenthesisNode, OperatorNode, FunctionNode, ConditionalNode, RelationalNode, AccessorNode, ArrayNode,
-  AssignmentNode: named('AssignmentNode'), BlockNode: named('BlockNode'), FunctionAssignmentNode: named('FunctionAssignmentNode'),
-  IndexNode: named('IndexNode'), ObjectNode: named('ObjectNode'), RangeNode: named('RangeNode'),
+  SymbolNode,
+  ConstantNode,
+  ParenthesisNode,
+  OperatorNode,
+  FunctionNode,
+  ConditionalNode,
+  RelationalNode,
+  AccessorNode,
+  ArrayNode,
+  AssignmentNode: named('AssignmentNode'),
+  BlockNode: named('BlockNode'),
+  FunctionAssignmentNode: named('FunctionAssignmentNode'),
+  IndexNode: named('IndexNode'),
+  ObjectNode: named('ObjectNode'),
+  RangeNode: named('RangeNode'),
 });

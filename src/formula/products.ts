@@ -7,7 +7,8 @@
 import type { Expr, Span } from './expr.ts';
 import type { Node, OperatorNode } from './parser.ts';
 import { excerpt, refusal, writeInstead } from './refusal.ts';
-import { refuse, spanOf, type Walk } from './walking.ts';
+import type { Walk } from './walking.ts';
+import { refuse, spanOf } from './walking.ts';
 
 /** Reads a whole chain of factors without signs, from the left. */
 export function product(walk: Walk, node: OperatorNode): Expr {
@@ -92,12 +93,28 @@ export function checkQuotient(walk: Walk, left: Expr, right: Expr, at: Span): vo
   if (!isImplicit(beside)) return;
   const span: Span = [beside.at[0], at[1]];
   const instead = `${explicit(walk, beside)}${walk.source.slice(beside.at[1], at[1])}`;
-  refuse(walk, refusal('ambiguous-product', `“${excerpt(walk.source.slice(...span))}”: beside a / no * is left out: write ${excerpt(instead)}.`, span, [writeInstead(span, instead)]));
+  refuse(
+    walk,
+    refusal(
+      'ambiguous-product',
+      `“${excerpt(walk.source.slice(...span))}”: beside a / no * is left out; write ${excerpt(instead)}.`,
+      span,
+      [writeInstead(span, instead)],
+    ),
+  );
 }
 
 function twoReadings(walk: Walk, at: Span, one: string, two: string): void {
   const typed = excerpt(walk.source.slice(...at));
-  refuse(walk, refusal('ambiguous-product', `“${typed}” can be read as ${excerpt(one)} or as ${excerpt(two)}: write the one that is meant.`, at, [writeInstead(at, one), writeInstead(at, two)]));
+  refuse(
+    walk,
+    refusal(
+      'ambiguous-product',
+      `“${typed}” can be read as ${excerpt(one)} or as ${excerpt(two)}: write the one that is meant.`,
+      at,
+      [writeInstead(at, one), writeInstead(at, two)],
+    ),
+  );
 }
 
 function isImplicit(expr: Expr): expr is Expr & { kind: 'binary' } {

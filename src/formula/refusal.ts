@@ -5,6 +5,20 @@
 
 import type { Fix, Problem } from '../quantity/index.ts';
 import type { Span } from './expr.ts';
+import type { Token } from './tokens.ts';
+
+/** A formula as typed, before the grammar has seen it. */
+export interface Typed {
+  readonly source: string;
+  readonly tokens: readonly Token[];
+  /** The sign in quoted quantities; formulas themselves have the point. */
+  readonly decimalSign: '.' | ',';
+}
+
+/** A number of the formula with its unit, as a quoted quantity of the sheet. */
+export function inQuotes(input: Typed, number: string, unit: string): string {
+  return `"${input.decimalSign === ',' ? number.replace('.', ',') : number} ${unit}"`;
+}
 
 export function refusal(code: string, message: string, at: Span, fixes: readonly Fix[] = []): Problem {
   return fixes.length === 0 ? { code, severity: 'error', message, at } : { code, severity: 'error', message, at, fixes };

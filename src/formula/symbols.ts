@@ -17,10 +17,11 @@ export function texName(name: string): string {
   const known = cache.get(name);
   if (known !== undefined) return known;
   const [head, subscript] = split(name);
-  const tex =
-    !isWord(name) ? texText(name)
-    : subscript === undefined ? texHead(head)
-    : `${texHead(head)}_{${subscript.split('_').map(texPiece).join(',\\,')}}`;
+  const tex = !isWord(name)
+    ? texText(name)
+    : subscript === undefined
+      ? texHead(head)
+      : `${texHead(head)}_{${subscript.split('_').map(texPiece).join(',\\,')}}`;
   if (cache.size >= cacheSize) cache.clear();
   cache.set(name, tex);
   return tex;
@@ -29,7 +30,9 @@ export function texName(name: string): string {
 /** A canonical name as plain text, Greek by its letters: 'mu_1' → 'μ_1'. */
 export function plainName(name: string): string {
   const [head, subscript] = split(name);
-  const shown = symbolParts(head).map((part) => greekLetter(part) ?? (part === 'ell' ? 'ℓ' : part)).join('');
+  const shown = symbolParts(head)
+    .map((part) => greekLetter(part) ?? (part === 'ell' ? 'ℓ' : part))
+    .join('');
   if (subscript === undefined) return shown;
   return `${shown}_${subscript.replace(/[A-Za-z]+/g, (word) => greekLetter(word) ?? word)}`;
 }
@@ -95,24 +98,51 @@ function runs(piece: string): readonly string[] {
 
 function texPiece(piece: string): string {
   if (piece === '') return '\\_';
-  return runs(piece).map((run) => {
-    if (/^[0-9]+$/.test(run) || /^[ijk]$/.test(run)) return run;
-    const word = run.replace(/[0-9]+$/, '');
-    if (greekLetter(word) !== undefined) return `${texGreek(word)} ${run.slice(word.length)}`.trim();
-    return /^[A-Za-z0-9]+$/.test(run) ? `\\mathrm{${run}}` : `\\text{${run}}`;
-  }).join('\\,');
+  return runs(piece)
+    .map((run) => {
+      if (/^[0-9]+$/.test(run) || /^[ijk]$/.test(run)) return run;
+      const word = run.replace(/[0-9]+$/, '');
+      if (greekLetter(word) !== undefined) return `${texGreek(word)} ${run.slice(word.length)}`.trim();
+      return /^[A-Za-z0-9]+$/.test(run) ? `\\mathrm{${run}}` : `\\text{${run}}`;
+    })
+    .join('\\,');
 }
 
 const escapes: ReadonlyMap<string, string> = new Map([
-  ['\\', '\\textbackslash{}'], ['{', '\\{'], ['}', '\\}'], ['$', '\\$'], ['&', '\\&'], ['#', '\\#'], ['%', '\\%'],
-  ['_', '\\_'], ['^', '\\textasciicircum{}'], ['~', '\\textasciitilde{}'],
+  ['\\', '\\textbackslash{}'],
+  ['{', '\\{'],
+  ['}', '\\}'],
+  ['$', '\\$'],
+  ['&', '\\&'],
+  ['#', '\\#'],
+  ['%', '\\%'],
+  ['_', '\\_'],
+  ['^', '\\textasciicircum{}'],
+  ['~', '\\textasciitilde{}'],
 ]);
 /** Signs that KaTeX has in mathematics only. */
 const signs: ReadonlyMap<string, string> = new Map([
-  ['×', '\\times'], ['÷', '\\div'], ['±', '\\pm'], ['−', '-'], ['≤', '\\le'], ['≥', '\\ge'], ['≠', '\\ne'], ['≈', '\\approx'], ['µ', '\\mu'],
-  ['²', '{}^2'], ['³', '{}^3'], ['½', '\\tfrac12'], ['¼', '\\tfrac14'], ['¾', '\\tfrac34'], ['∞', '\\infty'], ['√', '\\surd'], ['⌀', '\\varnothing'], ['→', '\\to'],
+  ['×', '\\times'],
+  ['÷', '\\div'],
+  ['±', '\\pm'],
+  ['−', '-'],
+  ['≤', '\\le'],
+  ['≥', '\\ge'],
+  ['≠', '\\ne'],
+  ['≈', '\\approx'],
+  ['µ', '\\mu'],
+  ['²', '{}^2'],
+  ['³', '{}^3'],
+  ['½', '\\tfrac12'],
+  ['¼', '\\tfrac14'],
+  ['¾', '\\tfrac34'],
+  ['∞', '\\infty'],
+  ['√', '\\surd'],
+  ['⌀', '\\varnothing'],
+  ['→', '\\to'],
 ]);
-const textCharacter = /[ -~£¥©®°·\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u024f\u0400-\u0481\u048a-\u052f–—‘’“”…\u3040-\u30ff\u4e00-\u9fff\uac00-\ud7a3]/;
+const textCharacter =
+  /[ -~£¥©®°·\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u024f\u0400-\u0481\u048a-\u052f–—‘’“”…\u3040-\u30ff\u4e00-\u9fff\uac00-\ud7a3]/;
 
 /** Any text as upright TeX. A character that the faces lack is shown as `?`. */
 export function texText(text: string): string {

@@ -22,18 +22,56 @@ const number = /(?:[0-9]+(?:\.[0-9]*)?|\.[0-9]+)(?:[eE][+\-−]?[0-9]+)?/y;
 const superscripts = '⁰¹²³⁴⁵⁶⁷⁸⁹';
 const superscriptRun = /[⁺⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+/y;
 const space = /[\s\u00a0\u2000-\u200a\u202f\u205f\u3000]/;
-const namePart = /[0-9_₀-₉\u0300-\u036f]/;
+const namePart = /[0-9_₀-₉]|\p{Mn}/u;
 const doubleQuotes = '"“”„‟«»';
 const singleQuotes = "'‘’‚‛";
 const words = new Set(['and', 'or', 'not']);
 
 const signs: ReadonlyMap<string, string> = new Map([
-  ['×', '*'], ['·', '*'], ['⋅', '*'], ['∗', '*'], ['∙', '*'], ['•', '*'], ['✕', '*'],
-  ['÷', '/'], ['∕', '/'], ['⁄', '/'],
-  ['−', '-'], ['–', '-'], ['—', '-'], ['‐', '-'], ['‑', '-'],
-  ['≤', '<='], ['⩽', '<='], ['≥', '>='], ['⩾', '>='], ['≠', '!='],
+  ['×', '*'],
+  ['·', '*'],
+  ['⋅', '*'],
+  ['∗', '*'],
+  ['∙', '*'],
+  ['•', '*'],
+  ['✕', '*'],
+  ['÷', '/'],
+  ['∕', '/'],
+  ['⁄', '/'],
+  ['−', '-'],
+  ['–', '-'],
+  ['—', '-'],
+  ['‐', '-'],
+  ['‑', '-'],
+  ['≤', '<='],
+  ['⩽', '<='],
+  ['≥', '>='],
+  ['⩾', '>='],
+  ['≠', '!='],
 ]);
-const longOperators = ['>>>', '**', '.*', './', '.^', '==', '!=', '<=', '>=', '<>', '=<', '=>', '<<', '>>', '&&', '||', '??', '?.', '^|', ':=', '//'];
+const longOperators = [
+  '>>>',
+  '**',
+  '.*',
+  './',
+  '.^',
+  '==',
+  '!=',
+  '<=',
+  '>=',
+  '<>',
+  '=<',
+  '=>',
+  '<<',
+  '>>',
+  '&&',
+  '||',
+  '??',
+  '?.',
+  '^|',
+  ':=',
+  '//',
+];
 const longStarts = new Set(longOperators.map((o) => o[0]));
 const shortOperators = new Set('+-*/^<>=!?:;%&|~');
 
@@ -48,7 +86,7 @@ export function tokenize(text: string): readonly Token[] {
   };
   while (at < length) {
     const c = text[at] as string;
-    if (c === ' ' || space.test(c)) {
+    if (c === ' ' || (space.test(c) && c !== '\ufeff')) {
       at++;
     } else if (nameLetter.test(c)) {
       readName(text, at, push);
@@ -74,7 +112,12 @@ export function tokenize(text: string): readonly Token[] {
       if (long !== undefined && !(long === '?.' && isDigit(text[at + 2]))) push('operator', long, at + long.length);
       else if (shortOperators.has(c)) push('operator', c, at + 1);
       else if (signs.has(c)) push('operator', signs.get(c) as string, at + 1);
-      else push('unknown', String.fromCodePoint(text.codePointAt(at) ?? 0), at + (text.codePointAt(at) as number > 0xffff ? 2 : 1));
+      else
+        push(
+          'unknown',
+          String.fromCodePoint(text.codePointAt(at) ?? 0),
+          at + ((text.codePointAt(at) as number) > 0xffff ? 2 : 1),
+        );
     }
   }
   return tokens;
@@ -82,7 +125,9 @@ export function tokenize(text: string): readonly Token[] {
 
 /** Whether a value may end with this token: after it a quotation mark is a prime, a name a factor. */
 export function endsValue(token: Token | undefined): boolean {
-  return token !== undefined && (token.kind === 'name' || token.kind === 'number' || token.kind === 'string' || token.kind === 'close');
+  return (
+    token !== undefined && (token.kind === 'name' || token.kind === 'number' || token.kind === 'string' || token.kind === 'close')
+  );
 }
 
 function readName(text: string, from: number, push: (kind: TokenKind, normal: string, to: number) => void): void {
@@ -95,7 +140,10 @@ function readName(text: string, from: number, push: (kind: TokenKind, normal: st
 function readSuperscript(text: string, from: number, push: (kind: TokenKind, normal: string, to: number) => void): void {
   superscriptRun.lastIndex = from;
   const typed = superscriptRun.exec(text)?.[0];
-  if (typed === undefined) return push('unknown', text[from] as string, from + 1);
+  if (typed === undefined) {
+    push('unknown', text[from] as string, from + 1);
+    return;
+  }
   push('operator', '^', from);
   const signed = typed.startsWith('⁻') || typed.startsWith('⁺');
   if (signed) push('operator', typed.startsWith('⁻') ? '-' : '+', from + 1);

@@ -8,12 +8,23 @@
 // 4. The TeX passes KaTeX at `strict: 'error'`, `trust: false`: user text is escaped (symbols.ts).
 // Not here: the result and the relation before it (the record), numbers for calculators (calculator.ts).
 
-import { numeralInUnit, readNumeral, roundSignificant, significantDigits, texNumeral, texQuantity, type Unit, unitOf } from '../quantity/index.ts';
+import type { Unit } from '../quantity/index.ts';
+import {
+  isAngleUnit,
+  numeralInUnit,
+  readNumeral,
+  roundSignificant,
+  significantDigits,
+  texNumeral,
+  texQuantity,
+  unitOf,
+} from '../quantity/index.ts';
 import { isE } from './arithmetic.ts';
 import type { Expr } from './expr.ts';
 import { readLiteral } from './literal.ts';
 import { texName, texText } from './symbols.ts';
-import { nothingTaken, type Taken } from './taken.ts';
+import type { Taken } from './taken.ts';
+import { nothingTaken } from './taken.ts';
 
 /** How the quantities of a sheet show in the lines of one case. */
 export interface Substitution {
@@ -51,7 +62,11 @@ interface Setting {
 
 /** The right-hand side in symbols. */
 export function texSymbols(expr: Expr, style: { readonly decimalSign: '.' | ',' } = { decimalSign: '.' }): string {
-  return set({ root: outermost(expr), sub: undefined, taken: nothingTaken, decimalSign: style.decimalSign, level: 0 }, expr, false);
+  return set(
+    { root: outermost(expr), sub: undefined, taken: nothingTaken, decimalSign: style.decimalSign, level: 0 },
+    expr,
+    false,
+  );
 }
 
 /** The right-hand side with the numbers of one case. */
@@ -109,7 +124,14 @@ function set(s: Setting, e: Expr, inExponent: boolean): string {
   }
 }
 
-const relations = new Map([['<', '<'], ['<=', '\\le'], ['>', '>'], ['>=', '\\ge'], ['==', '='], ['!=', '\\ne']]);
+const relations = new Map([
+  ['<', '<'],
+  ['<=', '\\le'],
+  ['>', '>'],
+  ['>=', '\\ge'],
+  ['==', '='],
+  ['!=', '\\ne'],
+]);
 
 function done(s: Setting, level: number, tex: string): string {
   s.level = level;
@@ -166,7 +188,8 @@ const trigonometric = new Set(['sin', 'cos', 'tan', 'sinh', 'cosh', 'tanh']);
 
 /** `sin(x)^2` as sin²(x). Never with a negative exponent, which would read as the inverse function. */
 function powerOfFunction(s: Setting, base: Expr, exponent: Expr, inExponent: boolean): string | undefined {
-  if (base.kind !== 'call' || !trigonometric.has(base.name) || exponent.kind !== 'number' || !/^[1-9]$/.test(exponent.text)) return undefined;
+  if (base.kind !== 'call' || !trigonometric.has(base.name) || exponent.kind !== 'number' || !/^[1-9]$/.test(exponent.text))
+    return undefined;
   const argument = set(s, base.args[0] as Expr, inExponent);
   return done(s, powerLevel, `\\${base.name}^{${exponent.text}}${fenced(argument)}`);
 }
@@ -215,8 +238,19 @@ function choose(s: Setting, e: Expr & { kind: 'choose' }, inExponent: boolean): 
 }
 
 const named = new Map([
-  ['ln', '\\ln'], ['log10', '\\log_{10}'], ['min', '\\min'], ['max', '\\max'], ['sin', '\\sin'], ['cos', '\\cos'], ['tan', '\\tan'],
-  ['asin', '\\arcsin'], ['acos', '\\arccos'], ['atan', '\\arctan'], ['sinh', '\\sinh'], ['cosh', '\\cosh'], ['tanh', '\\tanh'],
+  ['ln', '\\ln'],
+  ['log10', '\\log_{10}'],
+  ['min', '\\min'],
+  ['max', '\\max'],
+  ['sin', '\\sin'],
+  ['cos', '\\cos'],
+  ['tan', '\\tan'],
+  ['asin', '\\arcsin'],
+  ['acos', '\\arccos'],
+  ['atan', '\\arctan'],
+  ['sinh', '\\sinh'],
+  ['cosh', '\\cosh'],
+  ['tanh', '\\tanh'],
 ]);
 
 function call(s: Setting, name: string, args: readonly Expr[], inExponent: boolean): string {
@@ -281,7 +315,7 @@ function quoted(s: Setting, text: string, inExponent: boolean): string {
   const value = readLiteral(text, s.decimalSign);
   if (!value.ok) return done(s, atomLevel, texText(`“${text}”`));
   const { numeral, unit, si } = value.value;
-  if (inExponent && unit.text !== 'rad' && unit.counts.rad.n !== 0 && unit.parts.length === 1) {
+  if (inExponent && unit.text !== 'rad' && isAngleUnit(unit)) {
     radian ??= unitOf('rad');
     const exact = numeralInUnit(si, radian);
     const shown = significantDigits(exact) > anglePlaces ? roundSignificant(exact, anglePlaces) : exact;
@@ -301,7 +335,10 @@ function texLiteral(text: string, decimalSign: '.' | ','): string {
   const whole = text.replace(/^\./, '0.').replace(/\.(?![0-9])/, '');
   const numeral = readNumeral(whole, '.');
   // A numeral of thousands of digits is beyond print: its double says as much as is computed with.
-  const tex = numeral.ok && whole.length <= 40 ? texNumeral(numeral.value, { decimalSign }) : String(Number(text)).replace(/e\+?(-?\d+)$/, '\\times 10^{$1}');
+  const tex =
+    numeral.ok && whole.length <= 40
+      ? texNumeral(numeral.value, { decimalSign })
+      : String(Number(text)).replace(/e\+?(-?\d+)$/, '\\times 10^{$1}');
   if (cache.size >= mostLiterals) cache.clear();
   cache.set(text, tex);
   return tex;

@@ -11,18 +11,36 @@ import type { BinaryOperator, CompareOperator, Expr, Span } from './expr.ts';
 import type { Node, OperatorNode, RawNumber } from './parser.ts';
 import { checkQuotient, product } from './products.ts';
 import { excerpt, refusal, writeInstead } from './refusal.ts';
-import { nothing, refuse, spanOf, tokenIndex, type Walk } from './walking.ts';
+import type { Walk } from './walking.ts';
+import { nothing, refuse, spanOf, tokenIndex } from './walking.ts';
 
-const arithmetic = new Map<string, BinaryOperator>([['add', '+'], ['subtract', '-'], ['multiply', '*'], ['divide', '/'], ['pow', '^']]);
+const arithmetic = new Map<string, BinaryOperator>([
+  ['add', '+'],
+  ['subtract', '-'],
+  ['multiply', '*'],
+  ['divide', '/'],
+  ['pow', '^'],
+]);
 const comparisons = new Map<string, CompareOperator>([
-  ['smaller', '<'], ['smallerEq', '<='], ['larger', '>'], ['largerEq', '>='], ['equal', '=='], ['unequal', '!='],
+  ['smaller', '<'],
+  ['smallerEq', '<='],
+  ['larger', '>'],
+  ['largerEq', '>='],
+  ['equal', '=='],
+  ['unequal', '!='],
 ]);
 
 /** Reads one node and what hangs on it. `walk.read` is this function. */
 export function readNode(walk: Walk, node: Node): Expr {
   if (walk.problem) return nothing;
   if (--walk.budget < 0) {
-    return refuse(walk, refusal('formula-too-long', 'The formula has too many parts: split it into quantities of their own.', [0, walk.source.length]));
+    return refuse(
+      walk,
+      refusal('formula-too-long', 'The formula has too many parts: split it into quantities of their own.', [
+        0,
+        walk.source.length,
+      ]),
+    );
   }
   switch (node.type) {
     case 'SymbolNode':
@@ -61,7 +79,14 @@ function unlisted(walk: Walk, node: Node): Expr {
   if (node.type === 'RangeNode') {
     return refuse(walk, refusal('stray-colon', 'A “:” stands only in a choice: write test ? this : that.', at));
   }
-  return refuse(walk, refusal('not-in-formulas', `“${excerpt(walk.source)}” says something that is not part of formulas: use + - * / ^, parentheses, comparisons, choices and functions.`, at));
+  return refuse(
+    walk,
+    refusal(
+      'not-in-formulas',
+      `“${excerpt(walk.source)}” says something that is not part of formulas: use + - * / ^, parentheses, comparisons, choices and functions.`,
+      at,
+    ),
+  );
 }
 
 function leafName(walk: Walk, node: Node): Expr {
@@ -116,6 +141,13 @@ function prefixed(walk: Walk, node: OperatorNode, operand: Node): Expr {
   return unlisted(walk, node);
 }
 
+/** The operand with which a side begins, outside parentheses. */
+function leftmost(side: Expr | undefined): Expr | undefined {
+  let at = side;
+  while (at?.kind === 'binary') at = at.left;
+  return at;
+}
+
 function compare(walk: Walk, functions: readonly string[], nodes: readonly Node[]): Expr {
   const sides: Expr[] = [];
   let first = 0;
@@ -125,15 +157,20 @@ function compare(walk: Walk, functions: readonly string[], nodes: readonly Node[
   });
   walk.first = first;
   const at = spanOf(walk, first, walk.last);
-  const head = sides[0];
-  if (head?.kind === 'not' && nodes[0]?.type === 'OperatorNode') {
+  const head = leftmost(sides[0]);
+  if (head?.kind === 'not') {
     const text = walk.source.slice(...at);
-    const inner = walk.source.slice(head.inner.at[0], at[1]);
-    const rest = walk.source.slice(head.at[1], at[1]);
-    const wide = `not (${inner})`;
-    const narrow = `(${walk.source.slice(...head.at)})${rest}`;
-    return refuse(walk, refusal('ambiguous-not', `“${excerpt(text)}” can be read as ${excerpt(wide)} or as ${excerpt(narrow)}: write the one that is meant.`, at, [writeInstead(at, wide), writeInstead(at, narrow)]));
+    const wide = `not (${walk.source.slice(head.inner.at[0], at[1])})`;
+    const narrow = `(${walk.source.slice(...head.at)})${walk.source.slice(head.at[1], at[1])}`;
+    return refuse(
+      walk,
+      refusal(
+        'ambiguous-not',
+        `“${excerpt(text)}” can be read as ${excerpt(wide)} or as ${excerpt(narrow)}: write the one that is meant.`,
+        at,
+        [writeInstead(at, wide), writeInstead(at, narrow)],
+      ),
+    );
   }
   return { kind: 'compare', operators: functions.map((f) => comparisons.get(f) as CompareOperator), sides, at };
 }
-
