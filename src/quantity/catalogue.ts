@@ -5,9 +5,12 @@
 // 3. Looked up in Maps: "constructor" and "__proto__" are unknown like any other word.
 // Not here: products and quotients (unit-grammar.ts), proposals for unknown symbols (unit-nearest.ts).
 
-import { type Dimension, dimensionOf } from './dimension.ts';
-import { type Exact, exactOf, exactOfText, multiplyE, powerE } from './exact.ts';
-import { type Prefix, prefixes, type UnitRow } from './unit-row.ts';
+import type { Dimension } from './dimension.ts';
+import { dimensionOf } from './dimension.ts';
+import type { Exact } from './exact.ts';
+import { exactOf, exactOfText, multiplyE, powerE } from './exact.ts';
+import type { Prefix, UnitRow } from './unit-row.ts';
+import { prefixes } from './unit-row.ts';
 import { acceptedUnits } from './units.accepted.ts';
 import { otherUnits } from './units.other.ts';
 import { siUnits } from './units.si.ts';
@@ -38,7 +41,7 @@ for (const prefix of prefixes) {
 const plurals = new Map([['kgs', 'kg']]);
 
 const taken = (row: UnitRow, prefix: Prefix): boolean =>
-  row.prefixes === 'all' || (row.prefixes !== undefined && row.prefixes.split(' ').includes(prefix.symbol));
+  row.prefixes === 'all' || row.prefixes?.split(' ').includes(prefix.symbol) === true;
 
 const found = new Map<string, UnitSymbol>();
 
@@ -83,7 +86,10 @@ export function misusedPrefix(text: string): { readonly message: string; readonl
   const parts = split(text);
   if (parts && !taken(parts.row, parts.prefix)) {
     const { row, prefix } = parts;
-    return { message: `${row.symbol} (${row.name}) is not used with the prefix ${prefix.symbol}`, instead: [row.symbol] };
+    return {
+      message: `${row.symbol} (${row.name}) is not used with the prefix ${prefix.symbol}, the factor belongs to the number`,
+      instead: [],
+    };
   }
   for (const length of [1, 2]) {
     const outer = prefixBySpelling.get(text.slice(0, length));

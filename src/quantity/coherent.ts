@@ -7,18 +7,40 @@
 // Not here: kinds in words (kind.ts).
 
 import { symbolOfText } from './catalogue.ts';
-import { baseSymbols, type Dimension, dimensionKey, dimensionOf } from './dimension.ts';
-import { isZeroR, negR, type Rational, textR, zeroR } from './rational.ts';
-import { type Factor, type Unit, unitOfFactors } from './unit.ts';
-import { type Quotient, readQuotient } from './unit-grammar.ts';
+import type { Dimension } from './dimension.ts';
+import { baseSymbols, dimensionKey, dimensionOf } from './dimension.ts';
+import type { Rational } from './rational.ts';
+import { isZeroR, negR, textR, zeroR } from './rational.ts';
+import type { Factor, Unit } from './unit.ts';
+import { unitOfFactors } from './unit.ts';
+import type { Quotient } from './unit-grammar.ts';
+import { readQuotient } from './unit-grammar.ts';
 
 const named: ReadonlyMap<string, string> = new Map(
   (
     [
-      ['L M T-2', 'N'], ['L-1 M T-2', 'Pa'], ['L2 M T-2', 'N·m'], ['L2 M T-3', 'W'], ['M T-2', 'N/m'], ['L-2 M T-2', 'N/m³'], ['L3 M T-2', 'N·m²'],
-      ['L-1 M T-1', 'Pa·s'], ['M T-3', 'W/m²'], ['L M T-1', 'N·s'], ['L2 M T-1', 'N·m·s'],
-      ['L2 T-2 Θ-1', 'J/(kg·K)'], ['L2 M T-2 Θ-1', 'J/K'], ['L M T-3 Θ-1', 'W/(m·K)'], ['M T-3 Θ-1', 'W/(m²·K)'],
-      ['T I', 'C'], ['L2 M T-3 I-1', 'V'], ['L2 M T-3 I-2', 'Ω'], ['L-2 M-1 T4 I2', 'F'], ['L2 M T-2 I-2', 'H'], ['M T-2 I-1', 'T'], ['L2 M T-2 I-1', 'Wb'],
+      ['L M T-2', 'N'],
+      ['L-1 M T-2', 'Pa'],
+      ['L2 M T-2', 'N·m'],
+      ['L2 M T-3', 'W'],
+      ['M T-2', 'N/m'],
+      ['L-2 M T-2', 'N/m³'],
+      ['L3 M T-2', 'N·m²'],
+      ['L-1 M T-1', 'Pa·s'],
+      ['M T-3', 'W/m²'],
+      ['L M T-1', 'N·s'],
+      ['L2 M T-1', 'N·m·s'],
+      ['L2 T-2 Θ-1', 'J/(kg·K)'],
+      ['L2 M T-2 Θ-1', 'J/K'],
+      ['L M T-3 Θ-1', 'W/(m·K)'],
+      ['M T-3 Θ-1', 'W/(m²·K)'],
+      ['T I', 'C'],
+      ['L2 M T-3 I-1', 'V'],
+      ['L2 M T-3 I-2', 'Ω'],
+      ['L-2 M-1 T4 I2', 'F'],
+      ['L2 M T-2 I-2', 'H'],
+      ['M T-2 I-1', 'T'],
+      ['L2 M T-2 I-1', 'Wb'],
     ] as const
   ).map(([key, text]) => [dimensionKey(dimensionOf(key)), text]),
 );

@@ -8,8 +8,10 @@
 // 4. A reading takes its zero along; a difference (differenceUnit) does not.
 // Not here: rounding for display.
 
-import { doubleOf, type Exact, fractionOfDouble, nearestDouble } from './exact.ts';
-import { doubleOfNumeral, type Numeral, numeralOfDouble, withoutTrailingZeros } from './numeral.ts';
+import type { Exact } from './exact.ts';
+import { doubleOf, fractionOfDouble, nearestDouble } from './exact.ts';
+import type { Numeral } from './numeral.ts';
+import { doubleOfNumeral, numeralOfDouble, withoutTrailingZeros } from './numeral.ts';
 import { roundAtPlace } from './rounding.ts';
 import type { Unit } from './unit.ts';
 

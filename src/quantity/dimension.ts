@@ -4,7 +4,8 @@
 // 2. Plane angle, revolutions and plain numbers all have the dimension one; what tells them apart is counted by the unit.
 // Not here: names of kinds of quantity (kind.ts), units (unit.ts).
 
-import { addR, equalR, isZeroR, mulR, type Rational, rational, rationalOfText, subR, textR, zeroR } from './rational.ts';
+import type { Rational } from './rational.ts';
+import { addR, equalR, isZeroR, mulR, rational, rationalOfText, subR, textR, zeroR } from './rational.ts';
 
 export type Dimension = readonly Rational[];
 

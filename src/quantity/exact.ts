@@ -14,8 +14,9 @@ export interface Exact {
   readonly pi: number;
 }
 
-const decimalsOfPi = 100;
-const piDigits = 31415926535897932384626433832795028841971693993751058209749445923078164062862089986280348253421170679n;
+/** π times 10^decimalsOfPi, cut. */
+export const decimalsOfPi = 100;
+export const piDigits = 31415926535897932384626433832795028841971693993751058209749445923078164062862089986280348253421170679n;
 const piScale = 10n ** BigInt(decimalsOfPi);
 
 const absBig = (a: bigint): bigint => (a < 0n ? -a : a);

@@ -1,28 +1,59 @@
 // The room of quantities: dimensions, units, exact conversion, reading and printing. Imports from no other room.
 
-export { allSpellings, symbolOfText, unitRows } from './catalogue.ts';
 export { coherentUnit } from './coherent.ts';
 export { fromSI, numeralInUnit, siOfNumeral, toSI } from './convert.ts';
 export {
-  baseSymbols, type Dimension, dimensionKey, dimensionless, dimensionOf, divideD, equalD, isDimensionless, multiplyD, powerD,
+  baseSymbols,
+  type Dimension,
+  dimensionKey,
+  dimensionless,
+  dimensionOf,
+  divideD,
+  equalD,
+  isDimensionless,
+  multiplyD,
+  powerD,
 } from './dimension.ts';
 export { divideE, doubleOf, type Exact, equalE, exactOf, exactOfDouble, exactOfText, multiplyE, powerE } from './exact.ts';
 export { describeUnit, forceHint, kindName, withArticle } from './kind.ts';
 export {
-  doubleOfNumeral, exactOfNumeral, firstPlace, isZeroNumeral, lastPlace, type Numeral, numeralOf, numeralOfDouble, plainNumeral,
-  significantDigits, withoutTrailingZeros,
+  doubleOfNumeral,
+  exactOfNumeral,
+  firstPlace,
+  isZeroNumeral,
+  lastPlace,
+  type Numeral,
+  numeralOf,
+  numeralOfDouble,
+  plainNumeral,
+  significantDigits,
+  withoutTrailingZeros,
 } from './numeral.ts';
 export { type DecimalSign, readNumeral } from './numeral-text.ts';
-export { printNumeral, printQuantity, type Style } from './print.ts';
+export { isScientific, printNumeral, printQuantity, type Style } from './print.ts';
 export { texNumeral, texQuantity, texUnit } from './print-tex.ts';
 export { printValue, texValue } from './print-value.ts';
 export { either, type Fix, type Problem, quote, type Result } from './problem.ts';
 export {
-  addR, compareR, equalR, isWholeR, isZeroR, mulR, negR, oneR, type Rational, rational, rationalOfText, signR, subR, textR, zeroR,
+  addR,
+  compareR,
+  equalR,
+  isWholeR,
+  isZeroR,
+  mulR,
+  negR,
+  oneR,
+  type Rational,
+  rational,
+  rationalOfText,
+  signR,
+  subR,
+  textR,
+  zeroR,
 } from './rational.ts';
 export { type Rounding, roundAtPlace, roundSignificant } from './rounding.ts';
 export { type Counts, differenceUnit, isAngleUnit, isRatioUnit, one, type Unit, type UnitPart } from './unit.ts';
 export { nearestUnits } from './unit-nearest.ts';
-export { catalogueRows, readUnit, unitNames, unitOf } from './unit-text.ts';
+export { readUnit, unitNames, unitOf } from './unit-text.ts';
 export { readValue, type Tolerance, type Value } from './value.ts';
 export { readRange, type ValueRange } from './value-range.ts';

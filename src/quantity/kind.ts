@@ -6,26 +6,58 @@
 // Not here: whether two kinds may meet in a formula.
 
 import { unitRows } from './catalogue.ts';
-import { type Dimension, dimensionKey, dimensionOf, equalD } from './dimension.ts';
-import type { Unit } from './unit.ts';
 import { coherentUnit } from './coherent.ts';
+import type { Dimension } from './dimension.ts';
+import { dimensionKey, dimensionOf, equalD } from './dimension.ts';
+import type { Unit } from './unit.ts';
 import { readUnit } from './unit-text.ts';
 
 const words: ReadonlyMap<string, string> = new Map(
   (
     [
       ['1', 'number'],
-      ['L', 'length'], ['L2', 'area'], ['L3', 'volume or section modulus'], ['L4', 'second moment of area'], ['L-1', 'reciprocal length'],
-      ['M', 'mass'], ['L-1 M', 'mass per length'], ['L-2 M', 'mass per area'], ['L-3 M', 'density'], ['L2 M', 'moment of inertia'], ['L M', 'mass times length'],
-      ['T', 'time'], ['T-1', 'rate'], ['T-2', 'rate of change of a rate'], ['L T-1', 'speed'], ['L T-2', 'acceleration'], ['L2 T-2', 'speed squared or energy per mass'],
-      ['L3 T-1', 'volume flow rate'], ['M T-1', 'mass flow rate'], ['L2 T-1', 'kinematic viscosity'], ['L-1 M T-1', 'dynamic viscosity'],
-      ['L M T-2', 'force'], ['M T-2', 'force per length'], ['L-1 M T-2', 'stress or pressure'], ['L-2 M T-2', 'force per volume'],
-      ['L2 M T-2', 'torque or energy'], ['L M T-1', 'momentum'], ['L2 M T-1', 'angular momentum'], ['L2 M T-3', 'power'], ['M T-3', 'power per area'],
+      ['L', 'length'],
+      ['L2', 'area'],
+      ['L3', 'volume'],
+      ['L4', 'second moment of area'],
+      ['L-1', 'reciprocal length'],
+      ['M', 'mass'],
+      ['L-1 M', 'mass per length'],
+      ['L-2 M', 'mass per area'],
+      ['L-3 M', 'density'],
+      ['L2 M', 'moment of inertia'],
+      ['L M', 'mass times length'],
+      ['T', 'time'],
+      ['T-1', 'rate'],
+      ['L T-1', 'speed'],
+      ['L T-2', 'acceleration'],
+      ['L2 T-2', 'speed squared or energy per mass'],
+      ['L3 T-1', 'volume flow rate'],
+      ['M T-1', 'mass flow rate'],
+      ['L2 T-1', 'kinematic viscosity'],
+      ['L-1 M T-1', 'dynamic viscosity'],
+      ['L M T-2', 'force'],
+      ['M T-2', 'force per length'],
+      ['L-1 M T-2', 'stress or pressure'],
+      ['L-2 M T-2', 'force per volume'],
+      ['L2 M T-2', 'torque or energy'],
+      ['L M T-1', 'momentum'],
+      ['L2 M T-1', 'angular momentum'],
+      ['L2 M T-3', 'power'],
+      ['M T-3', 'power per area'],
       ['L3 M T-2', 'flexural rigidity'],
-      ['Θ', 'temperature'], ['Θ-1', 'coefficient of thermal expansion'], ['L2 T-2 Θ-1', 'specific heat capacity'], ['L2 M T-2 Θ-1', 'heat capacity'],
-      ['L M T-3 Θ-1', 'thermal conductivity'], ['M T-3 Θ-1', 'coefficient of heat transfer'],
-      ['I', 'electric current'], ['T I', 'electric charge'], ['L2 M T-3 I-1', 'electric potential'], ['L2 M T-3 I-2', 'electric resistance'],
-      ['N', 'amount of substance'], ['J', 'luminous intensity'],
+      ['Θ', 'temperature'],
+      ['Θ-1', 'coefficient of thermal expansion'],
+      ['L2 T-2 Θ-1', 'specific heat capacity'],
+      ['L2 M T-2 Θ-1', 'heat capacity'],
+      ['L M T-3 Θ-1', 'thermal conductivity'],
+      ['M T-3 Θ-1', 'coefficient of heat transfer'],
+      ['I', 'electric current'],
+      ['T I', 'electric charge'],
+      ['L2 M T-3 I-1', 'electric potential'],
+      ['L2 M T-3 I-2', 'electric resistance'],
+      ['N', 'amount of substance'],
+      ['J', 'luminous intensity'],
     ] as const
   ).map(([key, word]) => [dimensionKey(dimensionOf(key)), word]),
 );
@@ -70,8 +102,11 @@ export function kindName(dimension: Dimension, unitText?: string): string {
   return special ?? words.get(dimensionKey(dimension)) ?? `quantity of unit ${read?.text ?? coherentUnit(dimension).text}`;
 }
 
-/** "a force", "an area". */
-export const withArticle = (kind: string): string => `${/^[aeiou]/.test(kind) && !/^u(ni|se)/.test(kind) ? 'an' : 'a'} ${kind}`;
+/** "a force", "an area"; of a unit what describeUnit says. */
+export function withArticle(what: string | Unit): string {
+  if (typeof what !== 'string') return describeUnit(what);
+  return `${/^[aeio]/.test(what) ? 'an' : 'a'} ${what}`;
+}
 
 /** "a force (N)", "a number", "a temperature (°C)". */
 export function describeUnit(unit: Unit): string {
@@ -81,7 +116,11 @@ export function describeUnit(unit: Unit): string {
 
 /** Where a unit with lb, oz or kg misses a dimension by exactly the acceleration of free fall: what to write for the force. */
 export function forceHint(unit: Unit, wanted: Dimension): string | undefined {
-  const forces = new Map([['lb', 'lbf'], ['oz', 'ozf'], ['kg', 'kgf']]);
+  const forces = new Map([
+    ['lb', 'lbf'],
+    ['oz', 'ozf'],
+    ['kg', 'kgf'],
+  ]);
   const mass = unit.parts.find(({ symbol }) => forces.has(symbol));
   const force = mass && forces.get(mass.symbol);
   if (!mass || force === undefined) return undefined;

@@ -5,8 +5,10 @@
 // 3. Every digit is kept, trailing zeros too. What a double cannot hold is refused.
 // Not here: units and tolerances (value.ts), printing (print.ts).
 
-import { doubleOfNumeral, isZeroNumeral, type Numeral, numeralOf } from './numeral.ts';
-import { done, type Failure, fail, failWith, fixOf, quote, type Result } from './problem.ts';
+import type { Numeral } from './numeral.ts';
+import { doubleOfNumeral, isZeroNumeral, numeralOf } from './numeral.ts';
+import type { Failure, Result } from './problem.ts';
+import { done, fail, failWith, fixOf, quote } from './problem.ts';
 
 export type DecimalSign = '.' | ',';
 
@@ -81,7 +83,12 @@ export function readNumeral(text: string, decimalSign: DecimalSign): Result<Nume
   if (!scanned.ok) return scanned;
   const { numeral, to } = scanned.value;
   if (to === end) return done(numeral);
-  return fail('number-form', `${quote(text.slice(to, end))} after the number is not understood: write the number alone.`, to, end);
+  return fail(
+    'number-form',
+    `${quote(text.slice(to, end))} after the number is not understood: write the number alone.`,
+    to,
+    end,
+  );
 }
 
 export function tooLong(text: string, what: string): Failure {
@@ -117,7 +124,8 @@ function scanPower(text: string, from: number, digits: string, exponent: number)
   exponentPattern.lastIndex = from;
   const match = exponentPattern.exec(text);
   if (match) {
-    const value = match[3] === undefined ? Number((match[1] ?? match[2] ?? '').replace('−', '-')) : numberOfSuperscripts(match[3]);
+    const value =
+      match[3] === undefined ? Number((match[1] ?? match[2] ?? '').replace('−', '-')) : numberOfSuperscripts(match[3]);
     return { exponent: value, to: from + match[0].length, ofTen: false };
   }
   if (digits !== '10' || exponent !== 0) return undefined;
@@ -142,11 +150,19 @@ function outOfRange(text: string, from: number, to: number, large: boolean): Fai
 }
 
 /** Whatever is wrong with decimal signs and groups at [from, to). */
-function brokenGroups(text: string, from: number, to: number, grouped: string, mark: string | undefined, decimalSign: DecimalSign): Failure | undefined {
+function brokenGroups(
+  text: string,
+  from: number,
+  to: number,
+  grouped: string,
+  mark: string | undefined,
+  decimalSign: DecimalSign,
+): Failure | undefined {
   const next = text[to];
-  const runGoesOn = next === '.' || next === ',' || next === "'" || next === '’' || next === '_';
-  const digitFollows = runGoesOn && /\d/.test(text[to + 1] ?? '');
-  if (digitFollows || (mark !== undefined && mark !== decimalSign)) return wrongSigns(text, from, decimalSign);
+  // 22°12'30" has an apostrophe between digits as well: it groups only before three of them.
+  const apostrophe = (next === "'" || next === '’') && /^\d{3}(?!\d)/.test(text.slice(to + 1, to + 5));
+  const goesOn = apostrophe || ((next === '.' || next === ',' || next === '_') && /\d/.test(text[to + 1] ?? ''));
+  if (goesOn || (mark !== undefined && mark !== decimalSign)) return wrongSigns(text, from, decimalSign);
   const firstGroup = grouped.search(/\D/);
   if (firstGroup > 3) {
     const fix = ungrouped(grouped);

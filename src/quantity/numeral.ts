@@ -5,7 +5,8 @@
 // 3. Zero is never negative: nothing prints −0.
 // Not here: reading (numeral-text.ts), rounding (rounding.ts), printing for people (print.ts).
 
-import { type Exact, exactOf, multiplyE, powerE } from './exact.ts';
+import type { Exact } from './exact.ts';
+import { exactOf, multiplyE, powerE } from './exact.ts';
 
 export interface Numeral {
   readonly negative: boolean;

@@ -3,15 +3,19 @@
 // Units stand upright in one \mathrm; digit groups and the unit are set off by thin spaces.
 // Not here: quantity symbols and formulas.
 
-import { firstPlace, isZeroNumeral, type Numeral, partsOf, scientificPartsOf } from './numeral.ts';
-import { groupDecimals, groupWhole, isScientific, type Style, standsClose } from './print.ts';
+import type { Numeral } from './numeral.ts';
+import { firstPlace, isZeroNumeral, partsOf, scientificPartsOf } from './numeral.ts';
+import type { Style } from './print.ts';
+import { groupDecimals, groupWhole, isScientific, standsClose } from './print.ts';
 import type { Unit } from './unit.ts';
 
 const thin = '\\,';
 
 export function texNumeral(a: Numeral, style: Style): string {
   const scientific = isScientific(a);
-  const { whole, decimals } = scientific ? scientificPartsOf(a) : partsOf(isZeroNumeral(a) && a.exponent > 0 ? { ...a, exponent: 0 } : a);
+  const { whole, decimals } = scientific
+    ? scientificPartsOf(a)
+    : partsOf(isZeroNumeral(a) && a.exponent > 0 ? { ...a, exponent: 0 } : a);
   const mark = style.decimalSign === ',' ? '{,}' : '.';
   const fraction = decimals === '' ? '' : mark + groupDecimals(decimals, thin);
   const text = `${a.negative ? '-' : ''}${groupWhole(whole, thin)}${fraction}`;
@@ -21,12 +25,21 @@ export function texNumeral(a: Numeral, style: Style): string {
 const lowered: ReadonlyMap<string, string> = new Map([...'⁻⁰¹²³⁴⁵⁶⁷⁸⁹'].map((char, place) => [char, '-0123456789'[place] ?? '']));
 const pieces = /[⁻⁰¹²³⁴⁵⁶⁷⁸⁹]+|\^\([^)]*\)|_[A-Za-z]+|\d|[°′″%‰·µΩÅ]|[^⁻⁰¹²³⁴⁵⁶⁷⁸⁹^_\d°′″%‰·µΩÅ]+/g;
 const signs: ReadonlyMap<string, string> = new Map([
-  ['°', '{}^{\\circ}'], ['′', '{}^{\\prime}'], ['″', '{}^{\\prime\\prime}'], ['%', '\\%'], ['‰', '\\text{‰}'],
-  ['·', '{\\cdot}'], ['µ', '\\text{µ}'], ['Ω', '\\Omega '], ['Å', '\\text{Å}'],
+  ['°', '{}^{\\circ}'],
+  ['′', '{}^{\\prime}'],
+  ['″', '{}^{\\prime\\prime}'],
+  ['%', '\\%'],
+  ['‰', '\\text{‰}'],
+  ['·', '{\\cdot}'],
+  ['µ', '\\text{µ}'],
+  ['Ω', '\\Omega '],
+  ['Å', '\\text{Å}'],
 ]);
 
-/** '\mathrm{kg/m}', '\mathrm{W/(m^{2}{\cdot}K)}'. */
+/** '\mathrm{kg/m}', '\mathrm{W/(m^{2}{\cdot}K)}', '{}^{\circ}'. */
 export function texUnit(unit: Unit): string {
+  const single = signs.get(unit.text);
+  if (single !== undefined) return single;
   const inner = unit.text.replace(pieces, (piece) => {
     const sign = signs.get(piece);
     if (sign !== undefined) return sign;

@@ -4,9 +4,11 @@
 // Not here: quantities without ± (print.ts, print-tex.ts).
 
 import type { Numeral } from './numeral.ts';
-import { printNumeral, printQuantity, type Style, wideSpace } from './print.ts';
+import type { Style } from './print.ts';
+import { printNumeral, printQuantity, wideSpace } from './print.ts';
 import { texNumeral, texQuantity, texUnit } from './print-tex.ts';
-import { isRatioUnit, type Unit } from './unit.ts';
+import type { Unit } from './unit.ts';
+import { isRatioUnit } from './unit.ts';
 import type { Value } from './value.ts';
 
 interface Printer {

@@ -6,9 +6,11 @@
 // 4. What is printed reads back as the same numeral and unit (tested for the whole catalogue).
 // Not here: TeX (print-tex.ts), machine text (plainNumeral in numeral.ts), values with ± (print-value.ts).
 
-import { firstPlace, isZeroNumeral, type Numeral, partsOf, scientificPartsOf } from './numeral.ts';
+import type { Numeral } from './numeral.ts';
+import { firstPlace, isZeroNumeral, partsOf, scientificPartsOf } from './numeral.ts';
 import type { DecimalSign } from './numeral-text.ts';
-import { superscript, type Unit } from './unit.ts';
+import type { Unit } from './unit.ts';
+import { superscript } from './unit.ts';
 
 export interface Style {
   readonly decimalSign: DecimalSign;
@@ -30,7 +32,9 @@ export function groupDecimals(digits: string, between: string): string {
 
 export function printNumeral(a: Numeral, style: Style): string {
   const scientific = isScientific(a);
-  const { whole, decimals } = scientific ? scientificPartsOf(a) : partsOf(isZeroNumeral(a) && a.exponent > 0 ? { ...a, exponent: 0 } : a);
+  const { whole, decimals } = scientific
+    ? scientificPartsOf(a)
+    : partsOf(isZeroNumeral(a) && a.exponent > 0 ? { ...a, exponent: 0 } : a);
   const sign = a.negative ? '−' : '';
   const fraction = decimals === '' ? '' : style.decimalSign + groupDecimals(decimals, thinSpace);
   const text = `${sign}${groupWhole(whole, thinSpace)}${fraction}`;

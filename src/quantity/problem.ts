@@ -34,7 +34,13 @@ export const done = <T>(value: T): Result<T> => ({ ok: true, value });
 
 /** An error about [from, to); each replacement text becomes a fix of that span. */
 export function fail(code: string, message: string, from: number, to: number, replacements: readonly string[] = []): Failure {
-  return failWith(code, message, from, to, replacements.map((text) => fixOf(from, to, text)));
+  return failWith(
+    code,
+    message,
+    from,
+    to,
+    replacements.map((text) => fixOf(from, to, text)),
+  );
 }
 
 export function failWith(code: string, message: string, from: number, to: number, fixes: readonly Fix[]): Failure {
@@ -43,7 +49,12 @@ export function failWith(code: string, message: string, from: number, to: number
   return { ok: false, problem: fixes.length > 0 ? { ...problem, fixes } : problem };
 }
 
-export const fixOf = (from: number, to: number, text: string): Fix => ({ from, to, text, label: `write ${text}` });
+export const fixOf = (from: number, to: number, text: string): Fix => ({
+  from,
+  to,
+  text,
+  label: text === '' ? 'leave it out' : `write ${text}`,
+});
 
 /** The same problem, about a text in which the one read here begins at `by`. */
 export function shifted(failure: Failure, by: number): Failure {

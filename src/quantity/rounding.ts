@@ -6,7 +6,8 @@
 // 3. A negative numeral that rounds to zero is 0, not −0.
 // Not here: how many digits a result deserves.
 
-import { firstPlace, isZeroNumeral, type Numeral, numeralOf } from './numeral.ts';
+import type { Numeral } from './numeral.ts';
+import { firstPlace, isZeroNumeral, numeralOf } from './numeral.ts';
 
 /**
  * half-even: to the nearest, ties to the even digit (ISO 80000-1 rule A, the default).

@@ -10,11 +10,15 @@
 // Not here: which symbols there are (catalogue.ts), what is proposed for an unknown one (unit-nearest.ts).
 
 import { symbolOfText } from './catalogue.ts';
-import { type Failure, fail, quote, type Result, done } from './problem.ts';
-import { addR, isZeroR, mulR, oneR, type Rational, rational } from './rational.ts';
-import { type Factor, textOfFactors } from './unit.ts';
+import type { Failure, Result } from './problem.ts';
+import { done, fail, quote } from './problem.ts';
+import type { Rational } from './rational.ts';
+import { addR, isZeroR, mulR, oneR, rational } from './rational.ts';
+import type { Factor } from './unit.ts';
+import { textOfFactors } from './unit.ts';
 import { unknownSymbol } from './unit-nearest.ts';
-import { type Token, unitTokens } from './unit-tokens.ts';
+import type { Token } from './unit-tokens.ts';
+import { unitTokens } from './unit-tokens.ts';
 
 const deepest = 8;
 const greatestExponent = 12;
@@ -32,7 +36,8 @@ const inverse = (a: Quotient): Quotient => ({ above: a.below, below: a.above });
 
 function raise(a: Quotient, exponent: Rational): Quotient {
   if (exponent.n < 0) return raise(inverse(a), rational(-exponent.n, exponent.d));
-  const each = (factors: readonly Factor[]) => factors.map((factor) => ({ ...factor, exponent: mulR(factor.exponent, exponent) }));
+  const each = (factors: readonly Factor[]) =>
+    factors.map((factor) => ({ ...factor, exponent: mulR(factor.exponent, exponent) }));
   return { above: each(a.above), below: each(a.below) };
 }
 
@@ -109,10 +114,12 @@ export function readQuotient(text: string): Result<Quotient> {
   }
 
   function group(open: Token, depth: number): Quotient | undefined {
-    if (depth >= deepest) return give(fail('unit-parentheses', `Parentheses in a unit nest to ${deepest} levels at most.`, open.from, open.to));
+    if (depth >= deepest)
+      return give(fail('unit-parentheses', `Parentheses in a unit nest to ${deepest} levels at most.`, open.from, open.to));
     const inner = unit(depth + 1);
     if (!inner || failure) return undefined;
-    if (take().kind !== 'close') return give(fail('unit-parentheses', `A parenthesis is not closed in the unit ${quote(text)}.`, open.from, open.to));
+    if (take().kind !== 'close')
+      return give(fail('unit-parentheses', `A parenthesis is not closed in the unit ${quote(text)}.`, open.from, open.to));
     return powered(inner);
   }
 
@@ -127,10 +134,16 @@ export function readQuotient(text: string): Result<Quotient> {
     }
     // A negative exponent of one symbol stays as typed: s⁻¹ is not rewritten as 1/s.
     const single = base.above.length === 1 && base.below.length === 0;
-    const result = single ? { above: base.above.map((each) => ({ ...each, exponent: mulR(each.exponent, exponent) })), below: [] } : raise(base, exponent);
-    const excess = [...result.above, ...result.below].some((each) => Math.abs(each.exponent.n) > greatestExponent || each.exponent.d > greatestRoot);
+    const result = single
+      ? { above: base.above.map((each) => ({ ...each, exponent: mulR(each.exponent, exponent) })), below: [] }
+      : raise(base, exponent);
+    const excess = [...result.above, ...result.below].some(
+      (each) => Math.abs(each.exponent.n) > greatestExponent || each.exponent.d > greatestRoot,
+    );
     if (!excess) return result;
-    return give(fail('unit-exponent', `Exponents of units go to ${greatestExponent} and to sixth roots at most.`, token.from, token.to));
+    return give(
+      fail('unit-exponent', `Exponents of units go to ${greatestExponent} and to sixth roots at most.`, token.from, token.to),
+    );
   }
 
   /** a/b·c and a/b/c: both readings, where the rest is as simple as that. */
@@ -149,7 +162,15 @@ export function readQuotient(text: string): Result<Quotient> {
     const simple = solidi === 1 || (solidi === 2 && rest.above.length === 1 && rest.below.length === 0);
     const advice = simple ? `write ${readings.join(' or ')}` : 'set parentheses';
     const typed = text.slice(from, to).trim();
-    return give(fail('ambiguous-unit', `The unit ${quote(typed)} has ${what} and can be read in two ways: ${advice}.`, from, from + typed.length, simple ? readings : []));
+    return give(
+      fail(
+        'ambiguous-unit',
+        `The unit ${quote(typed)} has ${what} and can be read in two ways: ${advice}.`,
+        from,
+        from + typed.length,
+        simple ? readings : [],
+      ),
+    );
   }
 
   const whole = unit(0);
@@ -172,7 +193,10 @@ function merged({ above, below }: Quotient): string {
   const all = [...exponents.values()];
   const up = all.filter(({ exponent }) => exponent.n > 0);
   const down = all.filter(({ exponent }) => exponent.n < 0);
-  return textOfFactors(up, down.map((each) => ({ ...each, exponent: mulR(each.exponent, rational(-1)) })));
+  return textOfFactors(
+    up,
+    down.map((each) => ({ ...each, exponent: mulR(each.exponent, rational(-1)) })),
+  );
 }
 
 const productSigns = new Set(['.', '×', '-', '−', '–', '‐', '•', 'x', ',']);
@@ -182,19 +206,58 @@ function misplaced(token: Token, text: string): Failure {
   const { from, to, kind } = token;
   const unit = quote(text);
   if (kind === 'end') return fail('unit-form', `The unit ${unit} ends too early: a unit must follow its last sign.`, from, to);
-  if (kind === 'close') return fail('unit-parentheses', `A parenthesis is closed that was not opened in the unit ${unit}.`, from, to);
+  if (kind === 'close')
+    return fail('unit-parentheses', `A parenthesis is closed that was not opened in the unit ${unit}.`, from, to);
   if (token.text === "'" || token.text === '’') {
-    return fail('ambiguous-unit', 'The sign ′ can stand for feet or for minutes of angle: write ft or arcmin.', from, to, ['ft', 'arcmin']);
+    return fail('ambiguous-unit', 'The sign ′ can stand for feet or for minutes of angle: write ft or arcmin.', from, to, [
+      'ft',
+      'arcmin',
+    ]);
   }
   if (token.text === '"' || token.text === '”') {
-    return fail('ambiguous-unit', 'The sign ″ can stand for inches or for seconds of angle: write in or arcsec.', from, to, ['in', 'arcsec']);
+    return fail('ambiguous-unit', 'The sign ″ can stand for inches or for seconds of angle: write in or arcsec.', from, to, [
+      'in',
+      'arcsec',
+    ]);
+  }
+  const hyphen = /^(\p{L}+)[-−–‐](\p{L}+)$/u.exec(text.trim());
+  if (hyphen && kind === 'other') {
+    // ft-lb in a torque means the pound-force; lb alone is the mass.
+    const [left = '', right = ''] = hyphen.slice(1).map((each) => (each === 'lb' || each === 'lbs' ? 'lbf' : each));
+    const fix = `${left}·${right}`;
+    return fail(
+      'unit-sign',
+      `${quote(token.text)} does not multiply units: write ${fix}.`,
+      text.indexOf(hyphen[0]),
+      text.indexOf(hyphen[0]) + hyphen[0].length,
+      [fix],
+    );
   }
   if (kind === 'other' && productSigns.has(token.text) && from > 0) {
     return fail('unit-sign', `${quote(token.text)} does not multiply units in ${unit}: write · or a space.`, from, to, ['·']);
   }
+  if (kind === 'times' && text[from - 1] === '*') {
+    return fail('unit-sign', `A power is written with ^ or a raised digit in ${unit}: write m^2 or m².`, from - 1, to, ['^']);
+  }
+  const remark = kind === 'open' && token.attached ? /^\([\p{L}.]{1,6}\)$/u.exec(text.slice(from).trim()) : null;
+  if (remark) {
+    const message = `${quote(remark[0])} is added to the unit in ${unit}: what it tells belongs to the name of the quantity. Write ${text.slice(0, from).trim()}.`;
+    return fail('unit-annotation', message, from, text.length, ['']);
+  }
   if (token.attached && (kind === 'open' || kind === 'symbol')) {
     const fix = `·${token.text}`;
-    return fail('unit-sign', `Something is missing before ${quote(token.text)} in the unit ${unit}: write a product as N·m, a quotient as W/(m²·K).`, from, to, [fix]);
+    return fail(
+      'unit-sign',
+      `Something is missing before ${quote(token.text)} in the unit ${unit}: write a product as N·m, a quotient as W/(m²·K).`,
+      from,
+      to,
+      [fix],
+    );
   }
-  return fail('unit-sign', `${quote(token.text)} cannot stand there in the unit ${unit}: write units such as N·m, N/mm² or W/(m²·K).`, from, to);
+  return fail(
+    'unit-sign',
+    `${quote(token.text)} cannot stand there in the unit ${unit}: write units such as N·m, N/mm² or W/(m²·K).`,
+    from,
+    to,
+  );
 }

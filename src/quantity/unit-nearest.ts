@@ -5,26 +5,99 @@
 //    then the fewest changed letters. Three proposals at most.
 // Not here: the catalogue (catalogue.ts).
 
-import { misusedPrefix, symbolOfText, unitRows, usualSymbols, allSpellings } from './catalogue.ts';
-import { either, type Failure, fail, quote } from './problem.ts';
+import { allSpellings, misusedPrefix, symbolOfText, unitRows, usualSymbols } from './catalogue.ts';
+import type { Failure } from './problem.ts';
+import { either, fail, quote } from './problem.ts';
+import { prefixes } from './unit-row.ts';
 
 const most = 3;
 const longestCompared = 24;
 
 /** Spellings in use that are no symbols, or not safely one, and what to write. */
 const instead: ReadonlyMap<string, readonly string[]> = new Map([
-  ['mph', ['mi/h']], ['kph', ['km/h']], ['kmh', ['km/h']], ['kmph', ['km/h']], ['mps', ['m/s']], ['fps', ['ft/s']], ['fpm', ['ft/min']],
-  ['cfm', ['ft³/min']], ['gpm', ['gal/min']], ['lpm', ['L/min']], ['rps', ['r/s']], ['cc', ['cm³']], ['ccm', ['cm³']], ['cbm', ['m³']],
-  ['sqm', ['m²']], ['sqmm', ['mm²']], ['qmm', ['mm²']], ['sqft', ['ft²']], ['sqin', ['in²']], ['cuft', ['ft³']], ['cuin', ['in³']],
-  ['psf', ['lbf/ft²']], ['ksf', ['kip/ft²']], ['plf', ['lbf/ft']], ['klf', ['kip/ft']], ['pli', ['lbf/in']], ['pcf', ['lb/ft³']], ['pci', ['lb/in³']],
-  ['ton', ['ton_short', 'ton_long', 't']], ['tons', ['ton_short', 'ton_long', 't']], ['short', ['ton_short']], ['long', ['ton_long']],
-  ['gr', ['g', 'grain']], ['grs', ['g', 'grain']], ['gms', ['g']], ['gm', ['g']], ['mtr', ['m']], ['mtrs', ['m']], ['metric', ['t']],
-  ['turn', ['r']], ['turns', ['r']], ['revs', ['r']], ['U', ['r']], ['upm', ['r/min']], ['grad', ['gon', '°']], ['degrees', ['°']],
-  ['percent', ['%']], ['pct', ['%']], ['pound', ['lb', 'lbf']], ['pounds', ['lb', 'lbf']], ['ounces', ['oz', 'ozf']], ['feet', ['ft']],
-  ['inches', ['in']], ['R', ['°R', 'r']], ['Ra', ['°R']], ['centigrade', ['°C']], ['celsius', ['°C']], ['fahrenheit', ['°F']], ['ata', ['at']], ['atü', ['at']],
-  ['barg', ['bar']], ['bara', ['bar']], ['psig', ['psi']], ['psia', ['psi']], ['Nm3', ['m³']], ['Sm3', ['m³']], ['VA', ['V·A']], ['kVA', ['kV·A']],
-  ['CV', ['hp_metric']], ['cv', ['hp_metric']], ['tonf', ['kip']], ['micron', ['µm']], ['microns', ['µm']], ['Nw', ['N']], ['secs', ['s']],
-  ['hour', ['h']], ['hours', ['h']], ['minutes', ['min', 'arcmin']], ['days', ['d']], ['Kelvin', ['K']], ['amp', ['A']], ['amps', ['A']],
+  ['Nm', ['N·m']],
+  ['mph', ['mi/h']],
+  ['kph', ['km/h']],
+  ['kmh', ['km/h']],
+  ['kmph', ['km/h']],
+  ['mps', ['m/s']],
+  ['fps', ['ft/s']],
+  ['fpm', ['ft/min']],
+  ['cfm', ['ft³/min']],
+  ['gpm', ['gal/min']],
+  ['lpm', ['L/min']],
+  ['rps', ['r/s']],
+  ['cc', ['cm³']],
+  ['ccm', ['cm³']],
+  ['cbm', ['m³']],
+  ['sqm', ['m²']],
+  ['sqmm', ['mm²']],
+  ['qmm', ['mm²']],
+  ['sqft', ['ft²']],
+  ['sqin', ['in²']],
+  ['cuft', ['ft³']],
+  ['cuin', ['in³']],
+  ['psf', ['lbf/ft²']],
+  ['ksf', ['kip/ft²']],
+  ['plf', ['lbf/ft']],
+  ['klf', ['kip/ft']],
+  ['pli', ['lbf/in']],
+  ['pcf', ['lb/ft³']],
+  ['pci', ['lb/in³']],
+  ['ton', ['ton_short', 'ton_long', 't']],
+  ['tons', ['ton_short', 'ton_long', 't']],
+  ['short', ['ton_short']],
+  ['long', ['ton_long']],
+  ['gr', ['g', 'grain']],
+  ['grs', ['g', 'grain']],
+  ['gms', ['g']],
+  ['gm', ['g']],
+  ['mtr', ['m']],
+  ['mtrs', ['m']],
+  ['metric', ['t']],
+  ['turn', ['r']],
+  ['turns', ['r']],
+  ['revs', ['r']],
+  ['U', ['r']],
+  ['upm', ['r/min']],
+  ['grad', ['gon', '°']],
+  ['degrees', ['°']],
+  ['percent', ['%']],
+  ['pct', ['%']],
+  ['pound', ['lb', 'lbf']],
+  ['pounds', ['lb', 'lbf']],
+  ['ounces', ['oz', 'ozf']],
+  ['feet', ['ft']],
+  ['inches', ['in']],
+  ['R', ['°R', 'r']],
+  ['Ra', ['°R']],
+  ['centigrade', ['°C']],
+  ['celsius', ['°C']],
+  ['fahrenheit', ['°F']],
+  ['ata', ['at']],
+  ['atü', ['at']],
+  ['barg', ['bar']],
+  ['bara', ['bar']],
+  ['psig', ['psi']],
+  ['psia', ['psi']],
+  ['Nm3', ['m³']],
+  ['Sm3', ['m³']],
+  ['VA', ['V·A']],
+  ['kVA', ['kV·A']],
+  ['CV', ['hp_metric']],
+  ['cv', ['hp_metric']],
+  ['tonf', ['kip']],
+  ['micron', ['µm']],
+  ['microns', ['µm']],
+  ['Nw', ['N']],
+  ['secs', ['s']],
+  ['hour', ['h']],
+  ['hours', ['h']],
+  ['minutes', ['min', 'arcmin']],
+  ['days', ['d']],
+  ['Kelvin', ['K']],
+  ['amp', ['A']],
+  ['amps', ['A']],
 ]);
 
 let spelledAlike: Map<string, string[]> | undefined;
@@ -41,7 +114,8 @@ function otherCase(text: string): readonly string[] {
     }
   }
   const usual = new Set(usualSymbols);
-  const rank = (symbol: string) => (usual.has(symbol) ? 0 : 10) + [...symbol].filter((char, place) => char !== text[place]).length;
+  const rank = (symbol: string) =>
+    (usual.has(symbol) ? 0 : 10) + [...symbol].filter((char, place) => char !== text[place]).length;
   const all = spelledAlike.get(text.toLowerCase()) ?? [];
   const known = all.filter((symbol) => usual.has(symbol));
   return [...(known.length > 0 ? known : all)].sort((a, b) => rank(a) - rank(b));
@@ -59,9 +133,18 @@ function runTogether(text: string): readonly string[] {
 }
 
 function byName(text: string): readonly string[] {
-  const word = text.toLowerCase().replace(/meter/, 'metre').replace(/liter/, 'litre').replace(/(?<=[a-z]{3})s$/, '');
-  if (word.length < 3) return [];
-  return unitRows.filter((row) => row.name.toLowerCase() === word || row.name.toLowerCase() === text.toLowerCase()).map((row) => row.symbol);
+  const word = text.toLowerCase().replace('meter', 'metre').replace('liter', 'litre').replace('gramme', 'gram');
+  const singular = word.replace(/(?<=[a-z]{3})s$/, '');
+  const named = (name: string) => unitRows.find((row) => row.name.toLowerCase() === name);
+  for (const each of [word, singular]) {
+    const row = named(each);
+    if (row) return [row.symbol];
+    const prefix = prefixes.find(({ name }) => each.startsWith(name) && each.length > name.length);
+    const unit = prefix && named(each.slice(prefix.name.length));
+    const symbol = unit && symbolOfText(prefix.symbol + unit.symbol);
+    if (symbol) return [symbol.text];
+  }
+  return [];
 }
 
 /** Changed, missing, added or swapped letters between two texts; gives up above `limit`. */
@@ -102,39 +185,75 @@ export function nearestUnits(text: string): string[] {
   const written = instead.get(word) ?? instead.get(word.toLowerCase());
   if (written) return [...written];
   const prefixed = misusedPrefix(word)?.instead ?? [];
-  const exact = [...prefixed, ...otherCase(word), ...runTogether(word), ...byName(word)];
-  const all = exact.length > 0 ? exact : byLetters(word);
-  return [...new Set(all)].slice(0, most);
+  for (const found of [[...prefixed, ...otherCase(word)], runTogether(word), byName(word)]) {
+    if (found.length > 0) return [...new Set(found)].slice(0, most);
+  }
+  return [...new Set(byLetters(word))].slice(0, most);
 }
 
 const annotation = /^(.+?)_[\p{L}\d]+$/u;
 const attachedAnnotation = /^(.+?)(?:el|th|mech|rms|eff|max|min|DC|AC|pk|abs|g|a)$/u;
-const pressureAnnotations = new Set(['barg', 'bara', 'psig', 'psia']);
+const pressureAnnotation = /^((?:m|k)?bar|psi|[kM]?Pa)(?:g|a|abs|gauge)$/;
 
 /** The unit before what was added to it: "kW" of "kW_el"; undefined where nothing was. */
 function annotated(text: string): string | undefined {
   const base = annotation.exec(text)?.[1];
   if (base !== undefined) return symbolOfText(base)?.text;
-  if (pressureAnnotations.has(text)) return text.slice(0, -1);
+  const pressure = pressureAnnotation.exec(text)?.[1];
+  if (pressure !== undefined) return pressure;
   const attached = /^k?[VAW]/.test(text) || /^M?W/.test(text) ? attachedAnnotation.exec(text)?.[1] : undefined;
   return attached === undefined || symbolOfText(text) ? undefined : symbolOfText(attached)?.text;
 }
 
+/** Words that people set behind a unit. */
+const annotations = new Set([
+  'el',
+  'th',
+  'mech',
+  'rms',
+  'eff',
+  'DC',
+  'AC',
+  'pk',
+  'abs',
+  'gauge',
+  'nom',
+  'peak',
+  'dry',
+  'wet',
+  'net',
+  'gross',
+]);
+
 /** The failure for a symbol at [from, to) of a unit text. */
 export function unknownSymbol(word: string, from: number, to: number, text: string): Failure {
+  const before = text.slice(0, from).trim();
+  if (annotations.has(word) && before !== '' && text.slice(to).trim() === '') {
+    const message = `${quote(word)} is no unit: what it tells belongs to the name of the quantity. Write ${before}.`;
+    return fail('unit-annotation', message, text.slice(0, from).trimEnd().length, to, ['']);
+  }
   const base = annotated(word);
   if (base !== undefined) {
     const message = `${quote(word)} adds something to the unit ${base}: what it tells belongs to the name of the quantity. Write ${base}.`;
     return fail('unit-annotation', message, from, to, [base]);
   }
+  const power = /^(sq|square|cu|cub|cubic)$/.exec(word);
+  const raised = power && /^\s*\.?\s*([\p{L}]+)/u.exec(text.slice(to));
+  const powered = raised && symbolOfText(raised[1] ?? '');
+  if (raised && powered) {
+    const fix = `${powered.text}${word.startsWith('s') ? '²' : '³'}`;
+    return fail('unknown-unit', `${quote(word + raised[0])} is written as ${fix}.`, from, to + raised[0].length, [fix]);
+  }
   const prefix = misusedPrefix(word);
-  if (prefix && prefix.instead.length > 0) {
-    return fail('unit-prefix', `${prefix.message}: write ${either(prefix.instead)}.`, from, to, prefix.instead);
+  const written = instead.has(word);
+  if (prefix && !written) {
+    const advice = prefix.instead.length > 0 ? `: write ${either(prefix.instead)}` : '';
+    return fail('unit-prefix', `In the unit ${quote(text)}, ${prefix.message}${advice}.`, from, to, prefix.instead);
   }
   const near = nearestUnits(word);
   const inside = word === text.trim() ? '' : ` in ${quote(text)}`;
-  if (near.length > 0) return fail('unknown-unit', `The unit ${quote(word)}${inside} is not known: write ${either(near)}.`, from, to, near);
-  if (prefix) return fail('unit-prefix', `In the unit ${quote(text)}, ${prefix.message}.`, from, to);
+  if (near.length > 0)
+    return fail('unknown-unit', `The unit ${quote(word)}${inside} is not known: write ${either(near)}.`, from, to, near);
   const message = `The unit ${quote(word)}${inside} is not known, and none is near to it: write a unit such as N, mm, kW, lbf or psi.`;
   return fail('unknown-unit', message, from, to);
 }

@@ -4,9 +4,11 @@
 // 2. Equal canonical texts give the same object, so that units can be told apart by identity first.
 // Not here: the grammar (unit-grammar.ts).
 
-import { unitRows, usualSymbols } from './catalogue.ts';
-import { done, fail, type Result } from './problem.ts';
-import { one, type Unit, unitOfFactors } from './unit.ts';
+import { usualSymbols } from './catalogue.ts';
+import type { Result } from './problem.ts';
+import { done, fail } from './problem.ts';
+import type { Unit } from './unit.ts';
+import { one, unitOfFactors } from './unit.ts';
 import { readQuotient } from './unit-grammar.ts';
 
 const longestUnit = 100;
@@ -49,15 +51,68 @@ export function unitOf(text: string): Unit {
 
 /** Compound units in common use, for completion. */
 const usualCompounds = [
-  'N·m', 'kN·m', 'N·mm', 'N/mm²', 'N/mm', 'N/m', 'kN/m', 'kg/m', 'kg/m³', 'kg·m²', 'mm²', 'cm²', 'm²', 'mm³', 'cm³', 'm³', 'mm⁴', 'cm⁴',
-  'm/s', 'm/min', 'km/h', 'm/s²', 'rad/s', 'rad/s²', 'r/min', 'r/s', '1/s', '1/K', '1/m', 'J/(kg·K)', 'W/(m²·K)', 'W/(m·K)', 'W/m²', 'kW·h',
-  'Pa·s', 'mm²/s', 'L/min', 'm³/s', 'm³/h', 'kg/s', 'kg/h', 'lbf·ft', 'lbf·in', 'ft·lbf', 'lbf/ft', 'lbf/in', 'lbf/ft²', 'lb/ft', 'lb/ft³',
-  'in²', 'ft²', 'in³', 'ft³', 'in⁴', 'ft/s', 'ft/min', 'mi/h', 'ft/s²', 'gal/min', 'ft³/min', 'Btu/h',
+  'N·m',
+  'kN·m',
+  'N·mm',
+  'N/mm²',
+  'N/mm',
+  'N/m',
+  'kN/m',
+  'kg/m',
+  'kg/m³',
+  'kg·m²',
+  'mm²',
+  'cm²',
+  'm²',
+  'mm³',
+  'cm³',
+  'm³',
+  'mm⁴',
+  'cm⁴',
+  'm/s',
+  'm/min',
+  'km/h',
+  'm/s²',
+  'rad/s',
+  'rad/s²',
+  'r/min',
+  'r/s',
+  '1/s',
+  '1/K',
+  '1/m',
+  'J/(kg·K)',
+  'W/(m²·K)',
+  'W/(m·K)',
+  'W/m²',
+  'kW·h',
+  'Pa·s',
+  'mm²/s',
+  'L/min',
+  'm³/s',
+  'm³/h',
+  'kg/s',
+  'kg/h',
+  'lbf·ft',
+  'lbf·in',
+  'ft·lbf',
+  'lbf/ft',
+  'lbf/in',
+  'lbf/ft²',
+  'lb/ft',
+  'lb/ft³',
+  'in²',
+  'ft²',
+  'in³',
+  'ft³',
+  'in⁴',
+  'ft/s',
+  'ft/min',
+  'mi/h',
+  'ft/s²',
+  'gal/min',
+  'ft³/min',
+  'Btu/h',
 ];
 
 /** Unit texts to choose from: every unit of the catalogue, its usual prefixed forms, common compounds. */
 export const unitNames = (): readonly string[] => [...usualSymbols, ...usualCompounds];
-
-/** Name, source and exact factor of each catalogue row, for a reference list. */
-export const catalogueRows = (): readonly { readonly symbol: string; readonly name: string; readonly factor: string; readonly source: string }[] =>
-  unitRows.map(({ symbol, name, factor, source }) => ({ symbol, name, factor, source }));

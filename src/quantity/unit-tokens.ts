@@ -7,7 +7,8 @@
 
 import { symbolOfText } from './catalogue.ts';
 import { numberOfSuperscripts } from './numeral-text.ts';
-import { type Rational, rational, rationalOfText } from './rational.ts';
+import type { Rational } from './rational.ts';
+import { rational, rationalOfText } from './rational.ts';
 
 export interface Token {
   readonly kind: 'symbol' | 'exponent' | 'times' | 'over' | 'open' | 'close' | 'number' | 'other' | 'end';
@@ -28,7 +29,12 @@ const attachedExponentPattern = /[-−]\d{1,3}(?![\d.])/y;
 const numberPattern = /\d+(?:[.,]\d+)?/y;
 
 const lookAlike: ReadonlyMap<string, string> = new Map([
-  ['\u2126', 'Ω'], ['\u212A', 'K'], ['\u212B', 'Å'], ['\u03BC', 'µ'], ['\u00BA', '°'], ['\u02DA', '°'],
+  ['\u2126', 'Ω'],
+  ['\u212A', 'K'],
+  ['\u212B', 'Å'],
+  ['\u03BC', 'µ'],
+  ['\u00BA', '°'],
+  ['\u02DA', '°'],
 ]);
 const lookAlikes = /[\u2126\u212A\u212B\u03BC\u00BA\u02DA]/g;
 

@@ -7,9 +7,12 @@
 // Not here: the grammar of unit texts (unit-grammar.ts), conversion of numbers (convert.ts).
 
 import type { UnitSymbol } from './catalogue.ts';
-import { type Dimension, dimensionless, multiplyD, powerD } from './dimension.ts';
-import { doubleOf, type Exact, exactOfText, multiplyE, oneE, rationalPowerE } from './exact.ts';
-import { addR, negR, type Rational, textR, zeroR } from './rational.ts';
+import type { Dimension } from './dimension.ts';
+import { dimensionless, multiplyD, powerD } from './dimension.ts';
+import type { Exact } from './exact.ts';
+import { doubleOf, exactOfText, multiplyE, oneE, rationalPowerE } from './exact.ts';
+import type { Rational } from './rational.ts';
+import { addR, negR, textR, zeroR } from './rational.ts';
 
 /** Exponents of r, of Hz, and of rad or ° (and ′, ″, gon): what the rule of counted revolutions needs. */
 export interface Counts {
@@ -41,7 +44,17 @@ export interface Factor {
 }
 
 const raised: Readonly<Record<string, string>> = {
-  '-': '⁻', '0': '⁰', '1': '¹', '2': '²', '3': '³', '4': '⁴', '5': '⁵', '6': '⁶', '7': '⁷', '8': '⁸', '9': '⁹',
+  '-': '⁻',
+  '0': '⁰',
+  '1': '¹',
+  '2': '²',
+  '3': '³',
+  '4': '⁴',
+  '5': '⁵',
+  '6': '⁶',
+  '7': '⁷',
+  '8': '⁸',
+  '9': '⁹',
 };
 /** "⁻²" for "-2". */
 export const superscript = (whole: number): string => [...String(whole)].map((char) => raised[char] ?? char).join('');
@@ -92,7 +105,9 @@ const angles = new Set(['rad', 'mrad', 'µrad', '°', '′', '″', 'gon']);
 /** rad, °, ′, ″ or gon alone. */
 export function isAngleUnit(unit: Unit): boolean {
   const [only] = unit.parts;
-  return unit.parts.length === 1 && only !== undefined && only.exponent.n === 1 && only.exponent.d === 1 && angles.has(only.symbol);
+  return (
+    unit.parts.length === 1 && only !== undefined && only.exponent.n === 1 && only.exponent.d === 1 && angles.has(only.symbol)
+  );
 }
 
 /** %, ‰ or ppm alone. */
@@ -103,4 +118,3 @@ export function differenceUnit(unit: Unit): Unit {
   const { reading, ...rest } = unit;
   return reading ? rest : unit;
 }
-

@@ -6,20 +6,30 @@
 // 3. Feet and inches, pounds and ounces are refused with the sum worked out.
 // Not here: plain values and ± (value.ts).
 
-import { type UnitSymbol, symbolOfText } from './catalogue.ts';
+import type { UnitSymbol } from './catalogue.ts';
+import { symbolOfText } from './catalogue.ts';
 import { equalD } from './dimension.ts';
-import { divideE, type Exact, exactOf, multiplyE } from './exact.ts';
-import { exactOfNumeral, type Numeral, numeralOf, plainNumeral } from './numeral.ts';
+import type { Exact } from './exact.ts';
+import { divideE, exactOf, multiplyE } from './exact.ts';
+import type { Numeral } from './numeral.ts';
+import { exactOfNumeral, numeralOf, plainNumeral } from './numeral.ts';
 import { isSpace, scanNumeral } from './numeral-text.ts';
 import type { Style } from './print.ts';
-import { done, type Failure, fail, quote, type Result } from './problem.ts';
+import type { Failure, Result } from './problem.ts';
+import { done, fail, quote } from './problem.ts';
 import type { Unit } from './unit.ts';
 import { unitOf } from './unit-text.ts';
 
 const angles = ['°', '′', '″'];
 const times = ['d', 'h', 'min', 's'];
 const marks: ReadonlyMap<string, string> = new Map([
-  ["'", '′'], ['’', '′'], ['´', '′'], ['"', '″'], ['”', '″'], ["''", '″'], ['′′', '″'],
+  ["'", '′'],
+  ['’', '′'],
+  ['´', '′'],
+  ['"', '″'],
+  ['”', '″'],
+  ["''", '″'],
+  ['′′', '″'],
 ]);
 const word = /[^\s\d]+/y;
 
@@ -50,7 +60,13 @@ function wordAt(text: string, at: number, first: boolean, afterAngle: boolean): 
 }
 
 /** The compound value whose first numeral was read and whose first unit begins at `at`; undefined where there is none. */
-export function compoundAt(text: string, from: number, numeral: Numeral, at: number, style: Style): Result<{ numeral: Numeral; unit: Unit }> | undefined {
+export function compoundAt(
+  text: string,
+  from: number,
+  numeral: Numeral,
+  at: number,
+  style: Style,
+): Result<{ numeral: Numeral; unit: Unit }> | undefined {
   const first = wordAt(text, at, true, false);
   if (!first) return undefined;
   const parts: Part[] = [{ numeral, symbol: first.symbol, from }];
@@ -80,7 +96,12 @@ function summed(text: string, parts: readonly Part[]): Result<{ numeral: Numeral
   const smallest = symbols[symbols.length - 1] as UnitSymbol;
   const unlike = symbols.find((symbol) => !equalD(symbol.dimension, smallest.dimension));
   if (unlike) {
-    return fail('value-form', `${typed} joins ${unlike.text} and ${smallest.text}, which are not alike: write one number and one unit.`, from, text.length);
+    return fail(
+      'value-form',
+      `${typed} joins ${unlike.text} and ${smallest.text}, which are not alike: write one number and one unit.`,
+      from,
+      text.length,
+    );
   }
   const sum = sumIn(parts, smallest);
   const chain = [angles, times].find((each) => symbols.every(({ text: symbol }) => each.includes(symbol)));
@@ -88,12 +109,23 @@ function summed(text: string, parts: readonly Part[]): Result<{ numeral: Numeral
     const total = decimalOf(sum);
     const fix = total ? `${plainNumeral(total)} ${smallest.text}` : '';
     const advice = fix === '' ? '' : `: write ${fix}`;
-    return fail('mixed-units', `A value has one unit; only angles and times are read in several, not ${typed}${advice}.`, from, text.length, fix === '' ? [] : [fix]);
+    return fail(
+      'mixed-units',
+      `A value has one unit; only angles and times are read in several, not ${typed}${advice}.`,
+      from,
+      text.length,
+      fix === '' ? [] : [fix],
+    );
   }
   for (const [place, part] of parts.entries()) {
     const before = parts[place - 1];
     if (before && chain.indexOf(before.symbol.text) >= chain.indexOf(part.symbol.text)) {
-      return fail('compound-order', `The units of ${typed} do not fall in size: write them from the greatest to the smallest.`, part.from, text.length);
+      return fail(
+        'compound-order',
+        `The units of ${typed} do not fall in size: write them from the greatest to the smallest.`,
+        part.from,
+        text.length,
+      );
     }
     if (place < parts.length - 1 && part.numeral.exponent < 0) {
       return fail('compound-order', `Only the last number of ${typed} can have decimals.`, part.from, text.length);
@@ -149,32 +181,65 @@ export function afterNumber(text: string, from: number, at: number, style: Style
   const typed = quote(text.slice(from));
   const end = text.length;
   if (/^\(\s*\d+\s*\)/.test(rest)) {
-    return fail('value-form', `${typed} gives a standard uncertainty in parentheses; a half-width is written as 0.30 ± 0.05.`, at, end);
+    return fail(
+      'value-form',
+      `${typed} gives a standard uncertainty in parentheses; a half-width is written as 0.30 ± 0.05.`,
+      at,
+      end,
+    );
   }
   const parts = fraction.exec(text.slice(from).trim());
   if (parts && (rest.startsWith('/') || /^\d/.test(rest))) return fractionFailure(parts, typed, from, end, style);
-  if (/^(?:to|bis|until|\.\.|…|–|-)\s*\d?/i.test(rest) && /^(?:to\b|bis\b|until\b|\.\.|…|[–-]\s*\d)/i.test(rest)) {
+  if (/^(?:to\b|\.\.|…|[–-]\s*\d)/i.test(rest)) {
     return fail('value-form', `${typed} is a range, and a value is one number: write it as 15 kW or (15 ± 2) kW.`, from, end);
   }
-  if (/^\+/.test(rest)) {
-    return fail('value-form', `${typed} has limits that are not written with ±: write the middle value ± half the width, such as (15 ± 2) kW.`, at, end);
+  if (/^\+|\s\+\s*[\d.,]/.test(rest)) {
+    return fail(
+      'value-form',
+      `${typed} has limits that are not written with ±: write the middle value ± half the width, such as (15 ± 2) kW.`,
+      at,
+      end,
+    );
+  }
+  if (/^[eE][+\-−]?\d/.test(rest)) {
+    const fix = `${text.slice(from, at).trimEnd()}${rest}`;
+    return fail('number-form', `The exponent of ${typed} follows the number without a space: write ${fix.trim()}.`, from, end, [
+      fix,
+    ]);
   }
   if (/^\//.test(rest)) {
     const fix = ` 1${rest}`;
-    return fail('value-form', `A unit such as ${quote(rest)} begins with 1: write ${quote(`${text.slice(from, at)}${fix}`)}.`, at, end, [fix]);
+    return fail(
+      'value-form',
+      `A unit such as ${quote(rest)} begins with 1: write ${quote(`${text.slice(from, at)}${fix}`)}.`,
+      at,
+      end,
+      [fix],
+    );
   }
   if (/^\d/.test(rest)) {
-    return fail('digit-groups', `${typed} has a space between digits that are not grouped in threes: write the number without it.`, from, end);
+    return fail(
+      'digit-groups',
+      `${typed} has a space between digits that are not grouped in threes: write the number without it.`,
+      from,
+      end,
+    );
   }
   if (/^[*·×^=]/.test(rest)) {
-    return fail('value-form', `${typed} is a formula, and a value is one number and its unit: compute in a derived quantity.`, at, end);
+    return fail(
+      'value-form',
+      `${typed} is a formula, and a value is one number and its unit: compute in a derived quantity.`,
+      at,
+      end,
+    );
   }
   return undefined;
 }
 
 function fractionFailure(parts: RegExpExecArray, typed: string, from: number, end: number, style: Style): Failure {
   const [, whole = '0', above = '0', below = '1', unit = ''] = parts;
-  const value = Number(below) === 0 ? undefined : decimalOf(exactOf(BigInt(whole) * BigInt(below) + BigInt(above), BigInt(below)));
+  const value =
+    Number(below) === 0 ? undefined : decimalOf(exactOf(BigInt(whole) * BigInt(below) + BigInt(above), BigInt(below)));
   const decimal = value && plainNumeral(value).replace('.', style.decimalSign);
   const fix = decimal === undefined ? '' : `${decimal}${unit === '' ? '' : ` ${unit}`}`;
   const message = `${typed} holds a fraction, and a value is one decimal number: ${fix === '' ? 'write it as a decimal' : `write ${fix}`}.`;

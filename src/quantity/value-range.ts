@@ -3,12 +3,14 @@
 // Both ends are values without ±, of one kind, the first not above the second; a first end without a unit takes the second's.
 // Not here: whether a value lies in the range.
 
+import { siOfNumeral } from './convert.ts';
 import { equalD } from './dimension.ts';
 import { describeUnit } from './kind.ts';
 import type { Style } from './print.ts';
-import { done, fail, quote, type Result, shifted } from './problem.ts';
-import { readValue, type Value } from './value.ts';
-import { siOfNumeral } from './convert.ts';
+import type { Result } from './problem.ts';
+import { done, fail, quote, shifted } from './problem.ts';
+import type { Value } from './value.ts';
+import { readValue } from './value.ts';
 
 export interface ValueRange {
   readonly text: string;
@@ -20,7 +22,13 @@ const between = /\s(?:to|…|\.\.\.?)\s/;
 
 export function readRange(text: string, options: Style): Result<ValueRange> {
   const sign = text.length > 400 ? null : between.exec(text);
-  if (!sign) return fail('range-form', `${quote(text)} is no range: write two values joined by "to", such as 10 N to 20 kN.`, 0, text.length);
+  if (!sign)
+    return fail(
+      'range-form',
+      `${quote(text)} is no range: write two values joined by "to", such as 10 N to 20 kN.`,
+      0,
+      text.length,
+    );
   const from = readValue(text.slice(0, sign.index), options);
   if (!from.ok) return from;
   const start = sign.index + sign[0].length;

@@ -8,16 +8,19 @@
 // 4. Every refusal names the place and what to write.
 // Not here: numerals (numeral-text.ts), units (unit-grammar.ts), compound values (value-compound.ts), printing (print-value.ts).
 
+import { siOfNumeral } from './convert.ts';
 import { equalD } from './dimension.ts';
 import { doubleOf, multiplyE } from './exact.ts';
-import { siOfNumeral } from './convert.ts';
-import { kindName, withArticle, describeUnit } from './kind.ts';
-import { exactOfNumeral, isZeroNumeral, type Numeral } from './numeral.ts';
+import { describeUnit, kindName, withArticle } from './kind.ts';
+import type { Numeral } from './numeral.ts';
+import { exactOfNumeral, isZeroNumeral } from './numeral.ts';
 import { isSpace, isTooLong, noNumber, scanNumeral, tooLong } from './numeral-text.ts';
 import type { Style } from './print.ts';
-import { done, type Failure, fail, quote, type Result, shifted } from './problem.ts';
+import type { Failure, Result } from './problem.ts';
+import { done, fail, quote, shifted } from './problem.ts';
 import { equalR } from './rational.ts';
-import { differenceUnit, isRatioUnit, one, type Unit } from './unit.ts';
+import type { Unit } from './unit.ts';
+import { differenceUnit, isRatioUnit, one } from './unit.ts';
 import { readUnit } from './unit-text.ts';
 import { afterNumber, compoundAt } from './value-compound.ts';
 
@@ -49,7 +52,7 @@ export function readValue(text: string, options: Style): Result<Value> {
   if (!sign) {
     const plain = readPlain(text, 0, end, options);
     if (!plain.ok) return plain;
-    return valueOf(text, plain.value, 0, end);
+    return madeOf(text, plain.value, 0, end);
   }
   return readWithTolerance(text, sign.index, sign.index + sign[0].length, end, options);
 }
@@ -82,11 +85,15 @@ function readPlain(text: string, from: number, to: number, style: Style): Result
   return afterNumber(part, from, at, style) ?? shifted(known, at);
 }
 
-function valueOf(text: string, { numeral, unit }: Plain, from: number, to: number, tolerance?: Tolerance): Result<Value> {
+function madeOf(text: string, { numeral, unit }: Plain, from: number, to: number, tolerance?: Tolerance): Result<Value> {
   const si = siOfNumeral(numeral, unit);
-  if (!Number.isFinite(si)) return fail('number-too-large', `${quote(text)} is too large to be computed with in SI units.`, from, to);
+  if (!Number.isFinite(si))
+    return fail('number-too-large', `${quote(text)} is too large to be computed with in SI units.`, from, to);
   if (si === 0 && !unit.reading && !isZeroNumeral(numeral)) {
     return fail('number-too-small', `${quote(text)} is too near to zero to be computed with in SI units.`, from, to);
+  }
+  if (unit.reading && si < 0) {
+    return fail('below-absolute-zero', `${quote(text)} lies below absolute zero, which is −273.15 °C or −459.67 °F.`, from, to);
   }
   return done(tolerance ? { text, numeral, unit, si, tolerance } : { text, numeral, unit, si });
 }
@@ -99,7 +106,13 @@ function readWithTolerance(text: string, signFrom: number, signTo: number, end: 
   if (open) {
     leftFrom = open[0].length;
     rightTo = text.lastIndexOf(')', end);
-    if (rightTo < signTo) return fail('value-form', `The parenthesis of ${quote(text)} is not closed: write (0.30 ± 0.05) m.`, leftFrom - 1, leftFrom);
+    if (rightTo < signTo)
+      return fail(
+        'value-form',
+        `The parenthesis of ${quote(text)} is not closed: write (0.30 ± 0.05) m.`,
+        leftFrom - 1,
+        leftFrom,
+      );
     const unit = readUnit(text.slice(rightTo + 1, end));
     if (!unit.ok) return shifted(unit, rightTo + 1);
     common = unit.value;
@@ -120,7 +133,15 @@ function readWithTolerance(text: string, signFrom: number, signTo: number, end: 
     const message = 'A unit stands inside the parentheses: write (0.30 ± 0.05) m or 0.30 m ± 0.05 m.';
     return fail('value-form', message, leftFrom, rightTo);
   }
-  return joined(text, { left: left.value, right: right.value, common, typed: text.slice(rightFrom, rightEnd), from: rightFrom, to: rightEnd, end });
+  return joined(text, {
+    left: left.value,
+    right: right.value,
+    common,
+    typed: text.slice(rightFrom, rightEnd),
+    from: rightFrom,
+    to: rightEnd,
+    end,
+  });
 }
 
 interface Sides {
@@ -136,11 +157,19 @@ interface Sides {
 function joined(text: string, { left, right, common, typed, from, to, end }: Sides): Result<Value> {
   const { numeral } = right;
   if (numeral.negative || isZeroNumeral(numeral)) {
-    return fail('tolerance-sign', `The half-width after ± must be greater than 0, not ${quote(typed)}: leave ± out, or write a positive one.`, from, to);
+    return fail(
+      'tolerance-sign',
+      `The half-width after ± must be greater than 0, not ${quote(typed)}: leave ± out, or write a positive one.`,
+      from,
+      to,
+    );
   }
   const relative = common === undefined && isRatioUnit(right.unit) && !isRatioUnit(left.unit);
   if (common === undefined && isRatioUnit(left.unit) && (isRatioUnit(right.unit) || !right.united)) {
-    const value = text.slice(0, text.search(plusMinus)).replace(/\s*[%‰]\s*$|\s*ppm\s*$/, '').trim();
+    const value = text
+      .slice(0, text.search(plusMinus))
+      .replace(/\s*[%‰]\s*$|\s*ppm\s*$/, '')
+      .trim();
     const half = typed.replace(/\s*[%‰]\s*$|\s*ppm\s*$/, '');
     const fix = `(${value} ± ${half}) ${left.unit.text}`;
     const message = `${quote(text)} could mean a share of the value or a difference in ${left.unit.text}: write ${fix} for the difference, or the half-width worked out.`;
@@ -150,8 +179,10 @@ function joined(text: string, { left, right, common, typed, from, to, end }: Sid
   const unit = common ?? (left.united || relative || !right.united ? left.unit : right.unit);
   const plain: Plain = { numeral: left.numeral, unit, united: true };
   const half = common !== undefined || !right.united ? unit : right.unit;
-  const tolerance = relative ? relativeTolerance(plain, right, typed, from, to) : absoluteTolerance(plain, numeral, half, typed, from, to);
-  return tolerance.ok ? valueOf(text, plain, 0, end, tolerance.value) : tolerance;
+  const tolerance = relative
+    ? relativeTolerance(plain, right, typed, from, to)
+    : absoluteTolerance(plain, numeral, half, typed, from, to);
+  return tolerance.ok ? madeOf(text, plain, 0, end, tolerance.value) : tolerance;
 }
 
 function relativeTolerance({ numeral, unit }: Plain, right: Plain, typed: string, from: number, to: number): Result<Tolerance> {
@@ -163,16 +194,29 @@ function relativeTolerance({ numeral, unit }: Plain, right: Plain, typed: string
   const magnitude = multiplyE(exactOfNumeral({ ...numeral, negative: false }), unit.factor);
   const si = doubleOf(multiplyE(share, magnitude));
   if (!(si > 0 && Number.isFinite(si))) {
-    return fail('tolerance-sign', `${quote(typed)} of this value is no half-width greater than 0: write an absolute one.`, from, to);
+    return fail(
+      'tolerance-sign',
+      `${quote(typed)} of this value is no half-width greater than 0: write an absolute one.`,
+      from,
+      to,
+    );
   }
   return done({ numeral: right.numeral, unit: right.unit, relative: true, si, typed });
 }
 
-function absoluteTolerance({ unit }: Plain, numeral: Numeral, half: Unit, typed: string, from: number, to: number): Result<Tolerance> {
+function absoluteTolerance(
+  { unit }: Plain,
+  numeral: Numeral,
+  half: Unit,
+  typed: string,
+  from: number,
+  to: number,
+): Result<Tolerance> {
   if (!equalD(half.dimension, unit.dimension) || !sameCounts(half, unit)) return unlike(unit, half, typed, from, to);
   const difference = differenceUnit(half);
   const si = siOfNumeral(numeral, difference);
-  if (!(si > 0 && Number.isFinite(si))) return fail('number-too-large', `The half-width ${quote(typed)} is out of range.`, from, to);
+  if (!(si > 0 && Number.isFinite(si)))
+    return fail('number-too-large', `The half-width ${quote(typed)} is out of range.`, from, to);
   return done({ numeral, unit: difference, relative: false, si, typed });
 }
 
@@ -185,4 +229,3 @@ function unlike(unit: Unit, half: Unit, typed: string, from: number, to: number)
   const message = `The half-width ${quote(typed)} is ${describeUnit(half)}, but the value is ${kind === describeUnit(unit) ? kind : describeUnit(unit)}: write it ${example} or in %.`;
   return fail('unlike-tolerance', message, from, to);
 }
-
