@@ -4,7 +4,7 @@
 // 2. floor, ceil and round take bare numbers only: of anything else the result would depend on the unit.
 // Not here: arity (the walk of the reader has checked it), numbers (explain.ts, run.ts).
 
-import { equalD, isAngleUnit, isDimensionless, readUnit, rational } from '../quantity/index.ts';
+import { either, equalD, isAngleUnit, isDimensionless, readUnit, rational } from '../quantity/index.ts';
 import { angleCounts, fitsAngle } from './counts.ts';
 import type { Expr } from './expr.ts';
 import { alike, type Part, powerByRational, quantity, quantityOf, refuseReading, refuseRevolutions } from './infer-rules.ts';
@@ -82,7 +82,7 @@ function wholeNumber(ctx: Context, name: string, part: Part): Term | undefined {
   if (type === undefined) return undefined;
   const declaredAngle = part.term?.plain === true && type.unitText !== undefined && isAngle(type.unitText);
   if (!isDimensionless(type.dimension) || declaredAngle || !fitsAngle(type.counts)) {
-    if (isDimensionless(type.dimension) && !declaredAngle) return refuseRevolutions(ctx, name, part.expr, type);
+    if (isDimensionless(type.dimension) && !declaredAngle) return refuseRevolutions(ctx, name, part.expr, type, true);
     return report(ctx, 'rounding-unit', roundingNeedsNumber(name, part.expr, type), part.expr.at, rounded(ctx, name, part, type));
   }
   return numberTerm;
@@ -129,7 +129,7 @@ function unknown(ctx: Context, expr: Lookup, what: 'table' | 'column', name: str
   const nearest = nearestNames(name, all);
   const known = all.slice(0, 6).join(', ');
   const where = what === 'column' ? `the table ${expr.table} has no column ${name}` : `there is no table ${name}`;
-  const then = nearest.length > 0 ? `did you mean ${nearest.join(' or ')}` : known === '' ? 'the sheet has no tables yet' : `there are ${known}`;
+  const then = nearest.length > 0 ? `did you mean ${either(nearest)}` : known === '' ? 'the sheet has no tables yet' : `there are ${known}`;
   const at = wordAt(ctx, expr, what);
   const fixes = nearest.map((text) => ({ from: at[0], to: at[1], text, label: `write ${text}` }));
   return report(ctx, `unknown-${what}`, `${where}; ${then}`, at, at === expr.at ? [] : fixes);

@@ -4,6 +4,7 @@
 // 2. Beside a text, a quoted literal is a text; everywhere else it is a quantity.
 // Not here: the rules of combination (infer-rules.ts, infer-call.ts), the declared unit (infer-target.ts).
 
+import { either } from '../quantity/index.ts';
 import { piCounts } from './counts.ts';
 import type { Expr } from './expr.ts';
 import { callOf, lookUp, textKey } from './infer-call.ts';
@@ -75,7 +76,7 @@ function named(ctx: Context, expr: Extract<Expr, { kind: 'name' }>): Term | unde
   if (type === 'unknown-name') {
     const nearest = nearestNames(expr.name, ctx.scope.names());
     const typed = ctx.text.slice(...expr.at) || expr.name;
-    const what = nearest.length > 0 ? `did you mean ${nearest.join(' or ')}` : 'define it in a cell of its own, or correct the name';
+    const what = nearest.length > 0 ? `did you mean ${either(nearest)}` : 'define it in a cell of its own, or correct the name';
     const fixes = nearest.map((text) => ({ from: expr.at[0], to: expr.at[1], text, label: `write ${text}` }));
     return report(ctx, 'unknown-name', `no quantity is called ${typed}; ${what}`, expr.at, fixes);
   }
@@ -85,7 +86,10 @@ function named(ctx: Context, expr: Extract<Expr, { kind: 'name' }>): Term | unde
 function literal(ctx: Context, expr: Extract<Expr, { kind: 'quoted' }>): Term | undefined {
   const read = readLiteral(expr.text, ctx.scope.decimalSign ?? '.');
   if (!read.ok) {
-    return report(ctx, read.problem.code, `"${expr.text}" is read as a quantity: ${read.problem.message}`, expr.at);
+    const by = expr.at[0] + 1;
+    const at = read.problem.at ? ([read.problem.at[0] + by, read.problem.at[1] + by] as const) : expr.at;
+    const fixes = read.problem.fixes?.map((fix) => ({ ...fix, from: fix.from + by, to: fix.to + by }));
+    return report(ctx, read.problem.code, `"${expr.text}" is no quantity: ${read.problem.message}`, at, fixes);
   }
   if (read.value.tolerance !== undefined) {
     return report(ctx, 'literal-tolerance', `"${expr.text}" has a tolerance, which a formula cannot carry; make it a given`, expr.at);

@@ -5,7 +5,7 @@
 // Not here: the walk (infer-node.ts), functions (infer-call.ts), the declared unit (infer-target.ts).
 
 import {
-  dimensionless, equalD, isDimensionless, isZeroR, kindName, multiplyD, powerD, divideD, type Rational,
+  dimensionless, equalD, type Fix, isDimensionless, isZeroR, kindName, multiplyD, powerD, divideD, type Rational,
 } from '../quantity/index.ts';
 import { divideCounts, fitsAngle, multiplyCounts, noCounts, powerCounts } from './counts.ts';
 import type { Expr, Span } from './expr.ts';
@@ -13,12 +13,12 @@ import {
   conversionNumber, exponentMustBeConstant, exponentNeedsNumber, exponentTooLarge, notAQuantity, revolutionsApart, revolutionsInside,
   temperatureFault, unlikeOperands, unlikeSum, type Side,
 } from './messages.ts';
-import { proposeForRevolutions, proposeForTemperature } from './offers.ts';
+import { proposeForRevolutions, proposeForTemperature, proposeWithoutLiteral } from './offers.ts';
 import { rationalOf } from './rational-exponent.ts';
 import { isTemperatureKind, likeTemperatures, sumOfTemperatures } from './temperature.ts';
 import { type Context, countsOfShared, isPlainNumber, meet, number, type QuantityType, sharedOf, type Term } from './term.ts';
 import { report } from './report.ts';
-import { describe } from './wording.ts';
+import { describe, unitOfType } from './wording.ts';
 
 export interface Part {
   readonly expr: Expr;
@@ -44,7 +44,8 @@ export function sumOf(ctx: Context, operator: '+' | '-', left: Part, right: Part
   const sides: readonly [Side, Side] = [{ expr: left.expr, type: a }, { expr: right.expr, type: b }];
   const temperature = sumOfTemperatures(operator, operandOf(a), operandOf(b));
   if (!a.zero && !b.zero && !equalD(a.dimension, b.dimension)) {
-    return report(ctx, 'unlike-sum', unlikeSum(operator, ...sides), at);
+    const bare = bareNumber(sides);
+    return report(ctx, 'unlike-sum', unlikeSum(operator, ...sides, bare?.message), at, bare?.fixes);
   }
   if (!isTemperatureKind(temperature)) {
     return report(ctx, 'temperature', temperatureFault(temperature, sides, place), at, proposeForTemperature(ctx, temperature, sides, at));
@@ -103,7 +104,8 @@ export function alike(ctx: Context, where: string, parts: readonly Part[], at: S
   const first = solid[0];
   for (const side of solid) {
     if (first && !equalD(first.type.dimension, side.type.dimension)) {
-      return report(ctx, 'unlike-operands', unlikeOperands(where, first, side), at);
+      const bare = bareNumber([first, side]);
+      return report(ctx, 'unlike-operands', unlikeOperands(where, first, side, bare?.message), at, bare?.fixes);
     }
   }
   const temperature = likeTemperatures(sides.map((side) => operandOf(side.type)));
@@ -122,6 +124,18 @@ export function alike(ctx: Context, where: string, parts: readonly Part[], at: S
   return { type: quantity(first.type.dimension, countsOfShared(shared), temperature, unitText), shared };
 }
 
+/** A literal beside a quantity: most likely its unit was left out. */
+function bareNumber(sides: readonly Side[]): { readonly message: string; readonly fixes: readonly Fix[] } | undefined {
+  const literal = sides.find((side) => side.expr.kind === 'number')?.expr;
+  const unit = sides.map((side) => unitOfType(side.type)).find((text) => text !== '');
+  if (literal?.kind !== 'number' || unit === undefined) return undefined;
+  const text = `"${literal.text} ${unit}"`;
+  return {
+    message: `write ${literal.text} with its unit in quotes, such as ${text}`,
+    fixes: [{ from: literal.at[0], to: literal.at[1], text, label: `write ${text}` }],
+  };
+}
+
 export interface Factor {
   readonly expr: Expr;
   readonly term: Term | undefined;
@@ -138,7 +152,8 @@ export function productOf(ctx: Context, factors: readonly Factor[], at: Span): T
   let failed = false;
   if (literal && counted && literal.expr.kind === 'number') {
     ctx.spoken.add(literal.expr);
-    report(ctx, 'conversion-number', conversionNumber(literal.expr.text, counted.expr), literal.expr.at);
+    const message = conversionNumber(literal.expr.text, literal.expr.value, counted.expr);
+    report(ctx, 'conversion-number', message, literal.expr.at, proposeWithoutLiteral(ctx, literal.expr, factors));
     failed = true;
   }
   for (const [index, type] of types.entries()) {
@@ -203,7 +218,7 @@ export function refuseReading(ctx: Context, expr: Expr, type: QuantityType, oper
   return report(ctx, 'temperature', temperatureFault('a temperature reading cannot be used here', [{ expr, type }], operation), expr.at);
 }
 
-export function refuseRevolutions(ctx: Context, inside: string, expr: Expr, type: QuantityType): undefined {
-  const found = proposeForRevolutions(ctx, [expr]);
+export function refuseRevolutions(ctx: Context, inside: string, expr: Expr, type: QuantityType, whole = false): undefined {
+  const found = proposeForRevolutions(ctx, [expr], whole);
   return report(ctx, 'revolutions', `${revolutionsInside(inside, expr, type)}${found.sentence}`, expr.at, found.fixes);
 }

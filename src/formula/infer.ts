@@ -76,7 +76,7 @@ function contextOf(formula: Formula, scope: Scope, target: Unit | undefined, pro
   };
 }
 
-const holds = (tried: Inferred): boolean => !tried.problems.some((problem) => problem.severity === 'error' && problem.code === 'revolutions');
+const holds = (tried: Inferred): boolean => !tried.problems.some((problem) => problem.severity === 'error' && (problem.code === 'revolutions' || problem.code === 'conversion-number'));
 
 /**
  * Both sides of a criterion, or of the equation of a sought cell: one kind of quantity, one count of revolutions.

@@ -4,7 +4,7 @@
 // 2. What is to be typed stands in the syntax of formulas; what is shown is in the notation of print (writeExpr).
 // Not here: when a problem arises (infer*.ts), proposals that need proof (offers.ts).
 
-import { coherentUnit, divideD, type Dimension, type Unit, isZeroR, signR, textR, withArticle, forceHint } from '../quantity/index.ts';
+import { coherentUnit, divideD, type Dimension, type Unit, isZeroR, kindName, signR, textR, withArticle, forceHint } from '../quantity/index.ts';
 import type { Expr } from './expr.ts';
 import type { QuantityType } from './term.ts';
 import type { TemperatureFault } from './temperature.ts';
@@ -18,29 +18,29 @@ export interface Side {
 
 const shown = (side: Side): string => `${writeExpr(side.expr)} is ${describe(side.type)}`;
 
-export function unlikeSum(operator: '+' | '-', left: Side, right: Side): string {
+export function unlikeSum(operator: '+' | '-', left: Side, right: Side, bare?: string): string {
   const pair =
     operator === '+'
       ? `cannot add ${describe(left.type)} to ${describe(right.type)}`
       : `cannot subtract ${describe(right.type)} from ${describe(left.type)}`;
-  return `${pair}: ${shown(left)}, ${shown(right)}; ${differBy(left.type.dimension, right.type.dimension)}`;
+  return `${pair} in ${writeExpr(left.expr)} ${operator} ${writeExpr(right.expr)}; ${bare ?? differBy(left.type.dimension, right.type.dimension)}`;
 }
 
-export function unlikeOperands(where: string, left: Side, right: Side): string {
-  const pair = `${describe(left.type)} and ${describe(right.type)}`;
+export function unlikeOperands(where: string, left: Side, right: Side, bare?: string): string {
   const what =
-    where === 'comparison' ? `cannot compare ${describe(left.type)} with ${describe(right.type)}`
-    : where === '?:' ? `the branches of ?: must be alike, not ${pair}`
-    : `${where} needs quantities of one kind, not ${pair}`;
-  return `${what}: ${shown(left)}, ${shown(right)}; ${differBy(left.type.dimension, right.type.dimension)}`;
+    where === 'comparison' ? `cannot compare ${describe(left.type)} with ${describe(right.type)}: ${writeExpr(left.expr)} with ${writeExpr(right.expr)}`
+    : where === '?:' ? `the branches of ?: must be alike: ${shown(left)}, ${shown(right)}`
+    : `${where} needs quantities of one kind: ${shown(left)}, ${shown(right)}`;
+  return `${what}; ${bare ?? differBy(left.type.dimension, right.type.dimension)}`;
 }
 
 function differBy(left: Dimension, right: Dimension): string {
   const ratio = divideD(left, right);
-  const unit = coherentUnit(ratio);
-  const inverse = coherentUnit(divideD(right, left));
-  const shorter = inverse.parts.length < unit.parts.length || inverse.text.length < unit.text.length ? inverse : unit;
-  return `look for a missing or extra factor in ${printUnit(shorter.text)}`;
+  const inverse = divideD(right, left);
+  const shorter = coherentUnit(inverse).text.length < coherentUnit(ratio).text.length ? inverse : ratio;
+  const kind = kindName(shorter);
+  const unit = coherentUnit(shorter).text;
+  return kind.endsWith(unit) ? `a factor in ${unit} is missing or too many` : `${withArticle(kind)} (${unit}) is missing on one side or too many on the other`;
 }
 
 export function unlikeTarget(type: QuantityType, target: Unit, targetType: QuantityType): string {
@@ -105,8 +105,18 @@ export function revolutionsAgainst(target: Unit, type: QuantityType): string {
   return `revolutions against ${printUnit(target.text)}: the formula ${gives}`;
 }
 
-export const conversionNumber = (literal: string, counted: Expr): string =>
-  `conversion number beside a counted quantity: ${writeExpr(counted)} carries its own unit, so ${literal} would convert it twice; write the formula without ${literal}`;
+const instead: ReadonlyMap<number, string> = new Map([
+  [30, 'an angular speed is 2*pi*n'],
+  [120, 'the synchronous speed is f/p with p pairs of poles'],
+  [360, 'an angle is 2*pi*n*t, degrees are a matter of its unit'],
+  [9550, 'a torque is P/(2*pi*n)'],
+  [33000, 'a power is 2*pi*n*M'],
+]);
+
+export function conversionNumber(literal: string, value: number, counted: Expr): string {
+  const hint = instead.get(value);
+  return `conversion number beside a counted quantity: ${writeExpr(counted)} carries its unit, so ${literal} would convert a second time; leave ${literal} out${hint === undefined ? '' : `, ${hint}`}`;
+}
 
 export function temperatureFault(fault: TemperatureFault, sides: readonly Side[], operator: string, target?: Unit): string {
   const reading = sides.find((side) => side.type.temperature === 'reading');
@@ -122,7 +132,7 @@ export function temperatureFault(fault: TemperatureFault, sides: readonly Side[]
     case 'difference - reading':
       return `${fault}: ${o} is in kelvin, ${r} is a reading; write ${r} - ${o} for a reading, or ${o} - (${r} - "-273.15 degC") if ${o} is an absolute temperature`;
     case 'reading and difference':
-      return other?.type.zero
+      return other?.type.zero && target === undefined
         ? `${fault}: ${r} is a temperature reading and the literal 0 is none; write "0 degC"`
         : target !== undefined
           ? `${fault}: the declared unit ${printUnit(target.text)} takes a reading, the literal 0 is none; write "0 degC"`

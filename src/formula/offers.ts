@@ -24,8 +24,8 @@ const general: Offer = {
   fixes: [],
 };
 
-/** What turns counted revolutions into what is wanted; `parts` are the expressions that do not fit. */
-export function proposeForRevolutions(ctx: Context, parts: readonly Expr[]): Offer {
+/** What turns counted revolutions into what is wanted; `parts` are the expressions that do not fit; `whole` where a whole number is wanted, no angle. */
+export function proposeForRevolutions(ctx: Context, parts: readonly Expr[], whole = false): Offer {
   if (!ctx.propose || ctx.prove === undefined) return nothing;
   const names = namesIn(parts);
   const phrases: string[] = [];
@@ -36,18 +36,18 @@ export function proposeForRevolutions(ctx: Context, parts: readonly Expr[]): Off
     else if (edits.length > 1) fixes.push(joined(ctx.text, edits, edits[0]!.label));
   };
 
-  const turning = turnNames(ctx, names);
+  const turning = whole ? undefined : turnNames(ctx, names);
   if (turning) offer(`write ${turning.shown} where an angular speed or an angle is meant`, turning.edits);
-  for (const part of parts) {
+  for (const part of whole ? [] : parts) {
     const edit = append(ctx.text, part, '/(2*pi)', 'divide by 2*pi');
     if (ctx.prove(applied(ctx.text, [edit]), ctx.scope)) {
-      offer('divide by 2*pi where the formula gives rad/s', [edit]);
+      offer('divide by 2*pi where radians stand in for revolutions', [edit]);
       break;
     }
   }
   const unit = otherUnit(ctx, names);
   if (unit) phrases.push(unit);
-  if (isCountTarget(ctx)) phrases.push('declare the unit r');
+  if (isCountTarget(ctx, names)) phrases.push('declare the unit r');
   for (const part of parts) {
     const found = (['/"1 r"', '*"1 r"'] as const).map((tail) => ({
       tail,
@@ -138,8 +138,9 @@ function append(text: string, part: Expr, tail: string, label: string): Fix {
   const old = text.slice(from, to);
   const loose = part.kind === 'choose' || part.kind === 'compare' || part.kind === 'logic' || part.kind === 'not'
     || (part.kind === 'binary' && (part.operator === '+' || part.operator === '-'));
-  // A quotient by what was there before binds tighter than a sign and as tight as a product.
-  return { from, to, text: loose ? `(${old})${tail}` : `${old}${tail}`, label };
+  const changed = loose ? `(${old})${tail}` : `${old}${tail}`;
+  const inPower = text.slice(0, from).trimEnd().endsWith('^') || text.slice(to).trimStart().startsWith('^');
+  return { from, to, text: inPower ? `(${changed})` : changed, label };
 }
 
 /** A unit of another quantity that would make the formula fit: per revolution, or counted. */
@@ -148,8 +149,8 @@ function otherUnit(ctx: Context, names: readonly Sought[]): string | undefined {
     if (isDimensionless(type.dimension) || type.temperature !== 'none' || !isZeroR(type.counts.r) || !isZeroR(type.counts.hz)) continue;
     const unit = type.unitText;
     if (unit === undefined || !isZeroR(type.counts.rad)) continue;
-    if (ctx.prove!(ctx.text, recounted(ctx.scope, name, negR(oneR)))) {
-      return `give ${plainName(name)} a unit per revolution (${perRevolution(unit)})`;
+    if (!isTime(type) && ctx.prove!(ctx.text, recounted(ctx.scope, name, negR(oneR)))) {
+      return `give ${plainName(name)} a unit per revolution (${perRevolution(unit)}) if it is an amount per revolution`;
     }
     if (isPerTime(type) && ctx.prove!(ctx.text, recounted(ctx.scope, name, oneR))) {
       return `give ${plainName(name)} in r/s or Hz if it counts revolutions`;
@@ -158,8 +159,11 @@ function otherUnit(ctx: Context, names: readonly Sought[]): string | undefined {
   return undefined;
 }
 
-function isPerTime(type: QuantityType): boolean {
-  return type.dimension.every((exponent, index) => (index === 2 ? exponent.n === -1 && exponent.d === 1 : exponent.n === 0));
+const isPerTime = (type: QuantityType): boolean => isPowerOfTime(type, -1);
+const isTime = (type: QuantityType): boolean => isPowerOfTime(type, 1);
+
+function isPowerOfTime(type: QuantityType, power: 1 | -1): boolean {
+  return type.dimension.every((exponent, index) => (index === 2 ? exponent.n === power && exponent.d === 1 : exponent.n === 0));
 }
 
 function recounted(scope: Scope, name: string, by: Rational): Scope {
@@ -184,9 +188,9 @@ function perRevolution(unit: string): string {
   return `${unit.slice(0, slash)}/(${below}·r)`;
 }
 
-function isCountTarget(ctx: Context): boolean {
+function isCountTarget(ctx: Context, names: readonly Sought[]): boolean {
   const target = ctx.target;
-  return target !== undefined && isDimensionless(target.dimension) && isZeroR(target.counts.r) && isZeroR(target.counts.rad)
+  return target !== undefined && typed(ctx, names).every(({ type }) => isZeroR(type.counts.rad)) && isDimensionless(target.dimension) && isZeroR(target.counts.r) && isZeroR(target.counts.rad)
     && ctx.proveTarget?.('r') === true;
 }
 
@@ -235,3 +239,28 @@ export function proposeForTemperature(ctx: Context, fault: TemperatureFault, sid
 }
 
 const isAtom = (expr: Expr): boolean => expr.kind === 'name' || expr.kind === 'parens' || expr.kind === 'quoted';
+
+/** The formula without a conversion number; where 30 stood beside pi, with the 2 that it hid. */
+export function proposeWithoutLiteral(
+  ctx: Context,
+  literal: Extract<Expr, { kind: 'number' }>,
+  factors: readonly { readonly expr: Expr; readonly inverse: boolean }[],
+): readonly Fix[] {
+  if (ctx.prove === undefined) return [];
+  const removal = without(ctx.text, literal.at);
+  const pi = factors.find(({ expr, inverse }) => expr.kind === 'constant' && expr.name === 'pi' && !inverse)?.expr;
+  const hidesTwo = literal.value === 30 && factors.some(({ expr, inverse }) => expr === literal && inverse);
+  const edits = hidesTwo && pi ? [removal, { from: pi.at[0], to: pi.at[0], text: '2*', label: '' }] : [removal];
+  const changed = applied(ctx.text, edits);
+  if (!ctx.prove(changed, ctx.scope)) return [];
+  return [{ ...joined(ctx.text, edits, ''), label: `write ${changed.length > 40 ? `the formula without ${literal.text}` : changed}` }];
+}
+
+/** Takes a factor out of a product, with the sign before or after it. */
+function without(text: string, [from, to]: Span): Fix {
+  const before = /[*/]\s*$/.exec(text.slice(0, from));
+  if (before) return { from: before.index, to, text: '', label: '' };
+  const after = /^\s*\*\s*/.exec(text.slice(to));
+  if (after) return { from, to: to + after[0].length, text: '', label: '' };
+  return { from, to, text: '1', label: '' };
+}

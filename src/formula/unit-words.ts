@@ -42,6 +42,8 @@ function say(ctx: Context, expr: Expr, binding: 0 | 1 | 2): string {
     case 'binary':
       return binary(ctx, expr, binding);
     case 'choose': {
+      if (isZero(expr.then)) return say(ctx, expr.otherwise, binding);
+      if (isZero(expr.otherwise)) return say(ctx, expr.then, binding);
       const then = say(ctx, expr.then, 0);
       const otherwise = say(ctx, expr.otherwise, 0);
       return then === otherwise ? then : bound(`${then} or ${otherwise}`, binding > 0);
@@ -56,6 +58,8 @@ function say(ctx: Context, expr: Expr, binding: 0 | 1 | 2): string {
       return 'truth value';
   }
 }
+
+const isZero = (expr: Expr): boolean => (expr.kind === 'parens' ? isZero(expr.inner) : expr.kind === 'number' && expr.value === 0);
 
 const bound = (text: string, needed: boolean): string => (needed ? `(${text})` : text);
 
@@ -100,7 +104,8 @@ function raised(exponent: Expr): string {
 }
 
 function call(ctx: Context, expr: Extract<Expr, { kind: 'call' }>): string {
-  const args = expr.args.map((argument) => say(ctx, argument, 0));
+  const solid = expr.args.filter((argument) => !isZero(argument));
+  const args = (solid.length > 0 ? solid : expr.args).map((argument) => say(ctx, argument, 0));
   switch (expr.name) {
     case 'asin':
     case 'acos':

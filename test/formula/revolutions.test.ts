@@ -109,7 +109,7 @@ const refusals = (formula: string, target: string): readonly string[] =>
   inferFormula(formulaOf(formula), scope, unitOf(target)).problems.filter((problem) => problem.severity === 'error').map((problem) => problem.message);
 
 describe('verdicts', () => {
-  it.each(rows)('%s against %s (%s in the trade)', (formula, target, _sense, refused) => {
+  it.each(rows.map(([formula, target, sense, refused]) => ({ formula, target, sense, refused })))('$formula against $target ($sense in the trade)', ({ formula, target, refused }) => {
     const messages = refusals(formula, target);
     if (refused === undefined) expect(messages).toEqual([]);
     else {
@@ -119,8 +119,7 @@ describe('verdicts', () => {
   });
 
   const unjust = rows.filter(([, , sense, refused]) => sense === 'right' && refused !== undefined);
-  it.each(unjust)('%s against %s is right but refused: its message names the correction', (formula, target) => {
+  it.each(unjust.map(([formula, target]) => ({ formula, target })))('$formula against $target is right but refused: its message names the correction', ({ formula, target }) => {
     expect(refusals(formula, target)[0]).toMatch(/2\*pi|\/r\)|·r\)|"1 r"|-273\.15 degC/);
   });
-
 });
