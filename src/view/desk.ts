@@ -1,0 +1,303 @@
+// The sheet that lies on the desk: what is shown, what is chosen, what is being typed, and the way back.
+//
+// 1. `kept` is the sheet as last kept; what is shown may be one key stroke ahead of it, while a value is being typed.
+// 2. While a typed value has an error, the numbers of the last good one stay; the text that was typed is never lost or changed.
+// 3. A number that is changed loses basis and source: they spoke of another number. The old ones are remembered for one-key restoring.
+// 4. Lines that print alike before and after a change are the same objects, so that only what changed is drawn again.
+// Not here: elements of the page; computing (src/sheet) and printing (src/record).
+
+import { makeRecord, type RecordModel } from '../record/index.ts';
+import {
+  type Basis,
+  type Calculation,
+  type CellProblem,
+  calculate,
+  emptyHistory,
+  type GivenCell,
+  type History,
+  perform,
+  redo,
+  type Sheet,
+  undo,
+} from '../sheet/index.ts';
+import {
+  heldValue,
+  type Provenance,
+  provenanceOf,
+  sharesValue,
+  withBasis,
+  withoutProvenance,
+  withSource,
+  withValue,
+} from './given.ts';
+import { shareModel } from './share.ts';
+
+export type Field = 'value' | 'source';
+
+export interface Editing {
+  readonly cell: string;
+  readonly field: Field;
+  /** Index of the case whose value is edited. */
+  readonly at: number;
+  /** True: the value holds for every case that has none of its own. */
+  readonly forAll: boolean;
+  readonly text: string;
+  readonly before: string;
+  /** Errors and warnings of the text as typed; empty where it reads well. */
+  readonly problems: readonly CellProblem[];
+}
+
+export interface Desk {
+  readonly sheet: Sheet;
+  readonly calculation: Calculation;
+  readonly model: RecordModel;
+  readonly chosen: string | null;
+  /** Index of the case whose numbers stand in the equations. */
+  readonly reading: number;
+  readonly editing: Editing | null;
+  readonly undoLabel: string | null;
+  readonly redoLabel: string | null;
+  /** True where there are changes that no file has. */
+  readonly unsaved: boolean;
+  /** What happened last, in words, for those who do not see it. */
+  readonly announcement: string;
+  subscribe(listener: () => void): () => void;
+  open(sheet: Sheet): void;
+  choose(cell: string | null): void;
+  read(caseIndex: number): void;
+  /** Begins typing. `text` replaces what stands there. False where the cell cannot be typed into. */
+  begin(cell: string, field: Field, caseIndex: number, text?: string): boolean;
+  type(text: string): void;
+  setForAll(forAll: boolean): void;
+  finish(): void;
+  cancel(): void;
+  setBasis(cell: string, basis: Basis | null): void;
+  /** Basis and source that stood beside the number before the last one. */
+  formerProvenance(cell: string): Provenance | undefined;
+  restoreProvenance(cell: string): void;
+  undo(): void;
+  redo(): void;
+  saved(): void;
+}
+
+export function createDesk(first: Sheet): Desk {
+  const listeners = new Set<() => void>();
+  let kept = first;
+  let shown = first;
+  let calculation = calculate(first);
+  let model = makeRecord(calculation);
+  let history: History = emptyHistory;
+  let chosen: string | null = null;
+  let reading = 0;
+  let editing: Editing | null = null;
+  let savedSheet = first;
+  let announcement = '';
+  const former = new Map<string, Provenance>();
+
+  const changed = () => {
+    for (const listener of listeners) listener();
+  };
+  const show = (sheet: Sheet) => {
+    if (sheet === shown) return;
+    calculation.update(sheet);
+    shown = sheet;
+    model = shareModel(model, makeRecord(calculation));
+    if (reading >= calculation.cases.length) reading = 0;
+  };
+  const givenOf = (id: string, sheet: Sheet = kept): GivenCell | undefined => {
+    const cell = sheet.cells.find((one) => one.id === id);
+    return cell?.kind === 'given' ? cell : undefined;
+  };
+  const keep = (cell: GivenCell, label?: string) => {
+    const done = perform(kept, history, { kind: 'set-cell', cell }, label === undefined ? {} : { label });
+    kept = done.sheet;
+    history = done.history;
+    show(kept);
+  };
+  const caseId = (index: number) => calculation.cases[index]?.id ?? 'base';
+
+  /** The problems that a text in this place gives, read in the sheet as it would be. Leaves the calculation at `candidate`. */
+  const problemsOf = (cell: string, at: number): readonly CellProblem[] => {
+    const id = caseId(at);
+    return (calculation.state(cell)?.problems ?? []).filter((problem) => problem.case === undefined || problem.case === id);
+  };
+
+  const preview = (next: Editing) => {
+    editing = next;
+    const cell = givenOf(next.cell);
+    if (next.field !== 'value' || cell === undefined) return;
+    if (next.text === next.before && next.forAll === sharesValue(cell, caseId(next.at))) {
+      show(kept);
+      editing = { ...next, problems: problemsOf(next.cell, next.at) };
+      return;
+    }
+    const candidate = replaceCell(kept, withValue(cell, caseId(next.at), next.text, next.forAll));
+    const last = shown;
+    calculation.update(candidate);
+    const problems = problemsOf(next.cell, next.at);
+    editing = { ...next, problems };
+    if (problems.some((problem) => problem.severity === 'error')) {
+      calculation.update(last);
+      return;
+    }
+    shown = candidate;
+    model = shareModel(model, makeRecord(calculation));
+  };
+
+  const verdictWords = () => {
+    const failed = model.summary.filter((one) => one.cases.some((each) => each.met === false)).length;
+    const problems = model.problems.filter((problem) => problem.severity === 'error').length;
+    const criteria = failed === 0 ? 'no criterion fails' : `${failed} ${failed === 1 ? 'criterion is' : 'criteria are'} not met`;
+    return problems === 0 ? criteria : `${criteria}, ${problems} ${problems === 1 ? 'error' : 'errors'}`;
+  };
+
+  const step = (done: ReturnType<typeof undo>, word: string) => {
+    if (done === undefined) return;
+    editing = null;
+    kept = done.sheet;
+    history = done.history;
+    show(kept);
+    announcement = `${word} ${done.label}; ${verdictWords()}`;
+    changed();
+  };
+
+  const desk: Desk = {
+    get sheet() {
+      return shown;
+    },
+    get calculation() {
+      return calculation;
+    },
+    get model() {
+      return model;
+    },
+    get chosen() {
+      return chosen;
+    },
+    get reading() {
+      return reading;
+    },
+    get editing() {
+      return editing;
+    },
+    get undoLabel() {
+      return history.past.at(-1)?.label ?? null;
+    },
+    get redoLabel() {
+      return history.future.at(-1)?.label ?? null;
+    },
+    get unsaved() {
+      return kept !== savedSheet;
+    },
+    get announcement() {
+      return announcement;
+    },
+    subscribe(listener) {
+      listeners.add(listener);
+      return () => listeners.delete(listener);
+    },
+    open(sheet) {
+      kept = sheet;
+      shown = sheet;
+      savedSheet = sheet;
+      calculation = calculate(sheet);
+      model = makeRecord(calculation);
+      history = emptyHistory;
+      chosen = null;
+      reading = 0;
+      editing = null;
+      former.clear();
+      announcement = `opened ${sheet.title}; ${verdictWords()}`;
+      changed();
+    },
+    choose(cell) {
+      if (cell === chosen) return;
+      chosen = cell;
+      changed();
+    },
+    read(caseIndex) {
+      if (caseIndex === reading || caseIndex < 0 || caseIndex >= calculation.cases.length) return;
+      reading = caseIndex;
+      announcement = `numbers of case ${calculation.cases[caseIndex]?.title ?? caseId(caseIndex)}`;
+      changed();
+    },
+    begin(id, field, caseIndex, text) {
+      if (editing !== null) desk.finish();
+      const cell = givenOf(id);
+      if (cell === undefined) return false;
+      const forAll = sharesValue(cell, caseId(caseIndex));
+      const before = field === 'source' ? (cell.source ?? '') : heldValue(cell, caseId(caseIndex));
+      chosen = id;
+      preview({ cell: id, field, at: caseIndex, forAll, text: text ?? before, before, problems: [] });
+      changed();
+      return true;
+    },
+    type(text) {
+      if (editing === null || editing.text === text) return;
+      preview({ ...editing, text });
+      changed();
+    },
+    setForAll(forAll) {
+      if (editing === null || editing.forAll === forAll) return;
+      preview({ ...editing, forAll });
+      changed();
+    },
+    finish() {
+      if (editing === null) return;
+      const done = editing;
+      const cell = givenOf(done.cell);
+      editing = null;
+      if (cell !== undefined && done.field === 'source' && done.text !== done.before) {
+        keep(withSource(cell, done.text));
+        former.delete(cell.id);
+        announcement = `source of ${cell.name} stated`;
+      } else if (cell !== undefined && done.field === 'value' && isChange(cell, done, caseId(done.at))) {
+        const before = provenanceOf(cell);
+        if (before !== undefined) former.set(cell.id, before);
+        keep(withoutProvenance(withValue(cell, caseId(done.at), done.text, done.forAll)), `value of ${cell.name}`);
+        announcement = `${cell.name} is ${done.text}; ${verdictWords()}`;
+      } else show(kept);
+      changed();
+    },
+    cancel() {
+      if (editing === null) return;
+      editing = null;
+      show(kept);
+      changed();
+    },
+    setBasis(id, basis) {
+      const cell = givenOf(id);
+      if (cell === undefined) return;
+      keep(withBasis(cell, basis));
+      changed();
+    },
+    formerProvenance(id) {
+      const cell = givenOf(id);
+      return cell !== undefined && provenanceOf(cell) === undefined ? former.get(id) : undefined;
+    },
+    restoreProvenance(id) {
+      const cell = givenOf(id);
+      const before = former.get(id);
+      if (cell === undefined || before === undefined) return;
+      former.delete(id);
+      keep({ ...cell, ...before }, `source of ${cell.name}`);
+      announcement = `source of ${cell.name} kept`;
+      changed();
+    },
+    undo: () => step(undo(kept, history), 'took back'),
+    redo: () => step(redo(kept, history), 'did again'),
+    saved() {
+      savedSheet = kept;
+      changed();
+    },
+  };
+  return desk;
+}
+
+const isChange = (cell: GivenCell, done: Editing, caseId: string) =>
+  done.text !== done.before || done.forAll !== sharesValue(cell, caseId);
+
+const replaceCell = (sheet: Sheet, cell: GivenCell): Sheet => ({
+  ...sheet,
+  cells: sheet.cells.map((one) => (one.id === cell.id ? cell : one)),
+});

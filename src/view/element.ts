@@ -1,0 +1,9 @@
+// The base of our elements: drawn into the page itself, because mathematics needs the page's faces and print needs one flow.
+
+import { LitElement } from 'lit';
+
+export class PageElement extends LitElement {
+  protected override createRenderRoot(): HTMLElement {
+    return this;
+  }
+}

@@ -1,0 +1,27 @@
+// The page begins: faces and styles, our elements, and the finished example on the desk.
+
+import '@fontsource-variable/atkinson-hyperlegible-next';
+import 'katex/dist/katex.min.css';
+import './page.css';
+import './sheet.css';
+import './print.css';
+import { readSheet } from '../sheet/index.ts';
+import { createDesk } from './desk.ts';
+import exampleText from './example.sheet.json?raw';
+import { MathElement } from './math.ts';
+import { BarElement } from './outline.ts';
+import { PageElementRoot } from './page.ts';
+import { PaperElement } from './paper.ts';
+import { RowElement } from './row.ts';
+
+customElements.define('ts-math', MathElement);
+customElements.define('ts-bar', BarElement);
+customElements.define('ts-row', RowElement);
+customElements.define('ts-paper', PaperElement);
+customElements.define('ts-page', PageElementRoot);
+
+const example = readSheet(exampleText);
+// The example is part of the product and tested: one that cannot be read is a fault of ours.
+if (!example.ok) throw new Error(example.problems.map((problem) => problem.message).join('\n'));
+const page = document.querySelector<PageElementRoot>('ts-page');
+if (page !== null) page.desk = createDesk(example.value);

@@ -1,0 +1,252 @@
+// <ts-page>: the whole page: the bar, the desk with outline and side, the paper on it; print, walking, the way back.
+//
+// 1. It draws again whenever the desk has changed; rows and formulas decide for themselves whether they changed.
+// 2. One polite voice tells what a change did; nothing else speaks.
+// 3. Before print everything is typeset and every case has its numbers; after it the screen is as before.
+// Not here: moving in the rows (paper.ts).
+
+import { html, nothing, type PropertyValues } from 'lit';
+import { writeSheet } from '../sheet/index.ts';
+import type { Desk } from './desk.ts';
+import { PageElement } from './element.ts';
+import { fitAll } from './fit.ts';
+import { commandOf, keyList } from './keys.ts';
+import { mark } from './mark.ts';
+import { typesetAll } from './math.ts';
+import { outline } from './outline.ts';
+import type { PaperElement } from './paper.ts';
+import { preparePrint } from './print.ts';
+import type { RowElement } from './row.ts';
+import { side } from './side.ts';
+import { words } from './text.ts';
+
+export class PageElementRoot extends PageElement {
+  static override properties = {
+    desk: { attribute: false },
+    version: { state: true },
+    printing: { state: true },
+    section: { state: true },
+    narrow: { state: true },
+  };
+  declare desk: Desk | undefined;
+  declare version: number;
+  declare printing: boolean;
+  declare section: string | null;
+  declare narrow: boolean;
+  #trail: string[] = [];
+  #leave: (() => void) | undefined;
+  #watch: IntersectionObserver | undefined;
+  #width = matchMedia('(max-width: 70rem)');
+
+  constructor() {
+    super();
+    this.version = 0;
+    this.printing = false;
+    this.section = null;
+    this.narrow = this.#width.matches;
+  }
+
+  override connectedCallback() {
+    super.connectedCallback();
+    this.#width.addEventListener('change', this.#onWidth);
+    addEventListener('beforeprint', this.#beforePrint);
+    addEventListener('afterprint', this.#afterPrint);
+    addEventListener('beforeunload', this.#beforeUnload);
+    addEventListener('keydown', this.#onKey);
+    this.addEventListener('walk', this.#onWalk as EventListener);
+  }
+
+  override disconnectedCallback() {
+    super.disconnectedCallback();
+    this.#leave?.();
+    this.#watch?.disconnect();
+    this.#width.removeEventListener('change', this.#onWidth);
+    removeEventListener('beforeprint', this.#beforePrint);
+    removeEventListener('afterprint', this.#afterPrint);
+    removeEventListener('beforeunload', this.#beforeUnload);
+    removeEventListener('keydown', this.#onKey);
+  }
+
+  protected override willUpdate(changed: PropertyValues<this>) {
+    if (!changed.has('desk')) return;
+    this.#leave?.();
+    this.#leave = this.desk?.subscribe(() => {
+      this.version += 1;
+    });
+  }
+
+  protected override render() {
+    const { desk } = this;
+    if (desk === undefined) return html`<p class="loading">Opening the sheet …</p>`;
+    const { model } = desk;
+    const goTo = (cell: string) => this.#goTo(cell);
+    const beside = side(desk, goTo);
+    return html`
+      <a class="skip" href="#paper" @click=${this.#skip}>To the sheet</a>
+      ${this.#bar(desk)}
+      <div class="desk">
+        ${
+          this.narrow
+            ? html`<details class="outline"><summary>Sections and criteria</summary>${outline(model, this.section, goTo)}</details>`
+            : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}${keys()}</aside>`
+        }
+        <main id="paper"><ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}></ts-paper></main>
+        <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${beside}</aside>
+      </div>
+      <p class="unseen" role="status">${desk.announcement}</p>`;
+  }
+
+  #bar(desk: Desk) {
+    const { model } = desk;
+    const { titleBlock: block } = model;
+    const failed = model.summary.filter((one) => one.cases.some((each) => each.met === false));
+    const errors = new Set(model.problems.filter((problem) => problem.severity === 'error').map((problem) => problem.cell)).size;
+    const toConfirm = model.openPoints.filter((point) => point.kind === 'to confirm' || point.kind === 'carried over').length;
+    const first = (cell: string | undefined) => () => cell !== undefined && this.#goTo(cell);
+    return html`<header class="bar">
+      <p class="brand">${mark()}<span>Tightside</span></p>
+      <p class="document"><b>${block.documentNumber ?? ''}</b> ${block.revision ? `rev ${block.revision} · ` : ''}${model.title} · ${model.status}</p>
+      <p class="state">
+        ${errors === 0 ? nothing : html`<button type="button" class="word not-met" @click=${first(model.problems.find((problem) => problem.severity === 'error')?.cell)}>${words(errors, 'line', 'lines')} with an error</button>`}
+        ${
+          failed.length > 0
+            ? html`<button type="button" class="word not-met" @click=${first(failed[0]?.cell)}>${words(failed.length, 'criterion', 'criteria')} not met</button>`
+            : model.summary.length > 0 && errors === 0
+              ? html`<span>${model.summary.every((one) => one.cases.every((each) => each.met === true)) ? 'all criteria met' : 'no criterion fails'}</span>`
+              : nothing
+        }
+        ${toConfirm === 0 ? nothing : html`<button type="button" class="word" @click=${this.#toOpenPoints}>${toConfirm} to confirm</button>`}
+      </p>
+      <div class="tools" role="group" aria-label="Sheet">
+        <button type="button" ?disabled=${desk.undoLabel === null} title=${desk.undoLabel === null ? nothing : `Undo: ${desk.undoLabel}`} @click=${() => desk.undo()}>Undo</button>
+        <button type="button" ?disabled=${desk.redoLabel === null} title=${desk.redoLabel === null ? nothing : `Redo: ${desk.redoLabel}`} @click=${() => desk.redo()}>Redo</button>
+        <button type="button" title="Save the sheet as a file" @click=${this.#save}>Save</button>
+        <button type="button" @click=${() => print()}>Print</button>
+      </div>
+    </header>`;
+  }
+
+  protected override updated() {
+    const { desk } = this;
+    if (desk === undefined) return;
+    const { documentNumber } = desk.model.titleBlock;
+    document.title = `${[documentNumber, desk.model.title].filter(Boolean).join(' ')}, ${desk.model.status}`;
+    preparePrint(desk.model);
+    if (this.#watch === undefined) void this.#watchSections();
+  }
+
+  async #watchSections() {
+    await this.#paper?.updateComplete;
+    const seen = new Set<string>();
+    this.#watch = new IntersectionObserver(
+      (entries) => {
+        for (const { target, isIntersecting } of entries) {
+          const key = (target as HTMLElement).dataset['section'] ?? '';
+          if (isIntersecting) seen.add(key);
+          else seen.delete(key);
+        }
+        const order = [...this.querySelectorAll<HTMLElement>('[data-section]')].map((one) => one.dataset['section'] ?? '');
+        this.section = order.find((key) => seen.has(key)) ?? null;
+      },
+      { rootMargin: '-120px 0px -60% 0px' },
+    );
+    for (const section of this.querySelectorAll('[data-section]')) this.#watch.observe(section);
+  }
+
+  get #paper(): PaperElement | null {
+    return this.querySelector('ts-paper');
+  }
+
+  #goTo(cell: string) {
+    const from = this.desk?.chosen;
+    if (from != null && from !== cell) this.#trail.push(from);
+    void this.#paper?.goTo(cell);
+  }
+
+  #onWidth = () => {
+    this.narrow = this.#width.matches;
+  };
+
+  #onWalk = (event: CustomEvent<'origin' | 'use' | 'back'>) => {
+    if (event.detail === 'back') {
+      const cell = this.#trail.pop();
+      if (cell !== undefined) void this.#paper?.goTo(cell);
+      return;
+    }
+    const target =
+      this.querySelector<HTMLElement>(`#${event.detail} button`) ?? this.querySelector<HTMLElement>(`#${event.detail}`);
+    target?.focus();
+  };
+
+  #sideKey = (event: KeyboardEvent) => {
+    if (event.key === 'Escape' && this.desk?.chosen != null) {
+      void this.#paper?.goTo(this.desk.chosen);
+      return;
+    }
+    if (event.key !== 'ArrowDown' && event.key !== 'ArrowUp') return;
+    const buttons = [...this.querySelectorAll<HTMLElement>('.side button')];
+    const next = buttons[buttons.indexOf(event.target as HTMLElement) + (event.key === 'ArrowDown' ? 1 : -1)];
+    if (next === undefined) return;
+    event.preventDefault();
+    next.focus();
+  };
+
+  #toOpenPoints = () => {
+    const section = this.querySelector<HTMLElement>('#open-points');
+    section?.scrollIntoView({ block: 'nearest' });
+    section?.querySelector('button')?.focus();
+  };
+
+  #skip = (event: Event) => {
+    event.preventDefault();
+    this.querySelector<HTMLElement>('.grid [tabindex="0"]')?.focus();
+  };
+
+  #onKey = (event: KeyboardEvent) => {
+    const target = event.target;
+    if (target instanceof HTMLInputElement || target instanceof HTMLTextAreaElement) return;
+    const command = commandOf(event);
+    if (command !== 'undo' && command !== 'redo') return;
+    event.preventDefault();
+    if (command === 'undo') this.desk?.undo();
+    else this.desk?.redo();
+  };
+
+  #save = () => {
+    const { desk } = this;
+    if (desk === undefined) return;
+    desk.finish();
+    const address = URL.createObjectURL(new Blob([writeSheet(desk.sheet)], { type: 'application/json' }));
+    const link = document.createElement('a');
+    link.href = address;
+    link.download = `${(desk.sheet.titleBlock?.documentNumber ?? desk.sheet.title).replace(/[^\p{L}\p{N}._-]+/gu, '-') || 'sheet'}.sheet.json`;
+    link.click();
+    setTimeout(() => URL.revokeObjectURL(address), 10_000);
+    desk.saved();
+  };
+
+  #beforePrint = () => {
+    this.desk?.finish();
+    this.printing = true;
+    document.documentElement.toggleAttribute('data-print', true);
+    // The rows draw what print adds before the print goes on: all of it happens in the pause after this handler.
+    queueMicrotask(async () => {
+      await this.updateComplete;
+      await this.#paper?.updateComplete;
+      await Promise.all([...this.querySelectorAll('ts-row')].map((row) => (row as RowElement).updateComplete));
+      typesetAll();
+      fitAll(this);
+    });
+  };
+  #afterPrint = () => {
+    this.printing = false;
+    document.documentElement.toggleAttribute('data-print', false);
+  };
+
+  #beforeUnload = (event: BeforeUnloadEvent) => {
+    if (this.desk?.unsaved) event.preventDefault();
+  };
+}
+
+const keys = () =>
+  html`<details class="keys"><summary>Keys</summary><dl>${keyList.map(([key, does]) => html`<div><dt>${key}</dt><dd>${does}</dd></div>`)}</dl></details>`;

@@ -1,0 +1,294 @@
+// <ts-paper>: the ruled sheet: title block, head, the numbered rows in sections, references; and how one moves in it.
+//
+// 1. The rows are a grid with one cell in the tab order; its keys are those of keys.ts.
+// 2. The cell that has the focus makes its row the chosen one.
+// 3. Leaving a field keeps what was typed; focus then stays where it was.
+// Not here: a single row (row.ts), what lies beside the paper (page.ts).
+
+import { html } from 'lit';
+import { repeat } from 'lit/directives/repeat.js';
+import type { Line } from '../record/index.ts';
+import type { CellProblem } from '../sheet/index.ts';
+import type { Desk } from './desk.ts';
+import { PageElement } from './element.ts';
+import { foot, head, titleBlock } from './heads.ts';
+import { type Command, commandOf, isWriting } from './keys.ts';
+import { cellOf } from './share.ts';
+
+interface Place {
+  readonly cell: string;
+  readonly column: number;
+}
+
+interface Section {
+  readonly key: string;
+  readonly lines: readonly Line[];
+}
+
+const noProblems: readonly CellProblem[] = [];
+const pageStep = 8;
+
+export class PaperElement extends PageElement {
+  static override properties = { desk: { attribute: false }, version: { attribute: false }, printing: { attribute: false } };
+  declare desk: Desk;
+  /** Raised by the page whenever the desk has changed. */
+  declare version: number;
+  declare printing: boolean;
+  #place: Place | null = null;
+  #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
+    all: noProblems,
+    of: new Map(),
+  };
+
+  protected override render() {
+    const { desk } = this;
+    const { model } = desk;
+    const sections = sectionsOf(model.lines);
+    const heads = model.cases.length === 1 && model.cases[0]?.title === '' ? ['Result'] : model.cases.map((one) => one.title);
+    this.#sortProblems();
+    const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
+    return html`${titleBlock(model)}${head(desk)}
+      <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} @keydown=${this.#onKey} @focusin=${this.#onFocus}
+        @focusout=${this.#onLeave} @click=${this.#onClick}>
+        <div role="rowgroup" class="heads">
+          <div role="row" class="row columns">
+            <div role="columnheader" class="source">Source</div>
+            <div role="columnheader" class="calculation">Calculation</div>
+            ${heads.map((title, index) => this.#columnHead(title, index, heads.length))}
+          </div>
+        </div>
+        ${repeat(
+          sections,
+          (section) => section.key,
+          (section) => html`<div role="rowgroup" class="section" id=${`section-${section.key}`} data-section=${section.key}>
+            ${repeat(section.lines, cellOf, (line) => this.#row(line, place))}
+          </div>`,
+        )}
+      </div>
+      ${foot(model)}`;
+  }
+
+  protected override updated() {
+    this.style.setProperty('--results', String(Math.max(1, this.desk.model.cases.length)));
+  }
+
+  #columnHead(title: string, index: number, count: number) {
+    const { desk } = this;
+    if (count === 1) return html`<div role="columnheader" class="result">${title}</div>`;
+    const read = desk.reading === index;
+    return html`<div role="columnheader" class="result">
+      <button type="button" class="case-head" aria-pressed=${read} title="Show the numbers of this case in the equations" @click=${() => desk.read(index)}>${title}</button>
+    </div>`;
+  }
+
+  #row(line: Line, place: Place) {
+    const { desk } = this;
+    const cell = cellOf(line);
+    const editing = desk.editing?.cell === cell ? desk.editing : null;
+    const former = line.kind === 'step' && line.step.kind === 'given' ? formerText(desk, cell) : '';
+    return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.model.cases}
+      .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
+      .chosen=${desk.chosen === cell} .editing=${editing} .printing=${this.printing} .former=${former}></ts-row>`;
+  }
+
+  #sortProblems() {
+    const all = this.desk.model.problems;
+    if (all === this.#problems.all) return;
+    const before = this.#problems.of;
+    const of = new Map<string, CellProblem[]>();
+    for (const problem of all) of.set(problem.cell, [...(of.get(problem.cell) ?? []), problem]);
+    // A row whose problems stay alike keeps its list, and is not drawn again.
+    for (const [cell, list] of of) {
+      const old = before.get(cell);
+      if (old !== undefined && JSON.stringify(old) === JSON.stringify(list)) of.set(cell, old);
+    }
+    this.#problems = { all, of };
+  }
+
+  /** Puts the focus on a row, in the middle of the window. */
+  async goTo(cell: string, column = 1) {
+    this.#place = { cell, column };
+    this.desk.choose(cell);
+    await this.updateComplete;
+    const row = this.#rowOf(cell);
+    row?.scrollIntoView({ block: 'center' });
+    this.#focus(cell, column);
+  }
+
+  #rowOf(cell: string): HTMLElement | null {
+    return this.querySelector(`ts-row[data-cell="${CSS.escape(cell)}"]`);
+  }
+
+  #focus(cell: string, column: number) {
+    const cells = [...(this.#rowOf(cell)?.querySelectorAll<HTMLElement>('[data-column]') ?? [])];
+    if (cells.length === 0) return;
+    const target = cells.find((one) => Number(one.dataset['column']) === column) ?? cells[cells.length - 1];
+    target?.focus();
+  }
+
+  #cellAt(target: EventTarget | null): (Place & { readonly element: HTMLElement; readonly row: HTMLElement }) | null {
+    if (!(target instanceof Element)) return null;
+    const row = target.closest<HTMLElement>('ts-row');
+    const element = target.closest<HTMLElement>('[data-column]') ?? row?.querySelector<HTMLElement>('[data-column]') ?? null;
+    if (row === null || element === null) return null;
+    return { cell: row.dataset['cell'] ?? '', column: Number(element.dataset['column']), element, row };
+  }
+
+  #onFocus = (event: FocusEvent) => {
+    const at = this.#cellAt(event.target);
+    if (at === null) return;
+    if (this.#place?.cell !== at.cell || this.#place.column !== at.column) {
+      this.#place = { cell: at.cell, column: at.column };
+      this.requestUpdate();
+    }
+    this.desk.choose(at.cell);
+  };
+
+  #onLeave = (event: FocusEvent) => {
+    const { editing } = this.desk;
+    if (editing === null) return;
+    const row = this.#rowOf(editing.cell);
+    const to = event.relatedTarget;
+    const leavesRow = row?.contains(event.target as Node) && !(to instanceof Node && row.contains(to));
+    const toCell = to instanceof HTMLElement && to.dataset['column'] !== undefined;
+    if (leavesRow || toCell) this.desk.finish();
+  };
+
+  #onClick = (event: MouseEvent) => {
+    const at = this.#cellAt(event.target);
+    if (at === null || isField(event.target) || (event.target as Element).closest('a, button, label')) return;
+    if (!isWritable(at.element)) return;
+    // Text that is being selected is being read, not typed into.
+    if (getSelection()?.isCollapsed === false) return;
+    this.#edit(at);
+  };
+
+  #edit(at: Place & { readonly element: HTMLElement }, text?: string) {
+    const field = at.column === 0 ? 'source' : 'value';
+    const caseIndex = at.column >= 2 ? at.column - 2 : this.desk.reading;
+    if (isWritable(at.element)) this.desk.begin(at.cell, field, caseIndex, text);
+  }
+
+  async #stop(keep: boolean) {
+    const { editing } = this.desk;
+    if (editing === null) return;
+    const place = this.#place;
+    // The cell takes the focus before the field goes, so that it is never lost.
+    if (place !== null) this.#focus(place.cell, place.column);
+    if (this.desk.editing !== null) {
+      if (keep) this.desk.finish();
+      else this.desk.cancel();
+    }
+    await this.updateComplete;
+    if (place !== null) this.#focus(place.cell, place.column);
+  }
+
+  #onKey = (event: KeyboardEvent) => {
+    const at = this.#cellAt(event.target);
+    if (at === null || event.isComposing) return;
+    if (this.desk.editing !== null && event.target instanceof HTMLElement && event.target !== at.element) {
+      if (event.key === 'Enter' && !(event.target instanceof HTMLTextAreaElement && event.shiftKey)) {
+        if (event.target instanceof HTMLButtonElement) return;
+        event.preventDefault();
+        void this.#stop(true);
+      } else if (event.key === 'Escape') {
+        event.preventDefault();
+        this.desk.cancel();
+        void this.updateComplete.then(() => this.#focus(at.cell, at.column));
+      }
+      return;
+    }
+    if (event.target instanceof HTMLButtonElement || event.target instanceof HTMLAnchorElement) {
+      if (event.key === 'Enter' || event.key === ' ') return;
+    }
+    const command = commandOf(event);
+    if (command !== undefined && this.#does(command, at)) {
+      event.preventDefault();
+      return;
+    }
+    if (command === undefined && isWriting(event) && isWritable(at.element) && at.column !== 0) {
+      event.preventDefault();
+      this.#edit(at, at.element.classList.contains('across') ? undefined : event.key);
+    }
+  };
+
+  #does(command: Command, at: Place & { readonly element: HTMLElement; readonly row: HTMLElement }): boolean {
+    const rows = () => [...this.querySelectorAll<HTMLElement>('ts-row')];
+    const columns = [...at.row.querySelectorAll<HTMLElement>('[data-column]')].map((one) => Number(one.dataset['column']));
+    const toRow = (index: number) => {
+      const all = rows();
+      const row = all[Math.min(Math.max(index, 0), all.length - 1)];
+      if (row === undefined) return;
+      this.#focus(row.dataset['cell'] ?? '', at.column);
+      row.scrollIntoView({ block: 'nearest' });
+    };
+    const toColumn = (step: number) => {
+      const next = columns[columns.indexOf(at.column) + step];
+      if (next !== undefined) this.#focus(at.cell, next);
+    };
+    const index = () => rows().indexOf(at.row);
+    switch (command) {
+      case 'left':
+        toColumn(-1);
+        return true;
+      case 'right':
+        toColumn(1);
+        return true;
+      case 'up':
+        toRow(index() - 1);
+        return true;
+      case 'down':
+        toRow(index() + 1);
+        return true;
+      case 'row-start':
+        this.#focus(at.cell, columns[0] ?? 0);
+        return true;
+      case 'row-end':
+        this.#focus(at.cell, columns[columns.length - 1] ?? 0);
+        return true;
+      case 'sheet-start':
+        toRow(0);
+        return true;
+      case 'sheet-end':
+        toRow(Number.MAX_SAFE_INTEGER);
+        return true;
+      case 'page-up':
+        toRow(index() - pageStep);
+        return true;
+      case 'page-down':
+        toRow(index() + pageStep);
+        return true;
+      case 'edit':
+        this.#edit(at);
+        return true;
+      case 'origin':
+      case 'use':
+      case 'back':
+        this.dispatchEvent(new CustomEvent('walk', { detail: command, bubbles: true }));
+        return true;
+      default:
+        return false;
+    }
+  }
+}
+
+const isField = (target: EventTarget | null) =>
+  target instanceof HTMLInputElement || target instanceof HTMLSelectElement || target instanceof HTMLTextAreaElement;
+const isWritable = (cell: HTMLElement) => cell.getAttribute('aria-readonly') !== 'true' && cell.closest('ts-row.given') !== null;
+
+function formerText(desk: Desk, cell: string): string {
+  const former = desk.formerProvenance(cell);
+  if (former === undefined) return '';
+  return [former.source ?? '', former.basis ?? ''].filter((part) => part !== '').join(', ');
+}
+
+/** Lines from one first-level heading to the next. */
+function sectionsOf(lines: readonly Line[]): readonly Section[] {
+  const sections: { key: string; lines: Line[] }[] = [];
+  for (const line of lines) {
+    const last = sections[sections.length - 1];
+    if (last === undefined || (line.kind === 'heading' && line.level === 1)) sections.push({ key: cellOf(line), lines: [line] });
+    else last.lines.push(line);
+  }
+  return sections;
+}

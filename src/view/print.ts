@@ -1,0 +1,26 @@
+// What the pages of a print carry around the sheet: its name at the head, state and page number at the foot.
+//
+// The boxes in the margins take their text from properties of the document; the paper's size from a style sheet of our own.
+
+import type { RecordModel } from '../record/index.ts';
+
+let size: CSSStyleSheet | undefined;
+let last: RecordModel | undefined;
+
+export function preparePrint(model: RecordModel) {
+  if (model === last) return;
+  last = model;
+  const { documentNumber, revision, organisation } = model.titleBlock;
+  const set = (name: string, text: string) => document.documentElement.style.setProperty(name, cssString(text));
+  set('--print-document', [documentNumber, revision ? `rev ${revision}` : ''].filter(Boolean).join(' '));
+  set('--print-title', model.title);
+  set('--print-status', model.status === 'issued' ? '' : model.status);
+  set('--print-organisation', organisation ?? '');
+  size ??= new CSSStyleSheet();
+  size.replaceSync(`@page { size: ${model.settings.paper === 'Letter' ? 'letter' : 'A4'} portrait; }`);
+  if (!document.adoptedStyleSheets.includes(size)) document.adoptedStyleSheets.push(size);
+}
+
+/** A text as a CSS string: quotes, backslashes and line ends written out. */
+export const cssString = (text: string) =>
+  `"${[...text].map((sign) => (/["\\\p{Cc}]/u.test(sign) ? `\\${sign.codePointAt(0)?.toString(16)} ` : sign)).join('')}"`;

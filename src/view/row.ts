@@ -1,0 +1,139 @@
+// <ts-row>: one line of the sheet as a row of the ruled sheet: source, calculation, one result a case.
+//
+// 1. A row is drawn again only when its line, its problems, the case that is read or its own state of editing changed.
+// 2. Cells are numbered from the left: 0 source, 1 calculation, 2… results. One cell of the whole sheet is in the tab order.
+// 3. It writes nothing but through the desk.
+// Not here: moving between cells (paper.ts), the field that is typed into (editor.ts), other kinds of lines (lines.ts).
+
+import { html, nothing, type TemplateResult } from 'lit';
+import type { Line, RecordCase, Step, StepCase } from '../record/index.ts';
+import type { CellProblem } from '../sheet/index.ts';
+import type { Desk, Editing } from './desk.ts';
+import { choicesOf, editorField, editorNotes, sourceEditor } from './editor.ts';
+import { PageElement } from './element.ts';
+import { equation } from './equation.ts';
+import { otherLine } from './lines.ts';
+import { quantity, source } from './text.ts';
+
+export class RowElement extends PageElement {
+  static override properties = {
+    desk: { attribute: false },
+    line: { attribute: false },
+    cases: { attribute: false },
+    problems: { attribute: false },
+    reading: { attribute: false },
+    column: { attribute: false },
+    chosen: { attribute: false },
+    editing: { attribute: false },
+    printing: { attribute: false },
+    former: { attribute: false },
+  };
+  declare desk: Desk;
+  declare line: Line;
+  declare cases: readonly RecordCase[];
+  declare problems: readonly CellProblem[];
+  declare reading: number;
+  /** The cell of this row that is in the tab order; -1: none. */
+  declare column: number;
+  declare chosen: boolean;
+  declare editing: Editing | null;
+  declare printing: boolean;
+  /** A source that stood beside the number before the last one, and could be kept. */
+  declare former: string;
+
+  protected override render() {
+    const { line } = this;
+    if (line.kind !== 'step') return otherLine(line, (column) => (this.column === column ? 0 : -1), this.problems);
+    return this.#step(line.step);
+  }
+
+  protected override updated() {
+    const { line, chosen } = this;
+    this.className = `row ${line.kind}${line.kind === 'step' ? ` ${line.step.kind}` : ''}${chosen ? ' chosen' : ''}`;
+    if (line.kind === 'step') this.setAttribute('aria-selected', String(chosen));
+  }
+
+  #tab(column: number) {
+    return this.column === column ? 0 : -1;
+  }
+
+  #step(step: Step): TemplateResult {
+    const choices = step.kind === 'given' ? choicesOf(this.desk, step.cell) : undefined;
+    const state = step.notes.filter(isState);
+    const remarks = step.notes.filter((note) => !isState(note));
+    const editingSource = this.editing?.field === 'source' ? this.editing : null;
+    const editingValue = this.editing?.field === 'value' ? this.editing : null;
+    return html`
+      <div role="gridcell" class="source" data-column="0" tabindex=${this.#tab(0)} aria-readonly=${step.kind === 'given' ? nothing : 'true'}>
+        ${
+          editingSource === null
+            ? html`${source(step.source)}${step.basis === undefined || isStateWord(step.basis) ? nothing : html` <span class="basis">${step.basis}</span>`}`
+            : sourceEditor(this.desk, editingSource, step)
+        }
+        ${state.map((note) => html`<span class="tag ${isOpen(note) ? 'open' : ''}">${note}</span>`)}
+      </div>
+      <div role="gridcell" class="calculation ${choices === undefined ? '' : 'across'}" data-column="1" tabindex=${this.#tab(1)}
+        aria-readonly=${choices === undefined ? 'true' : nothing}>
+        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span></div>
+        <div class="formula">
+          ${equation(step, this.reading, this.cases, this.printing)}
+          ${choices === undefined ? nothing : this.#choice(step, editingValue, choices)}
+        </div>
+        ${this.#below(step, remarks, editingValue)}
+      </div>
+      ${choices === undefined ? step.cases.map((each, index) => this.#result(step, each, index, editingValue)) : nothing}
+    `;
+  }
+
+  #choice(step: Step, editing: Editing | null, choices: readonly string[]) {
+    if (editing !== null) return editorField(this.desk, editing, step, this.cases, choices);
+    const same = step.cases.every((each) => each.result === step.cases[0]?.result);
+    const shown = same ? step.cases.slice(0, 1) : step.cases;
+    return shown.map(
+      (each, index) =>
+        html`<span class="choice">${same ? nothing : html`<span class="case">${this.cases[index]?.title}</span> `}<span class="written">${each.result ?? 'no value'}</span></span>`,
+    );
+  }
+
+  #result(step: Step, each: StepCase, index: number, editing: Editing | null) {
+    const typed = editing !== null && editing.at === index ? editing : null;
+    const title = this.cases[index]?.title ?? '';
+    return html`<div role="gridcell" class="result" data-column=${2 + index} data-case=${title} tabindex=${this.#tab(2 + index)}
+      aria-readonly=${step.kind === 'given' ? nothing : 'true'}>
+      <div class="value">${typed === null ? result(step, each) : editorField(this.desk, typed, step, this.cases)}</div>
+    </div>`;
+  }
+
+  #below(step: Step, remarks: readonly string[], editing: Editing | null) {
+    const problems = editing === null ? this.problems : [];
+    const texts = [
+      ...remarks.map((note) => html`<p class="remark">${note}</p>`),
+      ...(step.justification === undefined ? [] : [html`<p class="remark">Justification: ${step.justification}</p>`]),
+      ...problems.map((problem) => problemNote(problem, this.cases)),
+    ];
+    const offer =
+      editing === null && this.former !== ''
+        ? html`<p class="remark"><button type="button" class="word" @click=${() => this.desk.restoreProvenance(step.cell)}>keep the former source</button>
+            <span class="former">${this.former}</span></p>`
+        : nothing;
+    if (editing === null && texts.length === 0 && offer === nothing) return nothing;
+    return html`<div class="below">${editing === null ? nothing : editorNotes(this.desk, editing, step, this.cases)}${texts}${offer}</div>`;
+  }
+}
+
+export function problemNote(problem: CellProblem, cases: readonly RecordCase[]) {
+  const where = problem.case === undefined ? '' : cases.find((one) => one.id === problem.case)?.title;
+  return html`<p class="problem ${problem.severity}"><b>${problem.severity === 'error' ? 'Error' : 'Warning'}</b>${where ? `, ${where}` : ''}: ${problem.message}</p>`;
+}
+
+function result(step: Step, each: StepCase) {
+  if (each.result === null) return html`<span class="none">no value</span>`;
+  if (step.kind !== 'criterion')
+    return html`<span class=${step.kind === 'given' ? 'written' : ''}>${quantity(each.result)}</span>`;
+  if (each.met === null || each.met === undefined) return html`<span class="none">no verdict</span>`;
+  return html`<b class=${each.met ? 'met' : 'not-met'}>${each.met ? 'met' : 'not met'}</b> <span class="utilisation">${quantity(each.result)}</span>`;
+}
+
+const isStateWord = (text: string) => text === 'assumed' || text === 'measured';
+const isOpen = (note: string) => note.startsWith('carried over') || note.startsWith('to be confirmed') || note === 'no source';
+const isState = (note: string) => isStateWord(note) || isOpen(note);
