@@ -33,7 +33,7 @@ export interface Line {
 /** Undefined where the formula has no value in this case. */
 export function readLine(expr: Expr, lookup: Lookup, decimalSign: '.' | ','): Line | undefined {
   const explained = explain(expr, lookup);
-  if ('problem' in explained) return undefined;
+  if (!explained.ok) return undefined;
   const { taken } = explained;
   const true_: Numbers = (name) => lookup.value(name);
   const value = (node: Expr, numbers: Numbers) => evaluateWith(node, numbers, taken, decimalSign);
