@@ -89,16 +89,23 @@ export function analyse(node: Node, around: Surroundings): void {
     default:
       break;
   }
-  for (const used of node.uses) {
-    if (used.index > node.index && node.reading.formulas.length > 0 && used.cell.kind !== 'table') {
-      const number = around.numberOf(used.cell.id);
-      report({
+}
+
+/** Warnings of a cell that uses quantities above the lines that define them; asked for when somebody looks. */
+export function usedAbove(node: Node, numberOf: (cell: string) => string): CellProblem[] {
+  if (node.reading.formulas.length === 0) return [];
+  return node.uses
+    .filter((used) => used.index > node.index && used.cell.kind !== 'table')
+    .map((used) => {
+      const number = numberOf(used.cell.id);
+      const where = number === '' ? '' : ` (see ${number} below)`;
+      return {
         code: 'used-above',
         severity: 'warning',
-        message: `${used.name ?? ''} is used here above the line that defines it${number === '' ? '' : ` (see ${number} below)`}; move one of the two if the sheet should read downwards`,
-      });
-    }
-  }
+        message: `${used.name ?? ''} is used here above the line that defines it${where}; move one of the two if the sheet should read downwards`,
+        cell: node.cell.id,
+      };
+    });
 }
 
 type Report = (problem: Problem, field?: string, onlyCase?: string) => void;
@@ -309,24 +316,16 @@ function analyseCriterion(node: Node, around: Surroundings, report: Report): voi
   node.unit = node.reading.unit;
   if (left === undefined || right === undefined || node.cell.kind !== 'criterion') return;
   if (node.cell.unit !== undefined && node.reading.unit === undefined) return;
-  const inferred = inferComparison(left, right, scopeOf(around));
+  const inferred = inferComparison(left, right, scopeOf(around), node.reading.unit);
   node.inferred = inferred;
   node.words = inferred.words;
-  for (const [side, problems] of [['left', inferred.leftProblems], ['right', inferred.rightProblems]] as const) {
-    for (const problem of problems) report(problem, side);
-  }
+  for (const problem of inferred.leftProblems) report(problem, 'left');
+  for (const problem of inferred.rightProblems) report(problem, 'right');
   const waiting = firstBroken(node, [left, right], around);
   if (waiting) report(waitsFor(waiting, around));
   if (waiting || inferred.type === undefined || inferred.type.kind !== 'quantity') return;
-  if ([...inferred.leftProblems, ...inferred.rightProblems].some((problem) => problem.severity === 'error')) return;
+  if (inferred.problems.some((problem) => problem.severity === 'error')) return;
   node.type = inferred.type;
-  if (node.reading.unit !== undefined && !equalD(node.reading.unit.dimension, inferred.type.dimension)) {
-    report(
-      { code: 'unlike-unit', severity: 'error', message: `both sides are ${withArticle(coherentUnit(inferred.type.dimension))}, the unit to print in is ${withArticle(node.reading.unit)}` },
-      'unit',
-    );
-    return;
-  }
   node.unit = node.reading.unit ?? sideUnit([left, right], around) ?? unitOf(inferred.type);
   node.jumps = hasJump(left) || hasJump(right);
   node.broken = false;

@@ -19,7 +19,7 @@ import { buildGraph, type Graph } from './graph.ts';
 import { type Names, resolveNames, usedNodes } from './names.ts';
 import { computedFormulas, newNode, type Node, typeKey } from './node.ts';
 import { lineNumbers } from './numbering.ts';
-import { readCell } from './reading.ts';
+import { liveNames, readCell } from './reading.ts';
 import { snapshotOf } from './snapshot.ts';
 import type { CellProblem, CellState, QuantityState, TableState } from './state.ts';
 import { readTable } from './table.ts';
@@ -89,6 +89,7 @@ class Engine implements Calculation {
   constructor(sheet: Sheet) {
     this.sheet = { ...sheet, cells: [] };
     this.columns = new Columns(1);
+    this.lookups = [this.makeLookup(0)];
     this.update(sheet);
   }
 
@@ -113,9 +114,9 @@ class Engine implements Calculation {
       sameCases && sameSign && next.cells.length === previous.cells.length && next.cells.every((cell, index) => cell.id === this.nodes[index]?.cell.id);
     this.cases = cases;
     this.style = { decimalSign };
-    if (sameRows) this.moved.fill(0);
+    this.moved.fill(0);
     if (sameRows && this.updateNumbersOnly(next)) return this.changed();
-    this.updateShape(next, sameCases && sameSign);
+    this.updateShape(next, sameCases && sameSign, sameRows);
     return this.changed();
   }
 
@@ -134,13 +135,12 @@ class Engine implements Calculation {
     const keys: string[] = [];
     for (const node of touched) {
       const cell = next.cells[node.index]!;
-      const old = node.reading;
       keys.push(typeKey(node));
       node.cell = cell;
       node.reading = readCell(cell, this.style.decimalSign);
       node.snapshot = undefined;
       this.moved[node.index] = 1;
-      if (cell.kind === 'given' || old !== node.reading) analyse(node, this.around());
+      if (cell.kind === 'given') analyse(node, this.around());
     }
     if (touched.some((node, at) => typeKey(node) !== keys[at])) {
       for (const node of touched) this.pending.add(node);
@@ -156,70 +156,122 @@ class Engine implements Calculation {
 
   // ---- shape ----
 
-  private updateShape(next: Sheet, sameReading: boolean): void {
-    const previousNodes = this.byId;
-    const fresh = new Set<Node>();
-    const nodes: Node[] = [];
-    const byId = new Map<string, Node>();
-    for (const [index, cell] of next.cells.entries()) {
-      let node = previousNodes.get(cell.id);
-      if (node === undefined || byId.has(cell.id)) {
-        node = newNode(cell, readCell(cell, this.style.decimalSign), index);
-        fresh.add(node);
-      } else if (node.cell !== cell || !sameReading || this.pending.has(node)) {
-        node.cell = cell;
-        node.reading = readCell(cell, this.style.decimalSign);
-        fresh.add(node);
-      }
-      if (node.cell.kind === 'table' && fresh.has(node)) node.table = readTable(node.cell, this.style.decimalSign).data;
-      node.index = index;
-      nodes.push(node);
-      byId.set(cell.id, node);
-    }
+  private updateShape(next: Sheet, sameReading: boolean, sameRows: boolean): void {
+    const retyped = new Set(this.pending);
     this.pending.clear();
-    const removed = [...previousNodes.values()].filter((node) => byId.get(node.cell.id) !== node);
-    this.nodes = nodes;
-    this.byId = byId;
-    this.numbers = lineNumbers(next);
-    const numberOf = (cell: string) => this.numbers.get(cell) ?? '';
-    const resolved = resolveNames(nodes, numberOf);
-    const oldTwice = this.twice;
-    const oldLooped = this.looped;
-    this.names = resolved;
-    this.twice = resolved.twice;
-
-    const stale = new Set<Node>(fresh);
-    const uses: number[][] = [];
-    for (const node of nodes) {
-      const used = usedNodes(node, resolved);
-      if (!sameNodes(used, node.uses)) stale.add(node);
-      node.uses = used;
-      uses.push(used.map((other) => other.index));
+    const taken = this.takeCells(next, sameReading, retyped);
+    const stale = taken.fresh;
+    const renumbered = !sameRows || taken.headings;
+    if (renumbered) this.renumber(next, stale);
+    const names = !sameRows || taken.named ? this.resolve(stale) : new Set<string>();
+    this.relink(stale, names, sameRows);
+    if (!sameRows) {
+      this.stale = new Uint8Array(this.nodes.length);
+      this.moved = new Uint8Array(this.nodes.length);
+      this.ranNodes = new Int32Array(this.nodes.length);
     }
-    this.graph = buildGraph(uses);
-    this.looped = this.describeLoops();
-    for (const node of nodes) {
-      const id = node.cell.id;
-      if (oldTwice.has(id) !== this.twice.has(id) || oldLooped.has(id) !== this.looped.has(id)) stale.add(node);
-      if (misspelt(node, resolved)) stale.add(node);
-      if (node.placed.some((problem) => problem.code === 'used-above') || node.uses.some((used) => used.index > node.index)) stale.add(node);
-    }
-    this.stale = new Uint8Array(nodes.length);
-    this.moved = new Uint8Array(nodes.length);
-    this.ranNodes = new Int32Array(nodes.length);
-    if (!sameReading || this.columns.width !== this.cases.length) {
+    for (const node of taken.restyled) this.moved[node.index] = 1;
+    if (!sameReading || this.columns.wasteful) {
       this.columns = new Columns(this.cases.length);
-      for (const node of nodes) stale.add(node);
+      for (const node of this.nodes) stale.add(node);
+      this.lookups = this.cases.map((_, index) => this.makeLookup(index));
+      this.before = new Float64Array(2 * this.cases.length);
     }
-    for (const node of removed) this.columns.forget(node.cell.id);
-    this.lookups = this.cases.map((_, index) => this.makeLookup(index));
-    this.before = new Float64Array(2 * this.cases.length);
-    this.analyseStale(stale);
+    for (const node of taken.removed) this.columns.forget(node);
+    this.analyseStale(stale, retyped);
     this.columns.build();
     this.run();
   }
 
-  private analyseStale(stale: Set<Node>): void {
+  /** Matches nodes with the cells of the next sheet and reads what is new. */
+  private takeCells(next: Sheet, sameReading: boolean, retyped: ReadonlySet<Node>) {
+    const fresh = new Set<Node>(retyped);
+    const restyled: Node[] = [];
+    const nodes: Node[] = [];
+    const byId = new Map<string, Node>();
+    let named = false;
+    let headings = false;
+    for (const [index, cell] of next.cells.entries()) {
+      const old = this.byId.get(cell.id);
+      let node = old;
+      if (node === undefined || byId.has(cell.id) || node.cell.kind !== cell.kind) {
+        node = newNode(cell, readCell(cell, this.style.decimalSign), index);
+        fresh.add(node);
+        named = true;
+      } else if (node.cell !== cell || !sameReading) {
+        const alike = sameReading && cell.kind !== 'given' && sameMeaningBesidesNumbers(node.cell, cell);
+        const oldName = definedName(node);
+        if (cell.kind === 'heading') headings = true;
+        node.cell = cell;
+        node.reading = readCell(cell, this.style.decimalSign);
+        node.snapshot = undefined;
+        if (alike) restyled.push(node);
+        else fresh.add(node);
+        if (definedName(node) !== oldName) named = true;
+      }
+      if (cell.kind === 'table' && fresh.has(node)) node.table = readTable(cell, this.style.decimalSign).data;
+      node.index = index;
+      nodes.push(node);
+      byId.set(cell.id, node);
+    }
+    const removed = [...this.byId.values()].filter((node) => byId.get(node.cell.id) !== node);
+    this.nodes = nodes;
+    this.byId = byId;
+    return { fresh, restyled, removed, named, headings };
+  }
+
+  /** Lines got other numbers: sentences that name them are made anew. */
+  private renumber(next: Sheet, stale: Set<Node>): void {
+    const before = this.numbers;
+    this.numbers = lineNumbers(next);
+    if (sameNumbers(before, this.numbers)) return;
+    for (const node of this.nodes) {
+      node.snapshot = undefined;
+      if (node.failed.length > 0 || node.placed.some((problem) => namesLines.has(problem.code))) stale.add(node);
+    }
+  }
+
+  /** Names were given, taken or moved: returns those that another cell answers to now, and all of them where one was misspelt. */
+  private resolve(stale: Set<Node>): Set<string> {
+    const before = this.names;
+    const twiceBefore = this.twice;
+    const resolved = resolveNames(this.nodes, (cell) => this.numberOf(cell));
+    this.names = resolved;
+    this.twice = resolved.twice;
+    for (const node of this.nodes) {
+      if (twiceBefore.has(node.cell.id) !== this.twice.has(node.cell.id) || misspelt(node, resolved)) stale.add(node);
+    }
+    const changed = new Set<string>();
+    for (const [old, now] of [[before.quantities, resolved.quantities], [before.tables, resolved.tables]] as const) {
+      for (const [name, node] of now) if (old.get(name) !== node) changed.add(name);
+      for (const name of old.keys()) if (!now.has(name)) changed.add(name);
+    }
+    return changed;
+  }
+
+  /** Who uses whom, and in which order. */
+  private relink(stale: Set<Node>, names: ReadonlySet<string>, sameRows: boolean): void {
+    let linksMoved = !sameRows;
+    for (const node of this.nodes) {
+      if (!stale.has(node) && !(names.size > 0 && reachesFor(node, names))) continue;
+      const used = usedNodes(node, this.names);
+      if (sameNodes(used, node.uses)) continue;
+      node.uses = used;
+      stale.add(node);
+      linksMoved = true;
+    }
+    if (!linksMoved) return;
+    const before = this.looped;
+    this.graph = buildGraph(this.nodes.map((node) => node.uses.map((used) => used.index)));
+    this.looped = this.describeLoops();
+    if (before.size === 0 && this.looped.size === 0) return;
+    for (const node of this.nodes) {
+      if (before.get(node.cell.id)?.message !== this.looped.get(node.cell.id)?.message) stale.add(node);
+    }
+  }
+
+  /** `retyped`: analysed already by the step before, so that whoever uses them must follow in any case. */
+  private analyseStale(stale: Set<Node>, retyped: ReadonlySet<Node>): void {
     const around = this.around();
     const { order, userStart, userList } = this.graph;
     for (let place = 0; place < order.length; place += 1) {
@@ -233,7 +285,7 @@ class Engine implements Calculation {
       this.moved[node.index] = 1;
       this.columns.place(node, this.names);
       this.stale[place] = 1;
-      if (typeKey(node) === key && node.cell.kind !== 'table') continue;
+      if (typeKey(node) === key && node.cell.kind !== 'table' && !retyped.has(node)) continue;
       for (let edge = userStart[node.index]!; edge < userStart[node.index + 1]!; edge += 1) stale.add(this.nodes[userList[edge]!]!);
     }
   }
@@ -326,12 +378,15 @@ class Engine implements Calculation {
         if (formula === undefined) continue;
         const field = node.cell.kind === 'criterion' ? (side === 0 ? 'left' : 'right') : 'formula';
         const locate = (problem: Problem): CellProblem => ({ ...problem, cell: node.cell.id, case: this.cases[index]!.id, field });
-        const missing = node.uses.find((used) => formula.names.includes(used.name ?? '') && !this.hasValue(used, index));
         const result = explain(formula.expr, lookup);
         const value = result.ok ? result.value : Number.NaN;
-        if (!result.ok) failed[index] ??= locate(missing ? waitsFor(missing, this.around()) : result.problem);
+        if (!result.ok) {
+          const missing = node.uses.find((used) => formula.names.includes(used.name ?? '') && !this.hasValue(used, index));
+          const waits = missing !== undefined && (result.problem.code === 'no-value' || result.problem.code === 'no-text');
+          failed[index] ??= locate(waits ? waitsFor(missing, this.around()) : result.problem);
+        }
         this.columns.write(node, side, index, value);
-        for (const warning of result.warnings ?? []) {
+        for (const warning of result.warnings) {
           if (!warned.some((known) => known.message === warning.message && known.field === field)) warned.push({ ...warning, cell: node.cell.id, field });
         }
       }
@@ -373,7 +428,7 @@ class Engine implements Calculation {
   }
 
   private snapshot(node: Node): CellState {
-    node.snapshot ??= snapshotOf(node, this.columns);
+    node.snapshot ??= snapshotOf(node, this.columns, (cell) => this.numberOf(cell));
     return node.snapshot;
   }
 
@@ -431,6 +486,28 @@ class Engine implements Calculation {
   }
 }
 
+function definedName(node: Node): string | undefined {
+  return node.cell.kind === 'table' ? node.cell.name : node.reading.name;
+}
+
+function reachesFor(node: Node, names: ReadonlySet<string>): boolean {
+  const { formulas, mentions, choices } = node.reading;
+  return (
+    formulas.some((formula) => formula?.names.some((name) => names.has(name)) || formula?.tables.some((name) => names.has(name))) ||
+    mentions.some((live) => names.has(live.name)) ||
+    (choices !== undefined && names.has(choices.table))
+  );
+}
+
+/** Problems whose sentence names the number of another line. */
+const namesLines: ReadonlySet<string> = new Set(['waits-for', 'name-twice', 'loop']);
+
+function sameNumbers(a: ReadonlyMap<string, string>, b: ReadonlyMap<string, string>): boolean {
+  if (a.size !== b.size) return false;
+  for (const [cell, number] of b) if (a.get(cell) !== number) return false;
+  return true;
+}
+
 function sameNodes(a: readonly Node[], b: readonly Node[]): boolean {
   return a.length === b.length && a.every((node, index) => node === b[index]);
 }
@@ -455,6 +532,12 @@ function sameMeaningBesidesNumbers(a: Node['cell'], b: Node['cell']): boolean {
   if (a.kind === 'derived' && b.kind === 'derived') return a.name === b.name && a.unit === b.unit && a.formula === b.formula;
   if (a.kind === 'criterion' && b.kind === 'criterion') {
     return a.left === b.left && a.relation === b.relation && a.right === b.right && a.unit === b.unit;
+  }
+  if (a.kind === 'heading' && b.kind === 'heading') return (a.level ?? 1) === (b.level ?? 1);
+  if (a.kind === 'note' && b.kind === 'note') {
+    const before = liveNames(a);
+    const after = liveNames(b);
+    return before.length === after.length && before.every((live, index) => live.text === after[index]!.text);
   }
   return a.kind === 'figure' && b.kind === 'figure';
 }

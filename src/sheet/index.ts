@@ -1,3 +1,4 @@
+export { type Calculation, type Changed, calculate } from './calculation.ts';
 export * from './criterion.ts';
 export * from './document.ts';
 export * from './numbering.ts';
@@ -9,3 +10,5 @@ export { buildGraph, type Graph } from './graph.ts';
 export * from './history.ts';
 export { badCharacters } from './json-text.ts';
 export { nameFault } from './rename.ts';
+export type { WhatIf, WhatIfRequest } from './whatif.ts';
+export * from './template.ts';

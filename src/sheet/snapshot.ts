@@ -3,18 +3,20 @@
 // Problems stand in the order: of the cell by itself, of its place among others, of calculation, warnings of calculation.
 // Not here: how they came about (reading.ts, analyse.ts, calculation.ts).
 
+import { usedAbove } from './analyse.ts';
 import type { Columns } from './columns.ts';
 import { judge } from './criterion.ts';
 import type { Node } from './node.ts';
 import type { CellProblem, CellState } from './state.ts';
 import { readTable } from './table.ts';
 
-export function snapshotOf(node: Node, columns: Columns): CellState {
+export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string) => string): CellState {
   const { cell, index, reading } = node;
   const own = cell.kind === 'table' ? readTable(cell, reading.decimalSign).problems : reading.problems;
   const problems: CellProblem[] = [
     ...own.map((problem) => ({ ...problem, cell: cell.id })),
     ...node.placed,
+    ...usedAbove(node, numberOf),
     ...node.failed.filter((problem) => problem !== undefined),
     ...node.warned,
   ];

@@ -29,13 +29,13 @@ describe('values', () => {
 });
 
 describe('what is calculated again', () => {
-  const chain = () => calculate(sheetOf(['a = 1 m', 'b = 2 m', 'c := 2*a', 'd := 2*b', 'e := c + d', 'e <= c', 'a note']));
+  const chain = () => calculate(sheetOf(['a = 1 m', 'b = 2 m', 'c := 2*a', 'd := 2*b', 'w := c + d', 'w <= c', 'a note']));
 
   it('is only what depends on the change, each cell once, in order', () => {
     const calculation = chain();
     calculation.update(withLine(calculation.sheet, 'a', 'a = 3 m'));
-    expect(calculation.ran).toEqual(['a', 'c', 'e', 'k5']);
-    expect(si(calculation, 'e')).toEqual([10]);
+    expect(calculation.ran).toEqual(['a', 'c', 'w', 'k5']);
+    expect(si(calculation, 'w')).toEqual([10]);
   });
 
   it('stops where a result comes out the same', () => {
@@ -54,14 +54,14 @@ describe('what is calculated again', () => {
   it('is the cell itself and what follows when a formula changes', () => {
     const calculation = chain();
     calculation.update(withLine(calculation.sheet, 'c', 'c := 3*a'));
-    expect(calculation.ran).toEqual(['c', 'e', 'k5']);
-    expect(si(calculation, 'e')).toEqual([7]);
+    expect(calculation.ran).toEqual(['c', 'w', 'k5']);
+    expect(si(calculation, 'w')).toEqual([7]);
   });
 
   it('tells which cells moved', () => {
     const calculation = chain();
     const changed = calculation.update(withLine(calculation.sheet, 'b', 'b = 5 m'));
-    expect([...changed]).toEqual(['b', 'd', 'e', 'k5']);
+    expect([...changed]).toEqual(['b', 'd', 'w', 'k5']);
     expect(changed.has('c')).toBe(false);
     expect(changed.size).toBe(4);
   });
@@ -147,5 +147,5 @@ describe('size', () => {
     const lines = Array.from({ length: 50_000 }, (_, i) => (i === 49_999 ? 'q_49999 = 1 m' : `q_${i} := q_${i + 1} + "1 m"`));
     const calculation = calculate(sheetOf(lines));
     expect(si(calculation, 'q_0')).toEqual([50_000]);
-  });
+  }, 60_000);
 });

@@ -1,0 +1,172 @@
+// What if a given were another: samples of some givens, what follows from them, the sheet itself untouched.
+//
+// 1. Only cells between what is varied and what is wanted are computed; all other numbers are those of the sheet's case.
+// 2. The program is compiled once; `run` computes in blocks that stay in the processor's cache and allocates nothing after its
+//    first call for a count.
+// 3. A sample in which a cell has no value gives NaN, also where the trouble would vanish on the way (1/(a/0) is no 0).
+// Not here: choosing samples, statistics (src/study).
+
+import { compileFormulas, explain, type Formula, inOrder, type Lookup, makeMemory, markTrouble, run } from '../formula/index.ts';
+import type { Columns } from './columns.ts';
+import type { LoadCase } from './document.ts';
+import type { Graph } from './graph.ts';
+import type { Names } from './names.ts';
+import { computedFormulas, type Node } from './node.ts';
+
+export interface WhatIfRequest {
+  /** Names of the quantities to vary: givens, or derived quantities taken as given. */
+  readonly vary: readonly string[];
+  /** Names of quantities; 'ID left' and 'ID right' for the sides of the criterion with that cell id. */
+  readonly want: readonly string[];
+  readonly caseIndex: number;
+}
+
+export interface WhatIf {
+  /** Cells that each run computes, in order. */
+  readonly computes: readonly string[];
+  /**
+   * `samples[i]` holds at least `count` values of `vary[i]` in coherent SI. Returns one column a wanted quantity, coherent SI,
+   * NaN where a sample has no value; the columns are used again by the next run.
+   */
+  run(samples: readonly Float64Array[], count: number): readonly Float64Array[];
+}
+
+export interface Surface {
+  readonly nodes: readonly Node[];
+  readonly names: Names;
+  readonly graph: Graph;
+  readonly columns: Columns;
+  readonly byId: ReadonlyMap<string, Node>;
+  readonly cases: readonly LoadCase[];
+  lookup(caseIndex: number): Lookup;
+}
+
+const block = 256;
+
+interface Step {
+  readonly key: string;
+  readonly formula: Formula;
+  readonly node: Node;
+}
+
+export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
+  const varied = new Set(request.vary.map((name) => known(sheet, name)));
+  const wanted = request.want.map((want) => wantedOf(sheet, want));
+  const steps = stepsBetween(varied, wanted.map((want) => want.node), sheet);
+  const isStep = new Set(steps.map((step) => step.node));
+  const inputs = request.vary.map((name) => known(sheet, name).name!);
+  const constants = new Set<string>();
+  for (const step of steps) {
+    for (const name of step.formula.names) {
+      const node = sheet.names.quantities.get(name);
+      if (node !== undefined && !varied.has(node) && !isStep.has(node)) constants.add(name);
+    }
+  }
+  for (const want of wanted) if (!varied.has(want.node) && !isStep.has(want.node) && want.side === undefined) constants.add(want.key);
+  const names = {
+    isText: (name: string) => sheet.names.quantities.get(name)?.texts !== undefined,
+    table: (name: string) => sheet.names.tables.get(name)?.table,
+    ...(sheet.nodes[0] === undefined ? {} : { decimalSign: sheet.nodes[0].reading.decimalSign }),
+  };
+  const compiled = compileFormulas(
+    steps.map((step) => ({ key: step.key, expr: step.formula.expr })),
+    [...inputs, ...constants],
+    names,
+  );
+  const { program, ranges } = compiled;
+  const memory = makeMemory(program, block);
+  for (const name of constants) {
+    const node = sheet.names.quantities.get(name)!;
+    const text = node.texts?.[request.caseIndex];
+    const value = node.texts === undefined ? sheet.columns.read(node, 0, request.caseIndex) : text === undefined ? Number.NaN : compiled.textNumber(text);
+    const slot = compiled.slot(name);
+    memory.fill(value, slot * block, (slot + 1) * block);
+  }
+  const inputSlots = inputs.map((name) => compiled.slot(name));
+  const outputSlots = wanted.map((want) => compiled.slot(want.key));
+  const flags = new Uint8Array(block);
+  let outputs: Float64Array[] = [];
+  let capacity = 0;
+
+  /** Entries of a cell that are not in order: told apart one by one, since an untaken branch may be out of order. */
+  const settle = (step: Step, slot: number, count: number): void => {
+    flags.fill(0, 0, count);
+    markTrouble(program, memory, block, count, ranges[steps.indexOf(step)]!, flags);
+    const base = sheet.lookup(request.caseIndex);
+    for (let entry = 0; entry < count; entry += 1) {
+      if (flags[entry] === 0) continue;
+      const result = explain(step.formula.expr, {
+        ...base,
+        value: (name) => memory[compiled.slot(name) * block + entry]!,
+      });
+      memory[slot * block + entry] = result.ok ? result.value : Number.NaN;
+    }
+  };
+
+  return {
+    computes: [...new Set(steps.map((step) => step.node.cell.id))],
+    run(samples, count) {
+      if (count > capacity) {
+        outputs = wanted.map(() => new Float64Array(count));
+        capacity = count;
+      }
+      for (let start = 0; start < count; start += block) {
+        const size = Math.min(block, count - start);
+        for (let input = 0; input < inputSlots.length; input += 1) {
+          memory.set(samples[input]!.subarray(start, start + size), inputSlots[input]! * block);
+        }
+        for (let at = 0; at < steps.length; at += 1) {
+          const range = ranges[at]!;
+          run(program, memory, block, size, range.start, range.end);
+          if (!inOrder(program, memory, block, size, range)) settle(steps[at]!, range.dest, size);
+        }
+        for (let output = 0; output < outputSlots.length; output += 1) {
+          const from = outputSlots[output]! * block;
+          outputs[output]!.set(memory.subarray(from, from + size), start);
+        }
+      }
+      return count === capacity ? outputs : outputs.map((column) => column.subarray(0, count));
+    },
+  };
+}
+
+function known(sheet: Surface, name: string): Node {
+  const node = sheet.names.quantities.get(name);
+  if (node === undefined) throw new Error(`no quantity ${name} to vary or to show`);
+  return node;
+}
+
+function wantedOf(sheet: Surface, want: string): { node: Node; key: string; side?: number } {
+  const side = /^(.*) (left|right)$/u.exec(want);
+  const node = side ? sheet.byId.get(side[1]!) : undefined;
+  if (node !== undefined && side) return { node, key: want, side: side[2] === 'left' ? 0 : 1 };
+  return { node: known(sheet, want), key: known(sheet, want).name! };
+}
+
+/** The formulas to compute, in order: downstream of what is varied, upstream of what is wanted, varied cells left out. */
+function stepsBetween(varied: ReadonlySet<Node>, wanted: readonly Node[], sheet: Surface): Step[] {
+  const upstream = new Set<Node>();
+  const queue = [...wanted];
+  while (queue.length > 0) {
+    const node = queue.pop()!;
+    if (upstream.has(node) || varied.has(node)) continue;
+    upstream.add(node);
+    queue.push(...node.uses);
+  }
+  const moving = new Set<Node>(varied);
+  const steps: Step[] = [];
+  for (const index of sheet.graph.order) {
+    const node = sheet.nodes[index]!;
+    if (!upstream.has(node) || !node.uses.some((used) => moving.has(used))) {
+      // The sides of a criterion that does not move are wanted all the same.
+      if (!(node.cell.kind === 'criterion' && wanted.includes(node))) continue;
+    }
+    moving.add(node);
+    for (const [side, formula] of computedFormulas(node).entries()) {
+      if (formula === undefined || node.broken) continue;
+      const key = node.cell.kind === 'criterion' ? `${node.cell.id} ${side === 0 ? 'left' : 'right'}` : node.name!;
+      steps.push({ key, formula, node });
+    }
+  }
+  return steps;
+}
