@@ -28,7 +28,7 @@ export function besideValue(input: Typed, i: number, wantsValue: boolean): Probl
       const joined = inQuotes(input, before.text, token.text.trim());
       return refusal(
         'number-outside-quotes',
-        `“${excerpt(typed)}”: the number of a quoted quantity stands inside the quotation marks; write ${joined}.`,
+        `“${excerpt(typed)}”: the number of a quoted quantity stands inside the quotation marks; write ${excerpt(joined)}.`,
         both,
         [writeInstead(both, joined)],
       );

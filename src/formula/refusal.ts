@@ -20,7 +20,11 @@ export function inQuotes(input: Typed, number: string, unit: string): string {
   return `"${input.decimalSign === ',' ? number.replace('.', ',') : number} ${unit}"`;
 }
 
-export function refusal(code: string, message: string, at: Span, fixes: readonly Fix[] = []): Problem {
+export function refusal(code: string, sentence: string, at: Span, fixes: readonly Fix[] = []): Problem {
+  // Neither a line break nor a word of hundreds of letters in the typed text may break the sentence.
+  const message = sentence
+    .replace(/\s+/g, ' ')
+    .replace(/\S{60,}/g, (word) => `${excerpt(word, 40)}${word.endsWith('.') ? '.' : ''}`);
   return fixes.length === 0 ? { code, severity: 'error', message, at } : { code, severity: 'error', message, at, fixes };
 }
 

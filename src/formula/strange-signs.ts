@@ -78,7 +78,7 @@ export function strangeSign(input: Typed, i: number): Problem {
     case '∞':
       return refusal('not-in-formulas', '“∞” is not part of formulas: write the formula of the limit case.', at);
     case '.':
-      if (before && after && before.to === token.from && token.to === after.from) {
+      if (before?.kind === 'name' && after?.kind === 'name' && before.to === token.from && token.to === after.from) {
         const both: Place = [before.from, after.to];
         const instead = `${source.slice(before.from, before.to)}_${source.slice(after.from, after.to)}`;
         return refusal(
