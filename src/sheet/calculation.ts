@@ -10,7 +10,7 @@
 // order anew and analyse what that touches; compile what was analysed; run what is stale. A change of numbers alone skips
 // to the last step. Not here: single cells (reading.ts, analyse.ts), columns (columns.ts), snapshots (snapshot.ts).
 
-import { explain, type Lookup } from '../formula/index.ts';
+import { explain, type Lookup, run } from '../formula/index.ts';
 import type { Problem } from '../quantity/index.ts';
 import { analyse, type Surroundings, waitsFor } from './analyse.ts';
 import { Columns } from './columns.ts';
@@ -19,6 +19,7 @@ import { buildGraph, type Graph } from './graph.ts';
 import { type Names, resolveNames, usedNodes } from './names.ts';
 import { computedFormulas, newNode, type Node, typeKey } from './node.ts';
 import { lineNumbers } from './numbering.ts';
+import { makePlan, mode, type Plan } from './plan.ts';
 import { liveNames, readCell } from './reading.ts';
 import { snapshotOf } from './snapshot.ts';
 import type { CellProblem, CellState, QuantityState, TableState } from './state.ts';
@@ -56,6 +57,9 @@ export interface Calculation {
   whatIf(request: WhatIfRequest): WhatIf;
 }
 
+/** Most cells run as one stretch. */
+const stretch = 256;
+
 const defaultCases: readonly LoadCase[] = [{ id: 'base' }];
 
 /** Reads and calculates a sheet. Never throws for what a sheet says. */
@@ -84,7 +88,9 @@ class Engine implements Calculation {
   private ranNodes = new Int32Array(0);
   private ranCount = 0;
   private moved = new Uint8Array(0);
-  private before = new Float64Array(2);
+  private before = new Float64Array(stretch);
+  private outdated = new Uint8Array(0);
+  private plan: Plan = makePlan([], buildGraph([]), new Columns(1));
 
   constructor(sheet: Sheet) {
     this.sheet = { ...sheet, cells: [] };
@@ -169,17 +175,19 @@ class Engine implements Calculation {
       this.stale = new Uint8Array(this.nodes.length);
       this.moved = new Uint8Array(this.nodes.length);
       this.ranNodes = new Int32Array(this.nodes.length);
+      this.outdated = new Uint8Array(this.nodes.length);
     }
     for (const node of taken.restyled) this.moved[node.index] = 1;
     if (!sameReading || this.columns.wasteful) {
       this.columns = new Columns(this.cases.length);
       for (const node of this.nodes) stale.add(node);
       this.lookups = this.cases.map((_, index) => this.makeLookup(index));
-      this.before = new Float64Array(2 * this.cases.length);
+      this.before = new Float64Array(stretch * this.cases.length);
     }
     for (const node of taken.removed) this.columns.forget(node);
     this.analyseStale(stale, retyped);
     this.columns.build();
+    this.plan = makePlan(this.nodes, this.graph, this.columns);
     this.run();
   }
 
@@ -326,31 +334,96 @@ class Engine implements Calculation {
 
   /** Runs the stale nodes in order, and whoever uses a number that moved. */
   private run(): void {
-    const { order, place, userStart, userList } = this.graph;
-    const { columns, before, stale } = this;
-    const width = this.cases.length;
-    for (let at = 0; at < order.length; at += 1) {
+    const { order } = this.graph;
+    const { plan, stale } = this;
+    const places = order.length;
+    for (let at = 0; at < places; at += 1) {
       if (stale[at] === 0) continue;
-      stale[at] = 0;
-      const index = order[at]!;
-      const node = this.nodes[index]!;
-      const slots = columns.slotsOf(node);
-      const first = columns.slotOf(node);
-      for (let entry = 0; entry < slots * width; entry += 1) before[entry] = columns.memory[first * width + entry]!;
-      this.compute(node);
-      this.ranNodes[this.ranCount] = index;
-      this.ranCount += 1;
-      let same = true;
-      for (let entry = 0; entry < slots * width; entry += 1) {
-        const was = before[entry]!;
-        const is = columns.memory[first * width + entry]!;
-        if (was !== is && !(Number.isNaN(was) && Number.isNaN(is))) same = false;
+      if (plan.mode[at] === mode.formula) {
+        at = this.runStretch(at);
+        continue;
       }
-      if (same) continue;
-      this.moved[index] = 1;
-      node.snapshot = undefined;
-      for (let edge = userStart[index]!; edge < userStart[index + 1]!; edge += 1) stale[place[userList[edge]!]!] = 1;
+      stale[at] = 0;
+      if (plan.mode[at] === mode.careful) this.runCarefully(at);
     }
+  }
+
+  /** Runs stale formulas from place `at` on, as many as stand side by side in the code; returns the last place run. */
+  private runStretch(at: number): number {
+    const { plan, stale, columns, before } = this;
+    const width = columns.width;
+    const { memory, program } = columns;
+    let last = at;
+    if (plan.watched[at] === 0) {
+      const most = Math.min(stale.length, at + stretch);
+      while (last + 1 < most && stale[last + 1] === 1 && plan.mode[last + 1] === mode.formula && plan.watched[last + 1] === 0 && plan.start[last + 1] === plan.end[last]) {
+        last += 1;
+      }
+    }
+    for (let place = at; place <= last; place += 1) {
+      const from = plan.slot[place]! * width;
+      const keep = (place - at) * width;
+      for (let entry = 0; entry < width; entry += 1) before[keep + entry] = memory[from + entry]!;
+    }
+    run(program, memory, width, width, plan.start[at], plan.end[last]);
+    let trouble = 0;
+    for (let k = 0; k < plan.watched[at]! * width; k += 1) trouble += memory[program.watchBase * width + k]! * 0;
+    for (let place = at; place <= last; place += 1) {
+      stale[place] = 0;
+      const from = plan.slot[place]! * width;
+      const keep = (place - at) * width;
+      let moved = false;
+      for (let entry = 0; entry < width; entry += 1) {
+        const is = memory[from + entry]!;
+        trouble += is * 0;
+        if (is !== before[keep + entry]) moved = true;
+      }
+      if (trouble !== 0) {
+        // Back to what stood there, so that the careful way sees what moved; the rest of the stretch runs again after it.
+        for (let later = place; later <= last; later += 1) {
+          stale[later] = 1;
+          const slot = plan.slot[later]! * width;
+          for (let entry = 0; entry < width; entry += 1) memory[slot + entry] = before[(later - at) * width + entry]!;
+        }
+        stale[place] = 0;
+        this.runCarefully(place);
+        return place;
+      }
+      this.ranNodes[this.ranCount] = this.graph.order[place]!;
+      this.ranCount += 1;
+      if (moved) this.spread(place);
+    }
+    return last;
+  }
+
+  private runCarefully(at: number): void {
+    const { columns, before } = this;
+    const index = this.graph.order[at]!;
+    const node = this.nodes[index]!;
+    const entries = columns.slotsOf(node) * columns.width;
+    const first = this.plan.slot[at]! * columns.width;
+    for (let entry = 0; entry < entries; entry += 1) before[entry] = columns.memory[first + entry]!;
+    this.compute(node);
+    if (node.failed.length > 0) this.plan.mode[at] = mode.careful;
+    this.ranNodes[this.ranCount] = index;
+    this.ranCount += 1;
+    for (let entry = 0; entry < entries; entry += 1) {
+      const was = before[entry]!;
+      const is = columns.memory[first + entry]!;
+      if (was !== is && !(Number.isNaN(was) && Number.isNaN(is))) {
+        this.spread(at);
+        return;
+      }
+    }
+  }
+
+  /** The number at a place moved: its state is out of date, and whoever uses it is stale. */
+  private spread(at: number): void {
+    const { order, place, userStart, userList } = this.graph;
+    const index = order[at]!;
+    this.moved[index] = 1;
+    this.outdated[index] = 1;
+    for (let edge = userStart[index]!; edge < userStart[index + 1]!; edge += 1) this.stale[place[userList[edge]!]!] = 1;
   }
 
   private compute(node: Node): void {
@@ -428,6 +501,10 @@ class Engine implements Calculation {
   }
 
   private snapshot(node: Node): CellState {
+    if (this.outdated[node.index] === 1) {
+      node.snapshot = undefined;
+      this.outdated[node.index] = 0;
+    }
     node.snapshot ??= snapshotOf(node, this.columns, (cell) => this.numberOf(cell));
     return node.snapshot;
   }

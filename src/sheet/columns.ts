@@ -16,7 +16,7 @@ export class Columns {
   readonly width: number;
   memory: Float64Array = new Float64Array(0);
   private builder = new ProgramBuilder();
-  private program: Program = empty;
+  program: Program = empty;
   private ranges = new Map<Node, readonly Range[]>();
   private slots = new Map<Node, number>();
   private filled = 0;
@@ -60,6 +60,11 @@ export class Columns {
         }),
       ),
     );
+  }
+
+  /** Ranges of code of the node's formulas; none while it is broken. */
+  rangesOf(node: Node): readonly Range[] | undefined {
+    return this.ranges.get(node);
   }
 
   forget(node: Node): void {
