@@ -8,7 +8,15 @@ import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js';
 import serialize from 'canonicalize';
 
 export function digest(value: unknown): string {
+  return digestOfText(canonicalJson(value));
+}
+
+export function canonicalJson(value: unknown): string {
   const text = serialize(value);
   if (text === undefined) throw new TypeError('nothing that JSON can hold');
+  return text;
+}
+
+export function digestOfText(text: string): string {
   return bytesToHex(sha256(utf8ToBytes(text)));
 }

@@ -11,7 +11,7 @@
 
 import { canonicalName, tokenize } from '../formula/index.ts';
 import { badCharacters, buildGraph, type Calculation, type Cell, type Reference } from '../sheet/index.ts';
-import { digest } from './digest.ts';
+import { canonicalJson, digestOfText } from './digest.ts';
 
 /** The version of the rules of reading and computing. */
 export const rules = 'tightside-rules/1';
@@ -27,16 +27,29 @@ export function fingerprints(calculation: Calculation): Fingerprints {
   const { sheet } = calculation;
   const meanings = allMeanings(calculation);
   const references = new Map((sheet.references ?? []).map((reference) => [reference.id, reference]));
-  const covers = sheet.cells.map((cell, i) => digest(clean({ meaning: meanings[i], ...wording(cell), cites: cited(cell, references) })));
+  const covers = sheet.cells.map((cell, i) => coverOf(cell, meanings[i]!, references));
   const index = new Map(sheet.cells.map((cell, i) => [cell.id, i]));
   return {
-    sheet: digest(clean({ format: sheet.format, title: sheet.title, settings: sheet.settings, cells: covers })),
+    sheet: asWritten({ format: sheet.format, title: sheet.title, settings: sheet.settings, cells: covers }),
     meaning: (cell) => meanings[index.get(cell) ?? -1],
     cover: (cell) => covers[index.get(cell) ?? -1],
   };
 }
 
 const self = 'self';
+
+/** What was digested of a cell object last, and from what beside it: after an edit only what it moved is digested anew. */
+const keptMeanings = new WeakMap<Cell, { readonly from: string; readonly value: string }>();
+const keptCovers = new WeakMap<Cell, { readonly from: string; readonly cites: readonly Reference[]; readonly value: string }>();
+
+function coverOf(cell: Cell, meaning: string, references: ReadonlyMap<string, Reference>): string {
+  const cites = cited(cell, references);
+  const kept = keptCovers.get(cell);
+  if (kept?.from === meaning && kept.cites.length === cites.length && cites.every((reference, i) => reference === kept.cites[i])) return kept.value;
+  const value = asWritten({ meaning, ...wording(cell), cites });
+  keptCovers.set(cell, { from: meaning, cites, value });
+  return value;
+}
 
 function allMeanings(calculation: Calculation): string[] {
   const { cells } = calculation.sheet;
@@ -49,8 +62,16 @@ function allMeanings(calculation: Calculation): string[] {
     decimalSign: calculation.style.decimalSign,
     cases: calculation.cases.map(({ id }) => id),
   };
-  const meaningOf = (node: number, of: (used: number) => string): string =>
-    digest(clean({ ...common, cell: computing(cells[node]!), uses: named(cells, node, uses[node]!, of) }));
+  const context = JSON.stringify(common);
+  const meaningOf = (node: number, of: (used: number) => string): string => {
+    const cell = cells[node]!;
+    const origin = `${context} ${uses[node]!.map((used) => `${of(used)} ${cells[used]!.kind}`).join(' ')}`;
+    const kept = keptMeanings.get(cell);
+    if (kept?.from === origin) return kept.value;
+    const value = asWritten({ ...common, cell: computing(cell), uses: named(cells, node, uses[node]!, of) });
+    keptMeanings.set(cell, { from: origin, value });
+    return value;
+  };
   const made = (used: number): string => meanings[used]!;
 
   const members = new Map<number, number[]>();
@@ -201,12 +222,24 @@ function cited(cell: Cell, references: ReadonlyMap<string, Reference>): readonly
   return [...ids].flatMap((id) => references.get(id) ?? []);
 }
 
-/** Keys without a value left out; characters that a file cannot hold as they are written to it. */
+/**
+ * The digest of a part of the sheet as it stands in the file: half a surrogate pair and control characters, which are written
+ * as U+FFFD, count as that, so that a sheet has one fingerprint before it is written and after it is read.
+ */
+function asWritten(value: unknown): string {
+  let text: string | undefined;
+  try {
+    text = canonicalJson(value);
+  } catch {
+    text = undefined;
+  }
+  // Control characters show as escapes; those of a tab and of the ends of lines are others.
+  return digestOfText(text === undefined || /\\[ubf]/.test(text) ? canonicalJson(clean(value)) : text);
+}
+
 function clean(value: unknown): unknown {
   if (typeof value === 'string') return value.replace(badCharacters, '\uFFFD');
   if (Array.isArray(value)) return value.map(clean);
   if (typeof value !== 'object' || value === null) return value;
-  return Object.fromEntries(
-    Object.entries(value).flatMap(([key, entry]) => (entry === undefined ? [] : [[key.replace(badCharacters, '\uFFFD'), clean(entry)]])),
-  );
+  return Object.fromEntries(Object.entries(value).map(([key, entry]) => [key.replace(badCharacters, '\uFFFD'), clean(entry)]));
 }
