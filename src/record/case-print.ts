@@ -173,8 +173,8 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
       const slot = slotOf(own.alone.name);
       if (slot !== undefined && (!declared || slot.number.unit.text === unit.text)) return slot;
     }
-    if (own.alone?.kind === 'quoted' && (!declared || own.alone.value.unit.text === unit.text)) {
-      return { number: typedNumber(own.alone.value.numeral, own.alone.value.unit), item: -1 };
+    if (own.alone?.kind === 'number' && (!declared || own.alone.unit.text === unit.text)) {
+      return { number: typedNumber(own.alone.numeral, own.alone.unit), item: -1 };
     }
     if (formula.expr.kind === 'number' && si === 0) return { number: computedNumber(0, unit), item: -1 };
     return newSlot(computedNumber(si, unit));

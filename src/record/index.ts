@@ -4,6 +4,7 @@ export type { OpenReason } from './closing.ts';
 export { criteriaWords, footerCaution, recordHtml } from './html.ts';
 export type { Face, RecordAssets } from './html-style.ts';
 export { type JsonRecord, type JsonStep, type JsonStepCase, recordJson } from './json.ts';
+export { loadRecordAssets } from './load-assets.ts';
 export { makeRecord } from './make.ts';
 export type {
   Assumption,

@@ -5,8 +5,8 @@
 // 3. "In an exponent" is everywhere right of ^ and within exp( ).
 // Not here: what a printed number is (numerals.ts), how the line looks and what it comes to (src/formula).
 
-import { type Expr, evaluateWith, explain, type Lookup, readLiteral, type Taken } from '../formula/index.ts';
-import type { Value } from '../quantity/index.ts';
+import { type Expr, evaluateWith, explain, type Lookup, nothingTaken, readLiteral, type Taken } from '../formula/index.ts';
+import { type Numeral, numeralInUnit, type Unit } from '../quantity/index.ts';
 
 /** Coherent SI of a quantity as it stands at this place of a line. */
 export type Numbers = (name: string, inExponent: boolean) => number;
@@ -21,10 +21,10 @@ export interface Line {
   /** What the line prints; what its decisions look at. */
   readonly operands: readonly Operand[];
   readonly decisive: readonly Operand[];
-  /** The outermost operation is floor, ceil or round. */
+  /** The result is a whole number: the outermost operation is floor, ceil or round. */
   readonly whole: boolean;
-  /** The whole formula is one name or one quoted quantity. */
-  readonly alone?: { readonly kind: 'name'; readonly name: string } | { readonly kind: 'quoted'; readonly value: Value };
+  /** The whole formula is one name, or one number that stands as it is: a quoted quantity, an entry of a table. */
+  readonly alone?: { readonly kind: 'name'; readonly name: string } | { readonly kind: 'number'; readonly numeral: Numeral; readonly unit: Unit };
   value(numbers: Numbers): number;
   /** True where these numbers decide as the true values do. */
   sameWay(numbers: Numbers): boolean;
@@ -32,6 +32,8 @@ export interface Line {
 
 /** Undefined where the formula has no value in this case. */
 export function readLine(expr: Expr, lookup: Lookup, decimalSign: '.' | ','): Line | undefined {
+  const form = formOf(expr);
+  if (form.straight) return straightLine(expr, form.operands, decimalSign);
   const explained = explain(expr, lookup);
   if (!explained.ok) return undefined;
   const { taken } = explained;
@@ -48,16 +50,54 @@ export function readLine(expr: Expr, lookup: Lookup, decimalSign: '.' | ','): Li
   const decisive = noted((numbers) => {
     for (const decision of decisions) decision.outcome(numbers);
   }, true_);
-  const alone = aloneIn(expr, decimalSign);
   return {
     taken,
     operands,
     decisive,
     whole: isWhole(expr, taken),
-    ...(alone === undefined ? {} : { alone }),
+    ...aloneIn(expr, taken, decimalSign),
     value: (numbers) => value(expr, numbers),
     sameWay: (numbers) => decisions.every((decision) => Object.is(decision.outcome(numbers), decision.true_)),
   };
+}
+
+/** A formula without choices, tables and jumps: nothing of its line depends on the case. */
+function straightLine(expr: Expr, operands: readonly Operand[], decimalSign: '.' | ','): Line {
+  return {
+    taken: nothingTaken,
+    operands,
+    decisive: [],
+    whole: false,
+    ...aloneIn(expr, nothingTaken, decimalSign),
+    value: (numbers) => evaluateWith(expr, numbers, nothingTaken, decimalSign),
+    sameWay: () => true,
+  };
+}
+
+interface Form {
+  readonly straight: boolean;
+  readonly operands: readonly Operand[];
+}
+
+const forms = new WeakMap<Expr, Form>();
+
+function formOf(expr: Expr): Form {
+  const known = forms.get(expr);
+  if (known) return known;
+  let straight = true;
+  const visit = (node: Expr): void => {
+    if (node.kind === 'choose' || node.kind === 'table' || (node.kind === 'call' && jumps.has(node.name))) straight = false;
+    if (node.kind === 'parens' || node.kind === 'minus') visit(node.inner);
+    else if (node.kind === 'binary') {
+      visit(node.left);
+      visit(node.right);
+    } else if (node.kind === 'call') node.args.forEach(visit);
+  };
+  visit(expr);
+  const operands = straight ? noted((numbers) => evaluateWith(expr, numbers, nothingTaken), () => 1) : [];
+  const form = { straight, operands };
+  forms.set(expr, form);
+  return form;
 }
 
 /** What is asked for while the numbers are used, each place once. */
@@ -143,16 +183,25 @@ function compare(operator: string, a: number, b: number): boolean {
   return operator === '==' ? a === b : a !== b;
 }
 
+/** Floor, ceil, round, or a whole number as typed that a choice gives. */
 function isWhole(expr: Expr, taken: Taken): boolean {
   if (expr.kind === 'parens') return isWhole(expr.inner, taken);
-  if (expr.kind === 'choose') return isWhole(taken.branch(expr) === false ? expr.otherwise : expr.then, taken);
+  if (expr.kind === 'choose') {
+    const branch = taken.branch(expr) === false ? expr.otherwise : expr.then;
+    return (branch.kind === 'number' && Number.isInteger(branch.value)) || isWhole(branch, taken);
+  }
   return expr.kind === 'call' && jumps.has(expr.name);
 }
 
-function aloneIn(expr: Expr, decimalSign: '.' | ','): Line['alone'] {
-  if (expr.kind === 'parens') return aloneIn(expr.inner, decimalSign);
-  if (expr.kind === 'name') return { kind: 'name', name: expr.name };
-  if (expr.kind !== 'quoted') return undefined;
-  const read = readLiteral(expr.text, decimalSign);
-  return read.ok ? { kind: 'quoted', value: read.value } : undefined;
+/** The numeral of a formula that is nothing but a name, a quoted quantity or an entry of a table. */
+function aloneIn(expr: Expr, taken: Taken, decimalSign: '.' | ','): Pick<Line, 'alone'> {
+  if (expr.kind === 'parens') return aloneIn(expr.inner, taken, decimalSign);
+  if (expr.kind === 'name') return { alone: { kind: 'name', name: expr.name } };
+  if (expr.kind === 'quoted') {
+    const read = readLiteral(expr.text, decimalSign);
+    return read.ok ? { alone: { kind: 'number', numeral: read.value.numeral, unit: read.value.unit } } : {};
+  }
+  const row = expr.kind === 'table' ? taken.table(expr) : undefined;
+  if (row?.kind !== 'entry' || row.unit === undefined) return {};
+  return { alone: { kind: 'number', numeral: numeralInUnit(row.value, row.unit), unit: row.unit } };
 }

@@ -5,7 +5,7 @@
 // 3. What has no value is null and carries its problem.
 // Not here: the digits, the lists at the head.
 
-import { calculatorLine, canonicalName, type Expr, type Formula, lineNumber, nothingTaken, type Substitution, texName, texSubstituted, texSymbols, texText } from '../formula/index.ts';
+import { calculatorLine, canonicalName, type Expr, type Formula, lineNumber, nothingTaken, type Substitution, type Taken, texName, texSubstituted, texSymbols, texText } from '../formula/index.ts';
 import { type Numeral, one, plainNumeral, printQuantity, printValue, texQuantity, texValue, type Unit } from '../quantity/index.ts';
 import type { Calculation, CellProblem, CriterionState, DerivedState, GivenState, QuantityState, SoughtState } from '../sheet/index.ts';
 import type { CasePrint, Printed, PrintedVerdict } from './case-print.ts';
@@ -42,9 +42,13 @@ function givenText(calculation: Calculation, state: GivenState, index: number): 
   return value === undefined ? null : printValue(value, calculation.style);
 }
 
+const substitutions = new WeakMap<CasePrint, Substitution>();
+
 /** How names show in the substituted and the calculator line of one case. */
 function substitution(calculation: Calculation, print: CasePrint): Substitution {
-  return {
+  const known = substitutions.get(print);
+  if (known) return known;
+  const made: Substitution = {
     tex: (name, inExponent) => {
       const printed = print.printed(name, inExponent);
       if (printed) return texQuantity(printed.numeral, printed.unit, calculation.style);
@@ -61,6 +65,19 @@ function substitution(calculation: Calculation, print: CasePrint): Substitution 
     },
     decimalSign: calculation.style.decimalSign,
   };
+  substitutions.set(print, made);
+  return made;
+}
+
+const keptSymbols = new WeakMap<Expr, { readonly decimalSign: string; readonly tex: string }>();
+
+function symbolsOf(expr: Expr, calculation: Calculation): string {
+  const { decimalSign } = calculation.style;
+  const known = keptSymbols.get(expr);
+  if (known?.decimalSign === decimalSign) return known.tex;
+  const tex = texSymbols(expr, calculation.style);
+  keptSymbols.set(expr, { decimalSign, tex });
+  return tex;
 }
 
 function problemIn(problems: readonly CellProblem[], caseId: string): CellProblem | undefined {
@@ -142,7 +159,7 @@ function derivedStep(calculation: Calculation, state: DerivedState, prints: read
   return {
     ...head(calculation, state),
     kind: 'derived',
-    symbols: formula === undefined ? symbol : `${symbol} = ${texSymbols(formula.expr, calculation.style)}`,
+    symbols: formula === undefined ? symbol : `${symbol} = ${symbolsOf(formula.expr, calculation)}`,
     notes: [...notes, ...citationNotes(cell.source, calculation.sheet), ...closingNotes(cases), ...warnings(state.problems)],
     numeric: type?.kind !== 'truth',
     cases,
@@ -165,7 +182,8 @@ function criterionStep(calculation: Calculation, state: CriterionState, prints: 
     unmet ||= met === false;
     tooClose ||= verdict.tooClose;
     const values = substitution(calculation, print);
-    const sides = [left, right].map((side) => ({ expr: side.expr, taken: print.taken(side) ?? nothingTaken })) as [Side, Side];
+    const side = (formula: Formula, printed: Printed): Side => ({ expr: formula.expr, taken: print.taken(formula) ?? nothingTaken, printed: quantityTex(calculation, printed) });
+    const sides = [side(left, verdict.sides[0]), side(right, verdict.sides[1])] as const;
     const [demand, capacity] = demandIsLeft(cell.relation) ? sides : ([sides[1], sides[0]] as const);
     return {
       case: each.id,
@@ -185,7 +203,7 @@ function criterionStep(calculation: Calculation, state: CriterionState, prints: 
   });
   if (tooClose) notes.push('the sides are closer than printed digits can show; they are compared unrounded');
   if (unmet && !isBlank(cell.ifNotMet)) notes.push(cell.ifNotMet ?? '');
-  const symbols = left && right ? `${texSymbols(left.expr, calculation.style)} ${texRelation[cell.relation]} ${texSymbols(right.expr, calculation.style)}` : texText(`${cell.left} ${cell.relation} ${cell.right}`);
+  const symbols = left && right ? `${symbolsOf(left.expr, calculation)} ${texRelation[cell.relation]} ${symbolsOf(right.expr, calculation)}` : texText(`${cell.left} ${cell.relation} ${cell.right}`);
   return {
     ...head(calculation, state),
     kind: 'criterion',
@@ -200,10 +218,14 @@ function criterionStep(calculation: Calculation, state: CriterionState, prints: 
 
 interface Side {
   readonly expr: Expr;
-  readonly taken: ReturnType<CasePrint['taken']> & object;
+  readonly taken: Taken;
+  /** TeX of its value as printed. */
+  readonly printed: string;
 }
 
-const texOf = (side: Side, values: Substitution) => texSubstituted(side.expr, values, side.taken);
+/** An entry of a table stands as its number; alone, it would print as the call. */
+const texOf = (side: Side, values: Substitution) =>
+  isEntry(side.expr) ? side.printed : texSubstituted(side.expr, values, side.taken);
 const lineOf = (side: Side, values: Substitution) => calculatorLine(side.expr, values, side.taken);
 
 /** A choice between branches stands in parentheses before anything is taken from it. */
@@ -217,16 +239,23 @@ function parenthesised(side: Side, tex: string): string {
   return sum || tex.startsWith('-') ? `\\left(${tex}\\right)` : tex;
 }
 
+function isEntry(expr: Expr): boolean {
+  return expr.kind === 'parens' ? isEntry(expr.inner) : expr.kind === 'table' && expr.name === 'entry';
+}
+
+function quantityTex(calculation: Calculation, printed: Printed): string {
+  return texQuantity(printed.numeral, printed.unit, calculation.style);
+}
+
 function sidesTex(calculation: Calculation, state: CriterionState, verdict: PrintedVerdict): string {
-  const side = (printed: Printed) => texQuantity(printed.numeral, printed.unit, calculation.style);
   const relation = verdict.met ? texRelation[state.cell.relation] : texUnmet[state.cell.relation];
-  return `${side(verdict.sides[0])} ${relation} ${side(verdict.sides[1])}`;
+  return `${quantityTex(calculation, verdict.sides[0])} ${relation} ${quantityTex(calculation, verdict.sides[1])}`;
 }
 
 function soughtStep(calculation: Calculation, state: SoughtState): Step {
   const { cell, left, right } = state;
   const symbol = texName(nameOf(state));
-  const equation = left && right ? `${symbol}:\\; ${texSymbols(left.expr, calculation.style)} = ${texSymbols(right.expr, calculation.style)}` : symbol;
+  const equation = left && right ? `${symbol}:\\; ${symbolsOf(left.expr, calculation)} = ${symbolsOf(right.expr, calculation)}` : symbol;
   return {
     ...head(calculation, state),
     kind: 'sought',
