@@ -94,7 +94,8 @@ export function misusedPrefix(text: string): { readonly message: string; readonl
   for (const length of [1, 2]) {
     const outer = prefixBySpelling.get(text.slice(0, length));
     const inner = symbolOfText(text.slice(length));
-    if (!outer || !inner?.prefix) continue;
+    // In "Pas" the s is a second, not an attosecond with the prefix peta.
+    if (!outer || !inner?.prefix || !usual.has(inner.text)) continue;
     const power = outer.power + inner.prefix.power;
     const joint = prefixes.find((prefix) => prefix.power === power && taken(inner.row, prefix));
     const instead = power === 0 ? [inner.row.symbol] : joint ? [`${joint.symbol}${inner.row.symbol}`] : [];
@@ -121,3 +122,4 @@ export const usualSymbols: readonly string[] = unitRows.flatMap((row) => [
   row.symbol,
   ...(row.usual === undefined ? [] : row.usual.split(' ').map((prefix) => prefix + row.symbol)),
 ]);
+const usual = new Set(usualSymbols);

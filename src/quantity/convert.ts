@@ -83,8 +83,10 @@ export function numeralInUnit(si: number, unit: Unit): Numeral {
   const nearest = numeralOfDouble(value);
   if (nearest.digits.length <= 15 && !unit.reading) return nearest;
   if (value === 0 || !Number.isFinite(value)) return nearest;
-  // Values this far apart, in the unit, are different doubles in SI.
-  const apart = Math.ceil(Math.log10((Math.abs(si) * 2 ** -52) / unit.si));
+  // The SI value and the quotient are each off by at most 2^-53 of the greater of the two: decimals that far apart are told
+  // apart, and of those at this place the one that was meant is the nearest.
+  const size = Math.max(Math.abs(si) / unit.si, Math.abs(value));
+  const apart = Math.ceil(Math.log10(size * 2 ** -51));
   for (const place of [apart, apart - 1]) {
     if (place <= nearest.exponent) break;
     const shorter = roundAtPlace(nearest, place);

@@ -9,9 +9,9 @@ import { addR, equalR, isZeroR, mulR, rational, rationalOfText, subR, textR, zer
 
 export type Dimension = readonly Rational[];
 
-export const baseLetters = ['L', 'M', 'T', 'I', 'Θ', 'N', 'J'] as const;
+export const baseLetters: readonly string[] = ['L', 'M', 'T', 'I', 'Θ', 'N', 'J'];
 /** Coherent SI units of the base quantities, same order. */
-export const baseSymbols = ['m', 'kg', 's', 'A', 'K', 'mol', 'cd'] as const;
+export const baseSymbols: readonly string[] = ['m', 'kg', 's', 'A', 'K', 'mol', 'cd'];
 
 export const dimensionless: Dimension = baseLetters.map(() => zeroR);
 
@@ -44,7 +44,7 @@ export function dimensionKey(a: Dimension): string {
 export function dimensionOf(key: string): Dimension {
   const exponents: Rational[] = [...dimensionless];
   for (const word of key === '1' ? [] : key.split(' ')) {
-    const place = baseLetters.findIndex((letter) => letter === word[0]);
+    const place = baseLetters.indexOf(word.slice(0, 1));
     const exponent = word.length === 1 ? rational(1) : rationalOfText(word.slice(1));
     if (place < 0 || exponent === undefined) throw new RangeError(`no dimension: ${key}`);
     exponents[place] = exponent;

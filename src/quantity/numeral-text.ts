@@ -56,7 +56,7 @@ export function scanNumeral(text: string, from: number, decimalSign: DecimalSign
     return fail('number-form', `No digit follows the decimal sign of ${quote(matched)}: write ${fix}.`, start, to, [fix]);
   }
   let digits = `${whole}${decimals}`;
-  let exponent = -decimals.length;
+  let exponent = 0 - decimals.length;
   const power = scanPower(text, to, digits, exponent);
   if (power) {
     to = power.to;

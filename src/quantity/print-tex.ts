@@ -1,6 +1,7 @@
 // The same numerals, units and quantities as print.ts, for the typesetting library.
 //
-// Units stand upright in one \mathrm; digit groups and the unit are set off by thin spaces.
+// Units stand upright in one \mathrm; digit groups and the unit are set off by thin spaces. µ and ‰ stand in \text: the library
+// has only an italic \mu and takes the upright sign from the font of the page (strict mode must allow 'unknownSymbol').
 // Not here: quantity symbols and formulas.
 
 import type { Numeral } from './numeral.ts';

@@ -100,6 +100,8 @@ const instead: ReadonlyMap<string, readonly string[]> = new Map([
   ['amps', ['A']],
 ]);
 
+const usual = new Set(usualSymbols);
+
 let spelledAlike: Map<string, string[]> | undefined;
 
 /** Symbols that differ from the text in the case of letters alone, the most alike first. */
@@ -113,17 +115,14 @@ function otherCase(text: string): readonly string[] {
       else if (!known.includes(symbol)) known.push(symbol);
     }
   }
-  const usual = new Set(usualSymbols);
   const rank = (symbol: string) =>
     (usual.has(symbol) ? 0 : 10) + [...symbol].filter((char, place) => char !== text[place]).length;
   const all = spelledAlike.get(text.toLowerCase()) ?? [];
-  const known = all.filter((symbol) => usual.has(symbol));
-  return [...(known.length > 0 ? known : all)].sort((a, b) => rank(a) - rank(b));
+  return [...all].sort((a, b) => rank(a) - rank(b));
 }
 
 /** "Nm" → "N·m", "kWh" → "kW·h": two symbols that stand together without a sign, each with a usual spelling. */
 function runTogether(text: string): readonly string[] {
-  const usual = new Set(usualSymbols);
   const pairs: string[] = [];
   for (let cut = 1; cut < text.length; cut++) {
     const [left, right] = [symbolOfText(text.slice(0, cut)), symbolOfText(text.slice(cut))];
@@ -132,49 +131,49 @@ function runTogether(text: string): readonly string[] {
   return pairs;
 }
 
+const rowByName = new Map(unitRows.map((row) => [row.name.toLowerCase(), row]));
+
 function byName(text: string): readonly string[] {
   const word = text.toLowerCase().replace('meter', 'metre').replace('liter', 'litre').replace('gramme', 'gram');
   const singular = word.replace(/(?<=[a-z]{3})s$/, '');
-  const named = (name: string) => unitRows.find((row) => row.name.toLowerCase() === name);
   for (const each of [word, singular]) {
-    const row = named(each);
+    const row = rowByName.get(each);
     if (row) return [row.symbol];
     const prefix = prefixes.find(({ name }) => each.startsWith(name) && each.length > name.length);
-    const unit = prefix && named(each.slice(prefix.name.length));
+    const unit = prefix && rowByName.get(each.slice(prefix.name.length));
     const symbol = unit && symbolOfText(prefix.symbol + unit.symbol);
     if (symbol) return [symbol.text];
   }
   return [];
 }
 
-/** Changed, missing, added or swapped letters between two texts; gives up above `limit`. */
+/** Changed, missing, added or swapped letters between two texts; limit + 1 where they are more. */
 function editDistance(a: string, b: string, limit: number): number {
-  if (Math.abs(a.length - b.length) > limit) return limit + 1;
-  let beforeLast: number[] = [];
-  let last = Array.from({ length: b.length + 1 }, (_, place) => place);
-  for (let i = 1; i <= a.length; i++) {
-    const row = [i];
-    for (let j = 1; j <= b.length; j++) {
-      const same = a[i - 1] === b[j - 1];
-      let cost = Math.min((last[j] ?? 0) + 1, (row[j - 1] ?? 0) + 1, (last[j - 1] ?? 0) + (same ? 0 : 1));
-      if (i > 1 && j > 1 && a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1]) cost = Math.min(cost, (beforeLast[j - 2] ?? 0) + 1);
-      row.push(cost);
-    }
-    beforeLast = last;
-    last = row;
-  }
-  return last[b.length] ?? limit + 1;
+  let same = 0;
+  while (same < a.length && same < b.length && a[same] === b[same]) same++;
+  const [left, right] = [a.slice(same), b.slice(same)];
+  if (left === '' || right === '') return Math.min(left.length + right.length, limit + 1);
+  if (limit === 0) return 1;
+  const rest = (x: string, y: string) => 1 + editDistance(x, y, limit - 1);
+  const swapped = left[0] === right[1] && left[1] === right[0] && left.length > 1;
+  return Math.min(
+    rest(left.slice(1), right.slice(1)),
+    rest(left.slice(1), right),
+    rest(left, right.slice(1)),
+    swapped ? rest(left.slice(2), right.slice(2)) : limit + 1,
+  );
 }
 
 function byLetters(text: string): readonly string[] {
-  const limit = text.length <= 2 ? 1 : text.length <= 5 ? 1 : 2;
+  const limit = text.length <= 5 ? 1 : 2;
+  const lower = text.toLowerCase();
   const ranked: { symbol: string; distance: number }[] = [];
   for (const symbol of usualSymbols) {
-    if (symbol.length < 2) continue;
-    const distance = editDistance(text, symbol, limit) + editDistance(text.toLowerCase(), symbol.toLowerCase(), limit) / 10;
-    if (distance <= limit + limit / 10) ranked.push({ symbol, distance });
+    if (symbol.length < 2 || Math.abs(symbol.length - text.length) > limit) continue;
+    const distance = editDistance(lower, symbol.toLowerCase(), limit);
+    // Of two equally near, the one with the same capitals; of two such, the one that stands first in the catalogue.
+    if (distance <= limit) ranked.push({ symbol, distance: distance + editDistance(text, symbol, limit) / 10 });
   }
-  // A stable sort: of two at the same distance the one that stands first in the catalogue.
   return ranked.sort((a, b) => a.distance - b.distance).map(({ symbol }) => symbol);
 }
 
@@ -185,7 +184,9 @@ export function nearestUnits(text: string): string[] {
   const written = instead.get(word) ?? instead.get(word.toLowerCase());
   if (written) return [...written];
   const prefixed = misusedPrefix(word)?.instead ?? [];
-  for (const found of [[...prefixed, ...otherCase(word)], runTogether(word), byName(word)]) {
+  const alike = otherCase(word);
+  const inUse = alike.filter((symbol) => usual.has(symbol));
+  for (const found of [[...prefixed, ...inUse], runTogether(word), byName(word), alike]) {
     if (found.length > 0) return [...new Set(found)].slice(0, most);
   }
   return [...new Set(byLetters(word))].slice(0, most);

@@ -1,6 +1,6 @@
 // From a unit text to its unit, with a cache: the same few texts stand in thousands of cells.
 //
-// 1. Only texts that are units are kept, and at most `mostKept` of them: a hostile file cannot fill the memory.
+// 1. Texts are kept up to a number, and only short ones: a hostile file cannot fill the memory.
 // 2. Equal canonical texts give the same object, so that units can be told apart by identity first.
 // Not here: the grammar (unit-grammar.ts).
 
@@ -14,10 +14,13 @@ import { readQuotient } from './unit-grammar.ts';
 const longestUnit = 100;
 const mostKept = 2000;
 const known = new Map<string, Result<Unit>>();
+/** Refused texts: a wrong unit may stand in a whole column, and what to propose for it takes a while. */
+const refused = new Map<string, Result<Unit>>();
+const mostRefused = 200;
 
 /** Reads a unit text; '' and '1' are the number one. Spans of problems count in `text`. */
 export function readUnit(text: string): Result<Unit> {
-  return known.get(text) ?? readNew(text);
+  return known.get(text) ?? refused.get(text) ?? readNew(text);
 }
 
 function readNew(text: string): Result<Unit> {
@@ -31,7 +34,11 @@ function readNew(text: string): Result<Unit> {
     return fail('unknown-unit', 'A number has the unit 1: write 1, or nothing.', from, from + 1, ['1']);
   }
   const quotient = readQuotient(text);
-  if (!quotient.ok) return quotient;
+  if (!quotient.ok) {
+    if (refused.size >= mostRefused) refused.clear();
+    refused.set(text, quotient);
+    return quotient;
+  }
   const unit = unitOfFactors(quotient.value.above, quotient.value.below);
   return keep(text, known.get(unit.text) ?? keep(unit.text, done(unit)));
 }

@@ -125,7 +125,8 @@ export class Definitions {
 
   #find(name: string): Amount | undefined {
     const definition = this.#units.get(name);
-    if (definition?.startsWith('!')) return { n: 1n, d: 1n, base: definition === '!dimensionless' ? new Map() : new Map([[name, 1]]) };
+    if (definition?.startsWith('!'))
+      return { n: 1n, d: 1n, base: definition === '!dimensionless' ? new Map() : new Map([[name, 1]]) };
     if (definition !== undefined) return this.amount(definition);
     const power = /^(.*\D)([2-9])$/.exec(name);
     if (power?.[1] !== undefined) return raise(this.#unit(power[1]), Number(power[2]));

@@ -11,17 +11,48 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import { symbolOfText, unitRows } from '../../src/quantity/catalogue.ts';
 import { baseSymbols, readUnit, readValue, type Unit, unitNames, unitOf } from '../../src/quantity/index.ts';
 import { prefixes } from '../../src/quantity/unit-row.ts';
-import { Definitions, runUnits } from './gnu-definitions.ts';
 import { stepsApart } from './doubles.ts';
+import { Definitions, runUnits } from './gnu-definitions.ts';
 
 /** Names the program has for our symbols; the others are spelled alike. */
 const names = new Map([
-  ['°', 'degree'], ['′', 'arcmin'], ['″', 'arcsec'], ['Ω', 'ohm'], ['°C', 'degC'], ['°F', 'degF'], ['°R', 'degR'], ['%', 'percent'],
-  ['rad', 'radian'], ['h', 'hour'], ['d', 'day'], ['t', 'tonne'], ['ha', 'hectare'], ['in', 'inch'], ['kn', 'knot'],
-  ['mil', 'mil'], ['gal', 'usgallon'], ['gal_UK', 'brgallon'], ['qt', 'usquart'], ['bbl', 'barrel'], ['oz', 'ounce'],
-  ['ton_short', 'shortton'], ['ton_long', 'longton'], ['ozf', 'ounce force'], ['ftH2O', 'foot water'], ['Btu', 'btu_IT'],
-  ['Btu_th', 'btu_th'], ['hp', 'horsepower'], ['hp_metric', 'metrichorsepower'], ['hp_electric', 'electrichorsepower'],
-  ['TR', 'tonrefrigeration'], ['Torr', 'torr'], ['cal', 'cal_th'], ['g_n', 'gravity'], ['Å', 'angstrom'], ['g', 'gram'], ['min', 'minute'],
+  ['°', 'degree'],
+  ['′', 'arcmin'],
+  ['″', 'arcsec'],
+  ['Ω', 'ohm'],
+  ['°C', 'degC'],
+  ['°F', 'degF'],
+  ['°R', 'degR'],
+  ['%', 'percent'],
+  ['rad', 'radian'],
+  ['h', 'hour'],
+  ['d', 'day'],
+  ['t', 'tonne'],
+  ['ha', 'hectare'],
+  ['in', 'inch'],
+  ['kn', 'knot'],
+  ['mil', 'mil'],
+  ['gal', 'usgallon'],
+  ['gal_UK', 'brgallon'],
+  ['qt', 'usquart'],
+  ['bbl', 'barrel'],
+  ['oz', 'ounce'],
+  ['ton_short', 'shortton'],
+  ['ton_long', 'longton'],
+  ['ozf', 'ounce force'],
+  ['ftH2O', 'foot water'],
+  ['Btu', 'btu_IT'],
+  ['Btu_th', 'btu_th'],
+  ['hp', 'horsepower'],
+  ['hp_metric', 'metrichorsepower'],
+  ['hp_electric', 'electrichorsepower'],
+  ['TR', 'tonrefrigeration'],
+  ['Torr', 'torr'],
+  ['cal', 'cal_th'],
+  ['g_n', 'gravity'],
+  ['Å', 'angstrom'],
+  ['g', 'gram'],
+  ['min', 'minute'],
 ]);
 const notKnown = new Set(['R', 'Q', 'r', 'q', '‰']);
 
@@ -34,7 +65,8 @@ interface Pair {
 }
 
 const wanted = (unit: Unit): string =>
-  unit.dimension.flatMap((exponent, place) => (exponent.n === 0 ? [] : [`${baseSymbols[place]}^(${exponent.n})`])).join(' ') || '1';
+  unit.dimension.flatMap((exponent, place) => (exponent.n === 0 ? [] : [`${baseSymbols[place]}^(${exponent.n})`])).join(' ') ||
+  '1';
 
 /** Prefixes by their names, so that no symbol of the program can be taken for another: "kilo (gram)". */
 function nameOf(symbol: string): string {
@@ -54,7 +86,9 @@ const symbols = unitRows
   .filter((row) => row.counts !== 'r' && !notKnown.has(row.symbol))
   .flatMap((row) => [
     row.symbol,
-    ...prefixes.filter(({ symbol }) => !notKnown.has(symbol) && symbolOfText(symbol + row.symbol)?.row === row).map(({ symbol }) => symbol + row.symbol),
+    ...prefixes
+      .filter(({ symbol }) => !notKnown.has(symbol) && symbolOfText(symbol + row.symbol)?.row === row)
+      .map(({ symbol }) => symbol + row.symbol),
   ]);
 const compounds = unitNames().filter((text) => {
   const unit = readUnit(text);
@@ -97,7 +131,19 @@ describe('the program GNU units', () => {
   });
 
   test('converts temperature readings as we do', () => {
-    const readings = ['-459.67 degF', '-40 degF', '0 degF', '32 degF', '98.6 degF', '212 degF', '1000 degF', '-273.15 degC', '0 degC', '25 degC', '300 degC'];
+    const readings = [
+      '-459.67 degF',
+      '-40 degF',
+      '0 degF',
+      '32 degF',
+      '98.6 degF',
+      '212 degF',
+      '1000 degF',
+      '-273.15 degC',
+      '0 degC',
+      '25 degC',
+      '300 degC',
+    ];
     const answers = ask(readings.flatMap((text) => [text.replace(/(\S+) deg([CF])/, 'temp$2($1)'), 'K']));
     expect(answers).toHaveLength(readings.length);
     for (const [place, text] of readings.entries()) {
