@@ -142,7 +142,7 @@ const signs: ReadonlyMap<string, string> = new Map([
   ['→', '\\to'],
 ]);
 const textCharacter =
-  /[ -~£¥©®°·\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u024f\u0400-\u0481\u048a-\u052f–—‘’“”…\u3040-\u30ff\u4e00-\u9fff\uac00-\ud7a3]/;
+  /[ -~£¥©®°·\u00c0-\u00d6\u00d8-\u00f6\u00f8-\u024f\u0400-\u0481\u048a-\u04ff–—‘’“”…\u3040-\u30ff\u4e00-\u9faf\uac00-\ud7a3]/;
 
 /** Any text as upright TeX. A character that the faces lack is shown as `?`. */
 export function texText(text: string): string {

@@ -315,7 +315,7 @@ function quoted(s: Setting, text: string, inExponent: boolean): string {
   const value = readLiteral(text, s.decimalSign);
   if (!value.ok) return done(s, atomLevel, texText(`“${text}”`));
   const { numeral, unit, si } = value.value;
-  if (inExponent && unit.text !== 'rad' && isAngleUnit(unit)) {
+  if (s.sub !== undefined && inExponent && unit.text !== 'rad' && isAngleUnit(unit)) {
     radian ??= unitOf('rad');
     const exact = numeralInUnit(si, radian);
     const shown = significantDigits(exact) > anglePlaces ? roundSignificant(exact, anglePlaces) : exact;

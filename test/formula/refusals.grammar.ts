@@ -3,7 +3,7 @@
 // A formula as typed; below it the code, the piece of text that is marked and the sentence; after = the formula with each
 // of the offered fixes.
 
-export const grammarRefusals = String.raw`
+export const grammarRefusals = `
 ## two readings
 a/b c
   ambiguous-product «a/b c» “a/b c” can be read as a/(b*c) or as a/b*c: write the one that is meant.
