@@ -38,6 +38,6 @@ export function tableLines(rows: readonly (readonly string[])[], columns: readon
   );
 }
 
-function width(text: string): number {
+export function width(text: string): number {
   return [...text.replace(/\p{Mark}/gu, '')].length;
 }

@@ -2,17 +2,18 @@
 //
 // 1. Printed numbers are those of the record: one numeral for a quantity in a case, everywhere.
 // 2. `values` are in the unit of the quantity, unrounded; `si` in coherent SI; null where a case has none.
-// 3. Errors go to standard error; the listing shows a dash where they leave no value, and the warnings at its end.
+// 3. Errors go to standard error; where they leave no value the listing has a dash and the JSON null.
+// Not here: the layout of the listing (listing.ts).
 
 import { fingerprints } from '../../check/index.ts';
-import { canonicalName, plainName } from '../../formula/index.ts';
+import { canonicalName } from '../../formula/index.ts';
 import { fromSI, type Unit } from '../../quantity/index.ts';
 import { makeRecord, type RecordModel, type Step } from '../../record/index.ts';
 import { type Calculation, calculate, type QuantityState } from '../../sheet/index.ts';
 import type { Io } from '../io.ts';
+import { listing } from '../listing.ts';
 import { loadSheet, withValues } from '../load.ts';
 import { stateExit, writeProblems } from '../outcome.ts';
-import { oneLine, problemLine, tableLines } from '../report.ts';
 import { readArguments } from '../usage.ts';
 
 export async function calc(argv: readonly string[], io: Io): Promise<number> {
@@ -85,38 +86,4 @@ function inUnit(si: number | null, unit: Unit): number | null {
 
 function number(value: number | null): number | null {
   return value === null || !Number.isFinite(value) ? null : value;
-}
-
-function listing(path: string, calculation: Calculation, model: RecordModel): string {
-  const { cases } = calculation;
-  const several = cases.length > 1;
-  const columns = [{ align: 'left' }, { align: 'left' }, { align: 'left' }, ...cases.map(() => ({ align: 'right' }) as const)] as const;
-  const rows: string[][] = [];
-  // A section stands as a line of its own, outside the columns.
-  const sections = new Map<number, string>();
-  if (several) rows.push(['', '', '', ...cases.map(({ id }) => id)]);
-  for (const line of model.lines) {
-    if (line.kind === 'heading' && line.level === 1) {
-      sections.set(rows.length, oneLine(`${line.number} ${line.text}`.trim()));
-      rows.push([]);
-    } else if (line.kind === 'step') {
-      rows.push([line.step.number, symbolOf(line.step), oneLine(line.step.title), ...line.step.cases.map((each) => shown(line.step, each))]);
-    }
-  }
-  const cells = new Map(calculation.sheet.cells.map((cell) => [cell.id, cell]));
-  const warnings = calculation.problems().filter((problem) => problem.severity === 'warning');
-  const lines = tableLines(rows, columns).map((line, i) => (sections.has(i) ? `\n${sections.get(i)}` : line));
-  const head = oneLine(`${model.title} (${model.status})`);
-  const foot = warnings.length === 0 ? [] : ['', 'Warnings', ...warnings.map((problem) => problemLine(path, calculation, cells, problem))];
-  return `${[head, '', ...lines, ...foot].join('\n')}\n`;
-}
-
-function symbolOf(step: Step): string {
-  return step.name === undefined ? '' : plainName(step.name);
-}
-
-function shown(step: Step, each: Step['cases'][number]): string {
-  if (step.kind !== 'criterion') return each.result ?? '—';
-  if (each.met === undefined || each.met === null) return '—';
-  return `${each.met ? 'met' : 'not met'} ${each.result ?? ''}`.trimEnd();
 }

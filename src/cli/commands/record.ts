@@ -1,7 +1,7 @@
 // `tightside record`: the calculation record of a sheet as a file.
 
 import { fingerprints } from '../../check/index.ts';
-import { makeRecord, recordHtml, recordJson } from '../../record/index.ts';
+import { loadRecordAssets, makeRecord, recordHtml, recordJson } from '../../record/index.ts';
 import { calculate } from '../../sheet/index.ts';
 import { stateExit, writeProblems } from '../outcome.ts';
 import type { Io } from '../io.ts';
@@ -21,7 +21,7 @@ export async function record(argv: readonly string[], io: Io): Promise<number> {
   if (await io.same(path, out)) throw new UsageTrouble(`-o ${clip(out)} is the sheet itself; choose another file for the record`);
   const calculation = calculate(await loadSheet(io, path));
   const model = makeRecord(calculation);
-  const text = form === 'html' ? recordHtml(model, (await import('../../record/assets.ts')).recordAssets) : `${JSON.stringify(recordJson(model, fingerprints(calculation).sheet), null, 2)}\n`;
+  const text = form === 'html' ? recordHtml(model, await loadRecordAssets()) : `${JSON.stringify(recordJson(model, fingerprints(calculation).sheet), null, 2)}\n`;
   await io.write(out, text, { replace: true });
   writeProblems(io, path, calculation);
   return stateExit(calculation);

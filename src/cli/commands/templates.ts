@@ -14,7 +14,7 @@ export async function templates(argv: readonly string[], io: Io): Promise<number
     return exits.fine;
   }
   const blocks = summaries.map(({ id, version, title, job, givens, results }) =>
-    [`${id}  (version ${version})`, `  ${title}`, `  ${job}`, ...wrapped('givens ', givens), ...wrapped('results', results)].join('\n'),
+    [`${id}  (version ${version})`, `  ${title}`, `  ${job}`, ...wrapped('givens', givens), ...wrapped('results', results)].join('\n'),
   );
   io.out(`${blocks.join('\n\n')}\n`);
   return exits.fine;
@@ -23,11 +23,12 @@ export async function templates(argv: readonly string[], io: Io): Promise<number
 /** Names after a label, on lines of at most 100 characters. */
 function wrapped(label: string, names: readonly string[]): string[] {
   const lines: string[] = [];
-  let line = `  ${label}:`;
+  const indent = ' '.repeat(10);
+  let line = `  ${label}:`.padEnd(indent.length);
   for (const name of names) {
     if (line.length + 1 + name.length > 100) {
       lines.push(line);
-      line = ' '.repeat(label.length + 3);
+      line = indent;
     }
     line += ` ${name}`;
   }
