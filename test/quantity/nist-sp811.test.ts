@@ -102,13 +102,15 @@ describe('temperature readings', () => {
   });
 
   test('a reading comes back as it was typed, for every tenth of a degree from -100 to 1000', () => {
+    const changed: string[] = [];
     for (const name of ['°C', '°F']) {
       const unit = unitOf(name);
       for (let tenths = -1000; tenths <= 10000; tenths++) {
         const text = (tenths / 10).toString();
-        expect(plainNumeral(numeralInUnit(si(`${text} ${name}`), unit))).toBe(text);
+        if (plainNumeral(numeralInUnit(si(`${text} ${name}`), unit)) !== text) changed.push(`${text} ${name}`);
       }
     }
+    expect(changed).toEqual([]);
   });
 
   test('inside a compound unit a degree is a difference', () => {
