@@ -168,15 +168,17 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     addDecisions(state.cell.id, own);
   };
 
-  const sideSlot = (own: Line, formula: Formula, si: number, unit: Unit, declared: boolean): Slot => {
+  const sideSlot = (own: Line, si: number, unit: Unit, declared: boolean): Slot => {
     if (own.alone?.kind === 'name') {
       const slot = slotOf(own.alone.name);
       if (slot !== undefined && (!declared || slot.number.unit.text === unit.text)) return slot;
     }
-    if (own.alone?.kind === 'number' && (!declared || own.alone.unit.text === unit.text)) {
+    // The literal 0 fits every unit: 0 N is printed beside newtons.
+    if (own.alone?.kind === 'number' && own.alone.unit.text === unit.text) {
       return { number: typedNumber(own.alone.numeral, own.alone.unit), item: -1 };
     }
-    if (formula.expr.kind === 'number' && si === 0) return { number: computedNumber(0, unit), item: -1 };
+    const alone = own.alone?.kind === 'number' && !declared && si !== 0 ? own.alone : undefined;
+    if (alone) return { number: typedNumber(alone.numeral, alone.unit), item: -1 };
     return newSlot(computedNumber(si, unit));
   };
 
@@ -190,7 +192,7 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     if (left === undefined || right === undefined || leftLine === undefined || rightLine === undefined || met === null) return;
     const unit = state.unit ?? one;
     const declared = cell.unit !== undefined;
-    const sides = [sideSlot(leftLine, left, leftSi, unit, declared), sideSlot(rightLine, right, rightSi, unit, declared)] as const;
+    const sides = [sideSlot(leftLine, leftSi, unit, declared), sideSlot(rightLine, rightSi, unit, declared)] as const;
     const utilisation = unit.reading === undefined ? (state.utilisation[index] ?? null) : null;
     const resultUnit = utilisation !== null ? one : unit.reading === undefined ? unit : kelvin;
     const trueResult = utilisation ?? room(leftSi, cell.relation, rightSi);

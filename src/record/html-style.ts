@@ -40,9 +40,9 @@ function face(f: Face): string {
 function page(words: PageWords): string {
   const small = 'font:7.5pt "Atkinson Hyperlegible Next",sans-serif;color:#3a3a37;vertical-align:top;padding-top:3mm';
   return `@page{size:${words.paper};margin:12mm 12mm 19mm 22mm;
-@bottom-left{content:${cssString(words.identity)};${small};width:32%}
+@bottom-left{content:${cssString(words.identity)};${small};width:24%;overflow-wrap:anywhere}
 @bottom-center{content:${cssString(words.footer)};${small};width:52%;text-align:left}
-@bottom-right{content:"Sheet " counter(page) " of " counter(pages);${small};width:16%;text-align:right}}`;
+@bottom-right{content:"Sheet " counter(page) " of " counter(pages);${small};width:24%;text-align:right}}`;
 }
 
 const look = `
@@ -80,20 +80,26 @@ tr{break-inside:avoid}
 thead{display:table-header-group}
 .steps{border-top:1px solid var(--rule);border-bottom:1px solid var(--rule);table-layout:fixed}
 .steps>thead th{padding:.3rem .7rem;border-bottom:1px solid var(--rule);overflow-wrap:anywhere}
-.steps>tbody>tr>td,.steps>tbody>tr>th{padding:.35rem .7rem;border-left:1px solid var(--rule)}
+.steps>tbody>tr>td{padding:.05rem .7rem;border-left:1px solid var(--rule);vertical-align:baseline}
 .steps>tbody>tr>:first-child{border-left:0}
-.steps td.res,.steps th.res{text-align:right;vertical-align:bottom;overflow-wrap:anywhere}
-.steps td.src{font-size:8.5pt;color:var(--second);overflow-wrap:anywhere}
-.steps td.wide{padding:.35rem .7rem}
+.steps>tbody>tr>.calc{border-left:1px solid var(--rule)}
+.steps>tbody>tr:first-child>td{padding-top:.35rem}
+.step>tr:not(:last-child){height:1px}
+.steps>tbody>tr:last-child>td,.steps>tbody>tr>td[rowspan]{padding-bottom:.35rem}
+.steps .res{text-align:right;overflow-wrap:anywhere}
+.steps td.src{font-size:8.5pt;color:var(--second);overflow-wrap:anywhere;vertical-align:top}
 .steps h2,.steps h3,.steps h4{margin:.5rem 0 .1rem}
-tr.section{break-after:avoid}
-.section>*{border-left:0!important;font-weight:400;text-align:left;color:var(--ink);font-size:inherit}
-.steps .criterion>td{border-top:1px solid var(--rule);border-bottom:1px solid var(--rule)}
+.step,.text{break-inside:avoid}
+.section{break-inside:avoid;break-after:avoid}
+.steps .section th{font-weight:400;text-align:left;color:var(--ink);font-size:inherit;padding:0 .7rem;border:0}
+.criterion>tr:first-child>td{border-top:1px solid var(--rule)}
+.criterion>tr:last-child>td,.criterion>tr>td[rowspan]{border-bottom:1px solid var(--rule)}
 .t{margin:0;color:var(--second)}
 .t .n{color:var(--ink)}
-.eq{margin:.15rem 0 0;overflow-wrap:anywhere}
-.eq .katex{font-size:1.12em}
-.eq>span{display:inline-block;max-width:100%;vertical-align:middle;margin:.1rem .3em .1rem 0}
+.t::after{content:"";display:block;clear:both}
+.eq{overflow-wrap:anywhere}
+.eq .katex,.res .katex{font-size:1.12em}
+.eq>span{display:inline-block;max-width:100%;margin:.1rem .1em .1rem 0}
 .case,.mark{color:var(--ink);font-weight:700;font-size:8.5pt}
 .case{min-width:1.4em}
 .states{float:right;margin-left:.6em}
@@ -101,20 +107,19 @@ tr.section{break-after:avoid}
 .basis::before{content:"· "}
 .legend{padding:0 .7rem;font-size:8.5pt;color:var(--second)}
 .legend span+span{margin-left:1em}
-.res .katex{font-size:1.12em}
 .met{font-weight:700}
 .notmet{font-weight:700;color:var(--checker)}
-.util{display:block}
-.bar{display:inline-block;position:relative;width:4.5rem;height:.42rem;border:1px solid var(--ink);border-right:0;vertical-align:middle;print-color-adjust:exact;-webkit-print-color-adjust:exact}
+.bar{display:block;position:relative;width:4.5rem;margin:.2rem 0 .25rem;height:.42rem;border:1px solid var(--ink);border-right:0;print-color-adjust:exact;-webkit-print-color-adjust:exact}
 .bar::after{content:"";position:absolute;right:0;top:-.25rem;bottom:-.25rem;border-right:2px solid var(--ink)}
 .bar i{display:block;height:100%;background:var(--author);max-width:100%}
 .bar.over i{background:repeating-linear-gradient(115deg,var(--checker) 0 2px,var(--paper) 2px 4px)}
+.res .bar{margin-left:auto}
 .tag{display:inline-block;border:1px solid var(--second);border-radius:1.5px;padding:0 .3em;color:var(--ink);font-size:8pt;line-height:1.35;white-space:normal}
 .tag.open{border-style:dashed;font-weight:600}
 .note{font-size:8.5pt;color:var(--second);margin:.1rem 0 0}
 .wrong{color:var(--checker);font-weight:600}
 .role{font-weight:700}
-.limitnote,.cautionnote{border-left:3px solid var(--ink);padding-left:.6rem}
+.barred{border-left:3px solid var(--ink);padding-left:.6rem}
 .data td,.data th{padding:.15rem .7rem;border-bottom:1px solid var(--rule)}
 .data .num{text-align:right}
 .data{width:auto;min-width:50%}
@@ -143,13 +148,18 @@ a{color:inherit;text-decoration:none}
 .head dl>div{border-left:0}
 .head .title{grid-column:1/-1}
 .head .names{grid-template-columns:1fr}
-.steps,.steps>tbody,.steps>tbody>tr,.steps>tbody>tr>td{display:block;border:0!important}
+.steps,.steps>tbody{display:flex;flex-direction:column;border:0!important}
+.steps>tbody{border-top:1px solid var(--rule)!important;padding:.4rem 0}
+.steps>colgroup{display:none}
+.steps>tbody>tr{display:contents}
+.steps>tbody>tr>td{display:block;border:0!important;padding:.1rem .8rem!important}
 .steps>thead{position:absolute;clip-path:inset(50%);width:1px;height:1px;overflow:hidden}
-.steps>tbody>tr{border-top:1px solid var(--rule)!important;padding:.4rem 0;display:flex;flex-direction:column}
-.steps>tbody>tr>td{padding:.1rem .8rem}
-.steps td.src{order:9}
-.steps td.res{text-align:left;display:flex;gap:.6rem;align-items:baseline}
-.steps td.res[data-case]::before{content:attr(data-case);color:var(--second);font-size:8.5pt;min-width:1.2rem;font-weight:700}
+.steps>tbody>tr>td.src{order:9}
+.steps td:empty{display:none}
+.steps>tbody>tr>td.res{text-align:left;display:flex;gap:.6rem;align-items:baseline}
+.steps>tbody>tr>td.res:empty{display:none}
+.res .bar{margin-left:0}
+.steps td.res[data-case]::before{content:attr(data-case);font-size:8.5pt;min-width:1.2rem;font-weight:700}
 .eq{overflow-x:auto;overflow-y:hidden}
 .scroll{overflow:auto hidden}
 }

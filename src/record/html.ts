@@ -6,9 +6,10 @@
 // Not here: what the record says (make.ts), rows of the steps (html-lines.ts), style (html-style.ts).
 
 import { escapeHtml } from './escape.ts';
-import { caseHead, prose, stepsTable, verdict } from './html-lines.ts';
+import { stepsTable } from './html-lines.ts';
 import { renderTex } from './html-math.ts';
 import { type RecordAssets, recordStyle } from './html-style.ts';
+import { caseHead, caseMark, inlineText, prose, type Symbols, symbolsOf, verdict } from './html-text.ts';
 import type { CriterionSummary, RecordModel } from './model.ts';
 
 export const footerCaution =
@@ -16,6 +17,7 @@ export const footerCaution =
 
 export function recordHtml(model: RecordModel, assets: RecordAssets): string {
   const block = model.titleBlock;
+  const symbols = symbolsOf(model);
   const state = model.status === 'issued' ? '' : ` · ${model.status}`;
   const identity = `${documentWords(model)}${state}`;
   const style = recordStyle(assets, { paper: model.settings.paper ?? 'A4', identity, footer: footerCaution });
@@ -37,18 +39,18 @@ ${head(model)}
 <main>
 <div class="front">
 ${fields(model)}
-${section('Purpose', prose(model.purpose))}
-${section('Method', prose(model.method))}
-${criteria(model)}
-${openPoints(model)}
-${assumptions(model)}
-${section('Limits of validity', model.limits.length === 0 ? '' : `<ul>${model.limits.map((limit) => `<li>${escapeHtml(limit)}</li>`).join('')}</ul>`)}
+${section('Purpose', prose(model.purpose, symbols))}
+${section('Method', prose(model.method, symbols))}
+${criteria(model, symbols)}
+${openPoints(model, symbols)}
+${assumptions(model, symbols)}
+${section('Limits of validity', model.limits.length === 0 ? '' : `<ul>${model.limits.map((limit) => `<li>${inlineText(limit, symbols)}</li>`).join('')}</ul>`)}
 </div>
 <section aria-label="Calculation">
-${stepsTable(model)}
+${stepsTable(model, symbols)}
 </section>
 <div class="back">
-${section('Conclusion', prose(model.conclusion))}
+${section('Conclusion', prose(model.conclusion, symbols))}
 ${references(model)}
 <div class="caution">${model.caution === '' ? '' : `<p><strong>Caution.</strong> ${escapeHtml(model.caution)}</p>`}<p>${escapeHtml(footerCaution)}</p></div>
 </div>
@@ -99,20 +101,27 @@ function section(title: string, body: string): string {
   return body === '' ? '' : `<section><h2>${title}</h2>${body}</section>`;
 }
 
-function criteria(model: RecordModel): string {
+function criteria(model: RecordModel, symbols: Symbols): string {
   if (model.summary.length === 0) return '';
   const several = model.cases.length > 1;
   const heads = several ? model.cases.map((_, k) => `<th scope="col">${caseHead(model, k)}</th>`).join('') : '<th scope="col">Utilisation</th>';
   const rows = model.summary.map((line) => {
     const cells = line.cases.map((each) => {
       if (each.met === null) return '<td><span class="wrong">no verdict</span></td>';
-      return `<td>${verdict(each.met, each.utilisation)} ${escapeHtml(each.printed ?? '')}</td>`;
+      return `<td>${verdict(each.met, each.utilisation, escapeHtml(each.printed ?? ''))}</td>`;
     });
-    const governing = several ? `<td>${line.governing === null ? '—' : caseHead(model, model.cases.findIndex((each) => each.id === line.governing))}</td>` : '';
-    const justification = line.justification === '' ? '' : `<p class="note">Justification: ${escapeHtml(line.justification)}</p>`;
-    return `<tr><td>${stepLink(line.number)}</td><td>${escapeHtml(line.title)} <span class="limit">${renderTex(line.symbols, false)}</span>${justification}</td>${cells.join('')}${governing}</tr>`;
+    const governing = several ? `<td>${governingWord(line, model)}</td>` : '';
+    const justification = line.justification === '' ? '' : `<p class="note">Justification: ${inlineText(line.justification, symbols)}</p>`;
+    return `<tr><td>${stepLink(line.number)}</td><td>${inlineText(line.title, symbols)} <span class="limit">${renderTex(line.symbols, false)}</span>${justification}</td>${cells.join('')}${governing}</tr>`;
   });
-  return `<section><h2>Criteria</h2><p>${escapeHtml(criteriaWords(model.summary))}</p><div class="scroll"><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Criterion</th>${heads}${several ? '<th scope="col">Governing case</th>' : ''}</tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
+  return `<section><h2>Criteria</h2><p>${escapeHtml(criteriaWords(model.summary))}</p><div class="scroll"><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Criterion</th>${heads}${several ? '<th scope="col">Governs</th>' : ''}</tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
+}
+
+function governingWord(line: CriterionSummary, model: RecordModel): string {
+  if (line.governing === null) return '—';
+  const [first] = line.cases;
+  if (line.cases.every((each) => each.printed === first?.printed && each.met === first?.met)) return 'all alike';
+  return `<span class="mark">${caseMark(model.cases.findIndex((each) => each.id === line.governing), model.cases.length)}</span>`;
 }
 
 /** 'All 5 criteria are met.' */
@@ -126,7 +135,7 @@ export function criteriaWords(summary: readonly CriterionSummary[]): string {
 }
 
 /** Values that wait for the same thing share a row; what is not met or fails has its own. */
-function openPoints(model: RecordModel): string {
+function openPoints(model: RecordModel, symbols: Symbols): string {
   if (model.openPoints.length === 0) return '';
   const rows: { kind: string; numbers: string[]; text: string }[] = [];
   for (const point of model.openPoints) {
@@ -135,8 +144,8 @@ function openPoints(model: RecordModel): string {
     if (row) row.numbers.push(point.number);
     else rows.push({ kind: point.kind, numbers: [point.number], text: shared ? sharedText[point.kind] : point.text });
   }
-  const markup = rows.map((row) => `<tr><td>${row.kind}</td><td>${row.numbers.map(stepLink).join(', ')}</td><td>${escapeHtml(row.text)}</td></tr>`);
-  return `<section><h2>Open points</h2><table class="list"><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col"></th></tr></thead><tbody>${markup.join('')}</tbody></table></section>`;
+  const markup = rows.map((row) => `<tr><td>${row.kind}</td><td>${row.numbers.map(stepLink).join(', ')}</td><td>${inlineText(row.text, symbols)}</td></tr>`);
+  return `<section><h2>Open points</h2><table class="list"><colgroup><col style="width:14%"><col style="width:43%"><col></colgroup><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col"></th></tr></thead><tbody>${markup.join('')}</tbody></table></section>`;
 }
 
 const sharedText = { 'carried over': 'not confirmed for this sheet', 'no source': 'nothing says where these come from' } as const;
@@ -145,14 +154,14 @@ function stepLink(number: string): string {
   return number === '' ? '' : `<a href="#step-${escapeHtml(number)}">${escapeHtml(number)}</a>`;
 }
 
-function assumptions(model: RecordModel): string {
+function assumptions(model: RecordModel, symbols: Symbols): string {
   if (model.assumptions.length === 0) return '';
   const rows = model.assumptions.map((each) => {
     const value = each.symbol === '' ? '' : `${renderTex(each.symbol, false)} = ${escapeHtml(each.value)}`;
     const confirm = each.toConfirm === '' ? '' : ` <span class="tag open">to be confirmed: ${escapeHtml(each.toConfirm)}</span>`;
-    return `<tr><td>${stepLink(each.number)}</td><td>${escapeHtml(each.text)}${confirm}</td><td>${value}</td><td>${escapeHtml(each.source)}</td></tr>`;
+    return `<tr><td>${stepLink(each.number)}</td><td>${inlineText(each.text, symbols)}${confirm}</td><td>${value}</td><td>${inlineText(each.source, symbols)}</td></tr>`;
   });
-  return `<section><h2>Assumptions</h2><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Assumption</th><th scope="col">Value</th><th scope="col">Source</th></tr></thead><tbody>${rows.join('')}</tbody></table></section>`;
+  return `<section><h2>Assumptions</h2><table class="list"><colgroup><col style="width:7%"><col><col style="width:22%"><col style="width:25%"></colgroup><thead><tr><th scope="col">Step</th><th scope="col">Assumption</th><th scope="col">Value</th><th scope="col">Source</th></tr></thead><tbody>${rows.join('')}</tbody></table></section>`;
 }
 
 function references(model: RecordModel): string {

@@ -6,7 +6,7 @@
 // Not here: what a printed number is (numerals.ts), how the line looks and what it comes to (src/formula).
 
 import { type Expr, evaluateWith, explain, type Lookup, nothingTaken, readLiteral, type Taken } from '../formula/index.ts';
-import { type Numeral, numeralInUnit, type Unit } from '../quantity/index.ts';
+import { type Numeral, numeralInUnit, one, readNumeral, type Unit } from '../quantity/index.ts';
 
 /** Coherent SI of a quantity as it stands at this place of a line. */
 export type Numbers = (name: string, inExponent: boolean) => number;
@@ -23,7 +23,7 @@ export interface Line {
   readonly decisive: readonly Operand[];
   /** The result is a whole number: the outermost operation is floor, ceil or round. */
   readonly whole: boolean;
-  /** The whole formula is one name, or one number that stands as it is: a quoted quantity, an entry of a table. */
+  /** The whole formula is one name, or one number that stands as it is: a literal, a quoted quantity, an entry of a table. */
   readonly alone?: { readonly kind: 'name'; readonly name: string } | { readonly kind: 'number'; readonly numeral: Numeral; readonly unit: Unit };
   value(numbers: Numbers): number;
   /** True where these numbers decide as the true values do. */
@@ -193,10 +193,14 @@ function isWhole(expr: Expr, taken: Taken): boolean {
   return expr.kind === 'call' && jumps.has(expr.name);
 }
 
-/** The numeral of a formula that is nothing but a name, a quoted quantity or an entry of a table. */
+/** What a formula is that is nothing but a name, a literal, a quoted quantity or an entry of a table. */
 function aloneIn(expr: Expr, taken: Taken, decimalSign: '.' | ','): Pick<Line, 'alone'> {
   if (expr.kind === 'parens') return aloneIn(expr.inner, taken, decimalSign);
   if (expr.kind === 'name') return { alone: { kind: 'name', name: expr.name } };
+  if (expr.kind === 'number') {
+    const read = readNumeral(expr.text, '.');
+    return read.ok ? { alone: { kind: 'number', numeral: read.value, unit: one } } : {};
+  }
   if (expr.kind === 'quoted') {
     const read = readLiteral(expr.text, decimalSign);
     return read.ok ? { alone: { kind: 'number', numeral: read.value.numeral, unit: read.value.unit } } : {};
