@@ -168,7 +168,7 @@ class Engine implements Calculation {
     const taken = this.takeCells(next, sameReading, retyped);
     const stale = taken.fresh;
     const renumbered = !sameRows || taken.headings;
-    if (renumbered) this.renumber(next, stale);
+    const retold = renumbered ? this.renumber(next, stale) : [];
     const names = !sameRows || taken.named ? this.resolve(stale) : new Set<string>();
     this.relink(stale, names, sameRows);
     if (!sameRows) {
@@ -189,6 +189,7 @@ class Engine implements Calculation {
     this.columns.build();
     this.plan = makePlan(this.nodes, this.graph, this.columns);
     this.run();
+    for (const node of retold) if (this.byId.get(node.cell.id) === node && node.failed.length > 0) this.explainCases(node);
   }
 
   /** Matches nodes with the cells of the next sheet and reads what is new. */
@@ -228,15 +229,16 @@ class Engine implements Calculation {
     return { fresh, restyled, removed, named, headings };
   }
 
-  /** Lines got other numbers: sentences that name them are made anew. */
-  private renumber(next: Sheet, stale: Set<Node>): void {
+  /** Lines got other numbers: sentences that name them are made anew; returns the failed cells, to be told again after the run. */
+  private renumber(next: Sheet, stale: Set<Node>): readonly Node[] {
     const before = this.numbers;
     this.numbers = lineNumbers(next);
-    if (sameNumbers(before, this.numbers)) return;
+    if (sameNumbers(before, this.numbers)) return [];
     for (const node of this.nodes) {
       node.snapshot = undefined;
-      if (node.failed.length > 0 || node.placed.some((problem) => namesLines.has(problem.code))) stale.add(node);
+      if (node.placed.some((problem) => namesLines.has(problem.code))) stale.add(node);
     }
+    return this.nodes.filter((node) => node.failed.length > 0);
   }
 
   /** Names were given, taken or moved: returns those that another cell answers to now, and all of them where one was misspelt. */
@@ -247,7 +249,7 @@ class Engine implements Calculation {
     this.names = resolved;
     this.twice = resolved.twice;
     for (const node of this.nodes) {
-      if (twiceBefore.has(node.cell.id) !== this.twice.has(node.cell.id) || misspelt(node, resolved)) stale.add(node);
+      if (twiceBefore.get(node.cell.id)?.message !== this.twice.get(node.cell.id)?.message || misspelt(node, resolved)) stale.add(node);
     }
     const changed = new Set<string>();
     for (const [old, now] of [[before.quantities, resolved.quantities], [before.tables, resolved.tables]] as const) {
@@ -405,8 +407,10 @@ class Engine implements Calculation {
     for (let entry = 0; entry < entries; entry += 1) before[entry] = columns.memory[first + entry]!;
     this.compute(node);
     if (node.failed.length > 0) this.plan.mode[at] = mode.careful;
-    this.ranNodes[this.ranCount] = index;
-    this.ranCount += 1;
+    if (!node.broken) {
+      this.ranNodes[this.ranCount] = index;
+      this.ranCount += 1;
+    }
     for (let entry = 0; entry < entries; entry += 1) {
       const was = before[entry]!;
       const is = columns.memory[first + entry]!;
@@ -423,7 +427,10 @@ class Engine implements Calculation {
     const index = order[at]!;
     this.moved[index] = 1;
     this.outdated[index] = 1;
-    for (let edge = userStart[index]!; edge < userStart[index + 1]!; edge += 1) this.stale[place[userList[edge]!]!] = 1;
+    for (let edge = userStart[index]!; edge < userStart[index + 1]!; edge += 1) {
+      const user = place[userList[edge]!]!;
+      if (user > at) this.stale[user] = 1; // within a loop nothing runs anyway
+    }
   }
 
   private compute(node: Node): void {
