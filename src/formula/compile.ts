@@ -3,14 +3,16 @@
 // 1. Each formula becomes one contiguous range; ranges run in any order that respects what they read.
 // 2. Only formulas that have passed the inference are compiled; anything else is our own fault and throws.
 // 3. Parts of constants are computed here with the arithmetic of the run, unless they come out infinite or NaN.
-// 4. Scratch is a stack that every range begins anew. Operands in which trouble could vanish get scratch of their own.
+// 4. What stands twice in a formula is computed once, and kept. All other scratch is a stack that every range begins anew.
+// 5. A sum, product, difference or quotient of which one side is another of them becomes one instruction for both.
 // Not here: what the instructions do (opcode.ts, kernels.ts), lazy evaluation (explain.ts).
 
 import { apply, constantOf, isE, power, powerForm, type PowerForm } from './arithmetic.ts';
 import type { BinaryOperator, Expr } from './expr.ts';
 import { readLiteral } from './literal.ts';
-import { compareOp, functionOp, hiding, op } from './opcode.ts';
+import { compareOp, functionOp, innerFirst, innerLast, op } from './opcode.ts';
 import type { Program, ProgramTable, Range } from './program.ts';
+import { Shared } from './shared.ts';
 import { columnOf, directionOf, type TableData } from './table.ts';
 
 export interface Names {
@@ -23,10 +25,14 @@ export interface Names {
   readonly decimalSign?: '.' | ',';
 }
 
-/** A slot, or scratch: −1 − 2k the watched column k, −2 − 2k the stack column k. */
+/** A slot, or scratch: −1 − 2k the kept column k, −2 − 2k the stack column k. */
 type Operand = number;
-const watched = (k: number): Operand => -1 - 2 * k;
+type Binary = Extract<Expr, { kind: 'binary' }>;
+type Basic = Exclude<BinaryOperator, '^'>;
+const kept = (k: number): Operand => -1 - 2 * k;
 const stacked = (k: number): Operand => -2 - 2 * k;
+/** Where a result is to go: a slot, the next kept column, or the stack. */
+type Place = number | 'kept' | 'stack';
 
 const powerOp: { readonly [form in Exclude<PowerForm, 'self' | 'general'>]: number } = {
   square: op.square, cube: op.cube, fourth: op.fourth, inverse: op.inverse, 'inverse square': op.inverseSquare, root: op.sqrt,
@@ -41,11 +47,19 @@ export class ProgramBuilder {
   readonly #texts = new Map<string, number>();
   readonly #tables: ProgramTable[] = [];
   readonly #tableNumbers = new Map<TableData, Map<string, number>>();
+  readonly #shareAcross: boolean;
+  #shared = new Shared();
+  #keptOf = new Map<number, Operand>();
   #slotCount = 0;
-  #mostWatched = 0;
-  #mostStacked = 0;
-  #watched = 0;
+  #kept = 0;
+  #mostKept = 0;
   #stacked = 0;
+  #mostStacked = 0;
+
+  /** With `shareAcross`, what stands in several formulas is computed once: then all ranges must run, in the order of adding. */
+  constructor(shareAcross = false) {
+    this.#shareAcross = shareAcross;
+  }
 
   /** The column of a key, a new one where the key is new. */
   slotOf(key: string): number {
@@ -67,18 +81,33 @@ export class ProgramBuilder {
 
   /** Appends the instructions that compute `expr` into the column `dest`. */
   add(expr: Expr, dest: number, names: Names): Range {
+    if (!this.#shareAcross) {
+      this.#shared = new Shared();
+      this.#keptOf = new Map();
+      this.#kept = 0;
+    }
+    this.#shared.count(expr);
+    return this.#append(expr, dest, names);
+  }
+
+  /** Appends several formulas; what stands in more than one of them is computed once where the builder shares across. */
+  addAll(formulas: readonly { readonly expr: Expr; readonly dest: number }[], names: Names): Range[] {
+    if (!this.#shareAcross) return formulas.map(({ expr, dest }) => this.add(expr, dest, names));
+    for (const { expr } of formulas) this.#shared.count(expr);
+    return formulas.map(({ expr, dest }) => this.#append(expr, dest, names));
+  }
+
+  #append(expr: Expr, dest: number, names: Names): Range {
     const start = this.#code.length;
-    this.#watched = 0;
     this.#stacked = 0;
     this.#emit(expr, names, dest);
-    this.#mostWatched = Math.max(this.#mostWatched, this.#watched);
-    return { start, end: this.#code.length, dest, watched: this.#watched };
+    return { start, end: this.#code.length, dest, watched: 0 };
   }
 
   /** The program so far. More may be added afterwards and built again: slots of keys and constants stay, ranges too. */
   build(): Program {
     const watchBase = this.#slotCount;
-    const stackBase = watchBase + this.#mostWatched;
+    const stackBase = watchBase + this.#mostKept;
     const code = new Int32Array(this.#code.length);
     for (let at = 0; at < code.length; at++) {
       const word = this.#code[at]!;
@@ -100,181 +129,204 @@ export class ProgramBuilder {
   }
 
   /** The constant to use instead of an operation on constants, if its value is an ordinary number. */
-  #folded(value: number, dest: number | undefined): Operand | undefined {
-    return Number.isFinite(value) ? this.#moved(this.#constant(value), dest) : undefined;
+  #folded(value: number, place: Place): Operand | undefined {
+    return Number.isFinite(value) ? this.#moved(this.#constant(value), place) : undefined;
   }
 
-  #moved(operand: Operand, dest: number | undefined): Operand {
-    if (dest === undefined) return operand;
-    this.#code.push(op.copy, dest, operand, 0, 0);
+  #moved(operand: Operand, place: Place): Operand {
+    return typeof place === 'number' ? this.#instruction(op.copy, place, operand) : operand;
+  }
+
+  #instruction(operation: number, place: Place, a: Operand, b = 0, c = 0): Operand {
+    const dest = typeof place === 'number' ? place : place === 'kept' ? kept(this.#kept++) : stacked(this.#stacked++);
+    this.#mostKept = Math.max(this.#mostKept, this.#kept);
+    this.#mostStacked = Math.max(this.#mostStacked, this.#stacked);
+    this.#code.push(operation, dest, a, b, c);
     return dest;
   }
 
-  /** Where a result goes: the destination, a watched column, or the stack. */
-  #place(dest: number | undefined, watch: boolean): Operand {
-    if (dest !== undefined) return dest;
-    if (watch) return watched(this.#watched++);
-    const place = this.#stacked++;
-    this.#mostStacked = Math.max(this.#mostStacked, this.#stacked);
-    return stacked(place);
+  /** Computes `expr`; what stands more than once goes to a kept column, and from there to where it is wanted. */
+  #emit(expr: Expr, names: Names, place: Place = 'stack'): Operand {
+    const number = this.#shared.repeated(expr);
+    if (number === undefined) return this.#compute(expr, names, place);
+    const known = this.#keptOf.get(number);
+    if (known !== undefined) return this.#moved(known, place);
+    const mark = this.#stacked;
+    const operand = this.#compute(expr, names, typeof place === 'number' ? place : 'kept');
+    this.#stacked = mark;
+    this.#keptOf.set(number, operand);
+    return operand;
   }
 
-  #instruction(operation: number, dest: number | undefined, watch: boolean, a: Operand, b = 0, c = 0): Operand {
-    const place = this.#place(dest, watch);
-    this.#code.push(operation, place, a, b, c);
-    return place;
-  }
-
-  #emit(expr: Expr, names: Names, dest?: number, watch = false): Operand {
+  #compute(expr: Expr, names: Names, place: Place): Operand {
     switch (expr.kind) {
       case 'number':
-        return this.#moved(this.#constant(expr.value), dest);
+        return this.#moved(this.#constant(expr.value), place);
       case 'constant':
-        return this.#moved(this.#constant(expr.name === 'pi' ? Math.PI : Math.E), dest);
+        return this.#moved(this.#constant(expr.name === 'pi' ? Math.PI : Math.E), place);
       case 'quoted': {
         const read = readLiteral(expr.text, names.decimalSign ?? '.');
         if (!read.ok) throw new Error(`a formula with an unreadable literal was compiled: ${read.problem.message}`);
-        return this.#moved(this.#constant(read.value.si), dest);
+        return this.#moved(this.#constant(read.value.si), place);
       }
       case 'name':
-        return this.#moved(names.slot(expr.name), dest);
+        return this.#moved(names.slot(expr.name), place);
       case 'parens':
-        return this.#emit(expr.inner, names, dest, watch);
+        return this.#compute(expr.inner, names, place);
       case 'minus':
-        return this.#unary(op.minus, (x) => -x, expr.inner, names, dest, watch);
+        return this.#unary(op.minus, (x) => -x, expr.inner, names, place);
       case 'not':
-        return this.#unary(op.not, (x) => 1 - x, expr.inner, names, dest, watch);
+        return this.#unary(op.not, (x) => 1 - x, expr.inner, names, place);
       case 'logic': {
         const mark = this.#stacked;
         const left = this.#emit(expr.left, names);
         const right = this.#emit(expr.right, names);
         this.#stacked = mark;
-        return this.#instruction(expr.operator === 'and' ? op.and : op.or, dest, watch, left, right);
+        return this.#instruction(expr.operator === 'and' ? op.and : op.or, place, left, right);
       }
       case 'binary':
-        return this.#binary(expr, names, dest, watch);
+        return expr.operator === '^' ? this.#power(expr, names, place) : this.#basic(expr, expr.operator, names, place);
       case 'compare':
-        return this.#compare(expr, names, dest, watch);
+        return this.#compare(expr, names, place);
       case 'choose': {
         const mark = this.#stacked;
         const test = this.#emit(expr.test, names);
         const then = this.#emit(expr.then, names);
         const otherwise = this.#emit(expr.otherwise, names);
         this.#stacked = mark;
-        return this.#instruction(op.choose, dest, watch, test, then, otherwise);
+        return this.#instruction(op.choose, place, test, then, otherwise);
       }
       case 'call':
-        return this.#call(expr, names, dest, watch);
+        return this.#call(expr, names, place);
       case 'table':
-        return this.#lookUp(expr, names, dest, watch);
+        return this.#lookUp(expr, names, place);
     }
   }
 
-  #unary(operation: number, compute: (x: number) => number, inner: Expr, names: Names, dest: number | undefined, watch: boolean): Operand {
+  #unary(operation: number, compute: (x: number) => number, inner: Expr, names: Names, place: Place): Operand {
     const mark = this.#stacked;
-    const a = this.#emit(inner, names, undefined, hides(operation, 1));
+    const a = this.#emit(inner, names);
     this.#stacked = mark;
     const constant = this.#constantOfSlot.get(a);
-    const folded = constant === undefined ? undefined : this.#folded(compute(constant), dest);
-    return folded ?? this.#instruction(operation, dest, watch, a);
+    const folded = constant === undefined ? undefined : this.#folded(compute(constant), place);
+    return folded ?? this.#instruction(operation, place, a);
   }
 
-  #binary(expr: Extract<Expr, { kind: 'binary' }>, names: Names, dest: number | undefined, watch: boolean): Operand {
-    if (expr.operator === '^') {
-      if (isE(expr.left)) return this.#unary(op.exp, Math.exp, expr.right, names, dest, watch);
-      const form = powerForm(constantOf(expr.right));
-      if (form === 'self') return this.#emit(expr.left, names, dest, watch);
-      if (form !== 'general') return this.#unary(powerOp[form], (x) => power(x, 0, form), expr.left, names, dest, watch);
-    }
-    const operation = generalOp[expr.operator];
+  #power(expr: Binary, names: Names, place: Place): Operand {
+    if (isE(expr.left)) return this.#unary(op.exp, Math.exp, expr.right, names, place);
+    const form = powerForm(constantOf(expr.right));
+    if (form === 'self') return this.#emit(expr.left, names, place);
+    if (form !== 'general') return this.#unary(powerOp[form], (x) => power(x, 0, form), expr.left, names, place);
     const mark = this.#stacked;
-    const a = this.#emit(expr.left, names, undefined, hides(operation, 1));
-    const b = this.#emit(expr.right, names, undefined, hides(operation, 2));
+    const a = this.#emit(expr.left, names);
+    const b = this.#emit(expr.right, names);
     this.#stacked = mark;
     const x = this.#constantOfSlot.get(a);
     const y = this.#constantOfSlot.get(b);
-    if (x !== undefined && y !== undefined) {
-      const folded = this.#folded(compute(expr.operator, x, y), dest);
-      if (folded !== undefined) return folded;
-    }
-    // Sums and products are the same either way round: the constant goes to the right.
-    if (y !== undefined) return this.#instruction(rightConstantOp[operation] ?? operation, dest, watch, a, b);
-    if (x !== undefined) {
-      if (operation === op.add || operation === op.multiply) return this.#instruction(rightConstantOp[operation]!, dest, watch, b, a);
-      return this.#instruction(leftConstantOp[operation] ?? operation, dest, watch, a, b);
-    }
-    return this.#instruction(operation, dest, watch, a, b);
+    const folded = x === undefined || y === undefined ? undefined : this.#folded(x ** y, place);
+    return folded ?? this.#instruction(op.power, place, a, b);
   }
 
-  #compare(expr: Extract<Expr, { kind: 'compare' }>, names: Names, dest: number | undefined, watch: boolean): Operand {
+  #basic(expr: Binary, operator: Basic, names: Names, place: Place): Operand {
+    const mark = this.#stacked;
+    const left = this.#inner(expr.left);
+    const right = left ? undefined : this.#inner(expr.right);
+    const inner = left ?? right;
+    if (inner) {
+      const outside = left ? expr.right : expr.left;
+      const a = this.#emit(inner.left, names);
+      const b = this.#emit(inner.right, names);
+      const c = this.#emit(outside, names);
+      this.#stacked = mark;
+      const x = this.#constantOfSlot.get(a);
+      const y = this.#constantOfSlot.get(b);
+      // Constants inside are folded; then there is only one step left.
+      if (x !== undefined && y !== undefined && Number.isFinite(apply2(inner.operator, x, y))) {
+        const d = this.#constant(apply2(inner.operator, x, y));
+        return left ? this.#step(operator, d, c, place) : this.#step(operator, c, d, place);
+      }
+      return this.#instruction((left ? innerFirst : innerLast)[inner.operator][operator], place, a, b, c);
+    }
+    const a = this.#emit(expr.left, names);
+    const b = this.#emit(expr.right, names);
+    this.#stacked = mark;
+    return this.#step(operator, a, b, place);
+  }
+
+  /** The side of a sum or product as a sum or product itself, where it can become one instruction with it. */
+  #inner(side: Expr): (Binary & { readonly operator: Basic }) | undefined {
+    const expr = side.kind === 'parens' ? side.inner : side;
+    if (expr.kind === 'parens') return this.#inner(expr);
+    if (expr.kind !== 'binary' || expr.operator === '^') return undefined;
+    if (this.#shared.repeated(expr) !== undefined || constantOf(expr) !== undefined) return undefined;
+    return expr as Binary & { readonly operator: Basic };
+  }
+
+  #step(operator: Basic, a: Operand, b: Operand, place: Place): Operand {
+    const x = this.#constantOfSlot.get(a);
+    const y = this.#constantOfSlot.get(b);
+    if (x !== undefined && y !== undefined) {
+      const folded = this.#folded(apply2(operator, x, y), place);
+      if (folded !== undefined) return folded;
+    }
+    if (y !== undefined) return this.#instruction(rightConstantOp[operator], place, a, b);
+    if (x === undefined) return this.#instruction(basicOp[operator], place, a, b);
+    // Sums and products are the same either way round: the constant goes to the right.
+    return operator === '+' || operator === '*'
+      ? this.#instruction(rightConstantOp[operator], place, b, a)
+      : this.#instruction(operator === '-' ? op.subtractFromK : op.divideIntoK, place, a, b);
+  }
+
+  #compare(expr: Extract<Expr, { kind: 'compare' }>, names: Names, place: Place): Operand {
     const text = expr.sides.some((side) => isText(side, names));
     const mark = this.#stacked;
-    const sides = expr.sides.map((side) => (text ? this.#text(side, names) : this.#emit(side, names, undefined, true)));
+    const sides = expr.sides.map((side) => (text ? this.#text(side, names) : this.#emit(side, names)));
+    const pair = (index: number, to: Place): Operand =>
+      this.#instruction(compareOp[expr.operators[index]!], to, sides[index]!, sides[index + 1]!);
+    const last = expr.operators.length - 1;
     let all: Operand | undefined;
-    for (const [index, operator] of expr.operators.entries()) {
-      const last = index === expr.operators.length - 1;
-      const alone = last && all === undefined;
-      const one = this.#instruction(compareOp[operator], alone ? dest : undefined, alone && watch, sides[index]!, sides[index + 1]!);
-      if (all !== undefined) {
-        this.#stacked = mark;
-        all = this.#instruction(op.and, last ? dest : undefined, last && watch, all, one);
-      } else {
-        all = one;
-      }
+    for (let index = 0; index < last; index++) {
+      const next = pair(index, 'stack');
+      // All pairs count, as all sides must have a value: the product keeps what a plain `and` would skip.
+      all = all === undefined ? next : this.#instruction(op.multiply, 'stack', all, next);
     }
-    if (dest === undefined && !watch) this.#stacked = mark + 1;
-    else this.#stacked = mark;
-    return all!;
+    const final = all === undefined ? undefined : pair(last, 'stack');
+    this.#stacked = mark;
+    return final === undefined ? pair(last, place) : this.#instruction(op.multiply, place, all!, final);
   }
 
   /** The column or constant of a text's number. */
   #text(expr: Expr, names: Names): Operand {
     if (expr.kind === 'parens') return this.#text(expr.inner, names);
-    return expr.kind === 'quoted' ? this.#constant(this.textNumber(expr.text)) : this.#emit(expr, names, undefined, true);
+    return expr.kind === 'quoted' ? this.#constant(this.textNumber(expr.text)) : this.#emit(expr, names);
   }
 
-  #call(expr: Extract<Expr, { kind: 'call' }>, names: Names, dest: number | undefined, watch: boolean): Operand {
+  #call(expr: Extract<Expr, { kind: 'call' }>, names: Names, place: Place): Operand {
     const { name, args } = expr;
     if (name !== 'min' && name !== 'max' && name !== 'hypot' && name !== 'atan2') {
-      return this.#unary(functionOp[name], (x) => apply(name, x), args[0]!, names, dest, watch);
+      return this.#unary(functionOp[name], (x) => apply(name, x), args[0]!, names, place);
     }
     const mark = this.#stacked;
-    const operands = args.map((argument) => this.#emit(argument, names, undefined, name !== 'hypot'));
-    this.#stacked = mark;
-    if (operands.length === 1) return this.#moved(operands[0]!, dest);
-    if (name === 'hypot' && operands.length > 2) return this.#hypot(operands, dest, watch);
-    const operation = name === 'min' ? op.min : name === 'max' ? op.max : name === 'atan2' ? op.atan2 : op.hypot;
-    return this.#chain(operation, operands, dest, watch);
-  }
-
-  /** ((a, b), c), … : the last result goes to its place, those before to the stack above the operands. */
-  #chain(operation: number, operands: readonly Operand[], dest: number | undefined, watch: boolean): Operand {
+    const operands = args.map((argument) => this.#emit(argument, names));
+    if (operands.length === 1) return this.#moved(operands[0]!, place);
+    const operation = { min: op.min, max: op.max, atan2: op.atan2, hypot: op.hypot }[name];
+    // ((a, b), c), …; hypot takes three at once, as the library function does.
+    let from = 1;
     let result = operands[0]!;
-    const mark = this.#stacked;
-    for (let index = 1; index < operands.length; index++) {
+    if (name === 'hypot' && operands.length > 2) {
+      from = 3;
+      if (operands.length === 3) this.#stacked = mark;
+      result = this.#instruction(op.hypot3, operands.length === 3 ? place : 'stack', operands[0]!, operands[1]!, operands[2]!);
+    }
+    for (let index = from; index < operands.length; index++) {
       const last = index === operands.length - 1;
-      this.#stacked = mark + (last ? 0 : stackedAmong(operands));
-      result = this.#instruction(operation, last ? dest : undefined, last && watch, result, operands[index]!);
+      if (last) this.#stacked = mark;
+      result = this.#instruction(operation, last ? place : 'stack', result, operands[index]!);
     }
     return result;
   }
 
-  #hypot(operands: readonly Operand[], dest: number | undefined, watch: boolean): Operand {
-    const mark = this.#stacked;
-    const more = operands.length > 3;
-    this.#stacked = mark + (more ? stackedAmong(operands) : 0);
-    const first = this.#instruction(op.hypot3, more ? undefined : dest, !more && watch, operands[0]!, operands[1]!, operands[2]!);
-    if (!more) return first;
-    let result = first;
-    for (let index = 3; index < operands.length; index++) {
-      const last = index === operands.length - 1;
-      this.#stacked = mark + (last ? 0 : stackedAmong(operands));
-      result = this.#instruction(op.hypot, last ? dest : undefined, last && watch, result, operands[index]!);
-    }
-    return result;
-  }
-
-  #lookUp(expr: Extract<Expr, { kind: 'table' }>, names: Names, dest: number | undefined, watch: boolean): Operand {
+  #lookUp(expr: Extract<Expr, { kind: 'table' }>, names: Names, place: Place): Operand {
     const table = names.table(expr.table);
     if (table === undefined) throw new Error(`a formula with an unknown table was compiled: ${expr.table}`);
     const number = this.#tableNumber(table, expr);
@@ -283,7 +335,7 @@ export class ProgramBuilder {
     const key = byText ? this.#text(expr.key, names) : this.#emit(expr.key, names);
     this.#stacked = mark;
     const operation = expr.name === 'interpolate' ? op.interpolate : byText ? op.entryOfText : op.entryOfNumber;
-    return this.#instruction(operation, dest, watch, key, number);
+    return this.#instruction(operation, place, key, number);
   }
 
   #tableNumber(table: TableData, expr: Extract<Expr, { kind: 'table' }>): number {
@@ -315,24 +367,12 @@ export class ProgramBuilder {
   }
 }
 
-const hides = (operation: number, bit: 1 | 2): boolean => ((hiding.get(operation) ?? 0) & bit) !== 0;
-
-/** How much of the stack the operands hold. */
-function stackedAmong(operands: readonly Operand[]): number {
-  return operands.filter((operand) => operand < 0 && operand % 2 === 0).length;
-}
-
-const generalOp: { readonly [operator in BinaryOperator]: number } = {
-  '+': op.add, '-': op.subtract, '*': op.multiply, '/': op.divide, '^': op.power,
-};
-const rightConstantOp: { readonly [operation: number]: number } = {
-  [op.add]: op.addK, [op.subtract]: op.subtractK, [op.multiply]: op.multiplyK, [op.divide]: op.divideK,
-};
-const leftConstantOp: { readonly [operation: number]: number } = {
-  [op.subtract]: op.subtractFromK, [op.divide]: op.divideIntoK,
+const basicOp: { readonly [operator in Basic]: number } = { '+': op.add, '-': op.subtract, '*': op.multiply, '/': op.divide };
+const rightConstantOp: { readonly [operator in Basic]: number } = {
+  '+': op.addK, '-': op.subtractK, '*': op.multiplyK, '/': op.divideK,
 };
 
-function compute(operator: BinaryOperator, x: number, y: number): number {
+function apply2(operator: Basic, x: number, y: number): number {
   switch (operator) {
     case '+':
       return x + y;
@@ -342,12 +382,10 @@ function compute(operator: BinaryOperator, x: number, y: number): number {
       return x * y;
     case '/':
       return x / y;
-    case '^':
-      return x ** y;
   }
 }
 
-/** The parens-free kernel of "is this side a text": a choice, or an entry of a text column. */
+/** True for a choice, and for an entry of a column of texts. */
 function isText(expr: Expr, names: Names): boolean {
   switch (expr.kind) {
     case 'parens':
@@ -372,13 +410,13 @@ export interface CompiledFormulas {
   textNumber(text: string): number;
 }
 
-/** Formulas in an order in which each reads only inputs and results before it, compiled into one program. */
+/** Formulas in an order in which each reads only inputs and results before it, compiled into one program that is run as a whole. */
 export function compileFormulas(
   formulas: readonly { readonly key: string; readonly expr: Expr }[],
   inputs: readonly string[],
   names: Omit<Names, 'slot'>,
 ): CompiledFormulas {
-  const builder = new ProgramBuilder();
+  const builder = new ProgramBuilder(true);
   for (const input of inputs) builder.slotOf(input);
   const all: Names = {
     slot: (name) => builder.slotOf(name),
@@ -386,6 +424,6 @@ export function compileFormulas(
     table: (name) => names.table(name),
     ...(names.decimalSign && { decimalSign: names.decimalSign }),
   };
-  const ranges = formulas.map(({ key, expr }) => builder.add(expr, builder.slotOf(key), all));
+  const ranges = builder.addAll(formulas.map(({ key, expr }) => ({ expr, dest: builder.slotOf(key) })), all);
   return { program: builder.build(), ranges, slot: (key) => builder.slotOf(key), textNumber: (text) => builder.textNumber(text) };
 }

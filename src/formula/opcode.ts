@@ -1,9 +1,10 @@
 // The instructions of a compiled formula: what the numbers in a program mean.
 //
 // 1. An instruction is five integers: operation, destination slot, operand slots a, b, c (unused ones are 0).
-// 2. The list is closed: kernels.ts has one kernel and run.ts one case for each operation.
+// 2. The list is closed: there is one kernel (kernels.ts, kernels-fused.ts) and one case in run.ts for each operation.
 // 3. For lookups b is the number of a table of the program, not a slot.
 // 4. `addK` and the like compute what `add` does; their operand K is a constant, read once for a whole column.
+// 5. Two steps in one: `multiplyAdd` is (a*b) + c, `subtractByMultiply` is c − (a*b). Each step rounds by itself.
 // Not here: which instructions a formula becomes (compile.ts).
 
 import type { CompareOperator, FunctionName } from './expr.ts';
@@ -66,6 +67,30 @@ export const op = {
   divideK: 52,
   subtractFromK: 53,
   divideIntoK: 54,
+  addAdd: 55,
+  addSubtract: 56,
+  addMultiply: 57,
+  addDivide: 58,
+  subtractAdd: 59,
+  subtractSubtract: 60,
+  subtractMultiply: 61,
+  subtractDivide: 62,
+  multiplyAdd: 63,
+  multiplySubtract: 64,
+  multiplyMultiply: 65,
+  multiplyDivide: 66,
+  divideAdd: 67,
+  divideSubtract: 68,
+  divideMultiply: 69,
+  divideDivide: 70,
+  subtractByAdd: 71,
+  subtractBySubtract: 72,
+  subtractByMultiply: 73,
+  subtractByDivide: 74,
+  divideByAdd: 75,
+  divideBySubtract: 76,
+  divideByMultiply: 77,
+  divideByDivide: 78,
 } as const;
 
 export const operationCount = Object.keys(op).length;
@@ -82,13 +107,21 @@ export const compareOp: { readonly [operator in CompareOperator]: number } = {
   '<': op.less, '<=': op.lessEqual, '>': op.greater, '>=': op.greaterEqual, '==': op.equal, '!=': op.unequal,
 };
 
-/**
- * Operands that can hide trouble, as bits (1 for a, 2 for b): an operand that is not finite may still give a finite result
- * (x/∞ = 0, atan ∞, min, comparisons, NaN^0). Everywhere else ∞ and NaN show in the result.
- */
-export const hiding: ReadonlyMap<number, number> = new Map([
-  [op.divide, 2], [op.power, 3], [op.inverse, 1], [op.inverseSquare, 1], [op.exp, 1], [op.sign, 1], [op.atan, 1], [op.tanh, 1],
-  [op.min, 3], [op.max, 3], [op.atan2, 3],
-  [op.less, 3], [op.lessEqual, 3], [op.greater, 3], [op.greaterEqual, 3], [op.equal, 3], [op.unequal, 3],
-  [op.divideIntoK, 2],
-]);
+type Basic = '+' | '-' | '*' | '/';
+type Pairs = { readonly [inner in Basic]: { readonly [outer in Basic]: number } };
+
+/** (a inner b) outer c. */
+export const innerFirst: Pairs = {
+  '+': { '+': op.addAdd, '-': op.addSubtract, '*': op.addMultiply, '/': op.addDivide },
+  '-': { '+': op.subtractAdd, '-': op.subtractSubtract, '*': op.subtractMultiply, '/': op.subtractDivide },
+  '*': { '+': op.multiplyAdd, '-': op.multiplySubtract, '*': op.multiplyMultiply, '/': op.multiplyDivide },
+  '/': { '+': op.divideAdd, '-': op.divideSubtract, '*': op.divideMultiply, '/': op.divideDivide },
+};
+
+/** c outer (a inner b); sums and products are the same either way round. */
+export const innerLast: Pairs = {
+  '+': { '+': op.addAdd, '-': op.subtractByAdd, '*': op.addMultiply, '/': op.divideByAdd },
+  '-': { '+': op.subtractAdd, '-': op.subtractBySubtract, '*': op.subtractMultiply, '/': op.divideBySubtract },
+  '*': { '+': op.multiplyAdd, '-': op.subtractByMultiply, '*': op.multiplyMultiply, '/': op.divideByMultiply },
+  '/': { '+': op.divideAdd, '-': op.subtractByDivide, '*': op.divideMultiply, '/': op.divideByDivide },
+};

@@ -1,10 +1,9 @@
 // A compiled program: instructions over columns of one memory.
 //
 // 1. Slot s is the column memory[s*width .. s*width + width). Slots are given out once and stay: first come quantities and
-//    constants in the order of need, last the scratch that every cell uses anew.
+//    constants in the order of need, from watchBase on what each range uses for itself.
 // 2. Constants are columns filled once (fillConstants); their first entry is what the K-operations read.
-// 3. `watched` scratch holds, after a cell's range has run, the operands in which an infinity or NaN could have vanished:
-//    the cell is in order exactly where its destination and its watched columns are finite.
+// 3. A range has no value in an entry exactly where its destination is not finite: the operations let no trouble vanish.
 // Not here: compiling (compile.ts), running (run.ts).
 
 export interface ProgramTable {
@@ -14,18 +13,19 @@ export interface ProgramTable {
   readonly direction: 1 | -1 | 0;
 }
 
-/** The instructions of one formula: [start, end) in `code`, and how many watched columns it leaves. */
+/** The instructions of one formula: [start, end) in `code`, and the slot of its result. */
 export interface Range {
   readonly start: number;
   readonly end: number;
   readonly dest: number;
-  readonly watched: number;
+  /** Always 0: nothing has to be watched beside the result. */
+  readonly watched: 0;
 }
 
 export interface Program {
   readonly code: Int32Array;
   readonly slots: number;
-  /** First watched slot; the watched columns of a range are watchBase .. watchBase + range.watched. */
+  /** All slots before it are columns of keys and constants. */
   readonly watchBase: number;
   readonly constants: readonly { readonly slot: number; readonly value: number }[];
   readonly tables: readonly ProgramTable[];
@@ -53,23 +53,13 @@ export function allFinite(memory: Float64Array, width: number, count: number, fr
   return trouble === 0;
 }
 
-/** Whether a range that has just run is in order in all of the first `count` entries. */
-export function inOrder(program: Program, memory: Float64Array, width: number, count: number, range: Range): boolean {
-  return (
-    allFinite(memory, width, count, range.dest, range.dest + 1) &&
-    (range.watched === 0 || allFinite(memory, width, count, program.watchBase, program.watchBase + range.watched))
-  );
+/** Whether a range that has just run has a value in each of the first `count` entries. */
+export function inOrder(_program: Program, memory: Float64Array, width: number, count: number, range: Range): boolean {
+  return allFinite(memory, width, count, range.dest, range.dest + 1);
 }
 
-/**
- * Marks with 1 the entries in which a range that has just run is not in order; entries already marked stay.
- * `flags` has at least `count` entries.
- */
-export function markTrouble(program: Program, memory: Float64Array, width: number, count: number, range: Range, flags: Uint8Array): void {
-  if (inOrder(program, memory, width, count, range)) return;
-  for (let i = 0; i < count; i++) {
-    let trouble = memory[range.dest * width + i]! * 0;
-    for (let k = 0; k < range.watched; k++) trouble += memory[(program.watchBase + k) * width + i]! * 0;
-    if (trouble !== 0) flags[i] = 1;
-  }
+/** Marks with 1 the entries in which a range that has just run has no value; entries already marked stay. */
+export function markTrouble(_program: Program, memory: Float64Array, width: number, count: number, range: Range, flags: Uint8Array): void {
+  const from = range.dest * width;
+  for (let i = 0; i < count; i++) if (memory[from + i]! * 0 !== 0) flags[i] = 1;
 }

@@ -2,7 +2,8 @@
 //
 // 1. Nothing is allocated while running.
 // 2. Up to `few` entries are computed entry by entry, which spares the loop of each kernel; more by one kernel an instruction.
-// 3. Both branches of a choice are computed and one is selected: errors are nobody's business here (explain.ts).
+// 3. Both branches of a choice are computed and one is selected. A result that is not finite means that the formula has no value
+//    there; why, tells explain.ts. What an infinite operand could hide is made NaN as kernels.ts says.
 
 import { roundEven } from './arithmetic.ts';
 import { entryOfText, kernels } from './kernels.ts';
@@ -66,17 +67,20 @@ function runOne(
         break;
       case op.multiply:
       case op.multiplyK:
-      case op.and:
         m[d] = x * m[b * width + entry]!;
         break;
       case op.divide:
       case op.divideK:
-      case op.divideIntoK:
-        m[d] = x / m[b * width + entry]!;
+      case op.divideIntoK: {
+        const y = m[b * width + entry]!;
+        m[d] = x / y - (y - y);
         break;
-      case op.power:
-        m[d] = x ** m[b * width + entry]!;
+      }
+      case op.power: {
+        const y = m[b * width + entry]!;
+        m[d] = x ** y - (x - x) - (y - y);
         break;
+      }
       case op.square:
         m[d] = x * x;
         break;
@@ -89,13 +93,13 @@ function runOne(
         break;
       }
       case op.inverse:
-        m[d] = 1 / x;
+        m[d] = 1 / x - (x - x);
         break;
       case op.inverseSquare:
-        m[d] = 1 / (x * x);
+        m[d] = 1 / (x * x) - (x - x);
         break;
       case op.exp:
-        m[d] = Math.exp(x);
+        m[d] = Math.exp(x) - (x - x);
         break;
       case op.ln:
         m[d] = Math.log(x);
@@ -113,7 +117,7 @@ function runOne(
         m[d] = Math.abs(x);
         break;
       case op.sign:
-        m[d] = Math.sign(x);
+        m[d] = Math.sign(x) - (x - x);
         break;
       case op.sin:
         m[d] = Math.sin(x);
@@ -131,7 +135,7 @@ function runOne(
         m[d] = Math.acos(x);
         break;
       case op.atan:
-        m[d] = Math.atan(x);
+        m[d] = Math.atan(x) - (x - x);
         break;
       case op.sinh:
         m[d] = Math.sinh(x);
@@ -140,7 +144,7 @@ function runOne(
         m[d] = Math.cosh(x);
         break;
       case op.tanh:
-        m[d] = Math.tanh(x);
+        m[d] = Math.tanh(x) - (x - x);
         break;
       case op.floor:
         m[d] = Math.floor(x);
@@ -151,45 +155,68 @@ function runOne(
       case op.round:
         m[d] = roundEven(x);
         break;
-      case op.min:
-        m[d] = Math.min(x, m[b * width + entry]!);
+      case op.min: {
+        const y = m[b * width + entry]!;
+        m[d] = Math.min(x, y) - (x - x) - (y - y);
         break;
-      case op.max:
-      case op.or:
-        m[d] = Math.max(x, m[b * width + entry]!);
+      }
+      case op.max: {
+        const y = m[b * width + entry]!;
+        m[d] = Math.max(x, y) - (x - x) - (y - y);
         break;
+      }
       case op.hypot:
         m[d] = Math.hypot(x, m[b * width + entry]!);
         break;
       case op.hypot3:
         m[d] = Math.hypot(x, m[b * width + entry]!, m[code[at + 4]! * width + entry]!);
         break;
-      case op.atan2:
-        m[d] = Math.atan2(x, m[b * width + entry]!);
+      case op.atan2: {
+        const y = m[b * width + entry]!;
+        m[d] = Math.atan2(x, y) - (x - x) - (y - y);
         break;
-      case op.less:
-        m[d] = x < m[b * width + entry]! ? 1 : 0;
+      }
+      case op.less: {
+        const y = m[b * width + entry]!;
+        m[d] = (x < y ? 1 : 0) - (x - x) - (y - y);
         break;
-      case op.lessEqual:
-        m[d] = x <= m[b * width + entry]! ? 1 : 0;
+      }
+      case op.lessEqual: {
+        const y = m[b * width + entry]!;
+        m[d] = (x <= y ? 1 : 0) - (x - x) - (y - y);
         break;
-      case op.greater:
-        m[d] = x > m[b * width + entry]! ? 1 : 0;
+      }
+      case op.greater: {
+        const y = m[b * width + entry]!;
+        m[d] = (x > y ? 1 : 0) - (x - x) - (y - y);
         break;
-      case op.greaterEqual:
-        m[d] = x >= m[b * width + entry]! ? 1 : 0;
+      }
+      case op.greaterEqual: {
+        const y = m[b * width + entry]!;
+        m[d] = (x >= y ? 1 : 0) - (x - x) - (y - y);
         break;
-      case op.equal:
-        m[d] = x === m[b * width + entry]! ? 1 : 0;
+      }
+      case op.equal: {
+        const y = m[b * width + entry]!;
+        m[d] = (x === y ? 1 : 0) - (x - x) - (y - y);
         break;
-      case op.unequal:
-        m[d] = x !== m[b * width + entry]! ? 1 : 0;
+      }
+      case op.unequal: {
+        const y = m[b * width + entry]!;
+        m[d] = (x !== y ? 1 : 0) - (x - x) - (y - y);
         break;
+      }
       case op.not:
         m[d] = 1 - x;
         break;
+      case op.and:
+        m[d] = x === 0 ? 0 : m[b * width + entry]! - (x - x);
+        break;
+      case op.or:
+        m[d] = x === 0 ? m[b * width + entry]! : x;
+        break;
       case op.choose:
-        m[d] = x !== 0 ? m[b * width + entry]! : m[code[at + 4]! * width + entry]!;
+        m[d] = x === 0 ? m[code[at + 4]! * width + entry]! : m[b * width + entry]! - (x - x);
         break;
       case op.interpolate: {
         const { keys, values, direction } = tables[b]!;
@@ -205,6 +232,104 @@ function runOne(
       case op.entryOfText:
         m[d] = entryOfText(tables[b]!.values, x);
         break;
+      case op.addAdd:
+        m[d] = x + m[b * width + entry]! + m[code[at + 4]! * width + entry]!;
+        break;
+      case op.addSubtract:
+        m[d] = x + m[b * width + entry]! - m[code[at + 4]! * width + entry]!;
+        break;
+      case op.addMultiply:
+        m[d] = (x + m[b * width + entry]!) * m[code[at + 4]! * width + entry]!;
+        break;
+      case op.addDivide: {
+        const z = m[code[at + 4]! * width + entry]!;
+        m[d] = (x + m[b * width + entry]!) / z - (z - z);
+        break;
+      }
+      case op.subtractAdd:
+        m[d] = x - m[b * width + entry]! + m[code[at + 4]! * width + entry]!;
+        break;
+      case op.subtractSubtract:
+        m[d] = x - m[b * width + entry]! - m[code[at + 4]! * width + entry]!;
+        break;
+      case op.subtractMultiply:
+        m[d] = (x - m[b * width + entry]!) * m[code[at + 4]! * width + entry]!;
+        break;
+      case op.subtractDivide: {
+        const z = m[code[at + 4]! * width + entry]!;
+        m[d] = (x - m[b * width + entry]!) / z - (z - z);
+        break;
+      }
+      case op.multiplyAdd:
+        m[d] = x * m[b * width + entry]! + m[code[at + 4]! * width + entry]!;
+        break;
+      case op.multiplySubtract:
+        m[d] = x * m[b * width + entry]! - m[code[at + 4]! * width + entry]!;
+        break;
+      case op.multiplyMultiply:
+        m[d] = x * m[b * width + entry]! * m[code[at + 4]! * width + entry]!;
+        break;
+      case op.multiplyDivide: {
+        const z = m[code[at + 4]! * width + entry]!;
+        m[d] = x * m[b * width + entry]! / z - (z - z);
+        break;
+      }
+      case op.divideAdd: {
+        const y = m[b * width + entry]!;
+        m[d] = x / y + m[code[at + 4]! * width + entry]! - (y - y);
+        break;
+      }
+      case op.divideSubtract: {
+        const y = m[b * width + entry]!;
+        m[d] = x / y - m[code[at + 4]! * width + entry]! - (y - y);
+        break;
+      }
+      case op.divideMultiply: {
+        const y = m[b * width + entry]!;
+        m[d] = x / y * m[code[at + 4]! * width + entry]! - (y - y);
+        break;
+      }
+      case op.divideDivide: {
+        const y = m[b * width + entry]!;
+        const z = m[code[at + 4]! * width + entry]!;
+        m[d] = x / y / z - (y - y) - (z - z);
+        break;
+      }
+      case op.subtractByAdd:
+        m[d] = m[code[at + 4]! * width + entry]! - (x + m[b * width + entry]!);
+        break;
+      case op.subtractBySubtract:
+        m[d] = m[code[at + 4]! * width + entry]! - (x - m[b * width + entry]!);
+        break;
+      case op.subtractByMultiply:
+        m[d] = m[code[at + 4]! * width + entry]! - x * m[b * width + entry]!;
+        break;
+      case op.subtractByDivide: {
+        const y = m[b * width + entry]!;
+        m[d] = m[code[at + 4]! * width + entry]! - x / y - (y - y);
+        break;
+      }
+      case op.divideByAdd: {
+        const divisor = x + m[b * width + entry]!;
+        m[d] = m[code[at + 4]! * width + entry]! / divisor - (divisor - divisor);
+        break;
+      }
+      case op.divideBySubtract: {
+        const divisor = x - m[b * width + entry]!;
+        m[d] = m[code[at + 4]! * width + entry]! / divisor - (divisor - divisor);
+        break;
+      }
+      case op.divideByMultiply: {
+        const divisor = x * m[b * width + entry]!;
+        m[d] = m[code[at + 4]! * width + entry]! / divisor - (divisor - divisor);
+        break;
+      }
+      case op.divideByDivide: {
+        const y = m[b * width + entry]!;
+        const divisor = x / y - (y - y);
+        m[d] = m[code[at + 4]! * width + entry]! / divisor - (divisor - divisor);
+        break;
+      }
       default:
         throw new Error(`no operation has the number ${code[at]}`);
     }
