@@ -1,7 +1,7 @@
 // Conversion to and from SI: exact, rounded once, and back to the decimal that was meant.
 
 import fc from 'fast-check';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import {
   exactOfNumeral,
   fromSI,
@@ -15,6 +15,9 @@ import {
   unitOf,
 } from '../../src/quantity/index.ts';
 import { stepsApart } from './doubles.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 const units = [...unitNames(), 'MPa·m^(1/2)', 'in/°F', '°²', 'rad/°'];
 const runs = { seed: 42, numRuns: 1500, verbose: 1 } as const;

@@ -1,7 +1,7 @@
 // Exact numbers and their one rounding.
 
 import fc from 'fast-check';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import {
   decimalsOfPi,
   exactOfText,
@@ -13,6 +13,9 @@ import {
 } from '../../src/quantity/exact.ts';
 import { divideE, doubleOf, equalE, exactOf, exactOfDouble, multiplyE, powerE, rational } from '../../src/quantity/index.ts';
 import { lastBit, stepsApart } from './doubles.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 const runs = { seed: 20261201, numRuns: 2000, verbose: 1 } as const;
 const finite = fc.double({ noNaN: true, noDefaultInfinity: true });

@@ -7,12 +7,15 @@
 //    every step, so its own output may be off by two units of the last place.
 // Not here: published tables (nist-sp811.test.ts).
 
-import { beforeAll, describe, expect, test } from 'vitest';
+import { beforeAll, describe, expect, test, vi } from 'vitest';
 import { symbolOfText, unitRows } from '../../src/quantity/catalogue.ts';
 import { baseSymbols, readUnit, readValue, type Unit, unitNames, unitOf } from '../../src/quantity/index.ts';
 import { prefixes } from '../../src/quantity/unit-row.ts';
 import { stepsApart } from './doubles.ts';
 import { Definitions, runUnits } from './gnu-definitions.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 /** Names the program has for our symbols; the others are spelled alike. */
 const names = new Map([

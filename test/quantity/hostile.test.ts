@@ -1,8 +1,11 @@
 // Texts made to break things end in one clear problem, quickly.
 
 import fc from 'fast-check';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import { nearestUnits, type Problem, readNumeral, readRange, readUnit, readValue } from '../../src/quantity/index.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 const megabyte = 1_000_000;
 const hostile: readonly [string, string][] = [

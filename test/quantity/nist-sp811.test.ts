@@ -3,7 +3,7 @@
 // Sources stand beside the values. Every expectation was printed in a source or worked out from its exact definitions outside
 // this program; none was copied from its output.
 
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import {
   doubleOfNumeral,
   fromSI,
@@ -16,6 +16,9 @@ import {
   unitOf,
 } from '../../src/quantity/index.ts';
 import { publishedFactors } from './nist-sp811.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 const si = (text: string): number => {
   const value = readValue(text, { decimalSign: '.' });

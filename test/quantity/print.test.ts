@@ -2,7 +2,7 @@
 
 import fc from 'fast-check';
 import katex from 'katex';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import { allSpellings } from '../../src/quantity/catalogue.ts';
 import {
   doubleOfNumeral,
@@ -23,6 +23,9 @@ import {
   unitNames,
   unitOf,
 } from '../../src/quantity/index.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 const point = { decimalSign: '.' } as const;
 const comma = { decimalSign: ',' } as const;

@@ -1,7 +1,7 @@
 // Rounding of decimal numerals against published tables.
 
 import fc from 'fast-check';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import {
   doubleOfNumeral,
   numeralOfDouble,
@@ -11,6 +11,9 @@ import {
   roundAtPlace,
   roundSignificant,
 } from '../../src/quantity/index.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 const numeral = (text: string) => {
   const read = readNumeral(text, '.');

@@ -1,7 +1,7 @@
 // Unit texts: what is read, how it is printed, and what is refused with what to write instead.
 
 import fc from 'fast-check';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import { allSpellings, symbolOfText, unitRows } from '../../src/quantity/catalogue.ts';
 import {
   coherentUnit,
@@ -15,6 +15,9 @@ import {
   unitOf,
 } from '../../src/quantity/index.ts';
 import { prefixes } from '../../src/quantity/unit-row.ts';
+
+// Thousands of random cases: on a busy machine more than the usual five seconds.
+vi.setConfig({ testTimeout: 60_000 });
 
 describe('the catalogue', () => {
   test('no spelling, prefixed forms included, stands for two units', () => {
