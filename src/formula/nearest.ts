@@ -4,51 +4,67 @@
 // The cost is bounded: at most `mostCandidates` are compared, long words not at all.
 // Not here: units (the unit catalogue has its own).
 
-const mostCandidates = 5000;
+const mostCandidates = 4000;
 const longestName = 64;
+const mostProposals = 3;
 
 /** Up to three candidates that are near enough to be meant, nearest first. */
 export function nearestNames(name: string, candidates: Iterable<string>): string[] {
   if (name.length === 0 || name.length > longestName) return [];
   const wanted = fold(name);
-  const limit = name.length <= 2 ? 1 : name.length <= 5 ? 2 : 3;
-  const found: { readonly candidate: string; readonly distance: number; readonly order: number }[] = [];
-  let order = 0;
+  let limit = name.length <= 2 ? 1 : name.length <= 5 ? 2 : 3;
+  const longest = limit;
+  const best: { readonly candidate: string; readonly distance: number }[] = [];
+  let seen = 0;
   for (const candidate of candidates) {
-    if (++order > mostCandidates) break;
-    if (candidate === name || Math.abs(candidate.length - name.length) > limit) continue;
+    if (++seen > mostCandidates) break;
+    if (candidate === name || Math.abs(candidate.length - name.length) > longest) continue;
     const folded = fold(candidate);
     // Words that differ by capitals or by `_` alone are nearest of all.
     const distance = folded === wanted ? 0 : editDistance(wanted, folded, limit);
     // Half of a word exchanged is another word.
-    if (distance <= limit && distance * 2 <= Math.max(folded.length, wanted.length)) found.push({ candidate, distance, order });
+    if (distance > limit || distance * 2 > Math.max(folded.length, wanted.length)) continue;
+    const place = best.findIndex((each) => each.distance > distance);
+    best.splice(place < 0 ? best.length : place, 0, { candidate, distance });
+    if (best.length > mostProposals) best.pop();
+    // With enough proposals only a nearer one counts.
+    if (best.length === mostProposals) limit = Math.min(limit, (best.at(-1)?.distance ?? 0) - 1);
+    if (limit < 0) break;
   }
-  found.sort((a, b) => a.distance - b.distance || a.order - b.order);
-  return found.slice(0, 3).map((f) => f.candidate);
+  return best.map((each) => each.candidate);
 }
 
 function fold(name: string): string {
   return name.toLowerCase().replaceAll('_', '');
 }
 
-/** Restricted Damerau–Levenshtein distance; anything beyond `limit` is limit + 1. */
+// Three rows of the table of distances, used again and again: a proposal must not cost more than the reading of a sheet.
+const width = longestName + 8;
+const rows = [new Uint8Array(width), new Uint8Array(width), new Uint8Array(width)];
+
+/** Restricted Damerau–Levenshtein distance within a band; anything beyond `limit` is limit + 1. */
 function editDistance(a: string, b: string, limit: number): number {
-  if (Math.abs(a.length - b.length) > limit) return limit + 1;
-  let beforeLast: number[] = [];
-  let last = Array.from({ length: b.length + 1 }, (_, i) => i);
+  const beyond = limit + 1;
+  if (Math.abs(a.length - b.length) > limit) return beyond;
+  let [beforeLast, last, row] = rows as [Uint8Array, Uint8Array, Uint8Array];
+  for (let j = 0; j <= b.length; j++) last[j] = Math.min(j, beyond);
   for (let i = 1; i <= a.length; i++) {
-    const row = [i];
-    let least = i;
-    for (let j = 1; j <= b.length; j++) {
-      const same = a[i - 1] === b[j - 1];
-      let d = Math.min((last[j] ?? 0) + 1, (row[j - 1] ?? 0) + 1, (last[j - 1] ?? 0) + (same ? 0 : 1));
-      if (i > 1 && j > 1 && a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1]) d = Math.min(d, (beforeLast[j - 2] ?? 0) + 1);
-      row.push(d);
+    const from = Math.max(1, i - limit);
+    const to = Math.min(b.length, i + limit);
+    row[from - 1] = from === 1 ? Math.min(i, beyond) : beyond;
+    if (to < b.length) row[to + 1] = beyond;
+    let least = row[from - 1]!;
+    const c = a.charCodeAt(i - 1);
+    for (let j = from; j <= to; j++) {
+      const same = c === b.charCodeAt(j - 1);
+      let d = Math.min(last[j]! + 1, row[j - 1]! + 1, last[j - 1]! + (same ? 0 : 1), beyond);
+      if (i > 1 && j > 1 && c === b.charCodeAt(j - 2) && a.charCodeAt(i - 2) === b.charCodeAt(j - 1))
+        d = Math.min(d, beforeLast[j - 2]! + 1);
+      row[j] = d;
       if (d < least) least = d;
     }
-    if (least > limit) return limit + 1;
-    beforeLast = last;
-    last = row;
+    if (least > limit) return beyond;
+    [beforeLast, last, row] = [last, row, beforeLast];
   }
-  return last[b.length] ?? limit + 1;
+  return last[b.length]!;
 }

@@ -22,7 +22,7 @@ const number = /(?:[0-9]+(?:\.[0-9]*)?|\.[0-9]+)(?:[eE][+\-−]?[0-9]+)?/y;
 const superscripts = '⁰¹²³⁴⁵⁶⁷⁸⁹';
 const superscriptRun = /[⁺⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+/y;
 const space = /[\s\u00a0\u2000-\u200a\u202f\u205f\u3000]/;
-const namePart = /[0-9_₀-₉]|\p{Mn}/u;
+const laterPart = /[₀-₉]|\p{Mn}/u;
 const doubleQuotes = '"“”„‟«»';
 const singleQuotes = "'‘’‚‛";
 const words = new Set(['and', 'or', 'not']);
@@ -88,7 +88,7 @@ export function tokenize(text: string): readonly Token[] {
     const c = text[at] as string;
     if (c === ' ' || (space.test(c) && c !== '\ufeff')) {
       at++;
-    } else if (nameLetter.test(c)) {
+    } else if (isAsciiLetter(c) || (c > '\u007f' && nameLetter.test(c))) {
       readName(text, at, push);
     } else if ((c >= '0' && c <= '9') || (c === '.' && isDigit(text[at + 1]))) {
       number.lastIndex = at;
@@ -131,8 +131,8 @@ export function endsValue(token: Token | undefined): boolean {
 }
 
 function readName(text: string, from: number, push: (kind: TokenKind, normal: string, to: number) => void): void {
-  let to = from + 1;
-  while (to < text.length && (namePart.test(text[to] as string) || nameLetter.test(text[to] as string))) to++;
+  let to = from;
+  while (to < text.length && isNamePart(text[to] as string)) to++;
   const name = canonicalName(text.slice(from, to));
   push(words.has(name) ? 'operator' : 'name', name, to);
 }
@@ -153,6 +153,15 @@ function readSuperscript(text: string, from: number, push: (kind: TokenKind, nor
 function closingQuote(text: string, from: number, marks: string): number {
   for (let i = from; i < text.length; i++) if (marks.includes(text[i] as string)) return i;
   return -1;
+}
+
+function isAsciiLetter(c: string): boolean {
+  return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
+}
+
+function isNamePart(c: string): boolean {
+  if (c <= '\u007f') return isAsciiLetter(c) || isDigit(c) || c === '_';
+  return nameLetter.test(c) || laterPart.test(c);
 }
 
 function isDigit(c: string | undefined): boolean {

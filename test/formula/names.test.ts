@@ -225,6 +225,32 @@ describe('the nearest name', () => {
     expect(nearestNames('F_3', ['F_1', 'F_2', 'F_4', 'F_5'])).toHaveLength(3);
   });
 
+  test(`the distance is that of the plain definition (seed ${seed})`, () => {
+    // Restricted distance by its recursion, without bands and rows.
+    const plain = (a: string, b: string): number => {
+      if (a === '' || b === '') return Math.max(a.length, b.length);
+      const swap =
+        a.length > 1 && b.length > 1 && a.at(-1) === b.at(-2) && a.at(-2) === b.at(-1)
+          ? plain(a.slice(0, -2), b.slice(0, -2)) + 1
+          : 99;
+      return Math.min(
+        plain(a.slice(0, -1), b) + 1,
+        plain(a, b.slice(0, -1)) + 1,
+        plain(a.slice(0, -1), b.slice(0, -1)) + (a.at(-1) === b.at(-1) ? 0 : 1),
+        swap,
+      );
+    };
+    const word = fc.string({ unit: fc.constantFrom('a', 'b', 'c'), minLength: 3, maxLength: 6 });
+    fc.assert(
+      fc.property(word, word, (a, b) => {
+        const limit = a.length <= 5 ? 2 : 3;
+        const near = a !== b && plain(a, b) <= limit && plain(a, b) * 2 <= Math.max(a.length, b.length);
+        expect([a, b, nearestNames(a, [b])]).toEqual([a, b, near ? [b] : []]);
+      }),
+      { seed, numRuns: 300 },
+    );
+  }, 30_000);
+
   test('50 000 names to choose from cost milliseconds', () => {
     const many = Array.from({ length: 50_000 }, (_, i) => `quantity_${i}`);
     const start = performance.now();
