@@ -45,7 +45,8 @@ const keptCovers = new WeakMap<Cell, { readonly from: string; readonly cites: re
 function coverOf(cell: Cell, meaning: string, references: ReadonlyMap<string, Reference>): string {
   const cites = cited(cell, references);
   const kept = keptCovers.get(cell);
-  if (kept?.from === meaning && kept.cites.length === cites.length && cites.every((reference, i) => reference === kept.cites[i])) return kept.value;
+  if (kept?.from === meaning && kept.cites.length === cites.length && cites.every((reference, i) => reference === kept.cites[i]))
+    return kept.value;
   const value = asWritten({ meaning, ...wording(cell), cites });
   keptCovers.set(cell, { from: meaning, cites, value });
   return value;
@@ -89,7 +90,9 @@ function allMeanings(calculation: Calculation): string[] {
     if (loop >= 0) {
       meaningsOfLoop(members.get(loop)!, cells, uses, meanings, meaningOf);
     } else if (cell.kind === 'sought' && cell.instead !== undefined) {
-      const unknown = cells.findIndex((other) => other.kind === 'given' && canonicalName(other.name) === canonicalName(cell.instead ?? ''));
+      const unknown = cells.findIndex(
+        (other) => other.kind === 'given' && canonicalName(other.name) === canonicalName(cell.instead ?? ''),
+      );
       const varied = variedMeanings(node, unknown, uses, graph.place, made, meaningOf);
       meanings[node] = meaningOf(node, (used) => varied.get(used) ?? made(used));
     } else {
@@ -121,7 +124,11 @@ function meaningsOfLoop(
   }
   const others = [...opened.order].map((i) => loop[i]!).filter((node) => node !== sought);
   const open = new Map<number, string>([[sought, self]]);
-  for (const node of others) open.set(node, meaningOf(node, (used) => open.get(used) ?? meanings[used]!));
+  for (const node of others)
+    open.set(
+      node,
+      meaningOf(node, (used) => open.get(used) ?? meanings[used]!),
+    );
   meanings[sought] = meaningOf(sought, (used) => open.get(used) ?? meanings[used]!);
   for (const node of others) meanings[node] = meaningOf(node, (used) => meanings[used]!);
 }
@@ -144,13 +151,22 @@ function variedMeanings(
     for (const used of uses[node]!) waiting.push(used);
   }
   for (const node of [...upstream].sort((a, b) => place[a]! - place[b]!)) {
-    if (node !== unknown && uses[node]!.some((used) => varied.has(used))) varied.set(node, meaningOf(node, (used) => varied.get(used) ?? known(used)));
+    if (node !== unknown && uses[node]!.some((used) => varied.has(used)))
+      varied.set(
+        node,
+        meaningOf(node, (used) => varied.get(used) ?? known(used)),
+      );
   }
   return varied;
 }
 
 /** Used cells by name. A table that shares its name with a quantity used beside it stands under `table NAME`. */
-function named(cells: readonly Cell[], node: number, used: readonly number[], of: (used: number) => string): Record<string, string> {
+function named(
+  cells: readonly Cell[],
+  node: number,
+  used: readonly number[],
+  of: (used: number) => string,
+): Record<string, string> {
   const result = new Map<string, string>();
   for (const other of used) {
     const cell = cells[other]!;
@@ -204,7 +220,11 @@ function wording(cell: Cell): Readonly<Record<string, unknown>> {
     case 'criterion':
       return { title: cell.title, source: cell.source, justification: cell.justification, ifNotMet: cell.ifNotMet };
     case 'table':
-      return { title: cell.title, source: cell.source, titles: cell.columns.some((c) => c.title !== undefined) ? cell.columns.map((c) => c.title ?? '') : undefined };
+      return {
+        title: cell.title,
+        source: cell.source,
+        titles: cell.columns.some((c) => c.title !== undefined) ? cell.columns.map((c) => c.title ?? '') : undefined,
+      };
     case 'figure':
       return { title: cell.title, source: cell.source, image: cell.image };
     case 'derived':

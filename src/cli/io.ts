@@ -26,7 +26,10 @@ export interface Io {
   templateText(file: string): Promise<string>;
 }
 
-export function nodeIo(templates: string, streams: { readonly out: (text: string) => void; readonly err: (text: string) => void }): Io {
+export function nodeIo(
+  templates: string,
+  streams: { readonly out: (text: string) => void; readonly err: (text: string) => void },
+): Io {
   return {
     read: async (path) => utf8(path, path === '-' ? await standardInput() : await attempt('read', path, () => readFile(path))),
     write: async (path, text, options) => {
@@ -41,7 +44,8 @@ export function nodeIo(templates: string, streams: { readonly out: (text: string
     },
     out: streams.out,
     err: streams.err,
-    templateFiles: async () => (await attempt('read', templates, () => readdir(templates))).filter((file) => file.endsWith('.sheet.json')).sort(),
+    templateFiles: async () =>
+      (await attempt('read', templates, () => readdir(templates))).filter((file) => file.endsWith('.sheet.json')).sort(),
     templateText: async (file) => utf8(file, await attempt('read', file, () => readFile(join(templates, file)))),
   };
 }
@@ -81,13 +85,15 @@ function utf8(path: string, bytes: Uint8Array): string {
 
 async function standardInput(): Promise<Uint8Array> {
   const chunks: Uint8Array[] = [];
-  for await (const chunk of process.stdin) chunks.push(typeof chunk === 'string' ? new TextEncoder().encode(chunk) : (chunk as Uint8Array));
+  for await (const chunk of process.stdin)
+    chunks.push(typeof chunk === 'string' ? new TextEncoder().encode(chunk) : (chunk as Uint8Array));
   return Buffer.concat(chunks);
 }
 
 async function writeWhole(path: string, text: string, replace: boolean): Promise<void> {
   const known = await stat(path).catch(() => undefined);
-  if (known !== undefined && !replace) throw new FileTrouble(`${path}: there is such a file already; choose another name, or add --force to replace it`);
+  if (known !== undefined && !replace)
+    throw new FileTrouble(`${path}: there is such a file already; choose another name, or add --force to replace it`);
   if (known !== undefined && !known.isFile()) {
     // A device or a pipe is written to, never replaced; a folder says that it is one.
     const device = await open(path, 'w');

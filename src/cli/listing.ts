@@ -13,7 +13,13 @@ import { type Column, oneLine, problemLine, tableLines, width } from './report.t
 const widestTitle = 60;
 
 export function listing(path: string, calculation: Calculation, model: RecordModel): string {
-  const blocks = [oneLine(`${model.title} (${model.status})`), body(calculation, model), notMet(calculation, model), notConfirmed(model), warnings(path, calculation)];
+  const blocks = [
+    oneLine(`${model.title} (${model.status})`),
+    body(calculation, model),
+    notMet(calculation, model),
+    notConfirmed(model),
+    warnings(path, calculation),
+  ];
   return `${blocks.filter((block) => block !== '').join('\n\n')}\n`;
 }
 
@@ -47,7 +53,9 @@ function stepRows(step: Step): string[][] {
 /** The chosen text, once where all cases have the same. */
 function choice(step: Step): string {
   const texts = step.cases.map((each) => each.result ?? '—');
-  return texts.every((text) => text === texts[0]) ? texts[0]! : step.cases.map((each, i) => `${each.case}: ${texts[i]}`).join('; ');
+  return texts.every((text) => text === texts[0])
+    ? texts[0]!
+    : step.cases.map((each, i) => `${each.case}: ${texts[i]}`).join('; ');
 }
 
 function wrapped(text: string): string[] {
@@ -79,9 +87,10 @@ function notMet(calculation: Calculation, model: RecordModel): string {
     if (step.kind !== 'criterion' || ids.length === 0) return [];
     const state = calculation.state(step.cell);
     const consequence = state?.kind === 'criterion' ? (state.cell.ifNotMet ?? '') : '';
-    const reason = step.justification === undefined || step.justification === '' ? '' : `stands because: ${step.justification}`;
+    const reason = step.justification === undefined || step.justification === '' ? '' : `Stands because: ${step.justification}`;
     const where = calculation.cases.length > 1 ? ` (${ids.join(', ')})` : '';
-    return [oneLine([`${step.number} ${step.title}${where}`, consequence, reason].filter((part) => part !== '').join(': '))];
+    const words = [consequence, reason].filter((part) => part !== '').join(' ');
+    return [oneLine(`${step.number} ${step.title}${where}${words === '' ? '' : `: ${words}`}`)];
   });
   return lines.length === 0 ? '' : ['Not met', ...lines].join('\n');
 }
@@ -99,5 +108,7 @@ function nameOf(model: RecordModel, cell: string): string {
 function warnings(path: string, calculation: Calculation): string {
   const cells = new Map(calculation.sheet.cells.map((cell) => [cell.id, cell]));
   const found = calculation.problems().filter((problem) => problem.severity === 'warning');
-  return found.length === 0 ? '' : ['Warnings', ...found.map((problem) => problemLine(path, calculation, cells, problem))].join('\n');
+  return found.length === 0
+    ? ''
+    : ['Warnings', ...found.map((problem) => problemLine(path, calculation, cells, problem))].join('\n');
 }

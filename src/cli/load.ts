@@ -23,7 +23,11 @@ export class Refusal extends Error {
 
 export async function loadSheet(io: Io, path: string): Promise<Sheet> {
   const read = readSheet(await io.read(path));
-  if (!read.ok) throw new Refusal(read.problems.map((problem) => `${path}: ${problem.message}`), exits.fileTrouble);
+  if (!read.ok)
+    throw new Refusal(
+      read.problems.map((problem) => `${path}: ${problem.message}`),
+      exits.fileTrouble,
+    );
   return read.value;
 }
 
@@ -31,7 +35,11 @@ export async function loadSheet(io: Io, path: string): Promise<Sheet> {
 export function withValues(sheet: Sheet, assignments: readonly Assignment[], path: string): Sheet {
   if (assignments.length === 0) return sheet;
   const assigned = setValues(sheet, assignments);
-  if (!assigned.ok) throw new Refusal(assigned.problems.map((problem) => `${path}: ${problem.message}`), exits.wrongUsage);
+  if (!assigned.ok)
+    throw new Refusal(
+      assigned.problems.map((problem) => `${path}: ${problem.message}`),
+      exits.wrongUsage,
+    );
   return assigned.value;
 }
 
@@ -55,5 +63,7 @@ export async function loadTemplate(io: Io, id: string): Promise<Sheet> {
   if (found) return found;
   const ids = templates.map((sheet) => sheet.templateInfo!.id);
   const near = nearestNames(id, ids)[0];
-  throw new UsageTrouble(`there is no template ${clip(id)}; ${near === undefined ? `there are ${ids.join(', ')}` : `did you mean ${near}?`}`);
+  throw new UsageTrouble(
+    `there is no template ${clip(id)}; ${near === undefined ? `there are ${ids.join(', ')}` : `did you mean ${near}?`}`,
+  );
 }

@@ -28,7 +28,10 @@ export async function run(argv: readonly string[], io: Io): Promise<number> {
     io.err(help);
     return exits.wrongUsage;
   }
-  if (word === 'help' || argv.slice(0, argv.indexOf('--') < 0 ? undefined : argv.indexOf('--')).some((each) => each === '--help' || each === '-h')) {
+  if (
+    word === 'help' ||
+    argv.slice(0, argv.indexOf('--') < 0 ? undefined : argv.indexOf('--')).some((each) => each === '--help' || each === '-h')
+  ) {
     io.out(help);
     return exits.fine;
   }

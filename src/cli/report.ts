@@ -7,7 +7,12 @@
 import { canonicalName } from '../formula/index.ts';
 import type { Calculation, Cell, CellProblem } from '../sheet/index.ts';
 
-export function problemLine(path: string, calculation: Calculation, cells: ReadonlyMap<string, Cell>, problem: CellProblem): string {
+export function problemLine(
+  path: string,
+  calculation: Calculation,
+  cells: ReadonlyMap<string, Cell>,
+  problem: CellProblem,
+): string {
   const cell = cells.get(problem.cell);
   const name = cell && 'name' in cell ? canonicalName(cell.name) : '';
   const words = [calculation.numberOf(problem.cell), name, `(${problem.cell})`].filter((word) => word !== '');

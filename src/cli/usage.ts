@@ -39,7 +39,9 @@ const commands = ['templates', 'new', 'calc', 'record', 'help'];
 export function unknownCommand(word: string): UsageTrouble {
   if (later.has(word)) return new UsageTrouble(`${word} is not in this version; tightside --help lists what is`);
   const near = nearestNames(word, commands)[0];
-  return new UsageTrouble(`there is no command ${clip(word)}${near === undefined ? '' : `; did you mean ${near}?`} tightside --help lists the commands`);
+  return new UsageTrouble(
+    `there is no command ${clip(word)}; ${near === undefined ? '' : `did you mean ${near}? `}tightside --help lists the commands`,
+  );
 }
 
 type OptionName = 'json' | 'force' | 'output' | 'set' | 'case' | 'to';
@@ -62,15 +64,29 @@ export interface Arguments {
 }
 
 /** Reads the arguments behind the command; `takes` lists its options, `names` its positional arguments. */
-export function readArguments(command: string, argv: readonly string[], takes: readonly OptionName[], names: readonly string[]): Arguments {
+export function readArguments(
+  command: string,
+  argv: readonly string[],
+  takes: readonly OptionName[],
+  names: readonly string[],
+): Arguments {
   const options = Object.fromEntries(takes.map((name) => [name, optionTypes[name]]));
   const read = parsed(command, argv, options, takes);
   if (read.positionals.length > names.length) {
-    throw new UsageTrouble(`${command} takes ${names.length === 0 ? 'no argument' : names.join(' ')}; ${clip(read.positionals[names.length]!)} is one too many (a value with spaces wants quotes)`);
+    throw new UsageTrouble(
+      `${command} takes ${names.length === 0 ? 'no argument' : names.join(' ')}; ${clip(read.positionals[names.length]!)} is one too many (a value with spaces wants quotes)`,
+    );
   }
   const missing = names[read.positionals.length];
   if (missing !== undefined) throw new UsageTrouble(`${command} wants ${missing}; tightside --help shows how`);
-  const { json, force, output, to, set, case: one } = read.values as {
+  const {
+    json,
+    force,
+    output,
+    to,
+    set,
+    case: one,
+  } = read.values as {
     readonly json?: boolean;
     readonly force?: boolean;
     readonly output?: string;
@@ -88,7 +104,12 @@ export function readArguments(command: string, argv: readonly string[], takes: r
   };
 }
 
-function parsed(command: string, argv: readonly string[], options: Record<string, (typeof optionTypes)[OptionName]>, takes: readonly string[]) {
+function parsed(
+  command: string,
+  argv: readonly string[],
+  options: Record<string, (typeof optionTypes)[OptionName]>,
+  takes: readonly string[],
+) {
   try {
     return parseArgs({ args: [...argv], options, allowPositionals: true, strict: true });
   } catch (thrown) {
@@ -99,7 +120,9 @@ function parsed(command: string, argv: readonly string[], options: Record<string
     if (code === 'ERR_PARSE_ARGS_UNKNOWN_OPTION') {
       const near = nearestNames(option.replace(/^-+/, ''), takes)[0];
       const all = takes.map((name) => (name === 'output' ? '-o' : `--${name}`)).join(', ');
-      throw new UsageTrouble(`${command} has no option ${clip(option)}; ${near === undefined ? `it has ${all}` : `did you mean --${near}?`}`);
+      throw new UsageTrouble(
+        `${command} has no option ${clip(option)}; ${near === undefined ? `it has ${all}` : `did you mean --${near}?`}`,
+      );
     }
     const wants = /argument missing|argument is ambiguous/.test(text) ? 'wants a value behind it' : 'takes no value';
     throw new UsageTrouble(`${option === '' ? 'an option' : option.replace(/,$/, '')} ${wants}; tightside --help shows how`);
@@ -115,7 +138,8 @@ function forAll(text: string): Assignment {
 function forOne(text: string): Assignment {
   const colon = text.indexOf(':');
   const sign = text.indexOf('=');
-  if (colon <= 0 || sign <= colon + 1) throw new UsageTrouble(`--case wants ID:NAME="VALUE", as in --case start:K_A="1.5", but got ${clip(text)}`);
+  if (colon <= 0 || sign <= colon + 1)
+    throw new UsageTrouble(`--case wants ID:NAME="VALUE", as in --case start:K_A="1.5", but got ${clip(text)}`);
   return { case: text.slice(0, colon).trim(), name: text.slice(colon + 1, sign).trim(), value: text.slice(sign + 1) };
 }
 

@@ -8,7 +8,7 @@
 import type { Cell, GivenCell, LoadCase, Sheet } from './document.ts';
 import { idPattern } from './schema.ts';
 
-export const baseCase: LoadCase = { id: 'base' };
+const baseCase: LoadCase = { id: 'base' };
 
 /** The cases that the columns of a sheet stand for, at least one. */
 export function casesOf(sheet: Sheet): readonly LoadCase[] {

@@ -115,8 +115,16 @@ export interface FigureCell extends CellBase {
   readonly source?: string;
 }
 export type Cell =
-  | HeadingCell | NoteCell | GivenCell | DerivedCell | CriterionCell | SoughtCell
-  | TableCell | DrawingCell | ChartCell | FigureCell;
+  | HeadingCell
+  | NoteCell
+  | GivenCell
+  | DerivedCell
+  | CriterionCell
+  | SoughtCell
+  | TableCell
+  | DrawingCell
+  | ChartCell
+  | FigureCell;
 
 export interface Reference {
   readonly id: string;

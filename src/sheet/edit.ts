@@ -13,7 +13,9 @@ import { renamedCells } from './rename.ts';
 /** What belongs to the sheet as a whole. */
 export type HeadKey = Exclude<keyof Sheet, 'format' | 'cells' | 'cases'>;
 /** One key of the head with its new value; null takes the key out. */
-export type SetHead = { readonly [Key in HeadKey]: { readonly kind: 'set-head'; readonly key: Key; readonly value: NonNullable<Sheet[Key]> | null } }[HeadKey];
+export type SetHead = {
+  readonly [Key in HeadKey]: { readonly kind: 'set-head'; readonly key: Key; readonly value: NonNullable<Sheet[Key]> | null };
+}[HeadKey];
 
 export type Edit =
   /** Puts the cell in the place of the one with its id. */
@@ -49,7 +51,10 @@ export function applyEdit(sheet: Sheet, edit: Edit): Edited {
     case 'insert-cell': {
       if (sheet.cells.some((cell) => cell.id === edit.cell.id)) throw new RangeError(`a cell ${edit.cell.id} is there already`);
       const at = inside(edit.at, sheet.cells.length);
-      return { sheet: { ...sheet, cells: sheet.cells.toSpliced(at, 0, edit.cell) }, inverse: { kind: 'remove-cell', id: edit.cell.id } };
+      return {
+        sheet: { ...sheet, cells: sheet.cells.toSpliced(at, 0, edit.cell) },
+        inverse: { kind: 'remove-cell', id: edit.cell.id },
+      };
     }
     case 'remove-cell': {
       const at = indexOfCell(sheet, edit.id);
@@ -125,7 +130,10 @@ function withKey(sheet: Sheet, key: keyof Sheet, value: unknown): Sheet {
   return (value === null ? rest : { ...rest, [key]: value }) as Sheet;
 }
 
-function setCasesAndCells(sheet: Sheet, next: { readonly cases: readonly LoadCase[] | null; readonly cells: readonly Cell[] }): Edited {
+function setCasesAndCells(
+  sheet: Sheet,
+  next: { readonly cases: readonly LoadCase[] | null; readonly cells: readonly Cell[] },
+): Edited {
   const cases = setCases(sheet, next.cases);
   if (next.cells.length === 0) return cases;
   const cells = setCells(cases.sheet, next.cells);

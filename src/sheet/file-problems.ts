@@ -51,7 +51,11 @@ export function faultOf(fault: JsonFault): Found {
     case 'too-many':
       return { path: place, code: 'too-many', what: `an object with more keys than a sheet can have (${fault.expected})` };
     case 'duplicate-key':
-      return { path: fault.path.slice(0, -1), code: 'duplicate-key', what: `the key \`${shorten(fault.found)}\` stands there twice (${place}); keep one` };
+      return {
+        path: fault.path.slice(0, -1),
+        code: 'duplicate-key',
+        what: `the key \`${shorten(fault.found)}\` stands there twice (${place}); keep one`,
+      };
     case 'unknown-key':
       return { path: fault.path.slice(0, -1), code: 'unknown-key', what: `unknown key \`${shorten(fault.found)}\` (${place})` };
     case 'bad-character':
@@ -77,7 +81,11 @@ export function wrongFormat(value: unknown): Found | undefined {
       what: `the sheet was written in format "${format}"; this version of the program knows "${currentFormat}". Open it with a newer version; it was left as it is`,
     };
   }
-  return { path: 'format', code: 'not-a-sheet', what: `"${shorten(format)}" is not the format of a sheet, which is "${currentFormat}"` };
+  return {
+    path: 'format',
+    code: 'not-a-sheet',
+    what: `"${shorten(format)}" is not the format of a sheet, which is "${currentFormat}"`,
+  };
 }
 
 function kindOf(value: unknown): string {
@@ -96,10 +104,15 @@ export function issueOf(issue: Issue, value: unknown): Found {
   const last = issue.path?.at(-1);
   const parent = path.slice(0, -1);
   if (last?.origin === 'key' && issue.type === 'strict_object') {
-    if (Array.isArray(last.input)) return { path: parent, code: 'wrong-type', what: 'must be an object in braces, but is a list' };
+    if (Array.isArray(last.input))
+      return { path: parent, code: 'wrong-type', what: 'must be an object in braces, but is a list' };
     const key = String(last.key);
     if (issue.expected !== 'never') return { path: parent, code: 'missing-key', what: `the key \`${key}\` is missing` };
-    return { path: parent, code: 'unknown-key', what: `unknown key \`${shorten(key)}\`${proposal(key, knownKeys(parent, value))}` };
+    return {
+      path: parent,
+      code: 'unknown-key',
+      what: `unknown key \`${shorten(key)}\`${proposal(key, knownKeys(parent, value))}`,
+    };
   }
   if (last?.origin === 'key') {
     return { path: parent, code: 'bad-value', what: `\`${shorten(String(last.key))}\` cannot be an id; ${idRule}` };
@@ -107,9 +120,14 @@ export function issueOf(issue: Issue, value: unknown): Found {
   if (issue.type === 'variant') {
     if (last === undefined || last.key !== 'kind') return wrongType(path, 'an object in braces', issue.input);
     const kinds = listed(issue.expected);
-    if (issue.input === undefined) return { path: parent, code: 'missing-key', what: `the key \`kind\` is missing; it is one of ${kinds.join(', ')}` };
+    if (issue.input === undefined)
+      return { path: parent, code: 'missing-key', what: `the key \`kind\` is missing; it is one of ${kinds.join(', ')}` };
     const shown = typeof issue.input === 'string' ? `\`${shorten(issue.input)}\`` : kindOf(issue.input);
-    return { path: parent, code: 'bad-value', what: `unknown kind ${shown}${proposal(String(issue.input), kinds, `; the kinds are ${kinds.join(', ')}`)}` };
+    return {
+      path: parent,
+      code: 'bad-value',
+      what: `unknown kind ${shown}${proposal(String(issue.input), kinds, `; the kinds are ${kinds.join(', ')}`)}`,
+    };
   }
   if (issue.type === 'picklist' || issue.type === 'literal') {
     const choices = listed(issue.expected);
@@ -161,7 +179,10 @@ function wrongType(path: JsonPath, wanted: string, input: unknown): Found {
 
 /** `("a" | "b")` as a list of a, b. */
 function listed(expected: string | null): string[] {
-  return (expected ?? '').replace(/^\(|\)$/g, '').split(' | ').map((word) => word.replace(/^"|"$/g, ''));
+  return (expected ?? '')
+    .replace(/^\(|\)$/g, '')
+    .split(' | ')
+    .map((word) => word.replace(/^"|"$/g, ''));
 }
 
 function oneOf(choices: readonly string[]): string {

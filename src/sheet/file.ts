@@ -19,10 +19,12 @@ export interface FileProblem extends Problem {
   readonly path: string;
   readonly cell?: string;
 }
-export type ReadSheet = { readonly ok: true; readonly value: Sheet } | { readonly ok: false; readonly problems: readonly FileProblem[] };
+export type ReadSheet =
+  | { readonly ok: true; readonly value: Sheet }
+  | { readonly ok: false; readonly problems: readonly FileProblem[] };
 
 /** Files beyond this many UTF-16 units are not read: a sheet of 10 000 cells has about two million. */
-export const largestFile = 64 * 1024 * 1024;
+const largestFile = 64 * 1024 * 1024;
 /** Longer texts are left at their first problem: a list of a million would take longer to make than anybody waits. */
 const longestForList = 1_000_000;
 const mostProblems = 20;
@@ -35,7 +37,11 @@ const endsReading: ReadonlySet<string> = new Set(['syntax', 'too-deep', 'too-man
 export function readSheet(text: string): ReadSheet {
   if (text.length > largestFile) {
     return refused([
-      { path: '', code: 'too-large', what: `the file has more than ${largestFile / 1024 / 1024} million characters; a sheet is text, keep pictures small` },
+      {
+        path: '',
+        code: 'too-large',
+        what: `the file has more than ${largestFile / 1024 / 1024} million characters; a sheet is text, keep pictures small`,
+      },
     ]);
   }
   const json = text.startsWith('\uFEFF') ? text.slice(1) : text;
@@ -65,7 +71,12 @@ function refused(found: readonly Found[], value?: unknown): ReadSheet {
     };
   });
   if (found.length > mostProblems) {
-    problems.push({ code: 'more', severity: 'error', path: '', message: `and ${found.length - mostProblems} more problems of this kind` });
+    problems.push({
+      code: 'more',
+      severity: 'error',
+      path: '',
+      message: `and ${found.length - mostProblems} more problems of this kind`,
+    });
   }
   return { ok: false, problems };
 }
@@ -77,7 +88,12 @@ function duplicates(sheet: Sheet): Found[] {
     for (const [index, { id }] of items.entries()) {
       const before = first.get(id);
       if (before === undefined) first.set(id, index);
-      else found.push({ path: [key, index], code: 'duplicate-id', what: `the id \`${id}\` is already that of ${key}[${before}]; give this one another` });
+      else
+        found.push({
+          path: [key, index],
+          code: 'duplicate-id',
+          what: `the id \`${id}\` is already that of ${key}[${before}]; give this one another`,
+        });
     }
   };
   look('cells', sheet.cells);

@@ -29,7 +29,7 @@ export interface Performed {
 
 export const emptyHistory: History = { past: [], future: [] };
 /** Longest pause within one run of typing, in milliseconds. */
-export const typingPause = 2000;
+const typingPause = 2000;
 
 /** Applies an edit and notes it. `key` marks typing in one place, `time` is the moment of the key stroke. */
 export function perform(
@@ -45,7 +45,8 @@ export function perform(
 
 function note(history: History, step: HistoryStep): History {
   const last = history.past.at(-1);
-  if (last && history.future.length === 0 && continues(last, step)) return { past: [...history.past.slice(0, -1), joined(last, step)], future: [] };
+  if (last && history.future.length === 0 && continues(last, step))
+    return { past: [...history.past.slice(0, -1), joined(last, step)], future: [] };
   return { past: [...history.past, step], future: [] };
 }
 

@@ -21,9 +21,9 @@ export interface JsonFault {
 }
 
 /** Deeper than any sheet: marks and log nest a few levels, a sheet four. */
-export const deepest = 64;
+const deepest = 64;
 /** More keys than any object of a sheet has: values by case are the most. */
-export const mostKeys = 10_000;
+const mostKeys = 10_000;
 const mostFaults = 20;
 /** Keys that mean something to objects of the language: never a key of a sheet. */
 const refusedKeys: ReadonlySet<string> = new Set(['__proto__', 'constructor', 'prototype']);
@@ -70,14 +70,20 @@ export function scanJson(text: string): readonly JsonFault[] {
       if (c === 34) break;
       if (c === 92) {
         plain = false;
-        const escape = text.charCodeAt(at + 1);
-        if (escape === 117) {
+        const escaped = text.charCodeAt(at + 1);
+        if (escaped === 117) {
           if (!/^[0-9A-Fa-f]{4}$/.test(text.slice(at + 2, at + 6))) stop('four hexadecimal digits after \\u');
           at += 6;
-        } else if (Number.isNaN(escape) || !'"\\/bfnrt'.includes(text[at + 1]!)) stop('one of " \\ / b f n r t u after a backslash', at + 1);
+        } else if (Number.isNaN(escaped) || !'"\\/bfnrt'.includes(text[at + 1]!))
+          stop('one of " \\ / b f n r t u after a backslash', at + 1);
         else at += 2;
       } else if (Number.isNaN(c)) stop('a closing quote', text.length);
-      else if (c < 32) stop(c === 10 || c === 13 ? 'a closing quote before the end of the line' : 'an escape such as \\t instead of a control character');
+      else if (c < 32)
+        stop(
+          c === 10 || c === 13
+            ? 'a closing quote before the end of the line'
+            : 'an escape such as \\t instead of a control character',
+        );
       else at += 1;
     }
     at += 1;
@@ -97,7 +103,8 @@ export function scanJson(text: string): readonly JsonFault[] {
     }
     const keys = new Set<string>();
     for (;;) {
-      if (text[at] !== '"') stop(keys.size > 0 && text[at] === '}' ? 'another key (no comma before a closing brace)' : 'a key in double quotes');
+      if (text[at] !== '"')
+        stop(keys.size > 0 && text[at] === '}' ? 'another key (no comma before a closing brace)' : 'a key in double quotes');
       const keyAt = at;
       const key = string();
       path.push(key);
@@ -172,7 +179,6 @@ export function scanJson(text: string): readonly JsonFault[] {
   return faults;
 }
 
-// biome-ignore lint/suspicious/noControlCharactersInRegex: they are what is looked for
 export const badCharacters = /[\p{Surrogate}\u0000-\u0008\u000b\u000c\u000e-\u001f]/gu;
 
 /** The first character that no file may hold, in words: half of a pair, NUL or another control character but tab and line ends. */

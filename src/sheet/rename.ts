@@ -15,7 +15,8 @@ export function nameFault(sheet: Sheet, typed: string, own?: string): string | u
   if (reserved.has(name)) return `“${name}” has a fixed meaning in formulas; take another name, as in ${name}_1`;
   if (!isName(name)) return `“${typed.slice(0, 60)}” is no name; a name is a letter, then letters, digits or _, as in F_1`;
   for (const cell of sheet.cells) {
-    if (cell.id !== own && definesName(cell) && canonicalName(cell.name) === name) return `${name} is already defined; names are unique in a sheet`;
+    if (cell.id !== own && definesName(cell) && canonicalName(cell.name) === name)
+      return `${name} is already defined; names are unique in a sheet`;
   }
   return undefined;
 }
@@ -75,7 +76,7 @@ function changed<Kind extends Cell>(cell: Kind, texts: Partial<Record<keyof Kind
   return differs ? { ...cell, ...texts } : cell;
 }
 
-export function renameInFormula(text: string, from: string, to: string): string {
+function renameInFormula(text: string, from: string, to: string): string {
   const tokens = tokenize(text);
   let result = '';
   let copied = 0;

@@ -141,15 +141,11 @@ const titleBlock = v.strictObject({
 export const sheetSchema = v.strictObject({
   format: v.literal(currentFormat),
   title: text,
-  templateInfo: v.exactOptional(
-    v.strictObject({ id, version: wholeFromOne, job: text, limits: v.array(text), caution: text }),
-  ),
+  templateInfo: v.exactOptional(v.strictObject({ id, version: wholeFromOne, job: text, limits: v.array(text), caution: text })),
   purpose: optionalText,
   method: optionalText,
   status: v.exactOptional(v.picklist(['in preparation', 'for checking', 'checked', 'approved', 'issued', 'superseded'])),
-  references: v.exactOptional(
-    v.array(v.strictObject({ id, document: text, edition: optionalText, title: optionalText })),
-  ),
+  references: v.exactOptional(v.array(v.strictObject({ id, document: text, edition: optionalText, title: optionalText }))),
   titleBlock: v.exactOptional(titleBlock),
   settings: v.exactOptional(
     v.strictObject({

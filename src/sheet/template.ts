@@ -9,7 +9,7 @@
 // Not here: where templates are kept (src/cli, src/view).
 
 import { canonicalName, nearestNames } from '../formula/index.ts';
-import { equalD, type Problem, readUnit, readValue, type Result, type Unit, withArticle } from '../quantity/index.ts';
+import { equalD, type Problem, type Result, readUnit, readValue, type Unit, withArticle } from '../quantity/index.ts';
 import { calculate } from './calculation.ts';
 import { casesOf } from './cases.ts';
 import type { Cell, EarlierSheet, GivenCell, Sheet, TemplateOrigin, TitleBlock } from './document.ts';
@@ -106,7 +106,9 @@ export interface Assignment {
   /** For this case alone; none: for all cases. */
   readonly case?: string;
 }
-export type Assigned = { readonly ok: true; readonly value: Sheet } | { readonly ok: false; readonly problems: readonly Problem[] };
+export type Assigned =
+  | { readonly ok: true; readonly value: Sheet }
+  | { readonly ok: false; readonly problems: readonly Problem[] };
 
 /** Sets one value; see setValues. */
 export function setValue(sheet: Sheet, name: string, value: string, options: { readonly case?: string } = {}): Result<Sheet> {
@@ -174,11 +176,20 @@ function givenNamed(sheet: Sheet, typed: string): Result<GivenCell> {
       givens.push(cell);
     } else if ((cell.kind === 'derived' || cell.kind === 'sought') && canonicalName(cell.name) === name) {
       const how = cell.kind === 'derived' ? `calculated as ${clipped(cell.formula)}` : `sought so that ${clipped(cell.where)}`;
-      return { ok: false, problem: error('computed-name', `${name} is ${how} and cannot be set; set the givens that it comes from`) };
+      return {
+        ok: false,
+        problem: error('computed-name', `${name} is ${how} and cannot be set; set the givens that it comes from`),
+      };
     }
   }
-  const near = nearestNames(name, givens.map((cell) => canonicalName(cell.name))).slice(0, 3);
-  const offer = near.length > 0 ? `; did you mean ${near.join(', ')}?` : `; its givens are ${clipped(givens.map((cell) => canonicalName(cell.name)).join(', '), 200)}`;
+  const near = nearestNames(
+    name,
+    givens.map((cell) => canonicalName(cell.name)),
+  ).slice(0, 3);
+  const offer =
+    near.length > 0
+      ? `; did you mean ${near.join(', ')}?`
+      : `; its givens are ${clipped(givens.map((cell) => canonicalName(cell.name)).join(', '), 200)}`;
   return { ok: false, problem: error('unknown-name', `the sheet has no given ${clipped(typed)}${offer}`) };
 }
 
@@ -194,7 +205,10 @@ function assignmentFault(cell: GivenCell, assignment: Assignment, sheet: Sheet, 
   const held = heldUnit(cell, decimalSign);
   if (held === undefined || equalD(held.dimension, read.value.unit.dimension)) return undefined;
   const shown = clipped(assignment.value);
-  return error('unlike-value', `${name} is ${withArticle(held)}, but ${shown} is ${withArticle(read.value.unit)}; give a value in ${held.text === '1' ? 'plain numbers' : held.text}`);
+  return error(
+    'unlike-value',
+    `${name} is ${withArticle(held)}, but ${shown} is ${withArticle(read.value.unit)}; give a value in ${held.text === '1' ? 'plain numbers' : held.text}`,
+  );
 }
 
 /** The unit that the given is declared in, else that of the value it holds. */
@@ -209,10 +223,14 @@ function heldUnit(cell: GivenCell, decimalSign: '.' | ','): Unit | undefined {
 
 /** What the sheet itself has against a value that was set: a text that is no choice, a unit that counts revolutions where none may. */
 function refusals(sheet: Sheet, set: ReadonlySet<string>): Problem[] {
-  const names = new Map(sheet.cells.flatMap((cell) => (cell.kind === 'given' ? [[cell.id, canonicalName(cell.name)] as const] : [])));
+  const names = new Map(
+    sheet.cells.flatMap((cell) => (cell.kind === 'given' ? [[cell.id, canonicalName(cell.name)] as const] : [])),
+  );
   return calculate(sheet)
     .problems()
-    .filter(({ cell, severity, field }) => severity === 'error' && set.has(cell) && (field === 'value' || field?.startsWith('byCase.')))
+    .filter(
+      ({ cell, severity, field }) => severity === 'error' && set.has(cell) && (field === 'value' || field?.startsWith('byCase.')),
+    )
     .map((problem) => ({ ...problem, message: `${names.get(problem.cell) ?? problem.cell}: ${problem.message}` }));
 }
 

@@ -9,7 +9,9 @@ const files = readdirSync(folder).filter((name) => name.endsWith('.sheet.json'))
 
 describe('golden files', () => {
   it('are all there', () => {
-    expect(files.sort()).toEqual(['all-kinds', 'decimal-comma', 'minimal', 'mixer-drive', 'one-case', 'unicode-names'].map((name) => `${name}.sheet.json`));
+    expect(files.sort()).toEqual(
+      ['all-kinds', 'decimal-comma', 'minimal', 'mixer-drive', 'one-case', 'unicode-names'].map((name) => `${name}.sheet.json`),
+    );
   });
 
   it.each(files)('%s is read and written again byte for byte', (name) => {

@@ -2,11 +2,11 @@
 
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { casesOf } from '../../src/sheet/cases.ts';
 import type { Cell, GivenCell, Sheet } from '../../src/sheet/document.ts';
 import { applyEdit, type Edit, newCellId } from '../../src/sheet/edit.ts';
-import { emptyHistory, type History, labelOf, perform, redo, undo } from '../../src/sheet/history.ts';
-import { casesOf } from '../../src/sheet/cases.ts';
 import { readSheet, writeSheet } from '../../src/sheet/file.ts';
+import { emptyHistory, type History, labelOf, perform, redo, undo } from '../../src/sheet/history.ts';
 import { aCell, aSheet, seeded } from './any-sheet.ts';
 
 /** A step of a random script: numbers that pick among what the sheet holds when the step is due. */
@@ -44,14 +44,18 @@ function editOf(sheet: Sheet, pick: Pick): Edit | undefined {
       return cell && { kind: 'move-cell', id: cell.id, to: pick.b };
     case 4:
     case 5:
-      return cell && { kind: 'set-cell', cell: cell.kind === 'given' ? { ...cell, value: pick.text } : { ...pick.cell, id: cell.id } };
+      return (
+        cell && { kind: 'set-cell', cell: cell.kind === 'given' ? { ...cell, value: pick.text } : { ...pick.cell, id: cell.id } }
+      );
     case 6:
       return { kind: 'set-head', key: 'title', value: pick.text };
     case 7:
       return { kind: 'set-head', key: 'purpose', value: pick.text === '' ? null : pick.text };
     case 8: {
       const id = fresh('case-a');
-      return cases.some((known) => known.id === id) ? undefined : { kind: 'add-case', case: { id, title: pick.text }, at: pick.b, ...(pick.typing ? { like: one.id } : {}) };
+      return cases.some((known) => known.id === id)
+        ? undefined
+        : { kind: 'add-case', case: { id, title: pick.text }, at: pick.b, ...(pick.typing ? { like: one.id } : {}) };
     }
     case 9: {
       const id = fresh('case-b');
@@ -62,9 +66,20 @@ function editOf(sheet: Sheet, pick: Pick): Edit | undefined {
     case 11:
       return { kind: 'remove-case', id: one.id };
     case 12:
-      return names.length === 0 ? undefined : { kind: 'rename-quantity', from: names[pick.a % names.length]!, to: pick.text || 'y' };
+      return names.length === 0
+        ? undefined
+        : { kind: 'rename-quantity', from: names[pick.a % names.length]!, to: pick.text || 'y' };
     default:
-      return cell && { kind: 'batch', edits: [{ kind: 'set-head', key: 'title', value: 'b' }, { kind: 'move-cell', id: cell.id, to: 0 }, { kind: 'remove-cell', id: cell.id }] };
+      return (
+        cell && {
+          kind: 'batch',
+          edits: [
+            { kind: 'set-head', key: 'title', value: 'b' },
+            { kind: 'move-cell', id: cell.id, to: 0 },
+            { kind: 'remove-cell', id: cell.id },
+          ],
+        }
+      );
   }
 }
 
@@ -99,7 +114,7 @@ describe('any script of edits', () => {
       }),
       seeded,
     );
-  });
+  }, 60_000);
 
   it('leaves cells that it does not touch as the very objects they were', () => {
     fc.assert(
@@ -112,7 +127,7 @@ describe('any script of edits', () => {
       }),
       seeded,
     );
-  });
+  }, 60_000);
 
   it('leaves a sheet that can be written and read', () => {
     fc.assert(
@@ -127,14 +142,21 @@ describe('any script of edits', () => {
       }),
       seeded,
     );
-  });
+  }, 60_000);
 });
 
-const given = (id: string, name: string, more: Partial<GivenCell> = {}): GivenCell => ({ id, kind: 'given', name, value: '1', ...more });
+const given = (id: string, name: string, more: Partial<GivenCell> = {}): GivenCell => ({
+  id,
+  kind: 'given',
+  name,
+  value: '1',
+  ...more,
+});
 const sheetOf = (...cells: Cell[]): Sheet => ({ format: 'tightside-sheet/1', title: 'T', cells });
 
 describe('renaming a quantity', () => {
-  const rename = (from: string, to: string, ...cells: Cell[]) => applyEdit(sheetOf(...cells), { kind: 'rename-quantity', from, to }).sheet.cells;
+  const rename = (from: string, to: string, ...cells: Cell[]) =>
+    applyEdit(sheetOf(...cells), { kind: 'rename-quantity', from, to }).sheet.cells;
 
   it.each([
     // formula, from, to, after
@@ -182,7 +204,10 @@ describe('renaming a quantity', () => {
 });
 
 describe('cases', () => {
-  const sheet: Sheet = { ...sheetOf(given('g1', 'K', { byCase: { run: '1', start: '1.5' } }), given('g2', 'd')), cases: [{ id: 'run' }, { id: 'start' }] };
+  const sheet: Sheet = {
+    ...sheetOf(given('g1', 'K', { byCase: { run: '1', start: '1.5' } }), given('g2', 'd')),
+    cases: [{ id: 'run' }, { id: 'start' }],
+  };
   const byCase = (edit: Edit) => (applyEdit(sheet, edit).sheet.cells[0] as GivenCell).byCase;
 
   it('a renamed case keeps its values', () => {
@@ -190,15 +215,28 @@ describe('cases', () => {
   });
   it('a removed case takes its values along, the last one the list too', () => {
     expect(byCase({ kind: 'remove-case', id: 'start' })).toEqual({ run: '1' });
-    const none = applyEdit(sheet, { kind: 'batch', edits: [{ kind: 'remove-case', id: 'start' }, { kind: 'remove-case', id: 'run' }] }).sheet;
+    const none = applyEdit(sheet, {
+      kind: 'batch',
+      edits: [
+        { kind: 'remove-case', id: 'start' },
+        { kind: 'remove-case', id: 'run' },
+      ],
+    }).sheet;
     expect(none.cases).toBeUndefined();
     expect(none.cells[0]).toEqual(given('g1', 'K'));
   });
   it('a case made like another starts with its values', () => {
-    expect(byCase({ kind: 'add-case', case: { id: 'stop' }, at: 2, like: 'start' })).toEqual({ run: '1', start: '1.5', stop: '1.5' });
+    expect(byCase({ kind: 'add-case', case: { id: 'stop' }, at: 2, like: 'start' })).toEqual({
+      run: '1',
+      start: '1.5',
+      stop: '1.5',
+    });
   });
   it('a second case makes the first one of the list: base', () => {
-    expect(applyEdit(sheetOf(), { kind: 'add-case', case: { id: 'start' }, at: 1 }).sheet.cases).toEqual([{ id: 'base' }, { id: 'start' }]);
+    expect(applyEdit(sheetOf(), { kind: 'add-case', case: { id: 'start' }, at: 1 }).sheet.cases).toEqual([
+      { id: 'base' },
+      { id: 'start' },
+    ]);
   });
 });
 
@@ -241,13 +279,24 @@ describe('history', () => {
     ['new heading “Geometry”', { kind: 'insert-cell', cell: { id: 'h1', kind: 'heading', text: 'Geometry' }, at: 0 }],
     ['title block', { kind: 'set-head', key: 'titleBlock', value: {} }],
     ['d_1 renamed d_a', { kind: 'rename-quantity', from: 'd_1', to: 'd_a' }],
-    ['2 changes', { kind: 'batch', edits: [{ kind: 'remove-cell', id: 'g1' }, { kind: 'set-head', key: 'title', value: '' }] }],
+    [
+      '2 changes',
+      {
+        kind: 'batch',
+        edits: [
+          { kind: 'remove-cell', id: 'g1' },
+          { kind: 'set-head', key: 'title', value: '' },
+        ],
+      },
+    ],
   ] as const)('is told in words: %s', (label, edit) => {
     expect(labelOf(sheetOf(given('g1', 'd_1')), edit)).toBe(label);
   });
   it('an edit of what is not there is a fault of the program', () => {
     expect(() => applyEdit(sheetOf(), { kind: 'remove-cell', id: 'g9' })).toThrow(RangeError);
     expect(() => applyEdit(sheetOf(), { kind: 'set-cells', cells: [given('g9', 'x')] })).toThrow('no cell g9');
-    expect(() => applyEdit(sheetOf(given('g1', 'a')), { kind: 'insert-cell', cell: given('g1', 'b'), at: 0 })).toThrow(RangeError);
+    expect(() => applyEdit(sheetOf(given('g1', 'a')), { kind: 'insert-cell', cell: given('g1', 'b'), at: 0 })).toThrow(
+      RangeError,
+    );
   });
 });

@@ -5,7 +5,11 @@ import { describe, expect, it } from 'vitest';
 import type { Sheet } from '../../src/sheet/document.ts';
 import { type SheetOfSchema, sheetSchema } from '../../src/sheet/schema.ts';
 
-type Deep<T> = T extends readonly (infer Item)[] ? readonly Deep<Item>[] : T extends object ? { readonly [Key in keyof T]: Deep<T[Key]> } : T;
+type Deep<T> = T extends readonly (infer Item)[]
+  ? readonly Deep<Item>[]
+  : T extends object
+    ? { readonly [Key in keyof T]: Deep<T[Key]> }
+    : T;
 type Same<A, B> = (<T>() => T extends A ? 1 : 2) extends <T>() => T extends B ? 1 : 2 ? true : false;
 /** Alike in every key, which may be left out, and in every value; `format` is any text in the type and this version's in the schema. */
 type Alike<A extends { format: string }, B extends { format: string }> = Same<Deep<Omit<A, 'format'>>, Deep<Omit<B, 'format'>>>;
@@ -38,7 +42,7 @@ describe('schema', () => {
 
   it('requires format, title and cells, and of a cell what makes it one', () => {
     expect(json.required).toEqual(['format', 'title', 'cells']);
-    const cells = (json.properties?.['cells'] as { items: { anyOf?: object[]; oneOf?: object[] } }).items;
+    const cells = (json.properties!['cells'] as { items: { anyOf?: object[]; oneOf?: object[] } }).items;
     const options = (cells.oneOf ?? cells.anyOf ?? []) as { properties: { kind: { const: string } }; required: string[] }[];
     expect(Object.fromEntries(options.map(({ properties, required }) => [properties.kind.const, required.slice(2)]))).toEqual({
       heading: ['text'],

@@ -2,7 +2,17 @@
 
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { type GivenCell, newFromSheet, newFromTemplate, readSheet, type Sheet, setValue, setValues, templateSummary, writeSheet } from '../../src/sheet/index.ts';
+import {
+  type GivenCell,
+  newFromSheet,
+  newFromTemplate,
+  readSheet,
+  type Sheet,
+  setValue,
+  setValues,
+  templateSummary,
+  writeSheet,
+} from '../../src/sheet/index.ts';
 
 const template: Sheet = {
   format: 'tightside-sheet/1',
@@ -11,14 +21,51 @@ const template: Sheet = {
   purpose: 'p',
   status: 'issued',
   references: [{ id: 'R1', document: 'D' }],
-  titleBlock: { organisation: 'O', project: 'P', documentNumber: 'CS-1', revision: 'A', date: '2026-01-01', preparedBy: 'x', documentType: 'Calculation', language: 'en' },
+  titleBlock: {
+    organisation: 'O',
+    project: 'P',
+    documentNumber: 'CS-1',
+    revision: 'A',
+    date: '2026-01-01',
+    preparedBy: 'x',
+    documentType: 'Calculation',
+    language: 'en',
+  },
   settings: { decimalSign: '.' },
   cases: [{ id: 'run' }, { id: 'start' }],
   cells: [
-    { id: 't', kind: 'table', name: 'surfaces', columns: [{ name: 'surface' }, { name: 'mu_t', unit: '1' }], rows: [['leather', '0.3'], ['rubber', '0.4']] },
-    { id: 'd', kind: 'given', name: 'd_1', value: '200 mm', unit: 'mm', basis: 'specified', source: 'S', title: 'Diameter', toConfirm: 'Q-1' },
+    {
+      id: 't',
+      kind: 'table',
+      name: 'surfaces',
+      columns: [{ name: 'surface' }, { name: 'mu_t', unit: '1' }],
+      rows: [
+        ['leather', '0.3'],
+        ['rubber', '0.4'],
+      ],
+    },
+    {
+      id: 'd',
+      kind: 'given',
+      name: 'd_1',
+      value: '200 mm',
+      unit: 'mm',
+      basis: 'specified',
+      source: 'S',
+      title: 'Diameter',
+      toConfirm: 'Q-1',
+    },
     { id: 'n', kind: 'given', name: 'n_1', value: '1450 r/min' },
-    { id: 'mu', kind: 'given', name: 'mu_1', value: '0.3 ± 0.05', distribution: 'normal', basis: 'assumed', source: 'S', range: '0.1 to 0.8' },
+    {
+      id: 'mu',
+      kind: 'given',
+      name: 'mu_1',
+      value: '0.3 ± 0.05',
+      distribution: 'normal',
+      basis: 'assumed',
+      source: 'S',
+      range: '0.1 to 0.8',
+    },
     { id: 'k', kind: 'given', name: 'K_A', value: '1.0', byCase: { start: '1.5' } },
     { id: 's', kind: 'given', name: 'surface', value: 'leather', choices: 'surfaces.surface' },
     { id: 'v', kind: 'derived', name: 'v', formula: 'pi*d_1*n_1', unit: 'm/s' },
@@ -35,7 +82,13 @@ const givenOf = (sheet: Sheet, id: string) => sheet.cells.find((cell) => cell.id
 
 describe('a sheet from a template', () => {
   it('has every given carried over, and names the template', () => {
-    expect(begun.cells.filter((cell) => cell.kind === 'given').map((cell) => cell.carriedOver)).toEqual([true, true, true, true, true]);
+    expect(begun.cells.filter((cell) => cell.kind === 'given').map((cell) => cell.carriedOver)).toEqual([
+      true,
+      true,
+      true,
+      true,
+      true,
+    ]);
     expect(begun.template).toEqual({ id: 'small', version: 3 });
     expect(newFromTemplate(template, 'ab').template).toEqual({ id: 'small', version: 3, fingerprint: 'ab' });
   });
@@ -57,7 +110,14 @@ describe('a sheet from a template', () => {
     expect(next.titleBlock).toEqual({});
   });
   it('is listed by the names of givens and results', () => {
-    expect(templateSummary(template)).toEqual({ id: 'small', version: 3, title: 'Small template', job: 'j', givens: ['d_1', 'n_1', 'mu_1', 'K_A', 'surface'], results: ['v', 'n_x'] });
+    expect(templateSummary(template)).toEqual({
+      id: 'small',
+      version: 3,
+      title: 'Small template',
+      job: 'j',
+      givens: ['d_1', 'n_1', 'mu_1', 'K_A', 'surface'],
+      results: ['v', 'n_x'],
+    });
   });
 });
 
@@ -68,22 +128,60 @@ describe('a value that is set', () => {
     return result.value;
   };
   it('is confirmed and loses basis, source and distribution; title, unit and range stay', () => {
-    expect(givenOf(set('d_1', '250 mm'), 'd')).toEqual({ id: 'd', kind: 'given', name: 'd_1', value: '250 mm', unit: 'mm', title: 'Diameter' });
-    expect(givenOf(set('μ_1', '0.28 ± 0.02'), 'mu')).toEqual({ id: 'mu', kind: 'given', name: 'mu_1', value: '0.28 ± 0.02', range: '0.1 to 0.8' });
+    expect(givenOf(set('d_1', '250 mm'), 'd')).toEqual({
+      id: 'd',
+      kind: 'given',
+      name: 'd_1',
+      value: '250 mm',
+      unit: 'mm',
+      title: 'Diameter',
+    });
+    expect(givenOf(set('μ_1', '0.28 ± 0.02'), 'mu')).toEqual({
+      id: 'mu',
+      kind: 'given',
+      name: 'mu_1',
+      value: '0.28 ± 0.02',
+      range: '0.1 to 0.8',
+    });
   });
   it('for all cases drops the values by case', () => {
     expect(givenOf(set('K_A', '1.2'), 'k')).toEqual({ id: 'k', kind: 'given', name: 'K_A', value: '1.2' });
   });
   it('for one case leaves the given carried over while the other case has the old value', () => {
-    expect(givenOf(set('K_A', '1.8', { case: 'start' }), 'k')).toEqual({ id: 'k', kind: 'given', name: 'K_A', value: '1.0', byCase: { start: '1.8' }, carriedOver: true });
+    expect(givenOf(set('K_A', '1.8', { case: 'start' }), 'k')).toEqual({
+      id: 'k',
+      kind: 'given',
+      name: 'K_A',
+      value: '1.0',
+      byCase: { start: '1.8' },
+      carriedOver: true,
+    });
   });
   it('for each case in turn confirms it', () => {
-    const both = setValues(begun, [{ name: 'K_A', value: '1.8', case: 'start' }, { name: 'K_A', value: '1.1', case: 'run' }]);
-    expect(both.ok && givenOf(both.value, 'k')).toEqual({ id: 'k', kind: 'given', name: 'K_A', value: '1.0', byCase: { start: '1.8', run: '1.1' } });
+    const both = setValues(begun, [
+      { name: 'K_A', value: '1.8', case: 'start' },
+      { name: 'K_A', value: '1.1', case: 'run' },
+    ]);
+    expect(both.ok && givenOf(both.value, 'k')).toEqual({
+      id: 'k',
+      kind: 'given',
+      name: 'K_A',
+      value: '1.0',
+      byCase: { start: '1.8', run: '1.1' },
+    });
   });
   it('first for all cases, then for one, whatever the order they are given in', () => {
-    const both = setValues(begun, [{ name: 'K_A', value: '1.8', case: 'start' }, { name: 'K_A', value: '1.1' }]);
-    expect(both.ok && givenOf(both.value, 'k')).toEqual({ id: 'k', kind: 'given', name: 'K_A', value: '1.1', byCase: { start: '1.8' } });
+    const both = setValues(begun, [
+      { name: 'K_A', value: '1.8', case: 'start' },
+      { name: 'K_A', value: '1.1' },
+    ]);
+    expect(both.ok && givenOf(both.value, 'k')).toEqual({
+      id: 'k',
+      kind: 'given',
+      name: 'K_A',
+      value: '1.1',
+      byCase: { start: '1.8' },
+    });
   });
   it('touches no other cell', () => {
     const next = set('d_1', '250 mm');
@@ -117,7 +215,11 @@ describe('a value that is set', () => {
     if (code !== undefined) expect(result.problem.code).toBe(code);
   });
   it('lists every value that cannot be set', () => {
-    const result = setValues(begun, [{ name: 'd_3', value: '1' }, { name: 'v', value: '1' }, { name: 'd_1', value: '3 mm' }]);
+    const result = setValues(begun, [
+      { name: 'd_3', value: '1' },
+      { name: 'v', value: '1' },
+      { name: 'd_1', value: '3 mm' },
+    ]);
     expect(!result.ok && result.problems.map(({ code }) => code)).toEqual(['unknown-name', 'computed-name']);
   });
 });

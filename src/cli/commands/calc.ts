@@ -26,7 +26,7 @@ export async function calc(argv: readonly string[], io: Io): Promise<number> {
   return stateExit(calculation);
 }
 
-export interface CalculationJson {
+interface CalculationJson {
   readonly title: string;
   readonly fingerprint: string;
   readonly cases: readonly string[];
@@ -37,16 +37,21 @@ export interface CalculationJson {
     readonly met: readonly (boolean | null)[];
     readonly utilisation: readonly (number | null)[];
   }[];
-  readonly problems: readonly { readonly cell: string; readonly severity: string; readonly code: string; readonly message: string }[];
+  readonly problems: readonly {
+    readonly cell: string;
+    readonly severity: string;
+    readonly code: string;
+    readonly message: string;
+  }[];
 }
-export interface QuantityJson {
+interface QuantityJson {
   readonly unit: string;
   readonly values: readonly (number | null)[];
   readonly si: readonly (number | null)[];
   readonly printed: readonly (string | null)[];
 }
 
-export function calculationJson(calculation: Calculation, model: RecordModel): CalculationJson {
+function calculationJson(calculation: Calculation, model: RecordModel): CalculationJson {
   const steps = new Map(model.steps.map((step) => [step.cell, step]));
   const quantities = new Map<string, QuantityJson>();
   const criteria: CalculationJson['criteria'][number][] = [];

@@ -23,5 +23,6 @@ export async function newSheet(argv: readonly string[], io: Io): Promise<number>
 async function refuseNewer(io: Io, path: string): Promise<void> {
   if (path === '-' || !(await io.exists(path))) return;
   const read = await io.read(path).then(readSheet, () => undefined);
-  if (read !== undefined && !read.ok && read.problems[0]?.code === 'newer-format') throw new FileTrouble(`${path}: ${read.problems[0].message}`);
+  if (read !== undefined && !read.ok && read.problems[0]?.code === 'newer-format')
+    throw new FileTrouble(`${path}: ${read.problems[0].message}`);
 }

@@ -14,7 +14,9 @@ export async function templates(argv: readonly string[], io: Io): Promise<number
     return exits.fine;
   }
   const blocks = summaries.map(({ id, version, title, job, givens, results }) =>
-    [`${id}  (version ${version})`, `  ${title}`, `  ${job}`, ...wrapped('givens', givens), ...wrapped('results', results)].join('\n'),
+    [`${id}  (version ${version})`, `  ${title}`, `  ${job}`, ...wrapped('givens', givens), ...wrapped('results', results)].join(
+      '\n',
+    ),
   );
   io.out(`${blocks.join('\n\n')}\n`);
   return exits.fine;

@@ -1,4 +1,4 @@
-// Writes dist/sheet.schema.json, the description of a sheet file for other programs (JSON Schema, draft 2020-12), from schema.ts.
+// Writes dist/sheet.schema.json, the description of a sheet file for other programs (JSON Schema, draft 2020-12), from src/sheet/schema.ts.
 
 import { mkdirSync, writeFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
