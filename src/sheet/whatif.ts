@@ -8,7 +8,6 @@
 
 import { compileFormulas, explain, type Formula, inOrder, type Lookup, makeMemory, markTrouble, run } from '../formula/index.ts';
 import type { Columns } from './columns.ts';
-import type { LoadCase } from './document.ts';
 import type { Graph } from './graph.ts';
 import type { Names } from './names.ts';
 import { computedFormulas, type Node } from './node.ts';
@@ -37,7 +36,6 @@ export interface Surface {
   readonly graph: Graph;
   readonly columns: Columns;
   readonly byId: ReadonlyMap<string, Node>;
-  readonly cases: readonly LoadCase[];
   lookup(caseIndex: number): Lookup;
 }
 
