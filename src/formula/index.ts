@@ -13,6 +13,7 @@ export { nearestNames } from './nearest.ts';
 export { type Formula, longestFormula, parseFormula } from './parse.ts';
 export { allFinite, fillConstants, inOrder, makeMemory, markTrouble, type Program, type Range } from './program.ts';
 export { run } from './run.ts';
+export { speakFormula } from './speak.ts';
 export { plainName, speakName, texName, texText } from './symbols.ts';
 export { columnOf, type TableColumnData, type TableData } from './table.ts';
 export { nothingTaken, type Taken, type TakenRow } from './taken.ts';

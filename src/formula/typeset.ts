@@ -5,7 +5,8 @@
 // 2. A quantity with a unit has parentheses as a factor and as a base; alone in a sum or over a fraction bar it has none.
 // 3. Of a choice the symbols show all branches, the numbers the branch taken. Angles in exponents print in rad: the
 //    substitution is told where it stands.
-// 4. The TeX passes KaTeX at `strict: 'error'`, `trust: false`: user text is escaped (symbols.ts).
+// 4. The TeX passes KaTeX at `strict: 'error'`, `trust: false`: user text is escaped (symbols.ts). It is meant for display
+//    mode: in text mode fraction bars are small.
 // Not here: the result and the relation before it (the record), numbers for calculators (calculator.ts).
 
 import type { Unit } from '../quantity/index.ts';
