@@ -15,7 +15,16 @@ import {
   typeOfResult,
   typeOfUnit,
 } from '../formula/index.ts';
-import { coherentUnit, equalD, isDimensionless, one, type Problem, type Unit, type Value, withArticle } from '../quantity/index.ts';
+import {
+  coherentUnit,
+  equalD,
+  isDimensionless,
+  one,
+  type Problem,
+  type Unit,
+  type Value,
+  withArticle,
+} from '../quantity/index.ts';
 import type { GivenCell, LoadCase } from './document.ts';
 import type { Names } from './names.ts';
 import type { Node } from './node.ts';
@@ -134,7 +143,9 @@ function analyseGiven(node: Node, cell: GivenCell, around: Surroundings, report:
     return;
   }
   const base = node.reading.value;
-  const values = around.cases.map((known) => (cell.byCase && Object.hasOwn(cell.byCase, known.id) ? node.reading.byCase?.get(known.id) : base));
+  const values = around.cases.map((known) =>
+    cell.byCase && Object.hasOwn(cell.byCase, known.id) ? node.reading.byCase?.get(known.id) : base,
+  );
   const first = base ?? values.find((value) => value !== undefined);
   const unit = node.reading.unit ?? first?.unit;
   if (unit === undefined || (cell.unit !== undefined && node.reading.unit === undefined)) return;
@@ -167,15 +178,27 @@ function analyseGiven(node: Node, cell: GivenCell, around: Surroundings, report:
 
 /** 1/s, 1/min and the like, without r, rad or Hz. */
 function isPlainRate(unit: Unit): boolean {
-  return unit.parts.length === 1 && (unit.parts[0]!.symbol === 's' || unit.parts[0]!.symbol === 'min') && unit.parts[0]!.exponent.n === -1;
+  return (
+    unit.parts.length === 1 &&
+    (unit.parts[0]!.symbol === 's' || unit.parts[0]!.symbol === 'min') &&
+    unit.parts[0]!.exponent.n === -1
+  );
 }
 
 function unlikeValue(value: Value, unit: Unit): Problem | undefined {
   if (!equalD(value.unit.dimension, unit.dimension)) {
-    return { code: 'unlike-value', severity: 'error', message: `${value.text} is ${withArticle(value.unit)}, this quantity is ${withArticle(unit)}; change one of the two` };
+    return {
+      code: 'unlike-value',
+      severity: 'error',
+      message: `${value.text} is ${withArticle(value.unit)}, this quantity is ${withArticle(unit)}; change one of the two`,
+    };
   }
   if ((value.unit.reading === undefined) !== (unit.reading === undefined)) {
-    return { code: 'unlike-value', severity: 'error', message: `${value.text} and the unit ${unit.text} mix a temperature reading with a difference; use one of the two throughout` };
+    return {
+      code: 'unlike-value',
+      severity: 'error',
+      message: `${value.text} and the unit ${unit.text} mix a temperature reading with a difference; use one of the two throughout`,
+    };
   }
   return undefined;
 }
@@ -184,7 +207,14 @@ function checkRange(node: Node, cell: GivenCell, around: Surroundings, report: R
   const range = node.reading.range;
   if (range === undefined || node.unit === undefined) return;
   if (!equalD(range.low.unit.dimension, node.unit.dimension) || !equalD(range.high.unit.dimension, node.unit.dimension)) {
-    report({ code: 'bad-range', severity: 'warning', message: `the range “${cell.range}” is not one of ${withArticle(node.unit)} and is not checked` }, 'range');
+    report(
+      {
+        code: 'bad-range',
+        severity: 'warning',
+        message: `the range “${cell.range}” is not one of ${withArticle(node.unit)} and is not checked`,
+      },
+      'range',
+    );
     return;
   }
   const told = new Set<string>();
@@ -195,7 +225,11 @@ function checkRange(node: Node, cell: GivenCell, around: Surroundings, report: R
     const id = around.cases[index]!.id;
     const own = cell.byCase !== undefined && Object.hasOwn(cell.byCase, id);
     report(
-      { code: 'outside-range', severity: 'warning', message: `${value.text} lies outside the range ${cell.range} that this sheet is made for` },
+      {
+        code: 'outside-range',
+        severity: 'warning',
+        message: `${value.text} lies outside the range ${cell.range} that this sheet is made for`,
+      },
       own ? `byCase.${id}` : 'value',
       own ? id : undefined,
     );
@@ -211,14 +245,25 @@ function analyseChoice(
 ): void {
   const table = around.names.tables.get(choices.table);
   if (table === undefined) {
-    report({ code: 'unknown-table', severity: 'error', message: `no table of this sheet is called ${choices.table}; the choices of ${cell.name} come from it` }, 'choices');
+    report(
+      {
+        code: 'unknown-table',
+        severity: 'error',
+        message: `no table of this sheet is called ${choices.table}; the choices of ${cell.name} come from it`,
+      },
+      'choices',
+    );
     return;
   }
   const column = table.table?.columns.find((known) => known.name === choices.column);
   if (column === undefined) {
     report(
       table.table
-        ? { code: 'unknown-column', severity: 'error', message: `table ${choices.table} has no column ${choices.column}; it has ${table.table.columns.map((known) => known.name).join(', ')}` }
+        ? {
+            code: 'unknown-column',
+            severity: 'error',
+            message: `table ${choices.table} has no column ${choices.column}; it has ${table.table.columns.map((known) => known.name).join(', ')}`,
+          }
         : waitsFor(table, around),
       'choices',
     );
@@ -346,4 +391,3 @@ const jumping = /\b(?:floor|ceil|round)\b/u;
 function hasJump(formula: Formula): boolean {
   return jumping.test(formula.text);
 }
-

@@ -96,8 +96,11 @@ class Engine implements Calculation {
     const decimalSign = next.settings?.decimalSign ?? '.';
     const cases = casesOf(next);
     const sameReading =
-      decimalSign === this.style.decimalSign && cases.length === this.cases.length && cases.every((one, index) => one.id === this.cases[index]!.id);
-    const sameRows = sameReading && next.cells.length === nodes.length && next.cells.every((cell, index) => cell.id === nodes[index]!.cell.id);
+      decimalSign === this.style.decimalSign &&
+      cases.length === this.cases.length &&
+      cases.every((one, index) => one.id === this.cases[index]!.id);
+    const sameRows =
+      sameReading && next.cells.length === nodes.length && next.cells.every((cell, index) => cell.id === nodes[index]!.cell.id);
     this.sheet = next;
     this.cases = cases;
     this.style = { decimalSign };
@@ -183,7 +186,14 @@ class Engine implements Calculation {
 
   private around(): Surroundings {
     const { names, twice, looped } = this.shape;
-    return { names, cases: this.cases, numberOf: (cell) => this.numberOf(cell), twice, looped, decimalSign: this.style.decimalSign };
+    return {
+      names,
+      cases: this.cases,
+      numberOf: (cell) => this.numberOf(cell),
+      twice,
+      looped,
+      decimalSign: this.style.decimalSign,
+    };
   }
 
   private changed(): Changed {
@@ -243,7 +253,10 @@ class Engine implements Calculation {
     const node = this.shape.byId.get(cell);
     if (node === undefined) return [];
     const { userStart, userList } = this.shape.graph;
-    return Array.from(userList.subarray(userStart[node.index]!, userStart[node.index + 1]!), (user) => this.shape.nodes[user]!.cell.id);
+    return Array.from(
+      userList.subarray(userStart[node.index]!, userStart[node.index + 1]!),
+      (user) => this.shape.nodes[user]!.cell.id,
+    );
   }
 
   problems(): readonly CellProblem[] {
@@ -270,6 +283,13 @@ class Engine implements Calculation {
 
   whatIf(request: WhatIfRequest): WhatIf {
     const { nodes, names, graph, byId } = this.shape;
-    return prepareWhatIf(request, { nodes, names, graph, byId, columns: this.runner.columns, lookup: (index) => this.lookups[index]! });
+    return prepareWhatIf(request, {
+      nodes,
+      names,
+      graph,
+      byId,
+      columns: this.runner.columns,
+      lookup: (index) => this.lookups[index]!,
+    });
   }
 }

@@ -108,7 +108,8 @@ export class Columns {
     const first = this.slotOf(node) * this.width;
     for (let entry = 0; entry < this.width; entry += 1) {
       const text = node.texts?.[entry];
-      const value = node.texts === undefined ? node.values[entry]?.si : text === undefined ? undefined : this.builder.textNumber(text);
+      const value =
+        node.texts === undefined ? node.values[entry]?.si : text === undefined ? undefined : this.builder.textNumber(text);
       this.memory[first + entry] = node.broken ? Number.NaN : (value ?? Number.NaN);
     }
   }

@@ -1,14 +1,14 @@
 export { type Calculation, type Changed, calculate } from './calculation.ts';
+export * from './cases.ts';
 export * from './criterion.ts';
 export * from './document.ts';
-export * from './numbering.ts';
-export * from './state.ts';
-export * from './cases.ts';
 export * from './edit.ts';
 export { type FileProblem, type ReadSheet, readSheet, writeSheet } from './file.ts';
 export { buildGraph, type Graph } from './graph.ts';
 export * from './history.ts';
 export { badCharacters } from './json-text.ts';
+export * from './numbering.ts';
 export { nameFault } from './rename.ts';
-export type { WhatIf, WhatIfRequest } from './whatif.ts';
+export * from './state.ts';
 export * from './template.ts';
+export type { WhatIf, WhatIfRequest } from './whatif.ts';

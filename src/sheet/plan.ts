@@ -32,7 +32,14 @@ export function makePlan(nodes: readonly Node[], graph: Graph, columns: Columns)
     const node = nodes[graph.order[place]!]!;
     plan.slot[place] = columns.slotOf(node);
     const range = columns.rangesOf(node)?.[0];
-    if (node.cell.kind === 'derived' && range !== undefined && !node.broken && !node.jumps && !node.usesTexts && node.failed.length === 0) {
+    if (
+      node.cell.kind === 'derived' &&
+      range !== undefined &&
+      !node.broken &&
+      !node.jumps &&
+      !node.usesTexts &&
+      node.failed.length === 0
+    ) {
       plan.mode[place] = mode.formula;
       plan.start[place] = range.start;
       plan.end[place] = range.end;

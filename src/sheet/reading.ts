@@ -84,7 +84,11 @@ function readName(text: string, problems: FieldProblem[]): string | undefined {
   const name = canonicalName(text);
   if (reserved.has(name)) {
     problems.push(
-      fault('reserved-name', 'name', `“${text}” has a fixed meaning in formulas and cannot name a quantity; add a subscript, as in ${text}_1`),
+      fault(
+        'reserved-name',
+        'name',
+        `“${text}” has a fixed meaning in formulas and cannot name a quantity; add a subscript, as in ${text}_1`,
+      ),
     );
     return undefined;
   }
@@ -117,7 +121,9 @@ function readGiven(cell: GivenCell, decimalSign: DecimalSign): Reading {
   if (cell.choices !== undefined) {
     const dot = cell.choices.indexOf('.');
     if (dot > 0) return { ...base, choices: { table: cell.choices.slice(0, dot), column: cell.choices.slice(dot + 1) } };
-    problems.push(fault('bad-choices', 'choices', `choices “${cell.choices}” must name a table and a column, as in surfaces.surface`));
+    problems.push(
+      fault('bad-choices', 'choices', `choices “${cell.choices}” must name a table and a column, as in surfaces.surface`),
+    );
     return base;
   }
   const unit = readDeclaredUnit(cell.unit, problems);
@@ -145,7 +151,10 @@ function readOne(
   onlyCase?: string,
 ): Value | undefined {
   if (text.trim() === '') {
-    problems.push({ ...fault('no-value', field, 'no value yet: type a number with its unit, as in 200 mm'), ...(onlyCase ? { case: onlyCase } : {}) });
+    problems.push({
+      ...fault('no-value', field, 'no value yet: type a number with its unit, as in 200 mm'),
+      ...(onlyCase ? { case: onlyCase } : {}),
+    });
     return undefined;
   }
   const read = readValue(text, { decimalSign });
@@ -167,8 +176,10 @@ function readRange(
     const high = readValue(ends[1]!, { decimalSign });
     if (low.ok && high.ok) {
       const unitText = [high.value, low.value].find((end) => end.unit.text !== '1')?.unit.text ?? value?.unit.text ?? '1';
-      const lowRead = low.value.unit.text === '1' && unitText !== '1' ? readValue(`${ends[0]} ${unitText}`, { decimalSign }) : low;
-      const highRead = high.value.unit.text === '1' && unitText !== '1' ? readValue(`${ends[1]} ${unitText}`, { decimalSign }) : high;
+      const lowRead =
+        low.value.unit.text === '1' && unitText !== '1' ? readValue(`${ends[0]} ${unitText}`, { decimalSign }) : low;
+      const highRead =
+        high.value.unit.text === '1' && unitText !== '1' ? readValue(`${ends[1]} ${unitText}`, { decimalSign }) : high;
       if (lowRead.ok && highRead.ok) return { low: lowRead.value, high: highRead.value };
     }
   }
@@ -181,7 +192,13 @@ function readRange(
   return undefined;
 }
 
-function readFormula(text: string, field: string, decimalSign: DecimalSign, problems: FieldProblem[], offset = 0): Formula | undefined {
+function readFormula(
+  text: string,
+  field: string,
+  decimalSign: DecimalSign,
+  problems: FieldProblem[],
+  offset = 0,
+): Formula | undefined {
   const parsed = parseFormula(text, { decimalSign });
   if (parsed.ok) return parsed.value;
   problems.push({ ...shifted(parsed.problem, offset), field });
@@ -228,7 +245,9 @@ function readSought(cell: SoughtCell, decimalSign: DecimalSign): Reading {
   const base = { decimalSign, problems, mentions: [], ...(name === undefined ? {} : { name }), ...(unit ? { unit } : {}) };
   const sign = equalSign(cell.where);
   if (sign === undefined) {
-    problems.push(fault('no-equation', 'where', `“${cell.where}” must hold exactly one = between two formulas, as in S_slip = S_req`));
+    problems.push(
+      fault('no-equation', 'where', `“${cell.where}” must hold exactly one = between two formulas, as in S_slip = S_req`),
+    );
     return { ...base, formulas: [] };
   }
   const left = readFormula(cell.where.slice(0, sign), 'where', decimalSign, problems);

@@ -96,7 +96,13 @@ export class Runner {
     let last = at;
     if (plan.watched[at] === 0) {
       const most = Math.min(stale.length, at + stretch);
-      while (last + 1 < most && stale[last + 1] === 1 && plan.mode[last + 1] === mode.formula && plan.watched[last + 1] === 0 && plan.start[last + 1] === plan.end[last]) {
+      while (
+        last + 1 < most &&
+        stale[last + 1] === 1 &&
+        plan.mode[last + 1] === mode.formula &&
+        plan.watched[last + 1] === 0 &&
+        plan.start[last + 1] === plan.end[last]
+      ) {
         last += 1;
       }
     }
@@ -195,7 +201,12 @@ export class Runner {
       for (const [side, formula] of computedFormulas(node).entries()) {
         if (formula === undefined) continue;
         const field = node.cell.kind === 'criterion' ? (side === 0 ? 'left' : 'right') : 'formula';
-        const locate = (problem: Problem): CellProblem => ({ ...problem, cell: node.cell.id, case: this.world.caseId(index), field });
+        const locate = (problem: Problem): CellProblem => ({
+          ...problem,
+          cell: node.cell.id,
+          case: this.world.caseId(index),
+          field,
+        });
         const result = explain(formula.expr, lookup);
         const value = result.ok ? result.value : Number.NaN;
         if (!result.ok) {
@@ -204,7 +215,8 @@ export class Runner {
         }
         this.columns.write(node, side, index, value);
         for (const warning of result.warnings) {
-          if (!warned.some((known) => known.message === warning.message && known.field === field)) warned.push({ ...warning, cell: node.cell.id, field });
+          if (!warned.some((known) => known.message === warning.message && known.field === field))
+            warned.push({ ...warning, cell: node.cell.id, field });
         }
       }
     }

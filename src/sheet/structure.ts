@@ -7,7 +7,7 @@
 import type { Sheet } from './document.ts';
 import { buildGraph, type Graph } from './graph.ts';
 import { type Names, resolveNames, usedNodes } from './names.ts';
-import { newNode, type Node } from './node.ts';
+import { type Node, newNode } from './node.ts';
 import { lineNumbers } from './numbering.ts';
 import { type DecimalSign, liveNames, readCell } from './reading.ts';
 import type { CellProblem } from './state.ts';
@@ -83,10 +83,14 @@ export class Structure {
     this.names = resolved;
     this.twice = resolved.twice;
     for (const node of this.nodes) {
-      if (twiceBefore.get(node.cell.id)?.message !== this.twice.get(node.cell.id)?.message || misspelt(node, resolved)) stale.add(node);
+      if (twiceBefore.get(node.cell.id)?.message !== this.twice.get(node.cell.id)?.message || misspelt(node, resolved))
+        stale.add(node);
     }
     const changed = new Set<string>();
-    for (const [old, now] of [[before.quantities, resolved.quantities], [before.tables, resolved.tables]] as const) {
+    for (const [old, now] of [
+      [before.quantities, resolved.quantities],
+      [before.tables, resolved.tables],
+    ] as const) {
       for (const [name, node] of now) if (old.get(name) !== node) changed.add(name);
       for (const name of old.keys()) if (!now.has(name)) changed.add(name);
     }
@@ -143,7 +147,9 @@ function definedName(node: Node): string | undefined {
 function reachesFor(node: Node, names: ReadonlySet<string>): boolean {
   const { formulas, mentions, choices } = node.reading;
   return (
-    formulas.some((formula) => formula?.names.some((name) => names.has(name)) || formula?.tables.some((name) => names.has(name))) ||
+    formulas.some(
+      (formula) => formula?.names.some((name) => names.has(name)) || formula?.tables.some((name) => names.has(name)),
+    ) ||
     mentions.some((live) => names.has(live.name)) ||
     (choices !== undefined && names.has(choices.table))
   );
@@ -165,7 +171,10 @@ function sameNodes(a: readonly Node[], b: readonly Node[]): boolean {
 /** Reaches for a name that nobody answers to: its message proposes the nearest, which any change of names may move. */
 function misspelt(node: Node, names: Names): boolean {
   return (
-    node.reading.formulas.some((formula) => formula?.names.some((name) => !names.quantities.has(name)) || formula?.tables.some((name) => !names.tables.has(name))) ||
+    node.reading.formulas.some(
+      (formula) =>
+        formula?.names.some((name) => !names.quantities.has(name)) || formula?.tables.some((name) => !names.tables.has(name)),
+    ) ||
     node.reading.mentions.some((live) => !names.quantities.has(live.name)) ||
     (node.reading.choices !== undefined && !names.tables.has(node.reading.choices.table))
   );

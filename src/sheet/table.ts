@@ -29,7 +29,12 @@ export function readTable(cell: TableCell, decimalSign: DecimalSign): ReadTable 
 function readAnew(cell: TableCell, decimalSign: DecimalSign): ReadTable {
   const problems: FieldProblem[] = [];
   if (cell.columns.length === 0) {
-    problems.push({ code: 'empty-table', severity: 'error', message: 'the table has no columns; give it a key column first', field: 'columns' });
+    problems.push({
+      code: 'empty-table',
+      severity: 'error',
+      message: 'the table has no columns; give it a key column first',
+      field: 'columns',
+    });
     return { decimalSign, problems };
   }
   const seen = new Set<string>();

@@ -50,7 +50,11 @@ interface Step {
 export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
   const varied = new Set(request.vary.map((name) => known(sheet, name)));
   const wanted = request.want.map((want) => wantedOf(sheet, want));
-  const steps = stepsBetween(varied, wanted.map((want) => want.node), sheet);
+  const steps = stepsBetween(
+    varied,
+    wanted.map((want) => want.node),
+    sheet,
+  );
   const isStep = new Set(steps.map((step) => step.node));
   const inputs = request.vary.map((name) => known(sheet, name).name!);
   const constants = new Set<string>();
@@ -60,7 +64,8 @@ export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
       if (node !== undefined && !varied.has(node) && !isStep.has(node)) constants.add(name);
     }
   }
-  for (const want of wanted) if (!varied.has(want.node) && !isStep.has(want.node) && want.side === undefined) constants.add(want.key);
+  for (const want of wanted)
+    if (!varied.has(want.node) && !isStep.has(want.node) && want.side === undefined) constants.add(want.key);
   const names = {
     isText: (name: string) => sheet.names.quantities.get(name)?.texts !== undefined,
     table: (name: string) => sheet.names.tables.get(name)?.table,
@@ -76,7 +81,12 @@ export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
   for (const name of constants) {
     const node = sheet.names.quantities.get(name)!;
     const text = node.texts?.[request.caseIndex];
-    const value = node.texts === undefined ? sheet.columns.read(node, 0, request.caseIndex) : text === undefined ? Number.NaN : compiled.textNumber(text);
+    const value =
+      node.texts === undefined
+        ? sheet.columns.read(node, 0, request.caseIndex)
+        : text === undefined
+          ? Number.NaN
+          : compiled.textNumber(text);
     const slot = compiled.slot(name);
     memory.fill(value, slot * block, (slot + 1) * block);
   }

@@ -18,7 +18,12 @@ export type Root =
       readonly iterations: number;
       readonly bracket: readonly [number, number];
     }
-  | { readonly ok: false; readonly failure: RootFailure; readonly iterations: number; readonly bracket: readonly [number, number] };
+  | {
+      readonly ok: false;
+      readonly failure: RootFailure;
+      readonly iterations: number;
+      readonly bracket: readonly [number, number];
+    };
 
 const mostIterations = 500;
 const epsilon = 2 ** -52;
@@ -30,7 +35,12 @@ export function findRoot(f: (x: number) => number, low: number, high: number): R
   let fa = f(a);
   let fb = f(b);
   const start = Math.max(Math.abs(fa), Math.abs(fb));
-  const failed = (failure: RootFailure, iterations: number): Root => ({ ok: false, failure, iterations, bracket: [Math.min(a, b), Math.max(a, b)] });
+  const failed = (failure: RootFailure, iterations: number): Root => ({
+    ok: false,
+    failure,
+    iterations,
+    bracket: [Math.min(a, b), Math.max(a, b)],
+  });
   const found = (root: number, residual: number, iterations: number): Root => ({
     ok: true,
     root,

@@ -16,7 +16,9 @@ import { type Measured, measure } from './pairs.ts';
 const math = create(all!);
 
 function print(name: string, measured: Measured): void {
-  console.log(`ratio ${name} ${measured.ratio.toPrecision(3)}   (${measured.ours.toFixed(2)} ms against ${measured.reference.toFixed(2)} ms)`);
+  console.log(
+    `ratio ${name} ${measured.ratio.toPrecision(3)}   (${measured.ours.toFixed(2)} ms against ${measured.reference.toFixed(2)} ms)`,
+  );
 }
 
 function sum(values: Iterable<number>): number {
@@ -69,7 +71,8 @@ function recalculation(): void {
     return sumOfUnits(scope, ['q_9997', 'q_9998', 'q_9999']);
   };
   print('recalculation-10000', measure({ name: 'recalculation-10000', ours, reference, tolerance: 1e-12 }));
-  if (calculation.ran.length !== count + 1) throw new Error(`a change ran ${calculation.ran.length} cells instead of ${count + 1}`);
+  if (calculation.ran.length !== count + 1)
+    throw new Error(`a change ran ${calculation.ran.length} cells instead of ${count + 1}`);
 }
 
 /** Sum of coherent SI values. */
@@ -96,7 +99,9 @@ function studies(): void {
   const study = calculation.whatIf({ vary: inputs, want: outputs, caseIndex: 0 });
   const checksum = (columns: readonly Float64Array[]): number => {
     let total = 0;
-    for (const column of columns) total += Math.log1p(Math.abs(column[0]!)) + Math.log1p(Math.abs(column[count - 1]!)) + Math.log1p(Math.abs(column[count >> 1]!));
+    for (const column of columns)
+      total +=
+        Math.log1p(Math.abs(column[0]!)) + Math.log1p(Math.abs(column[count - 1]!)) + Math.log1p(Math.abs(column[count >> 1]!));
     return total;
   };
   const mine = (): number => checksum(study.run(samples, count));
@@ -125,7 +130,8 @@ function studies(): void {
     }
     return stored.reduce((total, column) => total + Math.log1p(Math.abs(column[few - 1]!)), 0);
   };
-  const mineFew = (): number => study.run(samples, few).reduce((total, column) => total + Math.log1p(Math.abs(column[few - 1]!)), 0);
+  const mineFew = (): number =>
+    study.run(samples, few).reduce((total, column) => total + Math.log1p(Math.abs(column[few - 1]!)), 0);
   print('study-library', measure({ name: 'study-library', ours: mineFew, reference: byLibrary, tolerance: 1e-12 }));
 }
 

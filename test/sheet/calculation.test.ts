@@ -16,12 +16,16 @@ describe('values', () => {
   it('may be used above the line that defines them, with a warning that names the line', () => {
     const calculation = calculate(sheetOf(['b := 2*a', 'a = 3 m']));
     expect(si(calculation, 'b')).toEqual([6]);
-    expect(messages(calculation)).toEqual(['b: a is used here above the line that defines it (see 2 below); move one of the two if the sheet should read downwards']);
+    expect(messages(calculation)).toEqual([
+      'b: a is used here above the line that defines it (see 2 below); move one of the two if the sheet should read downwards',
+    ]);
   });
 
   it('stand side by side, one for each case', () => {
     const sheet = sheetOf(['K = 1.0', 'P = 2 kW', 'Q [kW] := K*P', 'Q <= P'], { cases: [{ id: 'run' }, { id: 'start' }] });
-    const cells = sheet.cells.map((cell) => (cell.id === 'K' ? { ...cell, kind: 'given' as const, name: 'K', value: '1.0', byCase: { start: '1.5' } } : cell));
+    const cells = sheet.cells.map((cell) =>
+      cell.id === 'K' ? { ...cell, kind: 'given' as const, name: 'K', value: '1.0', byCase: { start: '1.5' } } : cell,
+    );
     const calculation = calculate({ ...sheet, cells });
     expect(si(calculation, 'Q')).toEqual([2000, 3000]);
     expect(calculation.state('k3')).toMatchObject({ met: [true, false], utilisation: [1, 1.5] });
@@ -46,7 +50,9 @@ describe('what is calculated again', () => {
 
   it('is nothing for a title, a source or a note', () => {
     const calculation = chain();
-    const cells = calculation.sheet.cells.map((cell) => (cell.kind === 'note' ? { ...cell, text: 'another note' } : { ...cell, title: 'A title' }));
+    const cells = calculation.sheet.cells.map((cell) =>
+      cell.kind === 'note' ? { ...cell, text: 'another note' } : { ...cell, title: 'A title' },
+    );
     calculation.update({ ...calculation.sheet, cells: cells as typeof calculation.sheet.cells });
     expect(calculation.ran.filter((id) => calculation.state(id)?.kind === 'derived')).toEqual([]);
   });
@@ -87,20 +93,27 @@ describe('trouble', () => {
 
   it('in one case leaves the other case standing', () => {
     const sheet = sheetOf(['x = 0.5', 'y := asin(x)', 'w := 2*y'], { cases: [{ id: 'run' }, { id: 'start' }] });
-    const cells = sheet.cells.map((cell) => (cell.id === 'x' ? { id: 'x', kind: 'given' as const, name: 'x', value: '0.5', byCase: { start: '1.2' } } : cell));
+    const cells = sheet.cells.map((cell) =>
+      cell.id === 'x' ? { id: 'x', kind: 'given' as const, name: 'x', value: '0.5', byCase: { start: '1.2' } } : cell,
+    );
     const calculation = calculate({ ...sheet, cells });
     expect(si(calculation, 'y')[0]).toBeCloseTo(Math.PI / 6, 15);
     expect(si(calculation, 'y')[1]).toBeNaN();
     expect(calculation.state('y')?.problems.map((problem) => problem.case)).toEqual(['start']);
     expect(calculation.state('w')?.problems).toMatchObject([{ code: 'waits-for', case: 'start' }]);
-    calculation.update({ ...sheet, cells: cells.map((cell) => (cell.id === 'x' ? { ...cell, byCase: { start: '1' } } : cell)) as typeof cells });
+    calculation.update({
+      ...sheet,
+      cells: cells.map((cell) => (cell.id === 'x' ? { ...cell, byCase: { start: '1' } } : cell)) as typeof cells,
+    });
     expect(si(calculation, 'w')[1]).toBeCloseTo(Math.PI, 15);
     expect(calculation.problems()).toEqual([]);
   });
 
   it('names a loop, in the words of the sheet, at each of its cells and nowhere else', () => {
     const calculation = calculate(sheetOf(['a := b + c', 'b := 2*a', 'c = 1 m', 'd := a']));
-    expect(calculation.state('a')?.problems[0]?.message).toBe('a (1) → b (2) → a use each other in a loop; break it, or make one of them a sought cell with an equation');
+    expect(calculation.state('a')?.problems[0]?.message).toBe(
+      'a (1) → b (2) → a use each other in a loop; break it, or make one of them a sought cell with an equation',
+    );
     expect(calculation.state('b')?.problems[0]?.code).toBe('loop');
     expect(calculation.state('d')?.problems[0]?.code).toBe('waits-for');
     calculation.update(withLine(calculation.sheet, 'b', 'b = 2 m'));
@@ -117,10 +130,16 @@ describe('trouble', () => {
   it('of a missing name goes away when the name appears, and comes back when it is renamed', () => {
     const calculation = calculate(sheetOf(['a = 1 m', 'c := 2*x_1']));
     expect(calculation.state('c')?.problems[0]?.code).toBe('unknown-name');
-    const more = { ...calculation.sheet, cells: [...calculation.sheet.cells, { id: 'x', kind: 'given' as const, name: 'x_1', value: '4 m' }] };
+    const more = {
+      ...calculation.sheet,
+      cells: [...calculation.sheet.cells, { id: 'x', kind: 'given' as const, name: 'x_1', value: '4 m' }],
+    };
     calculation.update(more);
     expect(si(calculation, 'c')).toEqual([8]);
-    calculation.update({ ...more, cells: more.cells.map((cell) => (cell.id === 'x' ? { ...cell, name: 'x_2' } : cell)) as typeof more.cells });
+    calculation.update({
+      ...more,
+      cells: more.cells.map((cell) => (cell.id === 'x' ? { ...cell, name: 'x_2' } : cell)) as typeof more.cells,
+    });
     expect(calculation.state('c')?.problems[0]?.message).toContain('x_2');
   });
 
@@ -130,10 +149,13 @@ describe('trouble', () => {
     expect(calculation.problems()).toEqual([]);
   });
 
-  it.each(['constructor', 'toString', 'hasOwnProperty', 'valueOf', 'prototype', 'arguments'])('does not come from a quantity called %s', (name) => {
-    const calculation = calculate(sheetOf([`${name} = 2 m`, `b := 3*${name}`]));
-    expect(si(calculation, 'b')).toEqual([6]);
-  });
+  it.each(['constructor', 'toString', 'hasOwnProperty', 'valueOf', 'prototype', 'arguments'])(
+    'does not come from a quantity called %s',
+    (name) => {
+      const calculation = calculate(sheetOf([`${name} = 2 m`, `b := 3*${name}`]));
+      expect(si(calculation, 'b')).toEqual([6]);
+    },
+  );
 
   it('of an unreadable value is told with the nearest unit', () => {
     const calculation = calculate(sheetOf(['P = 15 KW', 'Q := 2*P']));

@@ -256,13 +256,19 @@ describe('what is a problem of a cell is no problem of the file', () => {
   });
 });
 
+/** Processor time since `start`: a busy machine makes nobody wait for the reader's sake. */
+function seconds(start: NodeJS.CpuUsage): number {
+  const { user, system } = process.cpuUsage(start);
+  return (user + system) / 1e6;
+}
+
 describe('hostile files end at once', () => {
   it('10^5 nested brackets', () => {
-    const start = performance.now();
+    const start = process.cpuUsage();
     expect(refusals(`{${head}, "marks": ${'['.repeat(100_000)}`)).toEqual([
       'too-deep | line 1, column 119: nested deeper than a sheet can be (at most 64 levels)',
     ]);
-    expect(performance.now() - start).toBeLessThan(2000);
+    expect(seconds(start)).toBeLessThan(2);
   });
   it('a text beyond the limit', () => {
     expect(refusals(' '.repeat(64 * 1024 * 1024 + 1))).toEqual([
@@ -271,19 +277,19 @@ describe('hostile files end at once', () => {
   });
   it('a million keys', () => {
     const keys = Array.from({ length: 1_000_000 }, (_, i) => `"k${i}":1`).join(',');
-    const start = performance.now();
+    const start = process.cpuUsage();
     expect(refusals(`{${head}, "cells": [], ${keys}}`)).toEqual([
       'too-many | line 1, column 98920: an object with more keys than a sheet can have (at most 10000 keys)',
     ]);
-    expect(performance.now() - start).toBeLessThan(2000);
+    expect(seconds(start)).toBeLessThan(2);
   });
   it('a table of a million numbers', () => {
-    const start = performance.now();
+    const start = process.cpuUsage();
     const cell = `{"id": "t1", "kind": "table", "name": "t", "columns": [], "rows": [[${'1,'.repeat(1_000_000)}1]]}`;
     expect(refusals(withCells(cell))).toEqual([
       'wrong-type | cells[0] (table t).rows[0][0]: must be a text in double quotes, but is the number 1',
     ]);
-    expect(performance.now() - start).toBeLessThan(2000);
+    expect(seconds(start)).toBeLessThan(2);
   });
   it('an own __proto__ changes no object', () => {
     refusals(`{${head}, "__proto__": {"polluted": true}, "cells": []}`);
