@@ -35,14 +35,17 @@ function body(line: Line, model: RecordModel, span: number, symbols: Symbols): s
       return beside(line.source, `<div class="prose${kind}">${role}${prose(line.blocks, symbols)}${noteLines(line.notes, symbols)}</div>`, span, symbols);
     }
     case 'table':
-      return beside(line.source, dataTable(line, symbols), span, symbols);
+      return beside(line.source, dataTable(line, symbols), span, symbols, line.rows.length > longTable ? ' long' : '');
     case 'other':
       return beside(line.source, picture(line, symbols), span, symbols);
   }
 }
 
-function beside(source: string, markup: string, span: number, symbols: Symbols): string {
-  return `<tbody class="text"><tr><td class="src">${inlineText(source, symbols)}</td><td class="wide" colspan="${span - 1}">${markup}</td></tr></tbody>`;
+/** A table of more rows may run over to the next page. */
+const longTable = 12;
+
+function beside(source: string, markup: string, span: number, symbols: Symbols, more = ''): string {
+  return `<tbody class="text${more}"><tr><td class="src">${inlineText(source, symbols)}</td><td class="wide" colspan="${span - 1}">${markup}</td></tr></tbody>`;
 }
 
 function dataTable(line: Extract<Line, { kind: 'table' }>, symbols: Symbols): string {

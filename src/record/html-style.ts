@@ -101,7 +101,8 @@ thead{display:table-header-group}
 .eq .katex,.res .katex{font-size:1.12em}
 .eq>span{display:inline-block;max-width:100%;margin:.1rem .1em .1rem 0}
 .case,.mark{color:var(--ink);font-weight:700;font-size:8.5pt}
-.case{min-width:1.4em}
+.case{display:inline-block;min-width:1.3em}
+.long{break-inside:auto}
 .states{float:right;margin-left:.6em}
 .basis{white-space:nowrap}
 .basis::before{content:"· "}

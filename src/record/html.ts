@@ -64,7 +64,14 @@ ${references(model)}
 function documentWords(model: RecordModel): string {
   const { documentNumber, revision } = model.titleBlock;
   const words = [documentNumber ?? '', revision ? `rev ${revision}` : ''].filter((word) => word !== '').join(' ');
-  return words === '' ? model.title : words;
+  return clipped(words === '' ? model.title : words);
+}
+
+/** The margin of a page has room for so much. */
+const longestIdentity = 80;
+
+function clipped(text: string): string {
+  return text.length > longestIdentity ? `${text.slice(0, longestIdentity - 1)}…` : text;
 }
 
 function head(model: RecordModel): string {
