@@ -21,7 +21,13 @@ if (existsSync(built)) {
     out: (text) => process.stdout.write(text),
     err: (text) => process.stderr.write(text),
   });
-  process.exitCode = await run(process.argv.slice(2), io);
+  try {
+    process.exitCode = await run(process.argv.slice(2), io);
+  } catch (fault) {
+    // Our own fault: never one of the exits that say something of the sheet.
+    process.stderr.write(`tightside: a fault of the program, not of the sheet: ${fault?.stack ?? fault}\n`);
+    process.exitCode = 70;
+  }
 } else {
   process.stderr.write('tightside: not built yet; run npm ci && npm run build first\n');
   process.exitCode = 4;

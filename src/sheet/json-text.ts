@@ -193,8 +193,12 @@ function foundAt(text: string, at: number): string {
   if (at >= text.length) return 'the file ends';
   const c = text[at]!;
   if (c === '\n' || c === '\r') return 'the line ends';
-  const run = /^[\w.+-]+/.exec(text.slice(at, at + 24));
-  return `${(run ? run[0] : String.fromCodePoint(text.codePointAt(at)!)).slice(0, 20)} stands there`;
+  const run = /^[\w.+-]+/.exec(text.slice(at, at + 20));
+  if (run) return `${run[0]} stands there`;
+  const point = text.codePointAt(at)!;
+  const shown = String.fromCodePoint(point);
+  // Spaces, controls, halves of pairs and what prints as nothing are named by number.
+  return `${/^[\p{L}\p{N}\p{P}\p{S}]$/u.test(shown) ? shown : `U+${point.toString(16).toUpperCase().padStart(4, '0')}`} stands there`;
 }
 
 function lineAndColumn(text: string, at: number): { readonly line: number; readonly column: number } {
