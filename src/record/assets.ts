@@ -2,8 +2,8 @@
 //
 // Only the bundler resolves these imports; html.ts takes them as an argument and knows no file.
 
-import text from '@fontsource-variable/atkinson-hyperlegible-next/files/atkinson-hyperlegible-next-latin-wght-normal.woff2?inline';
 import textExtended from '@fontsource-variable/atkinson-hyperlegible-next/files/atkinson-hyperlegible-next-latin-ext-wght-normal.woff2?inline';
+import text from '@fontsource-variable/atkinson-hyperlegible-next/files/atkinson-hyperlegible-next-latin-wght-normal.woff2?inline';
 import mainItalic from 'katex/dist/fonts/KaTeX_Main-Italic.woff2?inline';
 import main from 'katex/dist/fonts/KaTeX_Main-Regular.woff2?inline';
 import mathItalic from 'katex/dist/fonts/KaTeX_Math-Italic.woff2?inline';
@@ -17,8 +17,20 @@ import type { RecordAssets } from './html-style.ts';
 export const recordAssets: RecordAssets = {
   formulaStyle,
   faces: [
-    { family: 'Atkinson Hyperlegible Next', style: 'normal', weight: '200 800', url: text, range: 'U+0000-00FF,U+0131,U+0152-0153,U+02BB-02DC,U+2000-206F,U+20AC,U+2122,U+2190-2193,U+2212' },
-    { family: 'Atkinson Hyperlegible Next', style: 'normal', weight: '200 800', url: textExtended, range: 'U+0100-02BA,U+02BD-02C5,U+1E00-1E9F,U+1EF2-1EFF,U+2020,U+20A0-20AB' },
+    {
+      family: 'Atkinson Hyperlegible Next',
+      style: 'normal',
+      weight: '200 800',
+      url: text,
+      range: 'U+0000-00FF,U+0131,U+0152-0153,U+02BB-02DC,U+2000-206F,U+20AC,U+2122,U+2190-2193,U+2212',
+    },
+    {
+      family: 'Atkinson Hyperlegible Next',
+      style: 'normal',
+      weight: '200 800',
+      url: textExtended,
+      range: 'U+0100-02BA,U+02BD-02C5,U+1E00-1E9F,U+1EF2-1EFF,U+2020,U+20A0-20AB',
+    },
     { family: 'KaTeX_Main', style: 'normal', weight: '400', url: main },
     { family: 'KaTeX_Main', style: 'italic', weight: '400', url: mainItalic },
     { family: 'KaTeX_Math', style: 'italic', weight: '400', url: mathItalic },

@@ -160,8 +160,8 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
         const d = at(slot, digits);
         const numeral = slot.number.numeral(d);
         const { unit } = slot.number;
-        const calculator = (calculators[d] ??= calculatorNumeral(si, numeral, unit));
-        if (comesOut(own.value(values), numeral, calculator, unit, own.whole, start)) return 'closed';
+        calculators[d] ??= calculatorNumeral(si, numeral, unit);
+        if (comesOut(own.value(values), numeral, calculators[d], unit, own.whole, start)) return 'closed';
         return own.sameWay(values) ? 'cancellation' : 'jump';
       },
     });
@@ -200,7 +200,8 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
       utilisation !== null
         ? typedNumber(utilisationNumeral(utilisation, cell.relation, met), one)
         : computedNumber(trueResult, resultUnit, false, 'down');
-    const calculator = utilisation !== null ? result.numeral(start) : calculatorNumeral(trueResult, result.numeral(start), resultUnit, 'down');
+    const calculator =
+      utilisation !== null ? result.numeral(start) : calculatorNumeral(trueResult, result.numeral(start), resultUnit, 'down');
     const lineResult = (a: number, b: number) =>
       utilisation === null ? room(a, cell.relation, b) : demandIsLeft(cell.relation) ? a / b : b / a;
     const operands = itemsOf([...leftLine.operands, ...rightLine.operands]);
@@ -220,7 +221,8 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
       judge: (digits): Verdict => {
         const values = numbers(digits);
         const [a, b] = sides.map((side) => printedAt(side, digits).si) as [number, number];
-        const shown = holds(a, cell.relation, b) === met && holds(leftLine.value(values), cell.relation, rightLine.value(values)) === met;
+        const shown =
+          holds(a, cell.relation, b) === met && holds(leftLine.value(values), cell.relation, rightLine.value(values)) === met;
         return shown ? 'closed' : 'cancellation';
       },
     });

@@ -42,7 +42,12 @@ export const mostDigits = 15;
  * Finds the digits of all items. `steps` stand in an order in which every step comes after those whose results it prints
  * (the order of the sheet, where nothing is used above its definition).
  */
-export function closeSteps(items: readonly ClosingItem[], steps: readonly ClosingStep[], start: number, cap = mostDigits): Closing {
+export function closeSteps(
+  items: readonly ClosingItem[],
+  steps: readonly ClosingStep[],
+  start: number,
+  cap = mostDigits,
+): Closing {
   const first = Math.min(start, cap);
   const digits = new Uint8Array(items.length).fill(first);
   const open = new Map<number, OpenReason>();

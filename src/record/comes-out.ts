@@ -7,7 +7,14 @@
 import { doubleOfNumeral, fromSI, isZeroNumeral, lastPlace, type Numeral, plainNumeral, type Unit } from '../quantity/index.ts';
 
 /** `value`: the line in coherent SI; `digits`: the digits of the sheet. */
-export function comesOut(value: number, printed: Numeral, calculator: Numeral, unit: Unit, whole: boolean, digits: number): boolean {
+export function comesOut(
+  value: number,
+  printed: Numeral,
+  calculator: Numeral,
+  unit: Unit,
+  whole: boolean,
+  digits: number,
+): boolean {
   if (!Number.isFinite(value)) return false;
   const inUnit = unit.reading === undefined ? value / unit.si : fromSI(value, unit);
   if (whole) return Math.abs(inUnit - doubleOfNumeral(printed)) < 1e-6;

@@ -14,7 +14,9 @@ export function escapeHtml(text: string): string {
 
 /** A CSS string, quotes included; everything but letters, digits and spaces is written as a code point. */
 export function cssString(text: string): string {
-  const safe = text.replace(unfit, '\ufffd').replace(/[^\p{L}\p{N} ]/gu, (sign) => `\\${(sign.codePointAt(0) ?? 0xfffd).toString(16)} `);
+  const safe = text
+    .replace(unfit, '\ufffd')
+    .replace(/[^\p{L}\p{N} ]/gu, (sign) => `\\${(sign.codePointAt(0) ?? 0xfffd).toString(16)} `);
   return `"${safe}"`;
 }
 

@@ -42,7 +42,12 @@ function severity(each: StepCase): number {
   return unmet + (each.utilisation ?? (each.met === false ? 1e299 : 0));
 }
 
-export function assumptionsOf(calculation: Calculation, steps: readonly Step[], lines: readonly Line[], titles: readonly string[]): readonly Assumption[] {
+export function assumptionsOf(
+  calculation: Calculation,
+  steps: readonly Step[],
+  lines: readonly Line[],
+  titles: readonly string[],
+): readonly Assumption[] {
   const found: Assumption[] = [];
   for (const line of lines) {
     if (line.kind === 'note' && line.role === 'assumption') {
@@ -55,8 +60,19 @@ export function assumptionsOf(calculation: Calculation, steps: readonly Step[], 
     if (step.basis !== 'assumed') continue;
     const cell = calculation.state(step.cell)?.cell;
     const toConfirm = cell?.kind === 'given' ? (cell.toConfirm ?? '') : '';
-    const value = inCases(step.cases.map((each) => each.result), titles);
-    found.push({ number: step.number, cell: step.cell, text: step.title, symbol: step.symbol ?? '', value, source: step.source, toConfirm });
+    const value = inCases(
+      step.cases.map((each) => each.result),
+      titles,
+    );
+    found.push({
+      number: step.number,
+      cell: step.cell,
+      text: step.title,
+      symbol: step.symbol ?? '',
+      value,
+      source: step.source,
+      toConfirm,
+    });
   }
   return found;
 }

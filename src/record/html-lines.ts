@@ -32,7 +32,12 @@ function body(line: Line, model: RecordModel, span: number, symbols: Symbols): s
     case 'note': {
       const role = line.role === undefined ? '' : `<p class="role">${line.role.charAt(0).toUpperCase()}${line.role.slice(1)}</p>`;
       const kind = line.role === 'limit' || line.role === 'caution' ? ' barred' : '';
-      return beside(line.source, `<div class="prose${kind}">${role}${prose(line.blocks, symbols)}${noteLines(line.notes, symbols)}</div>`, span, symbols);
+      return beside(
+        line.source,
+        `<div class="prose${kind}">${role}${prose(line.blocks, symbols)}${noteLines(line.notes, symbols)}</div>`,
+        span,
+        symbols,
+      );
     }
     case 'table':
       return beside(line.source, dataTable(line, symbols), span, symbols, line.rows.length > longTable ? ' long' : '');
@@ -54,7 +59,9 @@ function dataTable(line: Extract<Line, { kind: 'table' }>, symbols: Symbols): st
     const unit = head.unit === '' ? '' : ` / ${escapeHtml(head.unit)}`;
     return `<th scope="col"${numeric(k)}>${inlineText(head.title, symbols)}${unit}</th>`;
   });
-  const rows = line.rows.map((cells) => `<tr>${cells.map((cell, k) => `<td${numeric(k)}>${escapeHtml(cell)}</td>`).join('')}</tr>`);
+  const rows = line.rows.map(
+    (cells) => `<tr>${cells.map((cell, k) => `<td${numeric(k)}>${escapeHtml(cell)}</td>`).join('')}</tr>`,
+  );
   const title = `<p class="t">${line.title === '' ? 'Table' : inlineText(line.title, symbols)} <code>${escapeHtml(line.name)}</code></p>`;
   return `${title}<div class="scroll"><table class="data"><thead><tr>${heads.join('')}</tr></thead><tbody>${rows.join('')}</tbody></table></div>${noteLines(line.notes, symbols)}`;
 }

@@ -28,17 +28,26 @@ export function stepBody(step: Step, model: RecordModel, symbols: Symbols): stri
   const lines = rows(step, many, fits).flatMap((line) => spread(line, fits));
   const none = '<td class="res"></td>'.repeat(columns);
   const markup = lines.map((line) => {
-    const cells = line.results.map((each, k) => (each === undefined ? '<td class="res"></td>' : result(each, many ? '' : caseMark(k, columns))));
+    const cells = line.results.map((each, k) =>
+      each === undefined ? '<td class="res"></td>' : result(each, many ? '' : caseMark(k, columns)),
+    );
     // A line that the results have no part in may run under them.
     const free = line.length > fits && line.results.every((each) => each === undefined);
-    return free ? `<tr><td class="calc" colspan="${columns + 1}">${line.equation}</td></tr>` : `<tr><td class="calc">${line.equation}</td>${cells.join('')}</tr>`;
+    return free
+      ? `<tr><td class="calc" colspan="${columns + 1}">${line.equation}</td></tr>`
+      : `<tr><td class="calc">${line.equation}</td>${cells.join('')}</tr>`;
   });
   const kind = step.kind === 'criterion' ? 'step criterion' : 'step';
   return `<tbody class="${kind}" id="step-${escapeHtml(step.number)}"><tr>${source(step, symbols, lines.length + 1)}<td class="calc">${above(step, symbols)}</td>${none}</tr>\n${markup.join('\n')}</tbody>`;
 }
 
 function source(step: Step, symbols: Symbols, span: number): string {
-  const basis = step.basis === undefined ? '' : step.basis === 'assumed' ? ' <span class="tag">assumed</span>' : ` <span class="basis">${step.basis}</span>`;
+  const basis =
+    step.basis === undefined
+      ? ''
+      : step.basis === 'assumed'
+        ? ' <span class="tag">assumed</span>'
+        : ` <span class="basis">${step.basis}</span>`;
   const missing = step.notes.includes(noSource) ? ` <span class="tag open">${noSource}</span>` : '';
   return `<td class="src" rowspan="${span}">${inlineText(step.source, symbols)}${missing}${basis}</td>`;
 }
@@ -64,7 +73,10 @@ function problems(step: Step): string {
     texts.set(each.problem.message, [...(texts.get(each.problem.message) ?? []), caseMark(k, step.cases.length)]);
   });
   return [...texts]
-    .map(([text, marks]) => `<p class="note wrong">${escapeHtml(marks.length === step.cases.length ? text : `${marks.join(', ')}: ${text}`)}</p>`)
+    .map(
+      ([text, marks]) =>
+        `<p class="note wrong">${escapeHtml(marks.length === step.cases.length ? text : `${marks.join(', ')}: ${text}`)}</p>`,
+    )
     .join('');
 }
 
@@ -99,7 +111,8 @@ function rows(step: Step, many: boolean, fits: number): readonly Row[] {
   const empty = (many ? [undefined] : step.cases.map(() => undefined)) as readonly undefined[];
   if (only !== undefined && list.length === 1) {
     if (only.first.substituted === '') return [row([symbols], only.results)];
-    if (step.kind === 'criterion') return [row([symbols, ...sidesOf(only.first, ':\\quad ')], empty), row([numbersOf(only.first, step)], only.results)];
+    if (step.kind === 'criterion')
+      return [row([symbols, ...sidesOf(only.first, ':\\quad ')], empty), row([numbersOf(only.first, step)], only.results)];
     const numbers = numbersOf(only.first, step);
     if (symbols.length + numbers.length <= fits) return [row([symbols, numbers], only.results)];
     return [row([symbols], empty), row([numbers], only.results)];
@@ -123,7 +136,11 @@ interface Part {
 
 function row(parts: readonly Part[], results: Row['results']): Row {
   const markup = parts.map((part) => (part.markup.startsWith('<b') ? part.markup : `<span>${part.markup}</span>`));
-  return { equation: `<div class="eq">${markup.join(' ')}</div>`, length: parts.reduce((sum, part) => sum + part.length, 0), results };
+  return {
+    equation: `<div class="eq">${markup.join(' ')}</div>`,
+    length: parts.reduce((sum, part) => sum + part.length, 0),
+    results,
+  };
 }
 
 function sidesOf(each: StepCase, before: string): readonly Part[] {
@@ -151,10 +168,14 @@ function result(each: StepCase, mark: string): string {
 
 /** About how many digits wide a formula is; of a fraction the wider part counts. */
 function lengthOf(tex: string): number {
-  let text = tex.replace(/\\(?:mathrm|mathit|text|textit|operatorname)\{([^{}]*)\}/gu, '$1').replace(/\\(?:left|right|displaystyle|,|;|quad)/gu, '');
+  let text = tex
+    .replace(/\\(?:mathrm|mathit|text|textit|operatorname)\{([^{}]*)\}/gu, '$1')
+    .replace(/\\(?:left|right|displaystyle|,|;|quad)/gu, '');
   for (let round = 0; round < 20 && /\{[^{}]*\}/u.test(text); round++) {
     text = text
-      .replace(/\\frac\{([^{}]*)\}\{([^{}]*)\}/gu, (_, over: string, under: string) => (over.length > under.length ? over : under))
+      .replace(/\\frac\{([^{}]*)\}\{([^{}]*)\}/gu, (_, over: string, under: string) =>
+        over.length > under.length ? over : under,
+      )
       .replace(/(?<!\\frac(?:\{[^{}]*\})?)\{([^{}]*)\}/gu, '$1');
   }
   return text.replace(/\\[A-Za-z]+ ?/gu, 'x').replace(/[_^\s]/gu, '').length;

@@ -29,7 +29,9 @@ export interface PageWords {
 }
 
 export function recordStyle(assets: RecordAssets, words: PageWords): string {
-  return [assets.faces.map(face).join('\n'), assets.formulaStyle.replace(/@font-face\s*\{[^}]*\}/gu, ''), page(words), look].join('\n');
+  return [assets.faces.map(face).join('\n'), assets.formulaStyle.replace(/@font-face\s*\{[^}]*\}/gu, ''), page(words), look].join(
+    '\n',
+  );
 }
 
 function face(f: Face): string {

@@ -13,7 +13,11 @@ import type { ProseBlock, ProseSpan } from './prose.ts';
 export type Symbols = ReadonlyMap<string, string>;
 
 export function symbolsOf(model: RecordModel): Symbols {
-  return new Map(model.steps.flatMap((step) => (step.name === undefined || step.symbol === undefined ? [] : [[step.name, step.symbol] as const])));
+  return new Map(
+    model.steps.flatMap((step) =>
+      step.name === undefined || step.symbol === undefined ? [] : [[step.name, step.symbol] as const],
+    ),
+  );
 }
 
 // Only names with a subscript: a lone letter is more often a word.

@@ -96,7 +96,13 @@ function fields(model: RecordModel): string {
     ['Supplementary title', block.supplementaryTitle],
     ['Technical reference', block.technicalReference],
     ['Classification', block.classification],
-    ['Load cases', model.cases.map((each) => each.title).filter((title) => title !== '').join('; ')],
+    [
+      'Load cases',
+      model.cases
+        .map((each) => each.title)
+        .filter((title) => title !== '')
+        .join('; '),
+    ],
     ['Begun from', model.origin],
   ];
   const shown = rows.filter(([, value]) => value !== undefined && value !== '');
@@ -111,14 +117,17 @@ function section(title: string, body: string): string {
 function criteria(model: RecordModel, symbols: Symbols): string {
   if (model.summary.length === 0) return '';
   const several = model.cases.length > 1;
-  const heads = several ? model.cases.map((_, k) => `<th scope="col">${caseHead(model, k)}</th>`).join('') : '<th scope="col">Utilisation</th>';
+  const heads = several
+    ? model.cases.map((_, k) => `<th scope="col">${caseHead(model, k)}</th>`).join('')
+    : '<th scope="col">Utilisation</th>';
   const rows = model.summary.map((line) => {
     const cells = line.cases.map((each) => {
       if (each.met === null) return '<td><span class="wrong">no verdict</span></td>';
       return `<td>${verdict(each.met, each.utilisation, escapeHtml(each.printed ?? ''))}</td>`;
     });
     const governing = several ? `<td>${governingWord(line, model)}</td>` : '';
-    const justification = line.justification === '' ? '' : `<p class="note">Justification: ${inlineText(line.justification, symbols)}</p>`;
+    const justification =
+      line.justification === '' ? '' : `<p class="note">Justification: ${inlineText(line.justification, symbols)}</p>`;
     return `<tr><td>${stepLink(line.number)}</td><td>${inlineText(line.title, symbols)} <span class="limit">${renderTex(line.symbols, false)}</span>${justification}</td>${cells.join('')}${governing}</tr>`;
   });
   return `<section><h2>Criteria</h2><p>${escapeHtml(criteriaWords(model.summary))}</p><div class="scroll"><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Criterion</th>${heads}${several ? '<th scope="col">Governs</th>' : ''}</tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
@@ -128,15 +137,20 @@ function governingWord(line: CriterionSummary, model: RecordModel): string {
   if (line.governing === null) return '—';
   const [first] = line.cases;
   if (line.cases.every((each) => each.printed === first?.printed && each.met === first?.met)) return 'all alike';
-  return `<span class="mark">${caseMark(model.cases.findIndex((each) => each.id === line.governing), model.cases.length)}</span>`;
+  return `<span class="mark">${caseMark(
+    model.cases.findIndex((each) => each.id === line.governing),
+    model.cases.length,
+  )}</span>`;
 }
 
 /** 'All 5 criteria are met.' */
 export function criteriaWords(summary: readonly CriterionSummary[]): string {
   const unmet = summary.filter((line) => line.cases.some((each) => each.met === false));
   const unknown = summary.filter((line) => line.cases.some((each) => each.met === null));
-  const rest = unknown.length === 0 ? '' : ` ${unknown.length} without a verdict: ${unknown.map((line) => line.number).join(', ')}.`;
-  if (unmet.length > 0) return `${unmet.length} of ${summary.length} criteria not met: ${unmet.map((line) => line.number).join(', ')}.${rest}`;
+  const rest =
+    unknown.length === 0 ? '' : ` ${unknown.length} without a verdict: ${unknown.map((line) => line.number).join(', ')}.`;
+  if (unmet.length > 0)
+    return `${unmet.length} of ${summary.length} criteria not met: ${unmet.map((line) => line.number).join(', ')}.${rest}`;
   if (unknown.length > 0) return `${summary.length - unknown.length} of ${summary.length} criteria met.${rest}`;
   return summary.length === 1 ? 'The criterion is met.' : `All ${summary.length} criteria are met.`;
 }
@@ -151,7 +165,10 @@ function openPoints(model: RecordModel, symbols: Symbols): string {
     if (row) row.numbers.push(point.number);
     else rows.push({ kind: point.kind, numbers: [point.number], text: shared ? sharedText[point.kind] : point.text });
   }
-  const markup = rows.map((row) => `<tr><td>${row.kind}</td><td>${row.numbers.map(stepLink).join(', ')}</td><td>${inlineText(row.text, symbols)}</td></tr>`);
+  const markup = rows.map(
+    (row) =>
+      `<tr><td>${row.kind}</td><td>${row.numbers.map(stepLink).join(', ')}</td><td>${inlineText(row.text, symbols)}</td></tr>`,
+  );
   return `<section><h2>Open points</h2><table class="list"><colgroup><col style="width:14%"><col style="width:43%"><col></colgroup><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col"></th></tr></thead><tbody>${markup.join('')}</tbody></table></section>`;
 }
 

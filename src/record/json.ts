@@ -38,13 +38,45 @@ export interface JsonRecord {
   readonly fingerprint?: string;
   readonly status: string;
   readonly steps: readonly JsonStep[];
-  readonly choices: readonly { readonly number: string; readonly cell: string; readonly name: string; readonly values: readonly (string | null)[] }[];
+  readonly choices: readonly {
+    readonly number: string;
+    readonly cell: string;
+    readonly name: string;
+    readonly values: readonly (string | null)[];
+  }[];
   readonly unsolved: readonly { readonly number: string; readonly cell: string; readonly name: string }[];
-  readonly summary: readonly { readonly number: string; readonly cell: string; readonly title: string; readonly governing: string | null }[];
-  readonly assumptions: readonly { readonly number: string; readonly text: string; readonly value: string; readonly source: string; readonly toConfirm: string }[];
-  readonly openPoints: readonly { readonly number: string; readonly cell: string; readonly kind: string; readonly text: string }[];
-  readonly references: readonly { readonly id: string; readonly document: string; readonly edition: string; readonly title: string; readonly citedBy: readonly string[] }[];
-  readonly problems: readonly { readonly cell: string; readonly severity: string; readonly code: string; readonly message: string }[];
+  readonly summary: readonly {
+    readonly number: string;
+    readonly cell: string;
+    readonly title: string;
+    readonly governing: string | null;
+  }[];
+  readonly assumptions: readonly {
+    readonly number: string;
+    readonly text: string;
+    readonly value: string;
+    readonly source: string;
+    readonly toConfirm: string;
+  }[];
+  readonly openPoints: readonly {
+    readonly number: string;
+    readonly cell: string;
+    readonly kind: string;
+    readonly text: string;
+  }[];
+  readonly references: readonly {
+    readonly id: string;
+    readonly document: string;
+    readonly edition: string;
+    readonly title: string;
+    readonly citedBy: readonly string[];
+  }[];
+  readonly problems: readonly {
+    readonly cell: string;
+    readonly severity: string;
+    readonly code: string;
+    readonly message: string;
+  }[];
 }
 
 export function recordJson(model: RecordModel, fingerprint?: string): JsonRecord {
@@ -56,10 +88,23 @@ export function recordJson(model: RecordModel, fingerprint?: string): JsonRecord
     steps: model.steps.filter((step) => step.numeric && step.kind !== 'sought').map(jsonStep),
     choices: model.steps
       .filter((step) => !step.numeric)
-      .map((step) => ({ number: step.number, cell: step.cell, name: step.name ?? '', values: step.cases.map((each) => each.result) })),
-    unsolved: model.steps.filter((step) => step.kind === 'sought').map((step) => ({ number: step.number, cell: step.cell, name: step.name ?? '' })),
+      .map((step) => ({
+        number: step.number,
+        cell: step.cell,
+        name: step.name ?? '',
+        values: step.cases.map((each) => each.result),
+      })),
+    unsolved: model.steps
+      .filter((step) => step.kind === 'sought')
+      .map((step) => ({ number: step.number, cell: step.cell, name: step.name ?? '' })),
     summary: model.summary.map(({ number, cell, title, governing }) => ({ number, cell, title, governing })),
-    assumptions: model.assumptions.map(({ number, text, value, source, toConfirm }) => ({ number, text, value, source, toConfirm })),
+    assumptions: model.assumptions.map(({ number, text, value, source, toConfirm }) => ({
+      number,
+      text,
+      value,
+      source,
+      toConfirm,
+    })),
     openPoints: model.openPoints,
     references: model.references,
     problems: model.problems.map(({ cell, severity, code, message }) => ({ cell, severity, code, message })),

@@ -24,7 +24,9 @@ export interface Line {
   /** The result is a whole number: the outermost operation is floor, ceil or round. */
   readonly whole: boolean;
   /** The whole formula is one name, or one number that stands as it is: a literal, a quoted quantity, an entry of a table. */
-  readonly alone?: { readonly kind: 'name'; readonly name: string } | { readonly kind: 'number'; readonly numeral: Numeral; readonly unit: Unit };
+  readonly alone?:
+    | { readonly kind: 'name'; readonly name: string }
+    | { readonly kind: 'number'; readonly numeral: Numeral; readonly unit: Unit };
   value(numbers: Numbers): number;
   /** True where these numbers decide as the true values do. */
   sameWay(numbers: Numbers): boolean;
@@ -94,7 +96,12 @@ function formOf(expr: Expr): Form {
     } else if (node.kind === 'call') node.args.forEach(visit);
   };
   visit(expr);
-  const operands = straight ? noted((numbers) => evaluateWith(expr, numbers, nothingTaken), () => 1) : [];
+  const operands = straight
+    ? noted(
+        (numbers) => evaluateWith(expr, numbers, nothingTaken),
+        () => 1,
+      )
+    : [];
   const form = { straight, operands };
   forms.set(expr, form);
   return form;

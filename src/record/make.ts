@@ -58,7 +58,11 @@ function originOf(calculation: Calculation): string {
   const parts: string[] = [];
   if (template !== undefined) parts.push(`template ${template.id}, version ${template.version}`);
   if (carriedFrom !== undefined) {
-    parts.push([carriedFrom.documentNumber ?? '', carriedFrom.revision ? `rev ${carriedFrom.revision}` : '', carriedFrom.title].filter((part) => part !== '').join(' '));
+    parts.push(
+      [carriedFrom.documentNumber ?? '', carriedFrom.revision ? `rev ${carriedFrom.revision}` : '', carriedFrom.title]
+        .filter((part) => part !== '')
+        .join(' '),
+    );
   }
   return parts.join('; ');
 }
@@ -84,10 +88,21 @@ function noteLine(calculation: Calculation, state: NoteState, prints: readonly C
   const text = replaceLive(cell.text, state.live, (name) => {
     const quantity = calculation.named(name);
     if (quantity === undefined) return undefined;
-    return inCases(prints.map((print) => printedValue(calculation, quantity, print)), titles);
+    return inCases(
+      prints.map((print) => printedValue(calculation, quantity, print)),
+      titles,
+    );
   });
   const role = cell.role === undefined ? {} : { role: cell.role };
-  return { kind: 'note', cell: cell.id, ...role, text, blocks: readProse(text), notes: messages(state), source: cell.source ?? '' };
+  return {
+    kind: 'note',
+    cell: cell.id,
+    ...role,
+    text,
+    blocks: readProse(text),
+    notes: messages(state),
+    source: cell.source ?? '',
+  };
 }
 
 function tableLine(calculation: Calculation, state: TableState): Line {
@@ -96,11 +111,26 @@ function tableLine(calculation: Calculation, state: TableState): Line {
   const heads = cell.columns.map((column) => {
     const unit = column.unit === undefined || column.unit === '1' ? '' : column.unit;
     const read = data?.columns.find((each) => each.name === column.name)?.unit;
-    return { title: column.title ?? column.name, unit: unit === '' ? '' : (read?.text ?? unit), numeric: column.unit !== undefined };
+    return {
+      title: column.title ?? column.name,
+      unit: unit === '' ? '' : (read?.text ?? unit),
+      numeric: column.unit !== undefined,
+    };
   });
-  const rows = cell.rows.map((row) => row.map((text, k) => (heads[k]?.numeric ? asPrinted(text, calculation.style.decimalSign) : text)));
+  const rows = cell.rows.map((row) =>
+    row.map((text, k) => (heads[k]?.numeric ? asPrinted(text, calculation.style.decimalSign) : text)),
+  );
   const notes = [...messages(state), ...(isBlank(cell.source) ? [noSource] : []), ...citationNotes(cell.source, sheet)];
-  return { kind: 'table', cell: cell.id, title: cell.title ?? '', name: cell.name, source: cell.source ?? '', heads, rows, notes };
+  return {
+    kind: 'table',
+    cell: cell.id,
+    title: cell.title ?? '',
+    name: cell.name,
+    source: cell.source ?? '',
+    heads,
+    rows,
+    notes,
+  };
 }
 
 /** A typed number with the signs and groups of print; all its digits stay. */
@@ -115,9 +145,24 @@ function plainLine(calculation: Calculation, state: Extract<CellState, { kind: '
     case 'heading':
       return { kind: 'heading', cell: cell.id, number: calculation.numberOf(cell.id), level: cell.level ?? 1, text: cell.text };
     case 'figure':
-      return { kind: 'other', cell: cell.id, what: 'figure', title: cell.title ?? '', source: cell.source ?? '', image: cell.image, text: 'The picture of this figure cannot be shown.' };
+      return {
+        kind: 'other',
+        cell: cell.id,
+        what: 'figure',
+        title: cell.title ?? '',
+        source: cell.source ?? '',
+        image: cell.image,
+        text: 'The picture of this figure cannot be shown.',
+      };
     case 'drawing':
-      return { kind: 'other', cell: cell.id, what: 'drawing', title: cell.title ?? cell.layout, source: '', text: `Drawing “${cell.layout}”: not drawn in this version.` };
+      return {
+        kind: 'other',
+        cell: cell.id,
+        what: 'drawing',
+        title: cell.title ?? cell.layout,
+        source: '',
+        text: `Drawing “${cell.layout}”: not drawn in this version.`,
+      };
     case 'chart':
       return {
         kind: 'other',

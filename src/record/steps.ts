@@ -5,9 +5,39 @@
 // 3. What has no value is null and carries its problem.
 // Not here: the digits, the lists at the head.
 
-import { calculatorLine, canonicalName, type Expr, type Formula, lineNumber, nothingTaken, type Substitution, type Taken, texName, texSubstituted, texSymbols, texText } from '../formula/index.ts';
-import { type Numeral, one, plainNumeral, printQuantity, printValue, texQuantity, texValue, type Unit } from '../quantity/index.ts';
-import type { Calculation, CellProblem, CriterionState, DerivedState, GivenState, QuantityState, SoughtState } from '../sheet/index.ts';
+import {
+  calculatorLine,
+  canonicalName,
+  type Expr,
+  type Formula,
+  lineNumber,
+  nothingTaken,
+  type Substitution,
+  type Taken,
+  texName,
+  texSubstituted,
+  texSymbols,
+  texText,
+} from '../formula/index.ts';
+import {
+  type Numeral,
+  one,
+  plainNumeral,
+  printQuantity,
+  printValue,
+  texQuantity,
+  texValue,
+  type Unit,
+} from '../quantity/index.ts';
+import type {
+  Calculation,
+  CellProblem,
+  CriterionState,
+  DerivedState,
+  GivenState,
+  QuantityState,
+  SoughtState,
+} from '../sheet/index.ts';
 import type { CasePrint, Printed, PrintedVerdict } from './case-print.ts';
 import type { Step, StepCase } from './model.ts';
 import { calculatorNumeral, givenNumeral } from './numerals.ts';
@@ -104,7 +134,15 @@ function givenStep(calculation: Calculation, state: GivenState): Step {
     if (state.texts !== undefined) {
       const text = state.texts[index];
       if (text === undefined) return failed(each.id, state.problems);
-      return { case: each.id, substituted: '', result: text, resultTex: null, calculatorLine: null, calculatorResult: null, closes: true };
+      return {
+        case: each.id,
+        substituted: '',
+        result: text,
+        resultTex: null,
+        calculatorLine: null,
+        calculatorResult: null,
+        closes: true,
+      };
     }
     const value = state.values[index];
     if (value === undefined) return failed(each.id, state.problems);
@@ -123,7 +161,11 @@ function givenStep(calculation: Calculation, state: GivenState): Step {
     kind: 'given',
     symbols: texName(nameOf(state)),
     ...(cell.basis === undefined ? {} : { basis: cell.basis }),
-    notes: [...givenNotes(cell, calculation.sheet), ...citationNotes(cell.source, calculation.sheet), ...warnings(state.problems)],
+    notes: [
+      ...givenNotes(cell, calculation.sheet),
+      ...citationNotes(cell.source, calculation.sheet),
+      ...warnings(state.problems),
+    ],
     numeric: state.texts === undefined && cell.choices === undefined,
     cases,
   };
@@ -136,13 +178,22 @@ function derivedStep(calculation: Calculation, state: DerivedState, prints: read
   const cases = calculation.cases.map((each, index): StepCase => {
     const print = prints[index];
     const si = state.si[index] ?? Number.NaN;
-    if (print === undefined || formula === undefined || Number.isNaN(si) || problemIn(state.problems, each.id)) return failed(each.id, state.problems);
+    if (print === undefined || formula === undefined || Number.isNaN(si) || problemIn(state.problems, each.id))
+      return failed(each.id, state.problems);
     const values = substitution(calculation, print);
     const taken = print.taken(formula) ?? nothingTaken;
     const substituted = texSubstituted(formula.expr, values, taken);
     if (type?.kind === 'truth') {
       const word = si === 0 ? 'no' : 'yes';
-      return { case: each.id, substituted, result: word, resultTex: null, calculatorLine: null, calculatorResult: null, closes: true };
+      return {
+        case: each.id,
+        substituted,
+        result: word,
+        resultTex: null,
+        calculatorLine: null,
+        calculatorResult: null,
+        closes: true,
+      };
     }
     const printed = print.printed(nameOf(state));
     if (printed === undefined) return failed(each.id, state.problems);
@@ -182,7 +233,11 @@ function criterionStep(calculation: Calculation, state: CriterionState, prints: 
     unmet ||= met === false;
     tooClose ||= verdict.tooClose;
     const values = substitution(calculation, print);
-    const side = (formula: Formula, printed: Printed): Side => ({ expr: formula.expr, taken: print.taken(formula) ?? nothingTaken, printed: quantityTex(calculation, printed) });
+    const side = (formula: Formula, printed: Printed): Side => ({
+      expr: formula.expr,
+      taken: print.taken(formula) ?? nothingTaken,
+      printed: quantityTex(calculation, printed),
+    });
     const sides = [side(left, verdict.sides[0]), side(right, verdict.sides[1])] as const;
     const [demand, capacity] = demandIsLeft(cell.relation) ? sides : ([sides[1], sides[0]] as const);
     return {
@@ -203,7 +258,10 @@ function criterionStep(calculation: Calculation, state: CriterionState, prints: 
   });
   if (tooClose) notes.push('the sides are closer than printed digits can show; they are compared unrounded');
   if (unmet && !isBlank(cell.ifNotMet)) notes.push(cell.ifNotMet ?? '');
-  const symbols = left && right ? `${symbolsOf(left.expr, calculation)} ${texRelation[cell.relation]} ${symbolsOf(right.expr, calculation)}` : texText(`${cell.left} ${cell.relation} ${cell.right}`);
+  const symbols =
+    left && right
+      ? `${symbolsOf(left.expr, calculation)} ${texRelation[cell.relation]} ${symbolsOf(right.expr, calculation)}`
+      : texText(`${cell.left} ${cell.relation} ${cell.right}`);
   return {
     ...head(calculation, state),
     kind: 'criterion',
@@ -235,7 +293,10 @@ function grouped(side: Side, tex: string): string {
 /** So does a sum that is taken away. */
 function parenthesised(side: Side, tex: string): string {
   const { expr } = side;
-  const sum = expr.kind === 'minus' || expr.kind === 'choose' || (expr.kind === 'binary' && (expr.operator === '+' || expr.operator === '-'));
+  const sum =
+    expr.kind === 'minus' ||
+    expr.kind === 'choose' ||
+    (expr.kind === 'binary' && (expr.operator === '+' || expr.operator === '-'));
   return sum || tex.startsWith('-') ? `\\left(${tex}\\right)` : tex;
 }
 
@@ -255,12 +316,17 @@ function sidesTex(calculation: Calculation, state: CriterionState, verdict: Prin
 function soughtStep(calculation: Calculation, state: SoughtState): Step {
   const { cell, left, right } = state;
   const symbol = texName(nameOf(state));
-  const equation = left && right ? `${symbol}:\\; ${symbolsOf(left.expr, calculation)} = ${symbolsOf(right.expr, calculation)}` : symbol;
+  const equation =
+    left && right ? `${symbol}:\\; ${symbolsOf(left.expr, calculation)} = ${symbolsOf(right.expr, calculation)}` : symbol;
   return {
     ...head(calculation, state),
     kind: 'sought',
     symbols: equation,
-    notes: [...(isBlank(cell.source) ? [noSource] : []), ...citationNotes(cell.source, calculation.sheet), ...warnings(state.problems)],
+    notes: [
+      ...(isBlank(cell.source) ? [noSource] : []),
+      ...citationNotes(cell.source, calculation.sheet),
+      ...warnings(state.problems),
+    ],
     numeric: true,
     cases: calculation.cases.map((each) => failed(each.id, state.problems)),
   };
@@ -311,5 +377,11 @@ function seeBelow(calculation: Calculation, index: number, formulas: readonly Fo
 const saidOtherwise = new Set(['used-above', 'not-solved']);
 
 function warnings(problems: readonly CellProblem[]): readonly string[] {
-  return [...new Set(problems.filter((problem) => problem.severity === 'warning' && !saidOtherwise.has(problem.code)).map((problem) => problem.message))];
+  return [
+    ...new Set(
+      problems
+        .filter((problem) => problem.severity === 'warning' && !saidOtherwise.has(problem.code))
+        .map((problem) => problem.message),
+    ),
+  ];
 }

@@ -5,7 +5,15 @@
 // 3. Temperature readings have no ratio (20 °C is not twice 10 °C): their criteria show the room in K.
 // Not here: the comparison itself (src/sheet), the digits of the sides (closing.ts).
 
-import { firstPlace, lastPlace, type Numeral, numeralOfDouble, plainNumeral, roundAtPlace, roundSignificant } from '../quantity/index.ts';
+import {
+  firstPlace,
+  lastPlace,
+  type Numeral,
+  numeralOfDouble,
+  plainNumeral,
+  roundAtPlace,
+  roundSignificant,
+} from '../quantity/index.ts';
 import type { Relation } from '../sheet/index.ts';
 
 export const hundredths = -2;

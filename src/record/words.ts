@@ -12,7 +12,9 @@ export const noSource = 'no source';
 export function carriedFrom(sheet: Sheet): string {
   const earlier = sheet.carriedFrom;
   if (earlier !== undefined) {
-    const document = [earlier.documentNumber ?? '', earlier.revision ? `rev ${earlier.revision}` : ''].filter((part) => part !== '').join(' ');
+    const document = [earlier.documentNumber ?? '', earlier.revision ? `rev ${earlier.revision}` : '']
+      .filter((part) => part !== '')
+      .join(' ');
     return document === '' ? earlier.title : document;
   }
   return sheet.template === undefined ? '' : `template ${sheet.template.id}`;
@@ -57,14 +59,14 @@ export function inCases(texts: readonly (string | null)[], titles: readonly stri
   return shown.map((text, k) => `${titles[k] ?? ''} ${text}`.trim()).join('; ');
 }
 
-/** `valueOf` gives undefined for a name that no quantity answers to: its braces stay. */
-export function replaceLive(text: string, live: readonly LiveName[], valueOf: (name: string) => string | undefined): string {
+/** `value` gives undefined for a name that no quantity answers to: its braces stay. */
+export function replaceLive(text: string, live: readonly LiveName[], value: (name: string) => string | undefined): string {
   let done = '';
   let end = 0;
   for (const name of live) {
-    const value = valueOf(name.name);
-    if (value === undefined || name.from < end) continue;
-    done += text.slice(end, name.from) + value;
+    const printed = value(name.name);
+    if (printed === undefined || name.from < end) continue;
+    done += text.slice(end, name.from) + printed;
     end = name.to;
   }
   return done + text.slice(end);

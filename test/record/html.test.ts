@@ -11,10 +11,24 @@ const assets: RecordAssets = {
   faces: [{ family: 'KaTeX_Main', style: 'normal', weight: '400', url: 'data:font/woff2;base64,AAAA' }],
 };
 
-const lines = ['# Forces', 'F_u = 592.7 N', 'k = 2.281', 'F_1 := F_u*k/(k - 1) [N]', 'F_1 <= "1320 N"', 'The pull is {F_u}; F_1 must hold.'];
+const lines = [
+  '# Forces',
+  'F_u = 592.7 N',
+  'k = 2.281',
+  'F_1 := F_u*k/(k - 1) [N]',
+  'F_1 <= "1320 N"',
+  'The pull is {F_u}; F_1 must hold.',
+];
 
 describe('the document', () => {
-  const html = recordHtml(recordOf(lines, { title: 'Mixer drive', titleBlock: { documentNumber: 'CS-014', revision: 'P1', preparedBy: 'A. Author' }, status: 'for checking' }), assets);
+  const html = recordHtml(
+    recordOf(lines, {
+      title: 'Mixer drive',
+      titleBlock: { documentNumber: 'CS-014', revision: 'P1', preparedBy: 'A. Author' },
+      status: 'for checking',
+    }),
+    assets,
+  );
 
   test('needs nothing from outside: no script, no link, no url but data:', () => {
     expect(html).not.toMatch(/<script|<link|<iframe|<object|@import/iu);
@@ -70,11 +84,39 @@ describe('a hostile sheet', () => {
   const sheet = sheetOf(
     cellsOf(
       { kind: 'heading', level: 1, text: evil },
-      { kind: 'given', name: 'F_u', title: evil, value: '5 N', source: evil, toConfirm: evil, carriedOver: true, basis: 'assumed' },
+      {
+        kind: 'given',
+        name: 'F_u',
+        title: evil,
+        value: '5 N',
+        source: evil,
+        toConfirm: evil,
+        carriedOver: true,
+        basis: 'assumed',
+      },
       { kind: 'derived', name: 'x', title: evil, formula: `"${evil.replaceAll('"', '')}" + 1`, source: evil },
-      { kind: 'criterion', title: evil, left: 'F_u', relation: '<', right: '"1 N"', source: evil, justification: evil, ifNotMet: evil },
+      {
+        kind: 'criterion',
+        title: evil,
+        left: 'F_u',
+        relation: '<',
+        right: '"1 N"',
+        source: evil,
+        justification: evil,
+        ifNotMet: evil,
+      },
       { kind: 'note', text: evil, role: 'limit', source: evil },
-      { kind: 'table', name: evil, title: evil, columns: [{ name: evil, title: evil }, { name: 'n', title: evil, unit: evil }], rows: [[evil, evil]], source: evil },
+      {
+        kind: 'table',
+        name: evil,
+        title: evil,
+        columns: [
+          { name: evil, title: evil },
+          { name: 'n', title: evil, unit: evil },
+        ],
+        rows: [[evil, evil]],
+        source: evil,
+      },
       { kind: 'drawing', title: evil, layout: evil, uses: { a: evil } },
       { kind: 'chart', title: evil, vary: evil, from: evil, to: evil, show: [evil] },
       { kind: 'figure', title: evil, image: `data:image/png;base64,AAAA" onerror="alert(4)`, source: evil },
@@ -86,7 +128,15 @@ describe('a hostile sheet', () => {
       method: evil,
       conclusion: evil,
       references: [{ id: evil, document: evil, edition: evil, title: evil }],
-      titleBlock: { documentNumber: evil, revision: evil, organisation: evil, language: evil, documentType: evil, preparedBy: evil, date: evil },
+      titleBlock: {
+        documentNumber: evil,
+        revision: evil,
+        organisation: evil,
+        language: evil,
+        documentType: evil,
+        preparedBy: evil,
+        date: evil,
+      },
       cases: [
         { id: 'a', title: evil },
         { id: evil, title: evil },

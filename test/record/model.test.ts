@@ -12,15 +12,11 @@ const references = [
 describe('lines', () => {
   test('are numbered by section, deeper headings without a number', () => {
     const record = recordOf(['a = 1', '# One', 'b = 2', '## Part', 'c := 2*b', '# Two', 'd = 3']);
-    expect(record.lines.map((line) => (line.kind === 'heading' ? `${line.number}|${line.text}` : line.kind === 'step' ? line.step.number : ''))).toEqual([
-      '0.1',
-      '1|One',
-      '1.1',
-      '|Part',
-      '1.2',
-      '2|Two',
-      '2.1',
-    ]);
+    expect(
+      record.lines.map((line) =>
+        line.kind === 'heading' ? `${line.number}|${line.text}` : line.kind === 'step' ? line.step.number : '',
+      ),
+    ).toEqual(['0.1', '1|One', '1.1', '|Part', '1.2', '2|Two', '2.1']);
   });
 
   test('a quantity used above its line says where it is', () => {
@@ -31,8 +27,18 @@ describe('lines', () => {
 
   test('live values take the printed form, one a case where cases differ', () => {
     const record = recordOf(
-      [{ kind: 'given', name: 'v', value: '15.2 m/s', byCase: { start: '3 m/s' }, source: 'x' }, 'w := 2*v [m/s]', 'g = 9.81 m/s^2', 'It runs at {v}, twice that is {w}, g is {g}; {nobody} and {a b} stay.'],
-      { cases: [{ id: 'run', title: 'Steady running' }, { id: 'start', title: 'Start-up' }] },
+      [
+        { kind: 'given', name: 'v', value: '15.2 m/s', byCase: { start: '3 m/s' }, source: 'x' },
+        'w := 2*v [m/s]',
+        'g = 9.81 m/s^2',
+        'It runs at {v}, twice that is {w}, g is {g}; {nobody} and {a b} stay.',
+      ],
+      {
+        cases: [
+          { id: 'run', title: 'Steady running' },
+          { id: 'start', title: 'Start-up' },
+        ],
+      },
     );
     const note = record.lines.find((line) => line.kind === 'note');
     expect(plain(note?.kind === 'note' ? note.text : '')).toBe(
@@ -84,17 +90,39 @@ describe('lines', () => {
 describe('notes and lists', () => {
   const record = recordOf(
     [
-      { kind: 'given', name: 'mu', title: 'Friction', value: '0.30', basis: 'assumed', source: '[R1] 5.10.5.2', toConfirm: 'TBC-3', carriedOver: true },
+      {
+        kind: 'given',
+        name: 'mu',
+        title: 'Friction',
+        value: '0.30',
+        basis: 'assumed',
+        source: '[R1] 5.10.5.2',
+        toConfirm: 'TBC-3',
+        carriedOver: true,
+      },
       { kind: 'given', name: 'd', title: 'Diameter', value: '200 mm', basis: 'measured' },
       { kind: 'derived', name: 'x', formula: 'mu*2', source: '[R1]; [R7] page 3' },
       { kind: 'note', text: 'The shafts are parallel.', role: 'assumption', toConfirm: 'TBC-4', source: '[R1]' },
-      { kind: 'criterion', title: 'Friction at most', left: 'mu', relation: '<=', right: '"0.2"', source: 'common practice', justification: 'A test stands behind it.', ifNotMet: 'Then mu is no design value.' },
+      {
+        kind: 'criterion',
+        title: 'Friction at most',
+        left: 'mu',
+        relation: '<=',
+        right: '"0.2"',
+        source: 'common practice',
+        justification: 'A test stands behind it.',
+        ifNotMet: 'Then mu is no design value.',
+      },
     ],
     { references, method: 'As in [R1].', carriedFrom: { title: 'Old mixer', documentNumber: 'CS-009' } },
   );
 
   test('a given says what a reader must know', () => {
-    expect(stepNamed(record, 'mu').notes).toEqual(['assumed', 'to be confirmed: TBC-3', 'carried over from CS-009, not confirmed']);
+    expect(stepNamed(record, 'mu').notes).toEqual([
+      'assumed',
+      'to be confirmed: TBC-3',
+      'carried over from CS-009, not confirmed',
+    ]);
     expect(stepNamed(record, 'd').notes).toEqual(['measured', 'no source']);
     expect(stepNamed(record, 'x').notes).toEqual(['[R7] is not in the list of sources']);
   });
@@ -145,7 +173,9 @@ describe('what fails', () => {
   });
 
   test('fails in one case only', () => {
-    const two = recordOf([{ kind: 'given', name: 'a', value: '1', byCase: { y: '3' }, source: 'x' }, 'b := 1/(a - 1)'], { cases: [{ id: 'x' }, { id: 'y' }] });
+    const two = recordOf([{ kind: 'given', name: 'a', value: '1', byCase: { y: '3' }, source: 'x' }, 'b := 1/(a - 1)'], {
+      cases: [{ id: 'x' }, { id: 'y' }],
+    });
     expect(stepNamed(two, 'b').cases.map((each) => each.result)).toEqual([null, '0.5000']);
     expect(stepNamed(two, 'b').cases.map((each) => each.problem === undefined)).toEqual([false, true]);
   });
@@ -155,7 +185,13 @@ describe('json', () => {
   test('has the shape that outside programs rely on', () => {
     const record = recordOf(
       [
-        { kind: 'table', name: 'pairs', columns: [{ name: 'pair' }, { name: 'mu', unit: '1' }], rows: [['leather', '0.30']], source: 'x' },
+        {
+          kind: 'table',
+          name: 'pairs',
+          columns: [{ name: 'pair' }, { name: 'mu', unit: '1' }],
+          rows: [['leather', '0.30']],
+          source: 'x',
+        },
         { kind: 'given', name: 'pair', value: 'leather', choices: 'pairs.pair', source: 'x' },
         'F = 2140 N',
         'G = 912.3 N',

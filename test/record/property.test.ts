@@ -63,7 +63,12 @@ function formula(draw: Draw, kind: Kind, names: Readonly<Record<Kind, readonly s
       () => `${sub('number')}*${sub('force')}`,
       () => `-(${sub('force')})`,
     ],
-    angle: [() => `atan(${sub('number')})`, () => `(${sub('angle')} + ${sub('angle')})/2`, () => `atan2(${sub('length')}, ${sub('length')})`, () => `pi - ${sub('angle')}`],
+    angle: [
+      () => `atan(${sub('number')})`,
+      () => `(${sub('angle')} + ${sub('angle')})/2`,
+      () => `atan2(${sub('length')}, ${sub('length')})`,
+      () => `pi - ${sub('angle')}`,
+    ],
   };
   return draw.one(forms[kind])();
 }
@@ -112,7 +117,10 @@ function checkAll(calculation: Calculation): void {
     } else {
       // The outside program rounds ties of `round` its own way and has its own last bits; nothing else is allowed to it.
       const outside = evaluateOutside(one.calculatorLine);
-      expect(Math.abs(outside - value) <= last * (1 + 1e-9) || value === 0, `${step.number}: ${one.calculatorLine} = ${outside}, printed ${one.calculatorResult}`).toBe(true);
+      expect(
+        Math.abs(outside - value) <= last * (1 + 1e-9) || value === 0,
+        `${step.number}: ${one.calculatorLine} = ${outside}, printed ${one.calculatorResult}`,
+      ).toBe(true);
     }
     if (step.kind !== 'derived') continue;
     const unit = readUnit(step.unit);
@@ -123,7 +131,9 @@ function checkAll(calculation: Calculation): void {
     // Printed is the true value rounded, with at least the digits of the sheet unless whole or zero.
     const shown = Number(`${numeral.negative ? '-' : ''}${numeral.digits}e${numeral.exponent}`);
     const trueValue = fromSI(si, unit.value);
-    expect(Math.abs(shown - trueValue), `${step.number} ${one.result} for ${trueValue}`).toBeLessThanOrEqual(0.5 * 10 ** numeral.exponent * (1 + 1e-9) + Math.abs(trueValue) * 1e-15);
+    expect(Math.abs(shown - trueValue), `${step.number} ${one.result} for ${trueValue}`).toBeLessThanOrEqual(
+      0.5 * 10 ** numeral.exponent * (1 + 1e-9) + Math.abs(trueValue) * 1e-15,
+    );
     if (Number(numeral.digits) !== 0 && numeral.exponent < 0) expect(numeral.digits.length).toBeGreaterThanOrEqual(digits);
     expect(Math.abs(value - si)).toBeLessThanOrEqual(0.5 * last * (1 + 1e-9) + Math.abs(si) * 1e-15);
     // Print, read, print is stable.

@@ -15,7 +15,15 @@ export function cellsOf(...lines: readonly (string | Loose<Cell>)[]): Cell[] {
     const heading = /^(#+) (.*)$/.exec(line);
     if (heading) return { id, kind: 'heading', level: heading[1]!.length as 1 | 2 | 3, text: heading[2]! };
     const derived = /^(\w+) := (.*?)(?: \[([^\]]*)\])?$/.exec(line);
-    if (derived) return { id, kind: 'derived', name: derived[1]!, formula: derived[2]!, ...(derived[3] === undefined ? {} : { unit: derived[3] }), source: 'derived here' };
+    if (derived)
+      return {
+        id,
+        kind: 'derived',
+        name: derived[1]!,
+        formula: derived[2]!,
+        ...(derived[3] === undefined ? {} : { unit: derived[3] }),
+        source: 'derived here',
+      };
     const given = /^(\w+) = (.*)$/.exec(line);
     if (given) return { id, kind: 'given', name: given[1]!, value: given[2]!, basis: 'specified', source: 'drawing' };
     const criterion = /^(.*?) (<=|>=|<|>) (.*?)(?: \[([^\]]*)\])?$/.exec(line);

@@ -33,7 +33,14 @@ describe('numerals of a step', () => {
 
   test('an angle in an exponent stands in rad with the digits of the quantity', () => {
     // 157.5° = 2.748893… rad, prints 2.749 rad; e^(0.30·2.749) = 2.28119, true 2.28112.
-    const record = recordOf(['mu = 0.30', 'g = 315 deg', 'theta := g/2 [deg]', 'k := e^(mu*theta)', 'j := exp(mu*theta)', 's := sin(theta)']);
+    const record = recordOf([
+      'mu = 0.30',
+      'g = 315 deg',
+      'theta := g/2 [deg]',
+      'k := e^(mu*theta)',
+      'j := exp(mu*theta)',
+      's := sin(theta)',
+    ]);
     expect(lineOf(record, 'theta').result).toBe('157.5°');
     expect(lineOf(record, 'k')).toEqual({ result: '2.281', line: 'exp(0.3*2.749)', gives: '2.281' });
     expect(lineOf(record, 'j').line).toBe('exp(0.3*2.749)');
@@ -120,7 +127,13 @@ describe('criteria', () => {
     for (const number of ['3', '4']) {
       const one = stepNamed(record, number).cases[0];
       // 1200/1320 = 0.90909…
-      expect(one).toMatchObject({ met: true, result: '0.91', calculatorLine: '(1200)/(1320)', calculatorResult: '0.91', closes: true });
+      expect(one).toMatchObject({
+        met: true,
+        result: '0.91',
+        calculatorLine: '(1200)/(1320)',
+        calculatorResult: '0.91',
+        closes: true,
+      });
     }
     expect(plain(stepNamed(record, '3').cases[0]?.sides ?? null)).toBe('1\\,200\\,\\mathrm{N} \\le 1\\,320\\,\\mathrm{N}');
     expect(record.summary[0]).toMatchObject({ number: '3', governing: 'base' });
@@ -145,7 +158,12 @@ describe('criteria', () => {
   test('where a side is not positive the room is shown, rounded to the safe side', () => {
     // 5 − (−1.23456) = 6.23456, rounded down.
     const record = recordOf(['a = -1.23456 N', 'b = 5 N', 'a <= b', 'a >= b']);
-    expect(stepNamed(record, '3').cases[0]).toMatchObject({ met: true, utilisation: null, calculatorLine: '(5) - ((-1.23456))', calculatorResult: '6.234' });
+    expect(stepNamed(record, '3').cases[0]).toMatchObject({
+      met: true,
+      utilisation: null,
+      calculatorLine: '(5) - ((-1.23456))',
+      calculatorResult: '6.234',
+    });
     expect(plain(stepNamed(record, '3').cases[0]?.result ?? null)).toBe('6.234 N');
     // Not met: −6.23456 N, rounded down to −6.235 N.
     expect(stepNamed(record, '4').cases[0]).toMatchObject({ met: false, calculatorResult: '-6.235' });
