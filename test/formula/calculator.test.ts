@@ -222,10 +222,10 @@ describe('line, tree and a program that is not ours agree', () => {
         compared++;
         if (!agree(value, other)) throw new Error(`${text} → ${line}: ${value} against ${other}`);
       }),
-      { seed, numRuns: 3000 },
+      { seed, numRuns: 1500 },
     );
-    expect(compared).toBeGreaterThan(1000);
-  });
+    expect(compared).toBeGreaterThan(500);
+  }, 60_000);
 });
 
 test('reading, typesetting and calculating cost microseconds', () => {

@@ -54,7 +54,7 @@ describe('one name however it was typed', () => {
       }),
       { seed, numRuns: 2000 },
     );
-  });
+  }, 30_000);
 });
 
 describe('what is a name', () => {
@@ -163,7 +163,7 @@ describe('how a name looks and sounds', () => {
       fc.property(names, (name) => void katex.renderToString(texName(name), strict)),
       { seed, numRuns: 1000 },
     );
-  });
+  }, 30_000);
 
   test('every letter that a name may have passes it too', () => {
     for (let code = 0x41; code < 0x250; code++) {
@@ -186,7 +186,7 @@ describe('how a name looks and sounds', () => {
       ),
       { seed, numRuns: 5000 },
     );
-  });
+  }, 30_000);
 
   test(`any text passes it as text (seed ${seed})`, () => {
     for (const text of ['50 % of {x}', 'a_b^c~d\\e', '$5 & #1', 'µ·Ω ± 2 ≤ 3 ½ √2 ⌀', 'naïve “ß” – ж 日 한', '😀 \u0301', 'a\nb'])
@@ -199,7 +199,7 @@ describe('how a name looks and sounds', () => {
       fc.property(fc.string({ maxLength: 20 }), (text) => void katex.renderToString(`x + ${texText(text)}`, strict)),
       { seed, numRuns: 1000 },
     );
-  });
+  }, 30_000);
 });
 
 describe('the nearest name', () => {

@@ -56,5 +56,5 @@ describe('a formula in words', () => {
       }),
       { seed, numRuns: 500 },
     );
-  });
+  }, 30_000);
 });
