@@ -2,11 +2,12 @@
 
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { casesOf } from '../../src/sheet/cases.ts';
+import { caseIdFault, casesOf } from '../../src/sheet/cases.ts';
 import type { Cell, GivenCell, Sheet } from '../../src/sheet/document.ts';
 import { applyEdit, type Edit, newCellId } from '../../src/sheet/edit.ts';
 import { readSheet, writeSheet } from '../../src/sheet/file.ts';
 import { emptyHistory, type History, labelOf, perform, redo, undo } from '../../src/sheet/history.ts';
+import { nameFault } from '../../src/sheet/rename.ts';
 import { aCell, aSheet, seeded } from './any-sheet.ts';
 
 /** A step of a random script: numbers that pick among what the sheet holds when the step is due. */
@@ -237,6 +238,32 @@ describe('cases', () => {
       { id: 'base' },
       { id: 'start' },
     ]);
+  });
+});
+
+describe('what an author may type', () => {
+  const sheet: Sheet = { ...sheetOf(given('g1', 'μ_1'), given('g2', 'constructor')), cases: [{ id: 'run' }] };
+  it.each([
+    ['F_1', undefined],
+    ['mu_1', 'mu_1 is already defined; names are unique in a sheet'],
+    ['constructor', 'constructor is already defined; names are unique in a sheet'],
+    ['toString', undefined],
+    ['e', '“e” has a fixed meaning in formulas; take another name, as in e_1'],
+    ['2 x', '“2 x” is no name; a name is a letter, then letters, digits or _, as in F_1'],
+    ['', '“” is no name; a name is a letter, then letters, digits or _, as in F_1'],
+  ])('as a name: %s', (name, fault) => {
+    expect(nameFault(sheet, name)).toBe(fault);
+  });
+  it('a cell may keep its own name, typed in another alphabet too', () => {
+    expect(nameFault(sheet, 'mu_1', 'g1')).toBeUndefined();
+  });
+  it.each([
+    ['start-up', undefined],
+    ['run', 'there is a case run already'],
+    ['a b', '“a b” cannot be the id of a case; take Latin letters, digits, . _ or -, as in start-up'],
+    ['constructor', '“constructor” cannot be the id of a case; take Latin letters, digits, . _ or -, as in start-up'],
+  ])('as the id of a case: %s', (id, fault) => {
+    expect(caseIdFault(sheet, id)).toBe(fault);
   });
 });
 

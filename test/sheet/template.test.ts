@@ -224,10 +224,11 @@ describe('a value that is set', () => {
   });
 });
 
-describe('built-in templates', () => {
-  const folder = new URL('../../templates/', import.meta.url);
-  it.each(readdirSync(folder).filter((file) => file.endsWith('.sheet.json')))('%s is a canonical file', (file) => {
-    const text = readFileSync(new URL(file, folder), 'utf8');
+describe('built-in sheets', () => {
+  const root = new URL('../../', import.meta.url);
+  const files = readdirSync(new URL('templates/', root)).filter((file) => file.endsWith('.sheet.json'));
+  it.each([...files.map((file) => `templates/${file}`), 'src/view/example.sheet.json'])('%s is a canonical file', (file) => {
+    const text = readFileSync(new URL(file, root), 'utf8');
     const read = readSheet(text);
     expect(read.ok ? [] : read.problems).toEqual([]);
     if (read.ok) expect(writeSheet(read.value)).toBe(text);
