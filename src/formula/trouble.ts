@@ -156,7 +156,7 @@ function ofCall(lookup: Lookup, expr: Call, x: number): Problem | undefined {
 }
 
 function tooLarge(lookup: Lookup, expr: Expr): Problem {
-  const names = namesIn(expr).slice(0, 4).map((name) => `${plainName(name)} = ${show(lookup, lookup.value(name), lookup.unit?.(name) ?? one)}`);
+  const names = namesIn(expr).filter((name) => Number.isFinite(lookup.value(name))).slice(0, 4).map((name) => `${plainName(name)} = ${show(lookup, lookup.value(name), lookup.unit?.(name) ?? one)}`);
   const where = names.length === 0 ? '' : ` with ${names.join(', ')}`;
   return error('overflow', `${writeExpr(expr)} is too large for a number (beyond 1.8e308)${where}; check the values`, expr);
 }
