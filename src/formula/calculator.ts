@@ -180,7 +180,7 @@ export function evaluateWith(
   return value(expr, false);
 }
 
-export function operate(operator: '+' | '-' | '*' | '/', a: number, b: number): number {
+function operate(operator: '+' | '-' | '*' | '/', a: number, b: number): number {
   switch (operator) {
     case '+':
       return a + b;

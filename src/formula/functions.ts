@@ -47,7 +47,7 @@ export function isTableFunction(name: string): name is 'interpolate' | 'entry' {
 }
 
 /** `$1`, `$2` are the arguments as typed, `$(1)` the same with parentheses where they are needed. */
-export interface Instead {
+interface Instead {
   readonly arguments: number;
   readonly write: string;
 }

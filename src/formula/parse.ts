@@ -20,7 +20,7 @@ import type { Walk } from './walking.ts';
 import { nodeBudget } from './walking.ts';
 
 export const longestFormula = 2000;
-export const mostTokens = 500;
+const mostTokens = 500;
 
 export interface Formula {
   /** As typed. */
@@ -32,7 +32,7 @@ export interface Formula {
   readonly tables: readonly string[];
 }
 
-export interface ReadingOptions {
+interface ReadingOptions {
   /** The sheet's decimal sign. A formula has the point; its quoted quantities, read elsewhere, have this one. */
   readonly decimalSign?: '.' | ',';
 }

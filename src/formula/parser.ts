@@ -28,7 +28,7 @@ abstract class Base {
 }
 (Base.prototype as { isNode: boolean }).isNode = true;
 
-export class SymbolNode extends Base {
+class SymbolNode extends Base {
   readonly type = 'SymbolNode';
   readonly isSymbolNode = true;
   readonly name: string;
@@ -38,7 +38,7 @@ export class SymbolNode extends Base {
   }
 }
 
-export class ConstantNode extends Base {
+class ConstantNode extends Base {
   readonly type = 'ConstantNode';
   readonly isConstantNode = true;
   /** A numeral as RawNumber, a string as string; anything else is a word like `true`. */
@@ -49,7 +49,7 @@ export class ConstantNode extends Base {
   }
 }
 
-export class ParenthesisNode extends Base {
+class ParenthesisNode extends Base {
   readonly type = 'ParenthesisNode';
   readonly isParenthesisNode = true;
   readonly content: Node;
@@ -77,7 +77,7 @@ export class OperatorNode extends Base {
   }
 }
 
-export class FunctionNode extends Base {
+class FunctionNode extends Base {
   readonly type = 'FunctionNode';
   readonly isFunctionNode = true;
   readonly fn: Node;
@@ -91,7 +91,7 @@ export class FunctionNode extends Base {
   }
 }
 
-export class ConditionalNode extends Base {
+class ConditionalNode extends Base {
   readonly type = 'ConditionalNode';
   readonly isConditionalNode = true;
   readonly condition: Node;
@@ -105,7 +105,7 @@ export class ConditionalNode extends Base {
   }
 }
 
-export class RelationalNode extends Base {
+class RelationalNode extends Base {
   readonly type = 'RelationalNode';
   readonly isRelationalNode = true;
   readonly conditionals: readonly string[];
@@ -128,7 +128,7 @@ type OtherType =
   | 'RangeNode';
 
 /** A node that no formula may hold: matrices, ranges, assignments, blocks, members. Its parts are not kept. */
-export abstract class OtherNode extends Base {
+abstract class OtherNode extends Base {
   abstract readonly type: OtherType;
   readonly optionalChaining: boolean = false;
 }
