@@ -40,7 +40,13 @@ describe('nearestDouble', () => {
         const next = x * (1 + Number.EPSILON);
         if (!Number.isFinite(next) || stepsApart(x, next) !== 1) return;
         const after = fractionOfDouble(next);
-        expect(nearestDouble(n * after.d + after.n * d, 2n * d * after.d)).toBe(lastBit(x) === 0 ? x : next);
+        const [above, below] = [n * after.d + after.n * d, 2n * d * after.d];
+        expect(nearestDouble(above, below)).toBe(lastBit(x) === 0 ? x : next);
+        // The slightest bit beside the middle decides, however far behind the digits of a double it stands.
+        const tiny = 10n ** 40n;
+        const outward = above > 0n ? 1n : -1n;
+        expect(nearestDouble(above * tiny + outward, below * tiny)).toBe(next);
+        expect(nearestDouble(above * tiny - outward, below * tiny)).toBe(x);
       }),
       runs,
     );
