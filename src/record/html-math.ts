@@ -15,7 +15,7 @@ export function renderTex(tex: string, display = true): string {
   const key = display ? `d${tex}` : tex;
   const known = kept.get(key);
   if (known !== undefined) return known;
-  const markup = render(display ? `\\displaystyle ${tex}` : tex);
+  const markup = render(display ? `\\displaystyle ${tex.replaceAll('{cases}', '{dcases}')}` : tex);
   if (kept.size >= mostKept) kept.clear();
   kept.set(key, markup);
   return markup;

@@ -24,7 +24,7 @@ interface Row {
 export function stepBody(step: Step, model: RecordModel, symbols: Symbols): string {
   const many = model.cases.length > mostColumns;
   const columns = many ? 1 : model.cases.length;
-  const fits = columns > 1 ? 46 : 60;
+  const fits = columns > 2 ? 40 : columns > 1 ? 50 : 64;
   const lines = rows(step, many, fits).flatMap((line) => spread(line, fits));
   const none = '<td class="res"></td>'.repeat(columns);
   const markup = lines.map((line) => {
@@ -170,7 +170,9 @@ function result(each: StepCase, mark: string): string {
 function lengthOf(tex: string): number {
   let text = tex
     .replace(/\\(?:mathrm|mathit|text|textit|operatorname)\{([^{}]*)\}/gu, '$1')
-    .replace(/\\(?:left|right|displaystyle|,|;|quad)/gu, '');
+    .replace(/\\(?:left|right|displaystyle|,|;|quad)/gu, '')
+    // Raised and lowered pieces are smaller.
+    .replace(/[_^]\{([^{}]*)\}/gu, (_, inner: string) => inner.slice(0, Math.ceil(inner.length * 0.7)));
   for (let round = 0; round < 20 && /\{[^{}]*\}/u.test(text); round++) {
     text = text
       .replace(/\\frac\{([^{}]*)\}\{([^{}]*)\}/gu, (_, over: string, under: string) =>

@@ -77,6 +77,8 @@ td{vertical-align:top}
 .list th,.list td{padding:.2rem .7rem .2rem 0;border-bottom:1px solid var(--rule)}
 .list thead th{border-bottom:1px solid var(--ink)}
 .list .num{text-align:right;white-space:nowrap}
+.points td:first-child{white-space:nowrap}
+.points td:nth-child(2){max-width:17rem}
 .list td:last-child,.list th:last-child{padding-right:0}
 tr{break-inside:avoid}
 thead{display:table-header-group}

@@ -169,7 +169,7 @@ function openPoints(model: RecordModel, symbols: Symbols): string {
     (row) =>
       `<tr><td>${row.kind}</td><td>${row.numbers.map(stepLink).join(', ')}</td><td>${inlineText(row.text, symbols)}</td></tr>`,
   );
-  return `<section><h2>Open points</h2><table class="list"><colgroup><col style="width:14%"><col style="width:43%"><col></colgroup><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col"></th></tr></thead><tbody>${markup.join('')}</tbody></table></section>`;
+  return `<section><h2>Open points</h2><table class="list points"><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col"></th></tr></thead><tbody>${markup.join('')}</tbody></table></section>`;
 }
 
 const sharedText = { 'carried over': 'not confirmed for this sheet', 'no source': 'nothing says where these come from' } as const;

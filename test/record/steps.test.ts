@@ -194,3 +194,20 @@ describe('criteria', () => {
     expect(one?.result).toBe('0.043');
   });
 });
+
+test('a sheet with a decimal comma prints commas and calculates with points', () => {
+  const record = recordOf(['d = 0,2 m', 'n = 1 450,5 r/min', 'v := pi*d*n + "0,5 m/s" [m/s]', 'v <= "20,5 m/s"'], {
+    settings: { decimalSign: ',' },
+  });
+  // pi·0.2·1450.5/60 + 0.5 = 15.6896…
+  expect(lineOf(record, 'v')).toEqual({ result: '15,69 m/s', line: 'pi*0.2*24.175 + 0.5', gives: '15.69' });
+  expect(stepNamed(record, 'v').cases[0]?.substituted).toContain('0{,}5');
+  expect(stepNamed(record, '4').cases[0]).toMatchObject({ result: '0,77', calculatorResult: '0.77' });
+});
+
+test('a sheet of one digit closes, and so does one of twelve', () => {
+  for (const digits of [1, 2, 12]) {
+    const record = recordOf(['t = 2', 'a := sqrt(t)', 'b := a*t', 'b <= 5'], { settings: { digits } });
+    expect(record.steps.every((step) => step.cases.every((each) => each.closes))).toBe(true);
+  }
+});
