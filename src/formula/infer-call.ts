@@ -11,7 +11,7 @@ import { alike, type Part, powerByRational, quantity, quantityOf, refuseReading,
 import { needsNumber, roundingNeedsNumber } from './messages.ts';
 import { nearestNames } from './nearest.ts';
 import { report } from './report.ts';
-import { type TableData, textsOf } from './table.ts';
+import { nearestText, type TableData, textsOf } from './table.ts';
 import { type Context, number, type QuantityType, type Term } from './term.ts';
 import type { ColumnType, TableType } from './type.ts';
 import { describe, writeExpr } from './wording.ts';
@@ -159,8 +159,9 @@ function fitsTextKey(ctx: Context, expr: Lookup, table: TableType | TableData, k
   const texts = textsOf(table, keys.name);
   const quoted = innermost(expr.key);
   if (texts === undefined || quoted.kind !== 'quoted' || texts.includes(quoted.text)) return true;
-  const nearest = nearestNames(quoted.text, new Set(texts));
-  const then = nearest.length > 0 ? `did you mean "${nearest[0]}"` : `its rows are ${texts.slice(0, 5).map((text) => `"${text}"`).join(', ')}`;
+  const near = nearestText(quoted.text, texts);
+  const nearest = near === undefined ? [] : [near];
+  const then = near !== undefined ? `did you mean "${near}"` : `its rows are ${texts.slice(0, 5).map((text) => `"${text}"`).join(', ')}`;
   const fixes = nearest.map((text) => ({ from: quoted.at[0], to: quoted.at[1], text: `"${text}"`, label: `write "${text}"` }));
   report(ctx, 'unknown-text', `the table ${table.name} has no row "${quoted.text}"; ${then}`, quoted.at, fixes);
   return false;

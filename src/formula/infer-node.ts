@@ -13,7 +13,7 @@ import { readLiteral } from './literal.ts';
 import { notATruth } from './messages.ts';
 import { nearestNames } from './nearest.ts';
 import { report } from './report.ts';
-import { textsOf } from './table.ts';
+import { nearestText, textsOf } from './table.ts';
 import { type Context, number, type Term, truth, typeOfUnit } from './term.ts';
 import { writeExpr } from './wording.ts';
 
@@ -183,8 +183,9 @@ function checkText(ctx: Context, quoted: Extract<Expr, { kind: 'quoted' }>, besi
   const table = ctx.scope.table(type.table);
   const texts = table && textsOf(table, type.column);
   if (texts === undefined || texts.includes(quoted.text)) return;
-  const nearest = nearestNames(quoted.text, new Set(texts));
-  const offered = nearest.length > 0 ? `did you mean "${nearest[0]}"` : `its texts are ${[...new Set(texts)].slice(0, 5).map((text) => `"${text}"`).join(', ')}`;
+  const near = nearestText(quoted.text, texts);
+  const nearest = near === undefined ? [] : [near];
+  const offered = near !== undefined ? `did you mean "${near}"` : `its texts are ${[...new Set(texts)].slice(0, 5).map((text) => `"${text}"`).join(', ')}`;
   const fixes = nearest.map((text) => ({ from: quoted.at[0], to: quoted.at[1], text: `"${text}"`, label: `write "${text}"` }));
   report(ctx, 'unknown-text', `"${quoted.text}" is no text of ${type.table}.${type.column}, so ${writeExpr(beside.expr)} can never equal it; ${offered}`, quoted.at, fixes);
 }

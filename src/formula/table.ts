@@ -6,6 +6,7 @@
 // Not here: reading a table cell (src/sheet), typing of lookups (infer-table.ts).
 
 import type { Unit } from '../quantity/index.ts';
+import { nearestNames } from './nearest.ts';
 import type { TableType, Type } from './type.ts';
 
 export interface TableColumnData {
@@ -78,4 +79,12 @@ export function textsOf(table: TableType | TableData, column: string): readonly 
     if (each.name === column) return (each as Partial<TableColumnData>).texts;
   }
   return undefined;
+}
+
+/** The text of a column that was most likely meant: nearest in spelling, or one that begins alike. */
+export function nearestText(text: string, texts: readonly string[]): string | undefined {
+  const near = nearestNames(text, new Set(texts))[0];
+  if (near !== undefined || text === '') return near;
+  const begins = text.toLowerCase();
+  return texts.find((each) => each !== '' && (each.toLowerCase().startsWith(begins) || begins.startsWith(each.toLowerCase())));
 }

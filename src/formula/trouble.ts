@@ -5,17 +5,15 @@
 // Not here: finding the trouble (explain.ts).
 
 import {
-  coherentUnit, type Dimension, dimensionless, divideD, multiplyD, numeralInUnit, numeralOfDouble, one, powerD, printNumeral, printQuantity,
-  type Problem, rational, roundSignificant, significantDigits, type Unit, withoutTrailingZeros,
+  coherentUnit, type Dimension, dimensionless, divideD, equalD, multiplyD, numeralInUnit, numeralOfDouble, one, powerD, printNumeral, printQuantity,
+  type Problem, rational, readUnit, roundSignificant, significantDigits, type Unit, withoutTrailingZeros,
 } from '../quantity/index.ts';
-import { nearestNames } from './nearest.ts';
 import type { Expr } from './expr.ts';
 import type { Lookup } from './explain.ts';
 import { readLiteral } from './literal.ts';
 import { rationalOf } from './rational-exponent.ts';
 import { plainName } from './symbols.ts';
-import type { TableColumnData, TableData } from './table.ts';
-import { columnOf } from './table.ts';
+import { columnOf, nearestText, type TableColumnData, type TableData } from './table.ts';
 import { writeExpr } from './wording.ts';
 
 type Call = Extract<Expr, { kind: 'call' }>;
@@ -48,7 +46,16 @@ function unitOf(lookup: Lookup, expr: Expr): Unit {
     const read = readLiteral(expr.text, lookup.decimalSign ?? '.');
     return read.ok ? read.value.unit : one;
   }
-  return coherentUnit(dimensionOf(lookup, expr));
+  const dimension = dimensionOf(lookup, expr);
+  if (expr.kind === 'binary' && (expr.operator === '+' || expr.operator === '-')) {
+    const unit = unitOf(lookup, expr.left);
+    if (unit.reading === undefined && equalD(unit.dimension, dimension)) return unit;
+  }
+  if (expr.kind === 'binary' && expr.operator === '^' && expr.right.kind === 'number') {
+    const power = readUnit(`${unitOf(lookup, expr.left).text}^${expr.right.text}`);
+    if (power.ok && equalD(power.value.dimension, dimension)) return power.value;
+  }
+  return coherentUnit(dimension);
 }
 
 function dimensionOf(lookup: Lookup, expr: Expr): Dimension {
@@ -98,6 +105,7 @@ function dimensionOf(lookup: Lookup, expr: Expr): Dimension {
 
 const isZeroLiteral = (expr: Expr): boolean => (expr.kind === 'number' ? expr.value === 0 : expr.kind === 'parens' && isZeroLiteral(expr.inner));
 
+const isLiteral = (expr: Expr): boolean => expr.kind === 'number' || expr.kind === 'quoted' || (expr.kind === 'minus' && isLiteral(expr.inner));
 const unwrapped = (expr: Expr): Expr => (expr.kind === 'parens' ? unwrapped(expr.inner) : expr);
 const written = (expr: Expr): string => writeExpr(unwrapped(expr));
 
@@ -109,30 +117,29 @@ function divisionByZero(lookup: Lookup, expr: Binary): Problem {
   if (expr.operator === '^') {
     return error('division-by-zero', `division by zero: ${written(expr.left)} is 0 and has a negative exponent; check what makes it vanish`, expr);
   }
-  const left = unwrapped(expr.left);
   const right = unwrapped(expr.right);
   const zero = right.kind === 'number' ? `the divisor is written as ${right.text}` : `${written(right)} is ${showPart(lookup, right, 0)}`;
   const parts = partsOfZero(lookup, right);
-  return error('division-by-zero', `division by zero: ${zero}${parts} in ${writeExpr({ ...expr, left, right: expr.right })}; check what makes it vanish`, expr);
+  return error('division-by-zero', `division by zero: ${zero}${parts} in ${writeExpr(expr)}; check what makes it vanish`, expr);
 }
 
 /** ' (d_2 = 200 mm, d_1 = 200 mm)': the operands of a difference that came out as 0. */
 function partsOfZero(lookup: Lookup, expr: Expr): string {
   if (expr.kind !== 'binary' || (expr.operator !== '-' && expr.operator !== '+')) return '';
-  const names = [expr.left, expr.right].map(unwrapped).filter((side) => side.kind === 'name');
-  if (names.length === 0) return '';
-  return ` (${names.map((name) => `${plainName(name.name)} = ${showPart(lookup, name, lookup.value(name.name))}`).join(', ')})`;
+  const names = new Set([expr.left, expr.right].map(unwrapped).flatMap((side) => (side.kind === 'name' ? [side.name] : [])));
+  if (names.size === 0) return '';
+  return ` (${[...names].map((name) => `${plainName(name)} = ${show(lookup, lookup.value(name), lookup.unit?.(name) ?? one)}`).join(', ')})`;
 }
 
 function rootOfNegative(lookup: Lookup, expr: Expr, radicand: Expr, value: number): Problem {
   const of = unwrapped(radicand);
-  const is = of.kind === 'number' ? '' : `${written(of)} is `;
+  const is = isLiteral(of) ? '' : `${written(of)} is `;
   return error('root-of-negative', `root of a negative number: ${is}${showPart(lookup, of, value)} in ${writeExpr(expr)}; a root needs 0 or more`, expr);
 }
 
 function ofCall(lookup: Lookup, expr: Call, x: number): Problem | undefined {
   const argument = expr.args[0]!;
-  const is = (unwrapped(argument).kind === 'number' ? '' : `${written(argument)} is `) + showPart(lookup, argument, x);
+  const is = (isLiteral(unwrapped(argument)) ? '' : `${written(argument)} is `) + showPart(lookup, argument, x);
   switch (expr.name) {
     case 'sqrt':
       return x < 0 ? rootOfNegative(lookup, expr, argument, x) : undefined;
@@ -183,7 +190,7 @@ function nearJump(expr: Call, name: 'floor' | 'ceil' | 'round', x: number): Prob
   return {
     code: 'near-jump',
     severity: 'warning',
-    message: `${writeExpr(expr)} hangs by a thread: ${written(expr.args[0]!)} is within 1e-9 of ${shown}, where ${name} jumps; decide which side is meant`,
+    message: `${writeExpr(expr)} stands on an edge: ${written(expr.args[0]!)} is within 1e-9 of ${shown}, where ${name} jumps; the printed numbers may fall on either side, say which is meant`,
     at: expr.at,
   };
 }
@@ -199,8 +206,8 @@ function outside(lookup: Lookup, expr: Table, table: TableData, keys: TableColum
 
 function noRow(expr: Table, table: TableData, text: string): Problem {
   const keys = table.columns[0]?.texts ?? [];
-  const nearest = nearestNames(text, new Set(keys));
-  const then = nearest.length > 0 ? `nearest: \`${nearest[0]}\`` : `its rows: ${keys.slice(0, 5).map((key) => `\`${key}\``).join(', ')}`;
+  const nearest = nearestText(text, keys);
+  const then = nearest !== undefined ? `nearest: \`${nearest}\`` : `its rows: ${keys.slice(0, 5).map((key) => `\`${key}\``).join(', ')}`;
   return error('no-row', `no row \`${text}\` in table ${table.name}; ${then}`, expr);
 }
 
