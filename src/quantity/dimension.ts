@@ -9,7 +9,7 @@ import { addR, equalR, isZeroR, mulR, rational, rationalOfText, subR, textR, zer
 
 export type Dimension = readonly Rational[];
 
-export const baseLetters: readonly string[] = ['L', 'M', 'T', 'I', 'Θ', 'N', 'J'];
+const baseLetters: readonly string[] = ['L', 'M', 'T', 'I', 'Θ', 'N', 'J'];
 /** Coherent SI units of the base quantities, same order. */
 export const baseSymbols: readonly string[] = ['m', 'kg', 's', 'A', 'K', 'mol', 'cd'];
 

@@ -14,7 +14,7 @@ export {
   multiplyD,
   powerD,
 } from './dimension.ts';
-export { divideE, doubleOf, type Exact, equalE, exactOf, exactOfDouble, exactOfText, multiplyE, powerE } from './exact.ts';
+export { divideE, doubleOf, type Exact, equalE, exactOf, exactOfDouble, multiplyE, powerE } from './exact.ts';
 export { describeUnit, forceHint, kindName, withArticle } from './kind.ts';
 export {
   doubleOfNumeral,
@@ -30,15 +30,14 @@ export {
   withoutTrailingZeros,
 } from './numeral.ts';
 export { type DecimalSign, readNumeral } from './numeral-text.ts';
-export { isScientific, printNumeral, printQuantity, type Style } from './print.ts';
+export { printNumeral, printQuantity, type Style } from './print.ts';
 export { texNumeral, texQuantity, texUnit } from './print-tex.ts';
 export { printValue, texValue } from './print-value.ts';
-export { either, type Fix, type Problem, quote, type Result } from './problem.ts';
+export { either, type Fix, type Problem, type Result } from './problem.ts';
 export {
   addR,
   compareR,
   equalR,
-  isWholeR,
   isZeroR,
   mulR,
   negR,

@@ -5,7 +5,7 @@
 // 2. Terms are those of ISO 80000-3 and ISO 80000-4; "number" stands for a quantity of dimension one.
 // Not here: whether two kinds may meet in a formula.
 
-import { unitRows } from './catalogue.ts';
+import { symbolOfText } from './catalogue.ts';
 import { coherentUnit } from './coherent.ts';
 import type { Dimension } from './dimension.ts';
 import { dimensionKey, dimensionOf, equalD } from './dimension.ts';
@@ -64,8 +64,7 @@ const words: ReadonlyMap<string, string> = new Map(
 
 const torque = dimensionOf('L2 M T-2');
 const rate = dimensionOf('T-1');
-const energySymbols = new Set(unitRows.filter((row) => row.kind === 'energy').map((row) => row.symbol));
-const holdsEnergy = (symbol: string): boolean => energySymbols.has(symbol) || energySymbols.has(symbol.slice(1));
+const holdsEnergy = (symbol: string): boolean => symbolOfText(symbol)?.row.kind === 'energy';
 
 /** What the counts and symbols of a unit say beyond its dimension. */
 function kindByUnit(unit: Unit): string | undefined {

@@ -16,7 +16,7 @@ export interface Style {
   readonly decimalSign: DecimalSign;
 }
 
-export const thinSpace = '\u202F';
+const thinSpace = '\u202F';
 export const wideSpace = '\u00A0';
 
 /** Whether it is printed with a power of ten. */

@@ -33,7 +33,6 @@ export const mulR = (a: Rational, b: Rational): Rational => rational(a.n * b.n, 
 export const negR = (a: Rational): Rational => (a.n === 0 ? a : { n: -a.n, d: a.d });
 export const equalR = (a: Rational, b: Rational): boolean => a.n === b.n && a.d === b.d;
 export const isZeroR = (a: Rational): boolean => a.n === 0;
-export const isWholeR = (a: Rational): boolean => a.d === 1;
 export const signR = (a: Rational): number => Math.sign(a.n);
 /** Below, at or above 0 as a is less than, equal to or greater than b. */
 export const compareR = (a: Rational, b: Rational): number => Math.sign(a.n * b.d - b.n * a.d);

@@ -25,7 +25,7 @@ export interface UnitRow {
   /** Standing alone it is a reading: kelvin at the zero of its scale. */
   readonly reading?: string;
   /** Its kind where the dimension does not tell. */
-  readonly kind?: 'torque' | 'energy' | 'ratio';
+  readonly kind?: 'energy';
 }
 
 export interface Prefix {

@@ -6,7 +6,7 @@
 // Not here: what an order of tokens means (unit-grammar.ts).
 
 import { symbolOfText } from './catalogue.ts';
-import { numberOfSuperscripts } from './numeral-text.ts';
+import { numberOfSuperscripts, spaces } from './numeral-text.ts';
 import type { Rational } from './rational.ts';
 import { rational, rationalOfText } from './rational.ts';
 
@@ -21,9 +21,8 @@ export interface Token {
   readonly attached: boolean;
 }
 
-const gap = '[ \\t\\u00A0\\u2002-\\u200A\\u202F\\u205F]';
-const gapPattern = new RegExp(`${gap}*`, 'y');
-const symbolPattern = new RegExp(`(?:deg|°)${gap}?[CFR](?![\\p{L}\\d_])|[°′″%‰℃℉]|[\\p{L}_][\\p{L}\\d_]*`, 'uy');
+const gapPattern = new RegExp(`${spaces}*`, 'y');
+const symbolPattern = new RegExp(`(?:deg|°)${spaces}?[CFR](?![\\p{L}\\d_])|[°′″%‰℃℉]|[\\p{L}_][\\p{L}\\d_]*`, 'uy');
 const exponentPattern = /\^\(\s*([^()]{1,12})\)|\^([+\-−]?\d+(?:\.\d+)?)|([⁺⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+)/y;
 const attachedExponentPattern = /[-−]\d{1,3}(?![\d.])/y;
 const numberPattern = /\d+(?:[.,]\d+)?/y;

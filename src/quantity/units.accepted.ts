@@ -65,7 +65,7 @@ export const acceptedUnits: readonly UnitRow[] = [
     prefixes: 'M k d m µ',
     usual: 'm',
   },
-  { symbol: '%', name: 'per cent', dimension: '1', factor: '1/100', source: ratio, kind: 'ratio' },
-  { symbol: '‰', name: 'per mille', dimension: '1', factor: '1/1000', source: 'ISO 80000-1:2009, 6.5.5', kind: 'ratio' },
-  { symbol: 'ppm', name: 'part per million', dimension: '1', factor: '1e-6', source: ratio, kind: 'ratio' },
+  { symbol: '%', name: 'per cent', dimension: '1', factor: '1/100', source: ratio },
+  { symbol: '‰', name: 'per mille', dimension: '1', factor: '1/1000', source: 'ISO 80000-1:2009, 6.5.5' },
+  { symbol: 'ppm', name: 'part per million', dimension: '1', factor: '1e-6', source: ratio },
 ];
