@@ -25,9 +25,10 @@ import {
   type Value,
   withArticle,
 } from '../quantity/index.ts';
-import type { GivenCell, LoadCase } from './document.ts';
+import type { GivenCell, LoadCase, SoughtCell } from './document.ts';
 import type { Names } from './names.ts';
 import type { Node } from './node.ts';
+import { shifted } from './reading.ts';
 import type { CellProblem } from './state.ts';
 
 export interface Surroundings {
@@ -81,12 +82,7 @@ export function analyse(node: Node, around: Surroundings): void {
       analyseCriterion(node, around, report);
       break;
     case 'sought':
-      node.unit = node.reading.unit;
-      report({
-        code: 'not-solved',
-        severity: 'warning',
-        message: `${node.cell.name} is kept and shown, but this version does not solve for it yet`,
-      });
+      analyseSought(node, node.cell, around, report);
       break;
     case 'note':
     case 'drawing':
@@ -206,7 +202,7 @@ function unlikeValue(value: Value, unit: Unit): Problem | undefined {
 function checkRange(node: Node, cell: GivenCell, around: Surroundings, report: Report): void {
   const range = node.reading.range;
   if (range === undefined || node.unit === undefined) return;
-  if (!equalD(range.low.unit.dimension, node.unit.dimension) || !equalD(range.high.unit.dimension, node.unit.dimension)) {
+  if (!equalD(range.from.unit.dimension, node.unit.dimension) || !equalD(range.to.unit.dimension, node.unit.dimension)) {
     report(
       {
         code: 'bad-range',
@@ -220,7 +216,7 @@ function checkRange(node: Node, cell: GivenCell, around: Surroundings, report: R
   const told = new Set<string>();
   for (const [index, value] of node.values.entries()) {
     if (value === undefined || told.has(value.text)) continue;
-    if (value.si >= range.low.si && value.si <= range.high.si) continue;
+    if (value.si >= range.from.si && value.si <= range.to.si) continue;
     told.add(value.text);
     const id = around.cases[index]!.id;
     const own = cell.byCase !== undefined && Object.hasOwn(cell.byCase, id);
@@ -340,6 +336,92 @@ function analyseDerived(node: Node, around: Surroundings, report: Report): void 
 function unitOf(type: Type): Unit {
   if (type.kind !== 'quantity') return one;
   return coherentUnit(type.dimension, type.counts.r);
+}
+
+/**
+ * The type of the unknown alone, so that the cells of its own loop can be analysed after it; its equation follows when they
+ * are (analyseEquation).
+ */
+function analyseSought(node: Node, cell: SoughtCell, around: Surroundings, report: Report): void {
+  const { between, instead, unit: declared } = node.reading;
+  if (between === undefined || (cell.unit !== undefined && declared === undefined)) return;
+  const varied = instead === undefined ? undefined : around.names.quantities.get(instead);
+  if (instead !== undefined && varied?.cell.kind !== 'given') {
+    const near = nearestNames(instead, givenNames(around));
+    const what = varied === undefined ? `no quantity of this sheet is called ${cell.instead}` : `${cell.instead} is not a given`;
+    report(
+      {
+        code: 'bad-instead',
+        severity: 'error',
+        message: `${what}, and only a given can be varied${near.length > 0 ? `; the nearest is ${near[0]}` : ''}`,
+      },
+      'instead',
+    );
+    return;
+  }
+  if (varied?.broken) {
+    report(waitsFor(varied, around), 'instead');
+    return;
+  }
+  const unit = declared ?? varied?.unit ?? between.to.unit;
+  for (const [other, whose, field] of [
+    [between.to.unit, 'the range to look in', 'between'],
+    [varied?.unit, `the given ${cell.instead} varied for it`, 'instead'],
+  ] as const) {
+    if (other === undefined || equalD(other.dimension, unit.dimension)) continue;
+    report(
+      {
+        code: 'unlike-unit',
+        severity: 'error',
+        message: `${cell.name} is ${withArticle(unit)}, ${whose} is ${withArticle(other)}; give both one kind`,
+      },
+      field,
+    );
+    return;
+  }
+  node.unit = unit;
+  node.type = typeOfUnit(unit);
+  node.broken = around.twice.has(cell.id) || node.reading.formulas.length !== 2 || node.reading.formulas.includes(undefined);
+}
+
+function* givenNames(around: Surroundings): Iterable<string> {
+  for (const [name, node] of around.names.quantities) if (node.cell.kind === 'given') yield name;
+}
+
+/** The equation of a sought cell, once all that it reaches for has its type; what is wrong leaves the cell without a value. */
+export function analyseEquation(node: Node, around: Surroundings): void {
+  const [left, right] = node.reading.formulas;
+  node.equation = [];
+  if (node.broken || left === undefined || right === undefined || node.cell.kind !== 'sought') return;
+  const report = (problem: Problem, offset?: number) =>
+    node.equation.push({ ...(offset === undefined ? problem : shifted(problem, offset)), cell: node.cell.id, field: 'where' });
+  const compared = inferComparison(left, right, scopeOf(around));
+  for (const problem of compared.leftProblems) report(problem, 0);
+  for (const problem of compared.rightProblems) report(problem, node.cell.where.length - right.text.length);
+  const waiting = firstBroken(node, [left, right], around);
+  if (waiting) report(waitsFor(waiting, around));
+  const other = node.between.find((between) => between.cell.kind === 'sought');
+  if (other) {
+    const number = around.numberOf(other.cell.id);
+    report({
+      code: 'sought-twice',
+      severity: 'error',
+      message: `${other.name ?? 'another sought cell'}${number === '' ? '' : ` (${number})`} is itself sought on the way from ${node.cell.instead ?? node.cell.name} to this equation; solve one of the two, or state one as a given`,
+    });
+  }
+  const unknown = node.reading.instead === undefined ? node : around.names.quantities.get(node.reading.instead);
+  if (
+    unknown !== undefined &&
+    node.between.length === 0 &&
+    !left.names.includes(unknown.name ?? '') &&
+    !right.names.includes(unknown.name ?? '')
+  ) {
+    report({
+      code: 'not-in-equation',
+      severity: 'error',
+      message: `${node.cell.where.trim()} does not depend on ${node.cell.instead ?? node.cell.name}, so no value of it can make the two sides equal`,
+    });
+  }
 }
 
 function firstBroken(node: Node, formulas: readonly (Formula | undefined)[], around: Surroundings): Node | undefined {

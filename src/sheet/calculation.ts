@@ -11,16 +11,18 @@
 // to the last step. Not here: single cells (reading.ts, analyse.ts), columns (columns.ts), snapshots (snapshot.ts).
 
 import type { Lookup } from '../formula/index.ts';
-import { analyse, type Surroundings } from './analyse.ts';
+import type { Problem } from '../quantity/index.ts';
+import { analyse, analyseEquation, type Surroundings } from './analyse.ts';
 import { casesOf } from './cases.ts';
 import type { LoadCase, Sheet } from './document.ts';
 import { type Node, typeKey } from './node.ts';
 import { type DecimalSign, readCell } from './reading.ts';
 import { Runner } from './runner.ts';
 import { snapshotOf } from './snapshot.ts';
+import { type Solver, solveSought } from './sought.ts';
 import type { CellProblem, CellState, QuantityState, TableState } from './state.ts';
 import { Structure, sameMeaningBesidesNumbers } from './structure.ts';
-import { prepareWhatIf, type WhatIf, type WhatIfRequest } from './whatif.ts';
+import { prepareWhatIf, type Surface, type WhatIf, type WhatIfRequest } from './whatif.ts';
 
 export interface Changed extends Iterable<string> {
   readonly size: number;
@@ -53,9 +55,9 @@ export interface Calculation {
   whatIf(request: WhatIfRequest): WhatIf;
 }
 
-/** Reads and calculates a sheet. Never throws for what a sheet says. */
-export function calculate(sheet: Sheet): Calculation {
-  return new Engine(sheet);
+/** Reads and calculates a sheet; sought cells want a solver (src/study) and stay without a value where there is none. Never throws for what a sheet says. */
+export function calculate(sheet: Sheet, solver?: Solver): Calculation {
+  return new Engine(sheet, solver);
 }
 
 class Engine implements Calculation {
@@ -69,7 +71,7 @@ class Engine implements Calculation {
   /** Nodes that took their new cell already when the shape turned out to move: the next step takes them as changed. */
   private readonly pending = new Set<Node>();
 
-  constructor(sheet: Sheet) {
+  constructor(sheet: Sheet, solver: Solver | undefined) {
     const empty: Sheet = { format: sheet.format, title: '', cells: [] };
     this.sheet = empty;
     this.cases = casesOf(empty);
@@ -79,6 +81,8 @@ class Engine implements Calculation {
       numberOf: (cell) => this.numberOf(cell),
       caseId: (index) => this.cases[index]!.id,
       lookup: (index) => this.lookups[index]!,
+      solve: (node, index) =>
+        solver === undefined ? { ok: false, problem: noSolver } : solveSought(node, index, this.surface(), solver, this.digits),
     });
     this.update(sheet);
   }
@@ -158,6 +162,7 @@ class Engine implements Calculation {
     }
     for (const node of taken.removed) runner.columns.forget(node);
     this.analyseStale(stale, retyped);
+    this.checkEquations(stale);
     runner.prepare(shape.nodes, shape.graph);
     runner.run();
     for (const node of retold) if (shape.byId.get(node.cell.id) === node && node.failed.length > 0) runner.explainCases(node);
@@ -181,6 +186,17 @@ class Engine implements Calculation {
       this.runner.stale[place] = 1;
       if (typeKey(node) === key && node.cell.kind !== 'table' && !retyped.has(node)) continue;
       for (let edge = userStart[node.index]!; edge < userStart[node.index + 1]!; edge += 1) stale.add(nodes[userList[edge]!]!);
+    }
+  }
+
+  /** Equations of sought cells, now that every cell that they reach for has its type. */
+  private checkEquations(stale: ReadonlySet<Node>): void {
+    for (const node of this.shape.nodes) {
+      if (node.cell.kind !== 'sought' || ![node, ...node.direct, ...node.between].some((other) => stale.has(other))) continue;
+      analyseEquation(node, this.around());
+      node.snapshot = undefined;
+      this.runner.moved[node.index] = 1;
+      this.runner.stale[this.shape.graph.place[node.index]!] = 1;
     }
   }
 
@@ -246,7 +262,8 @@ class Engine implements Calculation {
   }
 
   origin(cell: string): readonly string[] {
-    return this.shape.byId.get(cell)?.uses.map((used) => used.cell.id) ?? [];
+    const node = this.shape.byId.get(cell);
+    return (node?.cell.kind === 'sought' ? node.direct : node?.uses)?.map((used) => used.cell.id) ?? [];
   }
 
   use(cell: string): readonly string[] {
@@ -282,14 +299,25 @@ class Engine implements Calculation {
   }
 
   whatIf(request: WhatIfRequest): WhatIf {
+    return prepareWhatIf(request, this.surface());
+  }
+
+  private surface(): Surface {
     const { nodes, names, graph, byId } = this.shape;
-    return prepareWhatIf(request, {
+    return {
       nodes,
       names,
       graph,
       byId,
       columns: this.runner.columns,
+      style: this.style,
       lookup: (index) => this.lookups[index]!,
-    });
+    };
   }
 }
+
+const noSolver: Problem = {
+  code: 'not-solved',
+  severity: 'warning',
+  message: 'this value is kept and shown, but not solved for here',
+};

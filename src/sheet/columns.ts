@@ -29,7 +29,16 @@ export class Columns {
 
   /** Number of neighbouring columns of the node: its quantity, or the two sides of a criterion. */
   slotsOf(node: Node): number {
-    return node.cell.kind === 'criterion' ? 2 : node.cell.kind === 'given' || node.cell.kind === 'derived' ? 1 : 0;
+    switch (node.cell.kind) {
+      case 'criterion':
+        return 2;
+      case 'given':
+      case 'derived':
+      case 'sought':
+        return 1;
+      default:
+        return 0;
+    }
   }
 
   /** First column of the node. */

@@ -9,6 +9,7 @@ export * from './history.ts';
 export { badCharacters } from './json-text.ts';
 export * from './numbering.ts';
 export { nameFault } from './rename.ts';
+export type { FoundRoot, Search, Solver } from './sought.ts';
 export * from './state.ts';
 export * from './template.ts';
 export type { WhatIf, WhatIfRequest } from './whatif.ts';

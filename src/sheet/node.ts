@@ -9,7 +9,7 @@ import type { Formula, Inferred, TableData, Type } from '../formula/index.ts';
 import { dimensionKey, type Unit, type Value } from '../quantity/index.ts';
 import type { Cell } from './document.ts';
 import type { Reading } from './reading.ts';
-import type { CellProblem, CellState } from './state.ts';
+import type { CellProblem, CellState, Solution } from './state.ts';
 
 export interface Node {
   cell: Cell;
@@ -19,6 +19,11 @@ export interface Node {
   /** The name that other cells reach it by; none for the second cell of a name. */
   name: string | undefined;
   uses: Node[];
+  /** Sought: what its text names, and the cells between the unknown and the equation, which are computed anew for every trial. */
+  direct: Node[];
+  between: Node[];
+  equation: CellProblem[];
+  solutions: (Solution | undefined)[];
   broken: boolean;
   type: Type | undefined;
   unit: Unit | undefined;
@@ -45,6 +50,10 @@ export function newNode(cell: Cell, reading: Reading, index: number): Node {
     index,
     name: undefined,
     uses: [],
+    direct: [],
+    between: [],
+    equation: [],
+    solutions: [],
     broken: true,
     type: undefined,
     unit: undefined,

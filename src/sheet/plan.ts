@@ -7,7 +7,7 @@
 
 import type { Columns } from './columns.ts';
 import type { Graph } from './graph.ts';
-import { computedFormulas, type Node } from './node.ts';
+import type { Node } from './node.ts';
 
 export const mode = { nothing: 0, careful: 1, formula: 2 } as const;
 
@@ -45,7 +45,7 @@ export function makePlan(nodes: readonly Node[], graph: Graph, columns: Columns)
       plan.end[place] = range.end;
       plan.watched[place] = range.watched;
     } else {
-      plan.mode[place] = node.cell.kind === 'given' || computedFormulas(node).length > 0 ? mode.careful : mode.nothing;
+      plan.mode[place] = columns.slotsOf(node) > 0 ? mode.careful : mode.nothing;
     }
   }
   return plan;

@@ -5,7 +5,7 @@
 // Not here: names of other cells, dimensions against each other (calculation.ts).
 
 import { canonicalName, type Formula, isName, parseFormula, reserved } from '../formula/index.ts';
-import { type Problem, readUnit, readValue, type Unit, type Value } from '../quantity/index.ts';
+import { one, type Problem, readRange, readUnit, readValue, type Unit, type Value, type ValueRange } from '../quantity/index.ts';
 import type { Cell, CriterionCell, DerivedCell, GivenCell, NoteCell, SoughtCell } from './document.ts';
 import type { LiveName } from './state.ts';
 
@@ -25,10 +25,13 @@ export interface Reading {
   /** Given: the value for all cases and those for one. */
   readonly value?: Value;
   readonly byCase?: ReadonlyMap<string, Value>;
-  readonly range?: { readonly low: Value; readonly high: Value };
+  readonly range?: ValueRange;
+  /** Sought: where the unknown is looked for, and the quantity varied in its stead. */
+  readonly between?: ValueRange;
+  readonly instead?: string;
   /** Given that is a choice: the table and the column of its texts. */
   readonly choices?: { readonly table: string; readonly column: string };
-  /** Derived: [formula]; criterion: [left, right]; sought: both sides of its equation, then the unknown. */
+  /** Derived: [formula]; criterion: [left, right]; sought: both sides of its equation. */
   readonly formulas: readonly (Formula | undefined)[];
   /** Names in braces of a note; names that a drawing or a chart shows. */
   readonly mentions: readonly LiveName[];
@@ -133,7 +136,7 @@ function readGiven(cell: GivenCell, decimalSign: DecimalSign): Reading {
     const read = readOne(text, `byCase.${id}`, decimalSign, problems, id);
     if (read) byCase.set(id, read);
   }
-  const range = cell.range === undefined ? undefined : readRange(cell.range, value, decimalSign, problems);
+  const range = cell.range === undefined ? undefined : readGivenRange(cell.range, value, decimalSign, problems);
   return {
     ...base,
     ...(unit ? { unit } : {}),
@@ -163,33 +166,22 @@ function readOne(
   return undefined;
 }
 
-/** `0.1 to 0.8`, `10 mm to 2 m`; an end without a unit takes that of the other end, or that of the value. */
-function readRange(
+/** A range that cannot be read is not checked, and says so. */
+function readGivenRange(
   text: string,
   value: Value | undefined,
   decimalSign: DecimalSign,
   problems: FieldProblem[],
-): { low: Value; high: Value } | undefined {
-  const ends = text.split(/\s+to\s+/u);
-  if (ends.length === 2) {
-    const low = readValue(ends[0]!, { decimalSign });
-    const high = readValue(ends[1]!, { decimalSign });
-    if (low.ok && high.ok) {
-      const unitText = [high.value, low.value].find((end) => end.unit.text !== '1')?.unit.text ?? value?.unit.text ?? '1';
-      const lowRead =
-        low.value.unit.text === '1' && unitText !== '1' ? readValue(`${ends[0]} ${unitText}`, { decimalSign }) : low;
-      const highRead =
-        high.value.unit.text === '1' && unitText !== '1' ? readValue(`${ends[1]} ${unitText}`, { decimalSign }) : high;
-      if (lowRead.ok && highRead.ok) return { low: lowRead.value, high: highRead.value };
-    }
+): ValueRange | undefined {
+  const read = readRange(text, { decimalSign });
+  if (!read.ok) {
+    problems.push({ ...read.problem, severity: 'warning', field: 'range' });
+    return undefined;
   }
-  problems.push({
-    code: 'bad-range',
-    severity: 'warning',
-    message: `the range “${text}” cannot be read and is not checked; write two values, as in 0.1 to 0.8 or 50 mm to 2 m`,
-    field: 'range',
-  });
-  return undefined;
+  // "50 to 200" beside a value in mm is a range in mm.
+  const bare = read.value.to.unit.text === one.text && value !== undefined && value.unit.text !== one.text;
+  const withUnit = bare ? readRange(`${text} ${value.unit.text}`, { decimalSign }) : read;
+  return withUnit.ok ? withUnit.value : read.value;
 }
 
 function readFormula(
@@ -242,7 +234,17 @@ function readSought(cell: SoughtCell, decimalSign: DecimalSign): Reading {
   const problems: FieldProblem[] = [];
   const name = readName(cell.name, problems);
   const unit = readDeclaredUnit(cell.unit, problems);
-  const base = { decimalSign, problems, mentions: [], ...(name === undefined ? {} : { name }), ...(unit ? { unit } : {}) };
+  const between = readRange(cell.between, { decimalSign });
+  if (!between.ok) problems.push({ ...between.problem, field: 'between' });
+  const base = {
+    decimalSign,
+    problems,
+    mentions: [],
+    ...(name === undefined ? {} : { name }),
+    ...(unit ? { unit } : {}),
+    ...(between.ok ? { between: between.value } : {}),
+    ...(cell.instead === undefined ? {} : { instead: canonicalName(cell.instead) }),
+  };
   const sign = equalSign(cell.where);
   if (sign === undefined) {
     problems.push(

@@ -12,12 +12,14 @@ import { Columns } from './columns.ts';
 import { buildGraph, type Graph } from './graph.ts';
 import { computedFormulas, type Node } from './node.ts';
 import { makePlan, mode, type Plan } from './plan.ts';
+import type { Solved } from './sought.ts';
 import type { CellProblem } from './state.ts';
 
 export interface World {
   numberOf(cell: string): string;
   caseId(index: number): string;
   lookup(index: number): Lookup;
+  solve(node: Node, index: number): Solved;
 }
 
 /** Most cells run as one stretch. */
@@ -182,9 +184,12 @@ export class Runner {
       this.columns.writeGiven(node);
       return;
     }
-    if (computedFormulas(node).length === 0) return;
     if (node.broken) {
       this.columns.clear(node);
+      return;
+    }
+    if (node.cell.kind === 'sought') {
+      this.solveCases(node);
       return;
     }
     const clean = this.columns.run(node);
@@ -222,6 +227,23 @@ export class Runner {
     }
     node.failed = failed;
     node.warned = warned;
+    node.snapshot = undefined;
+    this.moved[node.index] = 1;
+  }
+
+  private solveCases(node: Node): void {
+    node.failed = [];
+    node.warned = [];
+    node.solutions = [];
+    const hindered = node.equation.some((problem) => problem.severity === 'error');
+    for (let index = 0; index < this.columns.width; index += 1) {
+      const solved = hindered ? undefined : this.world.solve(node, index);
+      this.columns.write(node, 0, index, solved?.ok ? solved.solution.root : Number.NaN);
+      node.solutions[index] = solved?.ok ? solved.solution : undefined;
+      const place = { cell: node.cell.id, case: this.world.caseId(index) };
+      if (solved?.ok) for (const warning of solved.warnings) node.warned.push({ ...warning, ...place });
+      else if (solved) node.failed[index] = { ...solved.problem, ...place, field: 'where' };
+    }
     node.snapshot = undefined;
     this.moved[node.index] = 1;
   }

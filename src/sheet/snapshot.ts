@@ -16,6 +16,7 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
   const problems: CellProblem[] = [
     ...own.map((problem) => ({ ...problem, cell: cell.id })),
     ...node.placed,
+    ...node.equation,
     ...usedAbove(node, numberOf),
     ...node.failed.filter((problem) => problem !== undefined),
     ...node.warned,
@@ -60,7 +61,8 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
         ...unit,
         ...(left === undefined ? {} : { left }),
         ...(right === undefined ? {} : { right }),
-        si: columns.empty(),
+        si: columns.copy(node, 0),
+        solutions: node.solutions,
       };
     }
     case 'criterion': {

@@ -57,6 +57,19 @@ export interface DerivedState extends StateBase {
   readonly words?: string;
 }
 
+/** How the value of a sought quantity was found, in coherent SI. */
+export interface Solution {
+  readonly root: number;
+  /** Both sides of the equation with the root put back, and their difference. */
+  readonly left: number;
+  readonly right: number;
+  readonly residual: number;
+  readonly iterations: number;
+  readonly method: string;
+  /** Every root found within the bracket, rising; the first of them is the value. */
+  readonly roots: readonly number[];
+}
+
 export interface SoughtState extends StateBase {
   readonly kind: 'sought';
   readonly cell: SoughtCell;
@@ -65,6 +78,8 @@ export interface SoughtState extends StateBase {
   readonly type?: Type;
   readonly unit?: Unit;
   readonly si: Float64Array;
+  /** One entry a case. */
+  readonly solutions: readonly (Solution | undefined)[];
 }
 
 export interface CriterionState extends StateBase {

@@ -10,6 +10,7 @@ import { type Names, resolveNames, usedNodes } from './names.ts';
 import { type Node, newNode } from './node.ts';
 import { lineNumbers } from './numbering.ts';
 import { type DecimalSign, liveNames, readCell } from './reading.ts';
+import { linkSought } from './sought.ts';
 import type { CellProblem } from './state.ts';
 import { readTable } from './table.ts';
 
@@ -103,12 +104,25 @@ export class Structure {
     for (const node of this.nodes) {
       if (!stale.has(node) && !(names.size > 0 && reachesFor(node, names))) continue;
       const used = usedNodes(node, this.names);
+      if (node.cell.kind === 'sought') {
+        // Its way through the sheet is looked up below, when all others know theirs.
+        if (!sameNodes(used, node.direct)) linksMoved = true;
+        node.direct = used;
+        continue;
+      }
       if (sameNodes(used, node.uses)) continue;
       node.uses = used;
       stale.add(node);
       linksMoved = true;
     }
-    if (!linksMoved) return;
+    const soughts = this.nodes.filter((node) => node.cell.kind === 'sought');
+    if (!linksMoved && !soughts.some((node) => stale.has(node))) return;
+    for (const node of soughts) {
+      const used = linkSought(node, node.direct, this.names);
+      if (sameNodes(used, node.uses)) continue;
+      node.uses = used;
+      stale.add(node);
+    }
     const before = this.looped;
     this.graph = buildGraph(this.nodes.map((node) => node.uses.map((used) => used.index)));
     this.looped = this.describeLoops();
@@ -186,6 +200,9 @@ export function sameMeaningBesidesNumbers(a: Node['cell'], b: Node['cell']): boo
   if (a.kind === 'derived' && b.kind === 'derived') return a.name === b.name && a.unit === b.unit && a.formula === b.formula;
   if (a.kind === 'criterion' && b.kind === 'criterion') {
     return a.left === b.left && a.relation === b.relation && a.right === b.right && a.unit === b.unit;
+  }
+  if (a.kind === 'sought' && b.kind === 'sought') {
+    return a.name === b.name && a.unit === b.unit && a.instead === b.instead && a.where === b.where && a.between === b.between;
   }
   if (a.kind === 'heading' && b.kind === 'heading') return (a.level ?? 1) === (b.level ?? 1);
   if (a.kind === 'note' && b.kind === 'note') {

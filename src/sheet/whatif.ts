@@ -18,6 +18,10 @@ export interface WhatIfRequest {
   /** Names of quantities; 'ID left' and 'ID right' for the sides of the criterion with that cell id. */
   readonly want: readonly string[];
   readonly caseIndex: number;
+  /** Further formulas to compute from what is varied, wanted under their keys. */
+  readonly formulas?: readonly { readonly key: string; readonly formula: Formula }[];
+  /** The cells to compute, where the caller knows them: in a circle that an equation closes, the order of the sheet does not tell. */
+  readonly between?: readonly Node[];
 }
 
 export interface WhatIf {
@@ -36,6 +40,7 @@ export interface Surface {
   readonly graph: Graph;
   readonly columns: Columns;
   readonly byId: ReadonlyMap<string, Node>;
+  readonly style: { readonly decimalSign: '.' | ',' };
   lookup(caseIndex: number): Lookup;
 }
 
@@ -44,17 +49,16 @@ const block = 256;
 interface Step {
   readonly key: string;
   readonly formula: Formula;
-  readonly node: Node;
+  /** None for a formula that belongs to no cell of the way. */
+  readonly node?: Node;
 }
 
 export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
   const varied = new Set(request.vary.map((name) => known(sheet, name)));
-  const wanted = request.want.map((want) => wantedOf(sheet, want));
-  const steps = stepsBetween(
-    varied,
-    wanted.map((want) => want.node),
-    sheet,
-  );
+  const own = new Set(request.formulas?.map((formula) => formula.key));
+  const wanted: readonly Wanted[] = request.want.map((want) => (own.has(want) ? { key: want } : wantedOf(sheet, want)));
+  const way = request.between?.flatMap(formulasOf) ?? stepsBetween(varied, wanted, sheet);
+  const steps: readonly Step[] = [...way, ...(request.formulas ?? [])];
   const isStep = new Set(steps.map((step) => step.node));
   const inputs = request.vary.map((name) => known(sheet, name).name!);
   const constants = new Set<string>();
@@ -64,8 +68,9 @@ export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
       if (node !== undefined && !varied.has(node) && !isStep.has(node)) constants.add(name);
     }
   }
-  for (const want of wanted)
-    if (!varied.has(want.node) && !isStep.has(want.node) && want.side === undefined) constants.add(want.key);
+  for (const { node, side, key } of wanted) {
+    if (node !== undefined && side === undefined && !varied.has(node) && !isStep.has(node)) constants.add(key);
+  }
   const names = {
     isText: (name: string) => sheet.names.quantities.get(name)?.texts !== undefined,
     table: (name: string) => sheet.names.tables.get(name)?.table,
@@ -112,7 +117,7 @@ export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
   };
 
   return {
-    computes: [...new Set(steps.map((step) => step.node.cell.id))],
+    computes: [...new Set(way.flatMap((step) => (step.node === undefined ? [] : [step.node.cell.id])))],
     run(samples, count) {
       if (count > capacity) {
         outputs = wanted.map(() => new Float64Array(count));
@@ -144,7 +149,13 @@ function known(sheet: Surface, name: string): Node {
   return node;
 }
 
-function wantedOf(sheet: Surface, want: string): { node: Node; key: string; side?: number } {
+interface Wanted {
+  readonly key: string;
+  readonly node?: Node;
+  readonly side?: number;
+}
+
+function wantedOf(sheet: Surface, want: string): Wanted {
   const side = /^(.*) (left|right)$/u.exec(want);
   const node = side ? sheet.byId.get(side[1]!) : undefined;
   if (node !== undefined && side) return { node, key: want, side: side[2] === 'left' ? 0 : 1 };
@@ -152,9 +163,10 @@ function wantedOf(sheet: Surface, want: string): { node: Node; key: string; side
 }
 
 /** The formulas to compute, in order: downstream of what is varied, upstream of what is wanted, varied cells left out. */
-function stepsBetween(varied: ReadonlySet<Node>, wanted: readonly Node[], sheet: Surface): Step[] {
+function stepsBetween(varied: ReadonlySet<Node>, wanted: readonly Wanted[], sheet: Surface): Step[] {
+  const ends = wanted.flatMap((want) => (want.node === undefined ? [] : [want.node]));
   const upstream = new Set<Node>();
-  const queue = [...wanted];
+  const queue = [...ends];
   while (queue.length > 0) {
     const node = queue.pop()!;
     if (upstream.has(node) || varied.has(node)) continue;
@@ -167,14 +179,19 @@ function stepsBetween(varied: ReadonlySet<Node>, wanted: readonly Node[], sheet:
     const node = sheet.nodes[index]!;
     if (!upstream.has(node) || !node.uses.some((used) => moving.has(used))) {
       // The sides of a criterion that does not move are wanted all the same.
-      if (!(node.cell.kind === 'criterion' && wanted.includes(node))) continue;
+      if (!(node.cell.kind === 'criterion' && ends.includes(node))) continue;
     }
     moving.add(node);
-    for (const [side, formula] of computedFormulas(node).entries()) {
-      if (formula === undefined || node.broken) continue;
-      const key = node.cell.kind === 'criterion' ? `${node.cell.id} ${side === 0 ? 'left' : 'right'}` : node.name!;
-      steps.push({ key, formula, node });
-    }
+    steps.push(...formulasOf(node));
   }
   return steps;
+}
+
+function formulasOf(node: Node): Step[] {
+  if (node.broken) return [];
+  return computedFormulas(node).flatMap((formula, side) => {
+    if (formula === undefined) return [];
+    const key = node.cell.kind === 'criterion' ? `${node.cell.id} ${side === 0 ? 'left' : 'right'}` : node.name!;
+    return [{ key, formula, node }];
+  });
 }

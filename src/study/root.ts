@@ -108,7 +108,7 @@ export function findRoot(f: (x: number) => number, low: number, high: number): R
     fa = fb;
     b += Math.abs(step) > tolerance ? step : half > 0 ? tolerance : -tolerance;
     fb = f(b);
-    if (!Number.isFinite(fb)) return failed(Number.isNaN(fb) ? 'not-finite' : 'pole', iteration);
+    if (!Number.isFinite(fb)) return failed(Math.abs(fb) === Infinity || Math.abs(fa) > start ? 'pole' : 'not-finite', iteration);
   }
   return failed('did-not-settle', mostIterations);
 }
