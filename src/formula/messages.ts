@@ -4,7 +4,7 @@
 // 2. What is to be typed stands in the syntax of formulas; what is shown is in the notation of print (writeExpr).
 // Not here: when a problem arises (infer*.ts), proposals that need proof (offers.ts).
 
-import { coherentUnit, divideD, type Dimension, type Unit, isZeroR, kindName, signR, textR, withArticle, forceHint } from '../quantity/index.ts';
+import { coherentUnit, divideD, type Dimension, type Unit, isZeroR, kindName, readUnit, signR, textR, withArticle, forceHint } from '../quantity/index.ts';
 import type { Expr } from './expr.ts';
 import type { QuantityType } from './term.ts';
 import type { TemperatureFault } from './temperature.ts';
@@ -44,7 +44,8 @@ function differBy(left: Dimension, right: Dimension): string {
 }
 
 export function unlikeTarget(type: QuantityType, target: Unit, targetType: QuantityType): string {
-  const hint = forceHint(target, type.dimension);
+  const given = type.unitText === undefined ? undefined : readUnit(type.unitText);
+  const hint = forceHint(target, type.dimension) ?? (given?.ok ? forceHint(given.value, target.dimension) : undefined);
   const unit = unitOfType(type);
   const declare = unit === '' ? 'declare the unit 1' : `declare ${unit}`;
   return `the formula gives ${describe(type)}, the declared unit ${printUnit(target.text)} is ${withArticle(kindOf(targetType))}; ${hint ?? `${declare} or correct the formula`}`;

@@ -18,6 +18,9 @@ export interface Offer {
   readonly fixes: readonly Fix[];
 }
 
+/** Of more counted names than this, none is tried alone: the work stays bounded. */
+const mostAlone = 6;
+
 const nothing: Offer = { sentence: '', fixes: [] };
 const general: Offer = {
   sentence: '; multiply by 2*pi where an angle is meant, give the other factor a unit per revolution such as mm/r, or divide by "1 r"',
@@ -38,7 +41,7 @@ export function proposeForRevolutions(ctx: Context, parts: readonly Expr[], whol
 
   const turning = whole ? undefined : turnNames(ctx, names);
   if (turning) offer(`write ${turning.shown} where an angular speed or an angle is meant`, turning.edits);
-  for (const part of whole ? [] : parts) {
+  for (const part of whole ? [] : parts.slice(0, mostAlone)) {
     const edit = append(ctx.text, part, '/(2*pi)', 'divide by 2*pi');
     if (ctx.prove(applied(ctx.text, [edit]), ctx.scope)) {
       offer('divide by 2*pi where radians stand in for revolutions', [edit]);
@@ -48,7 +51,7 @@ export function proposeForRevolutions(ctx: Context, parts: readonly Expr[], whol
   const unit = otherUnit(ctx, names);
   if (unit) phrases.push(unit);
   if (isCountTarget(ctx, names)) phrases.push('declare the unit r');
-  for (const part of parts) {
+  for (const part of parts.slice(0, mostAlone)) {
     const found = (['/"1 r"', '*"1 r"'] as const).map((tail) => ({
       tail,
       edit: append(ctx.text, part, tail, tail.startsWith('/') ? 'divide by "1 r"' : 'multiply by "1 r"'),
@@ -114,12 +117,13 @@ function typed(ctx: Context, names: readonly Sought[]): Named[] {
 /** 2*pi at each counted name: one name alone where that is enough, otherwise all of them. */
 function turnNames(ctx: Context, names: readonly Sought[]): { readonly shown: string; readonly edits: readonly Fix[] } | undefined {
   const counted = typed(ctx, names).filter(({ type }) => !isZeroR(type.counts.r) || !isZeroR(type.counts.hz));
-  const sets = counted.length > 1 ? [...counted.map((one) => [one]), counted] : [counted];
+  const sets = counted.length > 1 && counted.length <= mostAlone ? [...counted.map((one) => [one]), counted] : [counted];
   for (const set of sets) {
     if (set.length === 0) continue;
     const edits = set.flatMap(({ places }) => places.map((place) => turn(ctx.text, place)));
     if (!ctx.prove!(applied(ctx.text, edits), ctx.scope)) continue;
-    return { shown: set.map(({ places }) => `2*pi*${ctx.text.slice(...places[0]!.at)}`).join(' and '), edits };
+    const shown = set.slice(0, 3).map(({ places }) => `2*pi*${ctx.text.slice(...places[0]!.at)}`);
+    return { shown: `${shown.join(' and ')}${set.length > 3 ? ' and so on' : ''}`, edits };
   }
   return undefined;
 }
@@ -145,7 +149,7 @@ function append(text: string, part: Expr, tail: string, label: string): Fix {
 
 /** A unit of another quantity that would make the formula fit: per revolution, or counted. */
 function otherUnit(ctx: Context, names: readonly Sought[]): string | undefined {
-  for (const { name, type } of typed(ctx, names)) {
+  for (const { name, type } of typed(ctx, names).slice(0, mostAlone)) {
     if (isDimensionless(type.dimension) || type.temperature !== 'none' || !isZeroR(type.counts.r) || !isZeroR(type.counts.hz)) continue;
     const unit = type.unitText;
     if (unit === undefined || !isZeroR(type.counts.rad)) continue;
