@@ -1,9 +1,12 @@
 // The sheet that lies on the desk: what is shown, what is chosen, what is being typed, and the way back.
 //
 // 1. `kept` is the sheet as last kept; what is shown may be one key stroke ahead of it, while a value is being typed.
-// 2. While a typed value has an error, the numbers of the last good one stay; the text that was typed is never lost or changed.
+// 2. While a typed value has an error, or brings one into a line that had none, the numbers of the last good one stay; the text that was
+//    typed is never lost or changed.
 // 3. A number that is changed loses basis and source: they spoke of another number. The old ones are remembered for one-key restoring.
-// 4. Lines that print alike before and after a change are the same objects, so that only what changed is drawn again.
+// 4. A key stroke recalculates at once; the lines are laid out anew when somebody asks for them (`model`), so that what is typed is
+//    painted first.
+// 5. Lines that print alike before and after a change are the same objects, so that only what changed is drawn again.
 // Not here: elements of the page; computing (src/sheet) and printing (src/record).
 
 import { makeRecord, type RecordModel } from '../record/index.ts';
@@ -31,6 +34,7 @@ import {
   withValue,
 } from './given.ts';
 import { shareModel } from './share.ts';
+import { countLines, waits } from './waiting.ts';
 
 export type Field = 'value' | 'source';
 
@@ -50,7 +54,10 @@ export interface Editing {
 export interface Desk {
   readonly sheet: Sheet;
   readonly calculation: Calculation;
+  /** The lines as they are now. */
   readonly model: RecordModel;
+  /** The lines as last asked for: what stands on the screen while the next ones are made. */
+  readonly drawn: RecordModel;
   readonly chosen: string | null;
   /** Index of the case whose numbers stand in the equations. */
   readonly reading: number;
@@ -85,7 +92,8 @@ export function createDesk(first: Sheet): Desk {
   let kept = first;
   let shown = first;
   let calculation = calculate(first);
-  let model = makeRecord(calculation);
+  let drawn = makeRecord(calculation);
+  let stale = false;
   let history: History = emptyHistory;
   let chosen: string | null = null;
   let reading = 0;
@@ -97,11 +105,17 @@ export function createDesk(first: Sheet): Desk {
   const changed = () => {
     for (const listener of listeners) listener();
   };
+  const fresh = () => {
+    if (!stale) return drawn;
+    drawn = shareModel(drawn, makeRecord(calculation));
+    stale = false;
+    return drawn;
+  };
   const show = (sheet: Sheet) => {
     if (sheet === shown) return;
     calculation.update(sheet);
     shown = sheet;
-    model = shareModel(model, makeRecord(calculation));
+    stale = true;
     if (reading >= calculation.cases.length) reading = 0;
   };
   const givenOf = (id: string, sheet: Sheet = kept): GivenCell | undefined => {
@@ -116,10 +130,17 @@ export function createDesk(first: Sheet): Desk {
   };
   const caseId = (index: number) => calculation.cases[index]?.id ?? 'base';
 
-  /** The problems that a text in this place gives, read in the sheet as it would be. Leaves the calculation at `candidate`. */
-  const problemsOf = (cell: string, at: number): readonly CellProblem[] => {
-    const id = caseId(at);
-    return (calculation.state(cell)?.problems ?? []).filter((problem) => problem.case === undefined || problem.case === id);
+  const problemsOf = (cell: string, at: number): readonly CellProblem[] =>
+    (calculation.state(cell)?.problems ?? []).filter((problem) => problem.case === undefined || problem.case === caseId(at));
+
+  /** Errors that the sheet on the desk did not have before, told from the line that is typed in. */
+  const broughtIn = (before: ReadonlySet<string>, cell: string): readonly CellProblem[] => {
+    const brought = calculation
+      .problems()
+      .find((problem) => problem.severity === 'error' && !waits(problem) && !before.has(placeOf(problem)));
+    if (brought === undefined) return [];
+    const { at: _at, fixes: _fixes, ...rest } = brought;
+    return [{ ...rest, cell, message: `with this value, line ${calculation.numberOf(brought.cell)} fails: ${brought.message}` }];
   };
 
   const preview = (next: Editing) => {
@@ -133,22 +154,28 @@ export function createDesk(first: Sheet): Desk {
     }
     const candidate = replaceCell(kept, withValue(cell, caseId(next.at), next.text, next.forAll));
     const last = shown;
+    calculation.update(kept);
+    const before = new Set(calculation.problems().map(placeOf));
     calculation.update(candidate);
-    const problems = problemsOf(next.cell, next.at);
+    const own = problemsOf(next.cell, next.at);
+    const problems = own.some(isError) ? own : [...broughtIn(before, next.cell), ...own];
     editing = { ...next, problems };
-    if (problems.some((problem) => problem.severity === 'error')) {
+    if (problems.some(isError)) {
       calculation.update(last);
       return;
     }
     shown = candidate;
-    model = shareModel(model, makeRecord(calculation));
+    stale = true;
   };
 
   const verdictWords = () => {
+    const model = fresh();
     const failed = model.summary.filter((one) => one.cases.some((each) => each.met === false)).length;
-    const problems = model.problems.filter((problem) => problem.severity === 'error').length;
+    const { wrong, waiting } = countLines(model.problems);
     const criteria = failed === 0 ? 'no criterion fails' : `${failed} ${failed === 1 ? 'criterion is' : 'criteria are'} not met`;
-    return problems === 0 ? criteria : `${criteria}, ${problems} ${problems === 1 ? 'error' : 'errors'}`;
+    if (wrong.length === 0) return criteria;
+    const lines = `${wrong.length} ${wrong.length === 1 ? 'line has an error' : 'lines have errors'}`;
+    return waiting === 0 ? `${lines}; ${criteria}` : `${lines}, ${waiting} wait; ${criteria}`;
   };
 
   const step = (done: ReturnType<typeof undo>, word: string) => {
@@ -169,7 +196,10 @@ export function createDesk(first: Sheet): Desk {
       return calculation;
     },
     get model() {
-      return model;
+      return fresh();
+    },
+    get drawn() {
+      return drawn;
     },
     get chosen() {
       return chosen;
@@ -201,7 +231,8 @@ export function createDesk(first: Sheet): Desk {
       shown = sheet;
       savedSheet = sheet;
       calculation = calculate(sheet);
-      model = makeRecord(calculation);
+      drawn = makeRecord(calculation);
+      stale = false;
       history = emptyHistory;
       chosen = null;
       reading = 0;
@@ -293,6 +324,9 @@ export function createDesk(first: Sheet): Desk {
   };
   return desk;
 }
+
+const isError = (problem: CellProblem) => problem.severity === 'error';
+const placeOf = ({ cell, code, case: id }: CellProblem) => `${cell} ${code} ${id ?? ''}`;
 
 const isChange = (cell: GivenCell, done: Editing, caseId: string) =>
   done.text !== done.before || done.forAll !== sharesValue(cell, caseId);

@@ -6,7 +6,7 @@
 
 import { html, nothing } from 'lit';
 import { live } from 'lit/directives/live.js';
-import { ref } from 'lit/directives/ref.js';
+import type { Fix } from '../quantity/index.ts';
 import type { RecordCase, Step } from '../record/index.ts';
 import type { Basis } from '../sheet/index.ts';
 import type { Desk, Editing } from './desk.ts';
@@ -20,12 +20,14 @@ export function choicesOf(desk: Desk, cell: string): readonly string[] | undefin
   return desk.calculation.table(table ?? '')?.data?.columns.find((one) => one.name === column)?.texts ?? [];
 }
 
-const focusOnce = (element?: Element) => {
-  if (!(element instanceof HTMLElement) || element.contains(document.activeElement)) return;
-  element.focus();
-  // A number about to be replaced is selected; one begun by a key stroke goes on after it.
-  if (element instanceof HTMLInputElement && element.dataset['fresh'] === 'true') element.select();
-};
+/** Takes the focus when typing begins: a value about to be replaced is selected, one begun by a key stroke goes on behind it. */
+export function focusField(row: HTMLElement) {
+  const field = row.querySelector<HTMLElement>('.typing');
+  field?.focus();
+  if (!(field instanceof HTMLInputElement)) return;
+  if (field.dataset['fresh'] === 'true') field.select();
+  else field.setSelectionRange(field.value.length, field.value.length);
+}
 
 export const noteId = (cell: string) => `editor-${cell}`;
 
@@ -34,7 +36,7 @@ export function editorField(desk: Desk, editing: Editing, step: Step, cases: rea
   const label = `Value of ${step.title}${title === '' ? '' : `, ${title}`}`;
   const wrong = editing.problems.some((problem) => problem.severity === 'error');
   if (choices !== undefined) {
-    return html`<select class="typing" aria-label=${label} aria-describedby=${noteId(step.cell)} ${ref(focusOnce)}
+    return html`<select class="typing" aria-label=${label} aria-describedby=${noteId(step.cell)}
       @change=${(event: Event) => desk.type((event.target as HTMLSelectElement).value)}>
       ${choices.includes(editing.text) ? nothing : html`<option value=${editing.text} selected>${editing.text}</option>`}
       ${choices.map((text) => html`<option value=${text} ?selected=${text === editing.text}>${text}</option>`)}
@@ -42,7 +44,7 @@ export function editorField(desk: Desk, editing: Editing, step: Step, cases: rea
   }
   return html`<input class="typing" type="text" spellcheck="false" autocomplete="off" autocapitalize="off" aria-label=${label}
     aria-invalid=${wrong ? 'true' : 'false'} aria-describedby=${noteId(step.cell)} data-fresh=${editing.text === editing.before}
-    .value=${live(editing.text)} ${ref(focusOnce)} @input=${(event: Event) => desk.type((event.target as HTMLInputElement).value)} />`;
+    .value=${live(editing.text)} @input=${(event: Event) => desk.type((event.target as HTMLInputElement).value)} />`;
 }
 
 /** Under the field: what is wrong, then for which cases it holds. */
@@ -50,12 +52,12 @@ export function editorNotes(desk: Desk, editing: Editing, step: Step, cases: rea
   const errors = editing.problems.filter((problem) => problem.severity === 'error');
   const warnings = editing.problems.filter((problem) => problem.severity === 'warning');
   return html`<div class="editor-notes">
-    <div id=${noteId(step.cell)} class="editor-problems">
+    <div id=${noteId(step.cell)} class="editor-problems" aria-live="polite">
       ${errors.slice(0, 1).map(
         (problem) => html`<p class="problem error"><b>Error</b>: ${problem.message}
           ${(problem.fixes ?? []).map(
             (fix) =>
-              html`<button type="button" class="word" @click=${() => desk.type(editing.text.slice(0, fix.from) + fix.text + editing.text.slice(fix.to))}>${fix.label}</button>`,
+              html`<button type="button" class="word" @click=${(event: Event) => applyFix(desk, editing, fix, event)}>${fix.label}</button>`,
           )}</p>`,
       )}
       ${errors.length > 0 ? nothing : warnings.map((problem) => html`<p class="problem warning"><b>Warning</b>: ${problem.message}</p>`)}
@@ -63,6 +65,12 @@ export function editorNotes(desk: Desk, editing: Editing, step: Step, cases: rea
     ${cases.length < 2 ? nothing : scope(desk, editing, step, cases)}
     <p class="remark">Enter keeps it, Escape restores ${editing.before === '' ? 'the empty field' : editing.before}</p>
   </div>`;
+}
+
+function applyFix(desk: Desk, editing: Editing, fix: Fix, event: Event) {
+  // The field takes the focus first: the button goes with the error.
+  (event.target as Element).closest('ts-row')?.querySelector<HTMLElement>('.typing')?.focus();
+  desk.type(editing.text.slice(0, fix.from) + fix.text + editing.text.slice(fix.to));
 }
 
 function scope(desk: Desk, editing: Editing, step: Step, cases: readonly RecordCase[]) {
@@ -84,7 +92,7 @@ function scope(desk: Desk, editing: Editing, step: Step, cases: readonly RecordC
 const bases: readonly Basis[] = ['specified', 'measured', 'tabulated', 'assumed'];
 
 export function sourceEditor(desk: Desk, editing: Editing, step: Step) {
-  return html`<textarea class="typing" rows="4" spellcheck="true" aria-label=${`Source of ${step.title}`} ${ref(focusOnce)} .value=${live(editing.text)}
+  return html`<textarea class="typing" rows="4" spellcheck="true" aria-label=${`Source of ${step.title}`} .value=${live(editing.text)}
       @input=${(event: Event) => desk.type((event.target as HTMLTextAreaElement).value)}></textarea>
     <label class="basis-choice">basis <select @change=${(event: Event) => {
       const value = (event.target as HTMLSelectElement).value;

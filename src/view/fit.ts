@@ -27,13 +27,17 @@ function measure(part: HTMLElement): Fitting | null {
   const pieces = [...part.querySelectorAll('.katex-html > .katex-base')].map((base) => base.getBoundingClientRect().width);
   const widest = Math.max(0, ...pieces) / scale;
   const left = relation.getBoundingClientRect().left;
-  const room = box.getBoundingClientRect().right - left;
+  // What goes on below a line is set in.
+  const inset = pieces.length > 1 ? Number.parseFloat(getComputedStyle(part).paddingLeft) || 0 : 0;
+  const room = box.getBoundingClientRect().right - left - inset;
   if (widest === 0 || room <= 0) return null;
   if (widest * smallInColumn <= room) return { part, box, scale: Math.min(1, rounded(room / widest)), extra: 0, over: false };
   const across = row.getBoundingClientRect().right - left - 12;
   const scaled = Math.min(1, rounded(across / widest));
   // A line that goes across the results must be a line of its own.
-  const last = relation.lastElementChild === part && relation.childElementCount > 1;
+  const last =
+    relation.lastElementChild === part &&
+    (relation.childElementCount > 1 || relation.previousElementSibling?.className === 'case');
   if (last && across > room + 60 && scaled >= smallest) return { part, box, scale: scaled, extra: across - room, over: false };
   return { part, box, scale: Math.max(smallest, Math.min(1, rounded(room / widest))), extra: 0, over: widest * smallest > room };
 }

@@ -31,7 +31,7 @@ const part = (name: string, content: unknown) =>
   html`<div class="part"><h2>${name}</h2><div class="prose">${content}</div></div>`;
 
 export function head(desk: Desk) {
-  const { model } = desk;
+  const { drawn: model } = desk;
   return html`<section class="head" aria-label="Head of the sheet">
     ${model.purpose.length === 0 ? nothing : part('Purpose', prose(model.purpose))}
     ${model.method.length === 0 ? nothing : part('Method', prose(model.method))}

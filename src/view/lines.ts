@@ -44,9 +44,13 @@ function body(line: Exclude<Other, { kind: 'heading' }>) {
   return html`<figure>${line.title === '' ? nothing : html`<figcaption>${line.title}</figcaption>`}${picture}</figure>`;
 }
 
+/** Rows of a table that stand open on the screen; a taller one scrolls in its place. */
+const tallest = 14;
+
 function table(line: Extract<Line, { kind: 'table' }>) {
   const kind = (index: number) => (line.heads[index]?.numeric ? 'number' : '');
-  return html`<div class="scroll"><table>
+  return html`<div class="scroll ${line.rows.length > tallest ? 'tall' : ''}" tabindex=${line.rows.length > tallest ? '0' : nothing}
+    role=${line.rows.length > tallest ? 'region' : nothing} aria-label=${line.rows.length > tallest ? line.title : nothing}><table>
     <caption>${line.title} <code>${line.name}</code></caption>
     <thead><tr>${line.heads.map((head, index) => html`<th scope="col" class=${kind(index)}>${head.title}${head.unit === '' ? nothing : html` / ${head.unit}`}</th>`)}</tr></thead>
     <tbody>${line.rows.map((cells) => html`<tr>${cells.map((cell, index) => (index === 0 ? html`<th scope="row">${cell}</th>` : html`<td class=${kind(index)}>${cell}</td>`))}</tr>`)}</tbody>

@@ -25,3 +25,5 @@ const example = readSheet(exampleText);
 if (!example.ok) throw new Error(example.problems.map((problem) => problem.message).join('\n'));
 const page = document.querySelector<PageElementRoot>('ts-page');
 if (page !== null) page.desk = createDesk(example.value);
+// All faces at once, so that nothing is asked of the network later, on the first formula that needs one.
+for (const face of document.fonts) void face.load();

@@ -19,6 +19,7 @@ import { preparePrint } from './print.ts';
 import type { RowElement } from './row.ts';
 import { side } from './side.ts';
 import { words } from './text.ts';
+import { countLines } from './waiting.ts';
 
 export class PageElementRoot extends PageElement {
   static override properties = {
@@ -34,6 +35,7 @@ export class PageElementRoot extends PageElement {
   declare section: string | null;
   declare narrow: boolean;
   #trail: string[] = [];
+  #drawing = false;
   #leave: (() => void) | undefined;
   #watch: IntersectionObserver | undefined;
   #width = matchMedia('(max-width: 70rem)');
@@ -72,13 +74,14 @@ export class PageElementRoot extends PageElement {
     this.#leave?.();
     this.#leave = this.desk?.subscribe(() => {
       this.version += 1;
+      this.#drawLater();
     });
   }
 
   protected override render() {
     const { desk } = this;
     if (desk === undefined) return html`<p class="loading">Opening the sheet …</p>`;
-    const { model } = desk;
+    const { drawn: model } = desk;
     const goTo = (cell: string) => this.#goTo(cell);
     const beside = side(desk, goTo);
     return html`
@@ -96,18 +99,33 @@ export class PageElementRoot extends PageElement {
       <p class="unseen" role="status">${desk.announcement}</p>`;
   }
 
+  /** What was typed is painted first; then the lines that follow from it, once for all key strokes until then. */
+  #drawLater() {
+    if (this.#drawing) return;
+    this.#drawing = true;
+    requestAnimationFrame(() =>
+      setTimeout(() => {
+        this.#drawing = false;
+        const { desk } = this;
+        if (desk !== undefined && desk.drawn !== desk.model) this.version += 1;
+      }),
+    );
+  }
+
   #bar(desk: Desk) {
-    const { model } = desk;
+    const { drawn: model } = desk;
     const { titleBlock: block } = model;
     const failed = model.summary.filter((one) => one.cases.some((each) => each.met === false));
-    const errors = new Set(model.problems.filter((problem) => problem.severity === 'error').map((problem) => problem.cell)).size;
+    const { wrong, waiting } = countLines(model.problems);
+    const errors = wrong.length;
     const toConfirm = model.openPoints.filter((point) => point.kind === 'to confirm' || point.kind === 'carried over').length;
     const first = (cell: string | undefined) => () => cell !== undefined && this.#goTo(cell);
     return html`<header class="bar">
       <p class="brand">${mark()}<span>Tightside</span></p>
       <p class="document"><b>${block.documentNumber ?? ''}</b> ${block.revision ? `rev ${block.revision} · ` : ''}${model.title} · ${model.status}</p>
       <p class="state">
-        ${errors === 0 ? nothing : html`<button type="button" class="word not-met" @click=${first(model.problems.find((problem) => problem.severity === 'error')?.cell)}>${words(errors, 'line', 'lines')} with an error</button>`}
+        ${errors === 0 ? nothing : html`<button type="button" class="word not-met" @click=${first(wrong[0])}>${words(errors, 'line', 'lines')} with an error</button>`}
+        ${waiting === 0 ? nothing : html`<span>${words(waiting, 'line waits', 'lines wait')}</span>`}
         ${
           failed.length > 0
             ? html`<button type="button" class="word not-met" @click=${first(failed[0]?.cell)}>${words(failed.length, 'criterion', 'criteria')} not met</button>`
@@ -129,9 +147,9 @@ export class PageElementRoot extends PageElement {
   protected override updated() {
     const { desk } = this;
     if (desk === undefined) return;
-    const { documentNumber } = desk.model.titleBlock;
-    document.title = `${[documentNumber, desk.model.title].filter(Boolean).join(' ')}, ${desk.model.status}`;
-    preparePrint(desk.model);
+    const { titleBlock, title, status } = desk.drawn;
+    document.title = `${[titleBlock.documentNumber, title].filter(Boolean).join(' ')}, ${status}`;
+    preparePrint(desk.drawn);
     if (this.#watch === undefined) void this.#watchSections();
   }
 
@@ -227,6 +245,7 @@ export class PageElementRoot extends PageElement {
 
   #beforePrint = () => {
     this.desk?.finish();
+    void this.desk?.model;
     this.printing = true;
     document.documentElement.toggleAttribute('data-print', true);
     // The rows draw what print adds before the print goes on: all of it happens in the pause after this handler.

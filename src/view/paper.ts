@@ -5,7 +5,7 @@
 // 3. Leaving a field keeps what was typed; focus then stays where it was.
 // Not here: a single row (row.ts), what lies beside the paper (page.ts).
 
-import { html } from 'lit';
+import { html, nothing } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
@@ -42,7 +42,7 @@ export class PaperElement extends PageElement {
 
   protected override render() {
     const { desk } = this;
-    const { model } = desk;
+    const { drawn: model } = desk;
     const sections = sectionsOf(model.lines);
     const heads = model.cases.length === 1 && model.cases[0]?.title === '' ? ['Result'] : model.cases.map((one) => one.title);
     this.#sortProblems();
@@ -50,18 +50,12 @@ export class PaperElement extends PageElement {
     return html`${titleBlock(model)}${head(desk)}
       <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} @keydown=${this.#onKey} @focusin=${this.#onFocus}
         @focusout=${this.#onLeave} @click=${this.#onClick}>
-        <div role="rowgroup" class="heads">
-          <div role="row" class="row columns">
-            <div role="columnheader" class="source">Source</div>
-            <div role="columnheader" class="calculation">Calculation</div>
-            ${heads.map((title, index) => this.#columnHead(title, index, heads.length))}
-          </div>
-        </div>
+        <div role="rowgroup" class="heads">${this.#columnHeads(heads)}</div>
         ${repeat(
           sections,
           (section) => section.key,
           (section) => html`<div role="rowgroup" class="section" id=${`section-${section.key}`} data-section=${section.key}>
-            ${repeat(section.lines, cellOf, (line) => this.#row(line, place))}
+            ${repeat(section.lines, cellOf, (line, index) => html`${this.#row(line, place)}${this.printing && index === 0 ? this.#columnHeads(heads) : nothing}`)}
           </div>`,
         )}
       </div>
@@ -69,7 +63,15 @@ export class PaperElement extends PageElement {
   }
 
   protected override updated() {
-    this.style.setProperty('--results', String(Math.max(1, this.desk.model.cases.length)));
+    this.style.setProperty('--results', String(Math.max(1, this.desk.drawn.cases.length)));
+  }
+
+  #columnHeads(heads: readonly string[]) {
+    return html`<div role="row" class="row columns">
+      <div role="columnheader" class="source">Source</div>
+      <div role="columnheader" class="calculation">Calculation</div>
+      ${heads.map((title, index) => this.#columnHead(title, index, heads.length))}
+    </div>`;
   }
 
   #columnHead(title: string, index: number, count: number) {
@@ -86,13 +88,13 @@ export class PaperElement extends PageElement {
     const cell = cellOf(line);
     const editing = desk.editing?.cell === cell ? desk.editing : null;
     const former = line.kind === 'step' && line.step.kind === 'given' ? formerText(desk, cell) : '';
-    return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.model.cases}
+    return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.drawn.cases}
       .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
       .chosen=${desk.chosen === cell} .editing=${editing} .printing=${this.printing} .former=${former}></ts-row>`;
   }
 
   #sortProblems() {
-    const all = this.desk.model.problems;
+    const all = this.desk.drawn.problems;
     if (all === this.#problems.all) return;
     const before = this.#problems.of;
     const of = new Map<string, CellProblem[]>();

@@ -5,15 +5,17 @@
 // 3. It writes nothing but through the desk.
 // Not here: moving between cells (paper.ts), the field that is typed into (editor.ts), other kinds of lines (lines.ts).
 
-import { html, nothing, type TemplateResult } from 'lit';
+import { html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { Line, RecordCase, Step, StepCase } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
 import type { Desk, Editing } from './desk.ts';
-import { choicesOf, editorField, editorNotes, sourceEditor } from './editor.ts';
+import { choicesOf, editorField, editorNotes, focusField, sourceEditor } from './editor.ts';
 import { PageElement } from './element.ts';
 import { equation } from './equation.ts';
+import { heldValue } from './given.ts';
 import { otherLine } from './lines.ts';
 import { quantity, source } from './text.ts';
+import { waits } from './waiting.ts';
 
 export class RowElement extends PageElement {
   static override properties = {
@@ -47,10 +49,12 @@ export class RowElement extends PageElement {
     return this.#step(line.step);
   }
 
-  protected override updated() {
+  protected override updated(changed: PropertyValues<this>) {
     const { line, chosen } = this;
-    this.className = `row ${line.kind}${line.kind === 'step' ? ` ${line.step.kind}` : ''}${chosen ? ' chosen' : ''}`;
+    const choices = line.kind === 'step' && this.querySelector('.across') !== null;
+    this.className = `row ${line.kind}${choices ? ' choices' : ''}${line.kind === 'step' ? ` ${line.step.kind}` : ''}${chosen ? ' chosen' : ''}`;
     if (line.kind === 'step') this.setAttribute('aria-selected', String(chosen));
+    if (changed.has('editing') && this.editing !== null && changed.get('editing')?.field !== this.editing.field) focusField(this);
   }
 
   #tab(column: number) {
@@ -100,8 +104,14 @@ export class RowElement extends PageElement {
     const title = this.cases[index]?.title ?? '';
     return html`<div role="gridcell" class="result" data-column=${2 + index} data-case=${title} tabindex=${this.#tab(2 + index)}
       aria-readonly=${step.kind === 'given' ? nothing : 'true'}>
-      <div class="value">${typed === null ? result(step, each) : editorField(this.desk, typed, step, this.cases)}</div>
+      <div class="value">${typed === null ? result(step, each, this.#typedText(step, index)) : editorField(this.desk, typed, step, this.cases)}</div>
     </div>`;
+  }
+
+  /** What stands in the sheet where it could not be read. */
+  #typedText(step: Step, index: number) {
+    const state = step.kind === 'given' ? this.desk.calculation.state(step.cell) : undefined;
+    return state?.kind === 'given' ? heldValue(state.cell, this.cases[index]?.id ?? '') : '';
   }
 
   #below(step: Step, remarks: readonly string[], editing: Editing | null) {
@@ -122,11 +132,13 @@ export class RowElement extends PageElement {
 }
 
 export function problemNote(problem: CellProblem, cases: readonly RecordCase[]) {
-  const where = problem.case === undefined ? '' : cases.find((one) => one.id === problem.case)?.title;
-  return html`<p class="problem ${problem.severity}"><b>${problem.severity === 'error' ? 'Error' : 'Warning'}</b>${where ? `, ${where}` : ''}: ${problem.message}</p>`;
+  const where = problem.case === undefined ? '' : (cases.find((one) => one.id === problem.case)?.title ?? '');
+  const word = waits(problem) ? '' : problem.severity === 'error' ? 'Error' : 'Warning';
+  return html`<p class="problem ${waits(problem) ? 'waits' : problem.severity}">${word === '' ? nothing : html`<b>${word}</b>`}${where === '' ? nothing : `${word === '' ? '' : ', '}${where}`}${word === '' && where === '' ? '' : ': '}${problem.message}</p>`;
 }
 
-function result(step: Step, each: StepCase) {
+function result(step: Step, each: StepCase, typed: string) {
+  if (each.result === null && typed !== '') return html`<span class="written unread">${typed}</span>`;
   if (each.result === null) return html`<span class="none">no value</span>`;
   if (step.kind !== 'criterion')
     return html`<span class=${step.kind === 'given' ? 'written' : ''}>${quantity(each.result)}</span>`;

@@ -8,6 +8,7 @@ import { html, nothing } from 'lit';
 import type { Line, Step } from '../record/index.ts';
 import type { Desk } from './desk.ts';
 import { quantity, words } from './text.ts';
+import { countLines } from './waiting.ts';
 
 export type GoTo = (cell: string) => void;
 
@@ -17,7 +18,7 @@ interface Entry {
 }
 
 export function side(desk: Desk, goTo: GoTo) {
-  const { chosen, model } = desk;
+  const { chosen, drawn: model } = desk;
   const steps = new Map(model.steps.map((step) => [step.cell, step]));
   const line = chosen === null ? undefined : model.lines.find((one) => one.kind !== 'step' && one.cell === chosen);
   const step = chosen === null ? undefined : steps.get(chosen);
@@ -61,7 +62,7 @@ function originOf(desk: Desk, cell: string): readonly Entry[] {
 function item(desk: Desk, steps: ReadonlyMap<string, Step>, { cell, depth }: Entry, goTo: GoTo) {
   const step = steps.get(cell);
   if (step === undefined) {
-    const line = desk.model.lines.find((one): one is Exclude<Line, { kind: 'step' }> => one.kind !== 'step' && one.cell === cell);
+    const line = desk.drawn.lines.find((one): one is Exclude<Line, { kind: 'step' }> => one.kind !== 'step' && one.cell === cell);
     const title = line?.kind === 'table' || line?.kind === 'other' ? line.title : (line?.text ?? cell);
     return html`<button type="button" class="depth-${depth} plain" @click=${() => goTo(cell)}><span class="name">${line?.kind === 'table' ? 'table: ' : ''}${title}</span></button>`;
   }
@@ -69,15 +70,20 @@ function item(desk: Desk, steps: ReadonlyMap<string, Step>, { cell, depth }: Ent
   if (step.symbol === undefined) {
     return html`<button type="button" class="depth-${depth} plain" @click=${() => goTo(cell)}><span class="number">${step.number}</span> <span class="name">${step.title}</span></button>`;
   }
-  return html`<button type="button" class="depth-${depth}" title=${step.title} aria-label=${`${step.title}, ${shown}, line ${step.number}`} @click=${() => goTo(cell)}>
-    <span class="symbol"><ts-math .tex=${step.symbol}></ts-math></span><span class="value">${quantity(shown)}</span><span class="number">${step.number}</span></button>`;
+  return html`<button type="button" class="depth-${depth}" title=${step.title} @click=${() => goTo(cell)}>
+    <span class="symbol" aria-hidden="true"><ts-math .tex=${step.symbol}></ts-math></span><span class="unseen">${step.title} </span>
+    <span class="value">${quantity(shown)}</span><span class="number">${step.number}</span></button>`;
 }
 
-function openPoints({ model }: Desk, goTo: GoTo) {
+function openPoints({ drawn: model }: Desk, goTo: GoTo) {
+  const { wrong: lines, waiting } = countLines(model.problems);
+  const wrong = new Set(lines);
   const warnings = model.problems.filter((problem) => problem.severity === 'warning');
   const numbers = new Map(model.steps.map((step) => [step.cell, step.number]));
   const open = [
-    ...model.openPoints.map((point) => ({ ...point, kind: point.kind === 'problem' ? 'error' : point.kind })),
+    ...model.openPoints
+      .filter((point) => point.kind !== 'problem' || wrong.has(point.cell))
+      .map((point) => ({ ...point, kind: point.kind === 'problem' ? 'error' : point.kind })),
     ...warnings.map((problem) => ({
       kind: 'warning',
       text: problem.message,
@@ -89,7 +95,7 @@ function openPoints({ model }: Desk, goTo: GoTo) {
     ${
       open.length === 0
         ? html`<p class="quiet">None.</p>`
-        : html`<p class="quiet">${words(open.length, 'point', 'points')}, in the order of the sheet</p><ul class="open">${open.map(
+        : html`<p class="quiet">${words(open.length, 'point', 'points')}, in the order of the sheet${waiting === 0 ? '' : `; ${words(waiting, 'more line waits', 'more lines wait')} for a value`}</p><ul class="open">${open.map(
             (point) => html`<li><button type="button" class="plain" @click=${() => goTo(point.cell)}>
               <span class="kind ${point.kind === 'not met' || point.kind === 'error' ? 'not-met' : ''}">${point.number} ${point.kind}</span> <span class="name">${point.text}</span></button></li>`,
           )}</ul>`
