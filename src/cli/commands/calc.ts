@@ -10,6 +10,7 @@ import { canonicalName } from '../../formula/index.ts';
 import { fromSI, type Unit } from '../../quantity/index.ts';
 import { makeRecord, type RecordModel, type Step } from '../../record/index.ts';
 import { type Calculation, calculate, type QuantityState } from '../../sheet/index.ts';
+import { solver } from '../../study/index.ts';
 import type { Io } from '../io.ts';
 import { listing } from '../listing.ts';
 import { loadSheet, withValues } from '../load.ts';
@@ -19,7 +20,7 @@ import { readArguments } from '../usage.ts';
 export async function calc(argv: readonly string[], io: Io): Promise<number> {
   const args = readArguments('calc', argv, ['set', 'case', 'json'], ['FILE']);
   const path = args.positionals[0]!;
-  const calculation = calculate(withValues(await loadSheet(io, path), args.assignments, path));
+  const calculation = calculate(withValues(await loadSheet(io, path), args.assignments, path), solver);
   const model = makeRecord(calculation);
   io.out(args.json ? `${JSON.stringify(calculationJson(calculation, model), null, 2)}\n` : listing(path, calculation, model));
   writeProblems(io, path, calculation);

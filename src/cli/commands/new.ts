@@ -2,6 +2,7 @@
 
 import { fingerprints } from '../../check/index.ts';
 import { calculate, newFromTemplate, readSheet, writeSheet } from '../../sheet/index.ts';
+import { solver } from '../../study/index.ts';
 import { FileTrouble, type Io } from '../io.ts';
 import { loadTemplate, withValues } from '../load.ts';
 import { exits, readArguments, UsageTrouble } from '../usage.ts';
@@ -12,7 +13,7 @@ export async function newSheet(argv: readonly string[], io: Io): Promise<number>
   if (path === undefined || path === '') throw new UsageTrouble('new wants -o FILE, the file to write');
   const id = args.positionals[0]!;
   const template = await loadTemplate(io, id);
-  const begun = newFromTemplate(template, fingerprints(calculate(template)).sheet);
+  const begun = newFromTemplate(template, fingerprints(calculate(template, solver)).sheet);
   const sheet = withValues(begun, args.assignments, id);
   if (args.force) await refuseNewer(io, path);
   await io.write(path, writeSheet(sheet), { replace: args.force });

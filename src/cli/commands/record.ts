@@ -3,6 +3,7 @@
 import { fingerprints } from '../../check/index.ts';
 import { loadRecordAssets, makeRecord, recordHtml, recordJson } from '../../record/index.ts';
 import { calculate } from '../../sheet/index.ts';
+import { solver } from '../../study/index.ts';
 import type { Io } from '../io.ts';
 import { loadSheet } from '../load.ts';
 import { stateExit, writeProblems } from '../outcome.ts';
@@ -20,7 +21,7 @@ export async function record(argv: readonly string[], io: Io): Promise<number> {
     throw new UsageTrouble(`there is no form ${clip(form)} of the record; --to takes html or json`);
   const out = args.output ?? '-';
   if (await io.same(path, out)) throw new UsageTrouble(`-o ${clip(out)} is the sheet itself; choose another file for the record`);
-  const calculation = calculate(await loadSheet(io, path));
+  const calculation = calculate(await loadSheet(io, path), solver);
   const model = makeRecord(calculation);
   const text =
     form === 'html'
