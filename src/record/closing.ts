@@ -38,6 +38,9 @@ export interface Closing {
 /** Most significant digits that a number is printed with: every decimal of 15 digits survives the way through a double. */
 export const mostDigits = 15;
 
+/** A sheet made to begin anew without end keeps, from here on, some digits that nobody needs. */
+const mostRestarts = 100;
+
 /**
  * Finds the digits of all items. `steps` stand in an order in which every step comes after those whose results it prints
  * (the order of the sheet, where nothing is used above its definition).
@@ -55,6 +58,7 @@ export function closeSteps(
   const raisedFor = new Uint8Array(steps.length);
   const touching = stepsByItem(items.length, steps);
 
+  let restarts = 0;
   for (let changed = true; changed; ) {
     changed = false;
     for (let i = steps.length - 1; i >= 0; i--) {
@@ -75,12 +79,13 @@ export function closeSteps(
         continue;
       }
       open.set(i, verdict);
-      if (raisedFor[i] === 0) {
+      if (raisedFor[i] === 0 || restarts >= mostRestarts) {
         // Nobody has seen these digits yet: taking them back is the same as never having tried.
         step.operands.forEach((item, k) => {
           digits[item] = before[k] ?? first;
         });
       } else {
+        restarts += 1;
         digits.fill(first);
         dirty.fill(1);
         raisedFor.fill(0);

@@ -63,7 +63,7 @@ function dataTable(line: Extract<Line, { kind: 'table' }>, symbols: Symbols): st
     (cells) => `<tr>${cells.map((cell, k) => `<td${numeric(k)}>${escapeHtml(cell)}</td>`).join('')}</tr>`,
   );
   const title = `<p class="t">${line.title === '' ? 'Table' : inlineText(line.title, symbols)} <code>${escapeHtml(line.name)}</code></p>`;
-  return `${title}<div class="scroll"><table class="data"><thead><tr>${heads.join('')}</tr></thead><tbody>${rows.join('')}</tbody></table></div>${noteLines(line.notes, symbols)}`;
+  return `${title}<div class="scroll" tabindex="0"><table class="data"><thead><tr>${heads.join('')}</tr></thead><tbody>${rows.join('')}</tbody></table></div>${noteLines(line.notes, symbols)}`;
 }
 
 function picture(line: Extract<Line, { kind: 'other' }>, symbols: Symbols): string {

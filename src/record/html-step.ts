@@ -134,13 +134,13 @@ interface Part {
   readonly length: number;
 }
 
+const phoneWidth = 28;
+
 function row(parts: readonly Part[], results: Row['results']): Row {
   const markup = parts.map((part) => (part.markup.startsWith('<b') ? part.markup : `<span>${part.markup}</span>`));
-  return {
-    equation: `<div class="eq">${markup.join(' ')}</div>`,
-    length: parts.reduce((sum, part) => sum + part.length, 0),
-    results,
-  };
+  const length = parts.reduce((sum, part) => sum + part.length, 0);
+  // On a phone a long line is moved sideways, by the keyboard too.
+  return { equation: `<div class="eq"${length > phoneWidth ? ' tabindex="0"' : ''}>${markup.join(' ')}</div>`, length, results };
 }
 
 function sidesOf(each: StepCase, before: string): readonly Part[] {

@@ -60,7 +60,8 @@ body{margin:0;background:var(--desk);color:var(--ink);font:400 10pt/1.4 "Atkinso
 .head .names>div{padding:.2rem .8rem;display:flex;gap:.5rem;align-items:baseline}
 dt{color:var(--second);font-size:8pt}
 dd{margin:0;overflow-wrap:anywhere}
-.head .title dd{font-size:13pt;font-weight:700;line-height:1.2}
+.head h1{font-size:13pt;font-weight:700;line-height:1.2;margin:0}
+:focus-visible{outline:2px solid var(--author);outline-offset:2px}
 .status{font-weight:700}
 main{padding:0 0 1rem}
 .front,.back{padding:0 1rem}
@@ -135,7 +136,7 @@ figure img{max-width:100%;max-height:14cm}
 code{font:9pt ui-monospace,"DejaVu Sans Mono",monospace}
 @media print{
 body{background:none;font-size:9pt}
-.record{display:table;width:100%;max-width:none;margin:0;border:0;background:none}
+.record{display:table;width:calc(100% - 1px);max-width:none;margin:0;border:0;background:none}
 .head{display:table-header-group;break-inside:avoid}
 .head>div{border:1px solid var(--ink);margin-bottom:3mm}
 .front{margin-top:-1px}

@@ -80,7 +80,7 @@ function head(model: RecordModel): string {
   const entry = (name: string, value: string, kindOf = '') =>
     `<div${kindOf === '' ? '' : ` class="${kindOf}"`}><dt>${name}</dt><dd>${value === '' ? '—' : escapeHtml(value)}</dd></div>`;
   return `<header class="head"><div>
-<dl><div class="title"><dt>${escapeHtml(kind)}</dt><dd>${escapeHtml(model.title)}</dd></div>${entry('Document', block.documentNumber ?? '')}${entry('Revision', block.revision ?? '')}${entry('Date', block.date ?? '')}${entry('Status', model.status, 'status')}</dl>
+<dl><div class="title"><dt>${escapeHtml(kind)}</dt><dd><h1>${escapeHtml(model.title)}</h1></dd></div>${entry('Document', block.documentNumber ?? '')}${entry('Revision', block.revision ?? '')}${entry('Date', block.date ?? '')}${entry('Status', model.status, 'status')}</dl>
 <dl class="names">${entry('Prepared', block.preparedBy ?? '')}${entry('Checked', block.checkedBy ?? '')}${entry('Approved', block.approvedBy ?? '')}</dl>
 </div></header>`;
 }
@@ -110,6 +110,9 @@ function fields(model: RecordModel): string {
   return `<dl class="fields">${shown.map(([name, value]) => `<div><dt>${name}</dt><dd>${escapeHtml(value ?? '')}</dd></div>`).join('')}</dl>`;
 }
 
+/** Wider than a phone: moved by the keyboard too. */
+const scroll = '<div class="scroll" tabindex="0">';
+
 function section(title: string, body: string): string {
   return body === '' ? '' : `<section><h2>${title}</h2>${body}</section>`;
 }
@@ -130,7 +133,7 @@ function criteria(model: RecordModel, symbols: Symbols): string {
       line.justification === '' ? '' : `<p class="note">Justification: ${inlineText(line.justification, symbols)}</p>`;
     return `<tr><td>${stepLink(line.number)}</td><td>${inlineText(line.title, symbols)} <span class="limit">${renderTex(line.symbols, false)}</span>${justification}</td>${cells.join('')}${governing}</tr>`;
   });
-  return `<section><h2>Criteria</h2><p>${escapeHtml(criteriaWords(model.summary))}</p><div class="scroll"><table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Criterion</th>${heads}${several ? '<th scope="col">Governs</th>' : ''}</tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
+  return `<section><h2>Criteria</h2><p>${escapeHtml(criteriaWords(model.summary))}</p>${scroll}<table class="list"><thead><tr><th scope="col">Step</th><th scope="col">Criterion</th>${heads}${several ? '<th scope="col">Governs</th>' : ''}</tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
 }
 
 function governingWord(line: CriterionSummary, model: RecordModel): string {
@@ -169,7 +172,7 @@ function openPoints(model: RecordModel, symbols: Symbols): string {
     (row) =>
       `<tr><td>${row.kind}</td><td>${row.numbers.map(stepLink).join(', ')}</td><td>${inlineText(row.text, symbols)}</td></tr>`,
   );
-  return `<section><h2>Open points</h2><table class="list points"><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col"></th></tr></thead><tbody>${markup.join('')}</tbody></table></section>`;
+  return `<section><h2>Open points</h2>${scroll}<table class="list points"><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col">Detail</th></tr></thead><tbody>${markup.join('')}</tbody></table></div></section>`;
 }
 
 const sharedText = { 'carried over': 'not confirmed for this sheet', 'no source': 'nothing says where these come from' } as const;
@@ -185,7 +188,7 @@ function assumptions(model: RecordModel, symbols: Symbols): string {
     const confirm = each.toConfirm === '' ? '' : ` <span class="tag open">to be confirmed: ${escapeHtml(each.toConfirm)}</span>`;
     return `<tr><td>${stepLink(each.number)}</td><td>${inlineText(each.text, symbols)}${confirm}</td><td>${value}</td><td>${inlineText(each.source, symbols)}</td></tr>`;
   });
-  return `<section><h2>Assumptions</h2><table class="list"><colgroup><col style="width:7%"><col><col style="width:22%"><col style="width:25%"></colgroup><thead><tr><th scope="col">Step</th><th scope="col">Assumption</th><th scope="col">Value</th><th scope="col">Source</th></tr></thead><tbody>${rows.join('')}</tbody></table></section>`;
+  return `<section><h2>Assumptions</h2>${scroll}<table class="list"><colgroup><col style="width:7%"><col><col style="width:22%"><col style="width:25%"></colgroup><thead><tr><th scope="col">Step</th><th scope="col">Assumption</th><th scope="col">Value</th><th scope="col">Source</th></tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
 }
 
 function references(model: RecordModel): string {
@@ -194,5 +197,5 @@ function references(model: RecordModel): string {
     const cited = each.citedBy.length === 0 ? 'not cited' : each.citedBy.join(', ');
     return `<tr><td>[${escapeHtml(each.id)}]</td><td>${escapeHtml(each.document)}</td><td>${escapeHtml(each.edition)}</td><td>${escapeHtml(each.title)}</td><td>${escapeHtml(cited)}</td></tr>`;
   });
-  return `<section><h2>Sources</h2><table class="list"><thead><tr><th scope="col"></th><th scope="col">Document</th><th scope="col">Edition</th><th scope="col">Title</th><th scope="col">Cited in</th></tr></thead><tbody>${rows.join('')}</tbody></table></section>`;
+  return `<section><h2>Sources</h2>${scroll}<table class="list"><thead><tr><th scope="col">Source</th><th scope="col">Document</th><th scope="col">Edition</th><th scope="col">Title</th><th scope="col">Cited in</th></tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
 }

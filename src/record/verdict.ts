@@ -16,7 +16,7 @@ import {
 } from '../quantity/index.ts';
 import type { Relation } from '../sheet/index.ts';
 
-export const hundredths = -2;
+const hundredths = -2;
 
 /** `utilisation` is positive and finite; `met` the verdict on the unrounded sides. */
 export function utilisationNumeral(utilisation: number, relation: Relation, met: boolean): Numeral {
