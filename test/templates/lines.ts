@@ -30,6 +30,11 @@ export function readNumeral(text: string): Read {
   return { value: Number(`${sign}${whole}.${decimals || '0'}e${exponent}`), unit: 10 ** (exponent - decimals.length) };
 }
 
+/** Half a unit of the last digit, and what a double at this size can't tell apart. */
+function isRounded(value: number, printed: Read): boolean {
+  return Math.abs(value - printed.value) <= printed.unit / 2 + 4 * Number.EPSILON * Math.abs(value);
+}
+
 /** What is wrong with one step in one case; '' where nothing is. `si` and `shown` are the true value in SI and in the unit of the step. */
 export function fault(step: Step, one: StepCase, si: number, shown: number): string {
   const where = `${step.number} ${step.name ?? step.cell} in ${one.case}`;
@@ -40,9 +45,6 @@ export function fault(step: Step, one: StepCase, si: number, shown: number): str
   if (!(Math.abs(found - wanted.value) <= wanted.unit * (1 + 1e-9))) {
     return `${where}: ${one.calculatorLine} = ${found}, not ${one.calculatorResult}`;
   }
-  const roundedSi = Math.abs(si - wanted.value) <= (wanted.unit / 2) * (1 + 1e-6);
-  if (!roundedSi) return `${where}: ${one.calculatorResult} is not ${si} rounded`;
-  const printed = readNumeral(one.result);
-  const rounded = Math.abs(shown - printed.value) <= (printed.unit / 2) * (1 + 1e-6);
-  return rounded ? '' : `${where}: ${one.result} is not ${shown} rounded`;
+  if (!isRounded(si, wanted)) return `${where}: ${one.calculatorResult} is not ${si} rounded`;
+  return isRounded(shown, readNumeral(one.result)) ? '' : `${where}: ${one.result} is not ${shown} rounded`;
 }

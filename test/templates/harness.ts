@@ -1,7 +1,8 @@
 // What every built-in template must be: complete, typed, sourced, closed, and able to say no.
 //
-// One harness for all files of templates/, by their own data; what outside programs rely on stands in names.ts.
-// Not here: agreement with published examples (test/reference).
+// 1. One harness for all files of templates/, by their own data; what outside programs rely on stands in names.ts.
+// 2. Random draws come from one seed, TIGHTSIDE_SEED or a fixed one, which stands in the name of the test.
+// Not here: which file tests which templates (*.test.ts beside), agreement with published examples (test/reference).
 
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
@@ -14,7 +15,7 @@ import { randomFrom, rangeOf, varied, variedInOne } from './vary.ts';
 
 const folder = new URL('../../templates/', import.meta.url);
 const ending = '.sheet.json';
-const ids = readdirSync(folder).filter((file) => file.endsWith(ending)).map((file) => file.slice(0, -ending.length));
+export const templateIds = readdirSync(folder).filter((file) => file.endsWith(ending)).map((file) => file.slice(0, -ending.length));
 const seed = Number(process.env['TIGHTSIDE_SEED'] ?? 20_261_201);
 const variations = 200;
 
@@ -45,11 +46,30 @@ function faultsOf(calculation: Calculation): string[] {
   );
 }
 
-test('every published template is there, and no other', () => {
-  expect([...ids].sort()).toEqual([...publishedNames.keys()].sort());
-});
+/** What each criterion has said so far. */
+class Verdicts {
+  private readonly seen = new Map<string, Set<boolean>>();
 
-describe.each(ids)('template %s', (id) => {
+  note(calculation: Calculation): void {
+    for (const cell of calculation.sheet.cells) {
+      const state = calculation.state(cell.id);
+      if (state?.kind !== 'criterion') continue;
+      const seen = this.seen.get(cell.id) ?? new Set();
+      for (const met of state.met) if (met !== null) seen.add(met);
+      this.seen.set(cell.id, seen);
+    }
+  }
+
+  oneSided(): string[] {
+    return [...this.seen].filter(([, seen]) => seen.size < 2).map(([cell, seen]) => `${cell}: only ${[...seen].join()}`);
+  }
+}
+
+export function testTemplates(ids: readonly string[]): void {
+  describe.each(ids)('template %s', (id) => testTemplate(id));
+}
+
+function testTemplate(id: string): void {
   const sheet = sheetOf(id);
   const calculation = calculate(sheet);
   const givens = sheet.cells.filter((cell): cell is GivenCell => cell.kind === 'given');
@@ -131,7 +151,8 @@ describe.each(ids)('template %s', (id) => {
 
   test(`${variations} variations within the ranges (seed ${seed}) close, and each criterion is seen met and not met`, () => {
     const random = randomFrom(seed);
-    const verdicts = new Map<string, Set<boolean>>();
+    const verdicts = new Verdicts();
+    verdicts.note(calculation);
     const faults: string[] = [];
     const errors: string[] = [];
     let whole = 0;
@@ -141,26 +162,21 @@ describe.each(ids)('template %s', (id) => {
       const failed = one.problems().filter((problem) => problem.severity === 'error');
       if (failed.length === 0) whole += 1;
       else errors.push(...failed.map((problem) => `${problem.cell}: ${problem.code}`));
-      for (const cell of sheet.cells) {
-        const state = one.state(cell.id);
-        if (state?.kind !== 'criterion') continue;
-        const seen = verdicts.get(cell.id) ?? new Set();
-        for (const met of state.met) if (met !== null) seen.add(met);
-        verdicts.set(cell.id, seen);
-      }
+      verdicts.note(one);
       faults.push(...faultsOf(one).map((text) => `round ${round}: ${text}`));
     }
-    expect(faults.slice(0, 10)).toEqual([]);
+    expect(faults.length, faults.slice(0, 10).join('\n')).toBe(0);
     expect(whole, `variations without an error; errors: ${[...new Set(errors)].join(', ')}`).toBeGreaterThanOrEqual(variations / 2);
-    const oneSided = [...verdicts].filter(([, seen]) => seen.size < 2).map(([cell, seen]) => `${cell}: only ${[...seen].join()}`);
-    expect(oneSided).toEqual([]);
+    // Corners where two givens meet are rare: more draws, without their records, until each criterion has said both.
+    for (let round = 0; round < 20 * variations && verdicts.oneSided().length > 0; round += 1) verdicts.note(calculate(varied(sheet, random)));
+    expect(verdicts.oneSided()).toEqual([]);
   }, 120_000);
 
   test(`a single given moved within its range (seed ${seed}) leaves every step closed`, () => {
     const random = randomFrom(seed + 1);
     const faults = givens.flatMap((cell) =>
-      [1, 2, 3].flatMap(() => faultsOf(calculate(variedInOne(sheet, cell.name, random))).map((text) => `${cell.name}: ${text}`)),
+      faultsOf(calculate(variedInOne(sheet, cell.name, random))).map((text) => `${cell.name}: ${text}`),
     );
-    expect(faults.slice(0, 10)).toEqual([]);
+    expect(faults.length, faults.slice(0, 10).join('\n')).toBe(0);
   }, 120_000);
-});
+}
