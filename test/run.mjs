@@ -37,7 +37,7 @@ function step(name, work) {
 }
 
 /** Runs one project of tests. A file that does not load, a run that dies and a project without tests are failures too. */
-function tests(project, env = {}) {
+function tests(project, exclude = []) {
   const folder = mkdtempSync(join(tmpdir(), 'tightside-test-'));
   try {
     const file = join(folder, 'report.json');
@@ -51,8 +51,9 @@ function tests(project, env = {}) {
         '--reporter=default',
         '--reporter=json',
         `--outputFile.json=${file}`,
+        ...exclude.map((one) => `--exclude=${one}`),
       ],
-      { cwd: root, stdio: 'inherit', env: { ...process.env, ...env } },
+      { cwd: root, stdio: 'inherit' },
     );
     const report = JSON.parse(readFileSync(file, 'utf8'));
     const files = report.testResults.filter((one) => one.status === 'failed' && one.assertionResults.length === 0).length;
@@ -66,14 +67,16 @@ function tests(project, env = {}) {
 }
 
 const left = [];
+const exclude = [];
 if (spawnSync('units', ['--version'], { encoding: 'utf8' }).status !== 0) {
+  exclude.push('test/quantity/gnu-units.test.ts');
   left.push('the comparison of every unit with the program `units`, which is not installed here (Debian package: units)');
 }
 
 step('lint', () => node(bin('@biomejs/biome/bin/biome'), 'check', '.'));
 step('rooms', () => node('test/rooms.mjs'));
 step('types', () => node(bin('typescript/bin/tsc'), '--noEmit'));
-step('tests in Node', () => tests('node'));
+step('tests in Node', () => tests('node', exclude));
 step('build', build);
 step('tests in a browser', () => tests('browser'));
 

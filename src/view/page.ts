@@ -13,6 +13,7 @@ import { fitAll } from './fit.ts';
 import { commandOf, keyList } from './keys.ts';
 import { mark } from './mark.ts';
 import { typesetAll } from './math.ts';
+import { type Opening, openingNote, readFile } from './opening.ts';
 import { outline } from './outline.ts';
 import type { PaperElement } from './paper.ts';
 import { preparePrint } from './print.ts';
@@ -27,6 +28,7 @@ export class PageElementRoot extends PageElement {
     version: { state: true },
     printing: { state: true },
     section: { state: true },
+    opening: { state: true },
     narrow: { state: true },
   };
   declare desk: Desk | undefined;
@@ -34,6 +36,8 @@ export class PageElementRoot extends PageElement {
   declare printing: boolean;
   declare section: string | null;
   declare narrow: boolean;
+  /** A file that was refused, or waits until changes of the sheet on the desk are dealt with. */
+  declare opening: Opening | null;
   #trail: string[] = [];
   #drawing = false;
   #leave: (() => void) | undefined;
@@ -45,6 +49,7 @@ export class PageElementRoot extends PageElement {
     this.version = 0;
     this.printing = false;
     this.section = null;
+    this.opening = null;
     this.narrow = this.#width.matches;
   }
 
@@ -93,7 +98,7 @@ export class PageElementRoot extends PageElement {
             ? html`<details class="outline"><summary>Sections and criteria</summary>${outline(model, this.section, goTo)}</details>`
             : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}${keys()}</aside>`
         }
-        <main id="paper"><ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}></ts-paper></main>
+        <main id="paper">${this.opening === null ? nothing : openingNote(this.opening, { open: this.#openAnyway, dismiss: this.#dismiss })}<ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}></ts-paper></main>
         <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${beside}</aside>
       </div>
       <p class="unseen" role="status">${desk.announcement}</p>`;
@@ -138,6 +143,8 @@ export class PageElementRoot extends PageElement {
       <div class="tools" role="group" aria-label="Sheet">
         <button type="button" ?disabled=${desk.undoLabel === null} title=${desk.undoLabel === null ? nothing : `Undo: ${desk.undoLabel}`} @click=${() => desk.undo()}>Undo</button>
         <button type="button" ?disabled=${desk.redoLabel === null} title=${desk.redoLabel === null ? nothing : `Redo: ${desk.redoLabel}`} @click=${() => desk.redo()}>Redo</button>
+        <button type="button" title="Open a sheet file" @click=${() => this.querySelector<HTMLInputElement>('#sheet-file')?.click()}>Open</button>
+        <input id="sheet-file" type="file" accept=".json,application/json" hidden @change=${this.#open} />
         <button type="button" title="Save the sheet as a file" @click=${this.#save}>Save</button>
         <button type="button" @click=${() => print()}>Print</button>
       </div>
@@ -228,6 +235,31 @@ export class PageElementRoot extends PageElement {
     event.preventDefault();
     if (command === 'undo') this.desk?.undo();
     else this.desk?.redo();
+  };
+
+  #open = async (event: Event) => {
+    const field = event.target as HTMLInputElement;
+    const file = field.files?.[0];
+    if (file === undefined || this.desk === undefined) return;
+    this.desk.finish();
+    this.opening = await readFile(file);
+    field.value = '';
+    if (this.opening.sheet !== undefined && !this.desk.unsaved) this.#openAnyway();
+  };
+
+  #openAnyway = () => {
+    const { desk, opening } = this;
+    this.opening = null;
+    if (desk === undefined || opening?.sheet === undefined) return;
+    desk.open(opening.sheet);
+    this.#trail = [];
+    this.#watch?.disconnect();
+    this.#watch = undefined;
+    scrollTo(0, 0);
+  };
+
+  #dismiss = () => {
+    this.opening = null;
   };
 
   #save = () => {

@@ -1,9 +1,11 @@
 // The page in a real browser: the example as the ruled sheet, a given changed in place, what follows from it, and the way back.
 // What the page prints is compared with the record computed here in Node from the same sheet.
 
+import { readFileSync } from 'node:fs';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import { calculate } from '../../src/sheet/index.ts';
+import { makeRecord } from '../../src/record/index.ts';
+import { calculate, readSheet } from '../../src/sheet/index.ts';
 import { connect, example, idOf, type Opened, open, recordWith, resultsOf, resultsOn } from './open.ts';
 
 let browser: Browser;
@@ -237,6 +239,58 @@ describe('origin and use', () => {
 });
 
 describe('the file', () => {
+  it('that is opened takes the place of the sheet; one that cannot be read changes nothing and says why', async () => {
+    const template = readFileSync(new URL('../../templates/capstan.sheet.json', import.meta.url), 'utf8');
+    const choose = (name: string, text: string) =>
+      page.locator('#sheet-file').setInputFiles({ name, mimeType: 'application/json', buffer: Buffer.from(text) });
+    await choose('damaged.sheet.json', template.slice(0, 200));
+    await expect.poll(() => page.locator('.opening').textContent()).toContain('damaged.sheet.json was not opened');
+    expect(await page.locator('h1').textContent()).toBe(example.title);
+    await choose('newer.sheet.json', template.replace('tightside-sheet/1', 'tightside-sheet/99'));
+    await expect.poll(() => page.locator('.opening').textContent()).toContain('99');
+    await edit('F_0', '1400 N');
+    await page.keyboard.press('Enter');
+    await choose('capstan.sheet.json', template);
+    await expect.poll(() => page.locator('.opening').textContent()).toContain('changes that are in no file');
+    await page.getByRole('button', { name: 'give the changes up' }).click();
+    const read = readSheet(template);
+    if (!read.ok) throw new Error('the template cannot be read');
+    await expect.poll(() => page.locator('h1').textContent()).toBe(read.value.title);
+    const record = makeRecord(calculate(read.value));
+    await expect.poll(() => page.locator('ts-row.step').count()).toBe(record.steps.length);
+    const printed = await resultsOn(page);
+    for (const step of record.steps.filter((one) => one.kind === 'derived')) {
+      expect(printed[step.cell]).toEqual(step.cases.map((each) => each.result ?? 'no value'));
+    }
+  });
+
+  it('with markup in its texts shows them as texts', async () => {
+    const hostile = '<img src=x onerror="document.title=1"><script>document.title=2</script>';
+    const sheet = {
+      format: 'tightside-sheet/1',
+      title: hostile,
+      purpose: `**${hostile}** [R1] javascript:alert(1)`,
+      titleBlock: { organisation: hostile, documentNumber: '"; } body { display: none } "' },
+      references: [{ id: 'R1', document: hostile }],
+      cells: [
+        { id: 'n1', kind: 'note', text: `${hostile} [a](javascript:alert(1)) {a}` },
+        { id: 'g1', kind: 'given', name: 'a', title: hostile, value: '2 m', source: hostile },
+        { id: 't1', kind: 'table', name: 't', title: hostile, columns: [{ name: 'key', title: hostile }], rows: [[hostile]] },
+        { id: 'f1', kind: 'figure', title: hostile, image: 'data:image/png;base64,AAAA' },
+        { id: 'd1', kind: 'derived', name: 'b', title: '$\\href{javascript:alert(1)}{x}$', formula: 'a*2' },
+      ],
+    };
+    await page
+      .locator('#sheet-file')
+      .setInputFiles({ name: 'hostile.sheet.json', mimeType: 'application/json', buffer: Buffer.from(JSON.stringify(sheet)) });
+    await expect.poll(() => page.locator('h1').textContent()).toBe(hostile);
+    expect(await page.locator('.paper script, .paper img[src="x"], .paper a[href^="javascript"]').count()).toBe(0);
+    expect(await page.title()).toContain('<img');
+    expect(await page.locator('ts-row.step').count()).toBe(2);
+    expect(await page.evaluate(() => getComputedStyle(document.body).display)).toBe('block');
+    expect(await resultsOn(page)).toMatchObject({ d1: ['4.000 m'] });
+  });
+
   it('that is saved holds the sheet as it stands', async () => {
     await edit('F_0', '1400 N');
     await page.keyboard.press('Enter');
