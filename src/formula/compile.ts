@@ -7,7 +7,7 @@
 // 5. A sum, product, difference or quotient of which one side is another of them becomes one instruction for both.
 // Not here: what the instructions do (opcode.ts, kernels.ts), lazy evaluation (explain.ts).
 
-import { apply, constantOf, isE, power, powerForm, type PowerForm } from './arithmetic.ts';
+import { apply, constantOf, isE, type PowerForm, power, powerForm } from './arithmetic.ts';
 import type { BinaryOperator, Expr } from './expr.ts';
 import { readLiteral } from './literal.ts';
 import { compareOp, functionOp, innerFirst, innerLast, op } from './opcode.ts';
@@ -21,6 +21,8 @@ export interface Names {
   /** True for a given whose value is a text. */
   isText(name: string): boolean;
   table(name: string): TableData | undefined;
+  /** The value of a quantity that is the same in all entries: it is compiled in as a literal would be. */
+  constant?(name: string): number | undefined;
   /** How numerals in quoted quantities are written; '.' where absent. */
   readonly decimalSign?: '.' | ',';
 }
@@ -35,7 +37,12 @@ const stacked = (k: number): Operand => -2 - 2 * k;
 type Place = number | 'kept' | 'stack';
 
 const powerOp: { readonly [form in Exclude<PowerForm, 'self' | 'general'>]: number } = {
-  square: op.square, cube: op.cube, fourth: op.fourth, inverse: op.inverse, 'inverse square': op.inverseSquare, root: op.sqrt,
+  square: op.square,
+  cube: op.cube,
+  fourth: op.fourth,
+  inverse: op.inverse,
+  'inverse square': op.inverseSquare,
+  root: op.sqrt,
 };
 
 export class ProgramBuilder {
@@ -169,8 +176,11 @@ export class ProgramBuilder {
         if (!read.ok) throw new Error(`a formula with an unreadable literal was compiled: ${read.problem.message}`);
         return this.#moved(this.#constant(read.value.si), place);
       }
-      case 'name':
-        return this.#moved(names.slot(expr.name), place);
+      case 'name': {
+        const constant = names.constant?.(expr.name);
+        const known = constant !== undefined && Number.isFinite(constant);
+        return this.#moved(known ? this.#constant(constant) : names.slot(expr.name), place);
+      }
       case 'parens':
         return this.#compute(expr.inner, names, place);
       case 'minus':
@@ -346,7 +356,8 @@ export class ProgramBuilder {
     if (known !== undefined) return known;
     const keyColumn = table.columns[0];
     const column = columnOf(table, expr.column);
-    if (keyColumn === undefined || column === undefined) throw new Error(`a formula with an unknown column was compiled: ${expr.column}`);
+    if (keyColumn === undefined || column === undefined)
+      throw new Error(`a formula with an unknown column was compiled: ${expr.column}`);
     const values = column.numbers ?? Float64Array.from(column.texts, (text) => this.textNumber(text));
     const number = this.#tables.length;
     if (keyColumn.numbers === undefined) {
@@ -369,7 +380,10 @@ export class ProgramBuilder {
 
 const basicOp: { readonly [operator in Basic]: number } = { '+': op.add, '-': op.subtract, '*': op.multiply, '/': op.divide };
 const rightConstantOp: { readonly [operator in Basic]: number } = {
-  '+': op.addK, '-': op.subtractK, '*': op.multiplyK, '/': op.divideK,
+  '+': op.addK,
+  '-': op.subtractK,
+  '*': op.multiplyK,
+  '/': op.divideK,
 };
 
 function apply2(operator: Basic, x: number, y: number): number {
@@ -422,8 +436,12 @@ export function compileFormulas(
     slot: (name) => builder.slotOf(name),
     isText: (name) => names.isText(name),
     table: (name) => names.table(name),
+    ...(names.constant && { constant: (name: string) => names.constant?.(name) }),
     ...(names.decimalSign && { decimalSign: names.decimalSign }),
   };
-  const ranges = builder.addAll(formulas.map(({ key, expr }) => ({ expr, dest: builder.slotOf(key) })), all);
+  const ranges = builder.addAll(
+    formulas.map(({ key, expr }) => ({ expr, dest: builder.slotOf(key) })),
+    all,
+  );
   return { program: builder.build(), ranges, slot: (key) => builder.slotOf(key), textNumber: (text) => builder.textNumber(text) };
 }

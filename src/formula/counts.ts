@@ -7,7 +7,18 @@
 // Not here: which operands must be alike (infer.ts), sentences (messages.ts).
 
 import {
-  addR, equalD, equalR, isZeroR, mulR, type Dimension, type Rational, rational, subR, type Unit, divideD, dimensionless,
+  addR,
+  type Dimension,
+  dimensionless,
+  divideD,
+  equalD,
+  equalR,
+  isZeroR,
+  mulR,
+  type Rational,
+  rational,
+  subR,
+  type Unit,
 } from '../quantity/index.ts';
 import type { FormulaCounts } from './type.ts';
 

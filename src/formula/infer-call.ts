@@ -4,7 +4,7 @@
 // 2. floor, ceil and round take bare numbers only: of anything else the result would depend on the unit.
 // Not here: arity (the walk of the reader has checked it), numbers (explain.ts, run.ts).
 
-import { either, equalD, isAngleUnit, isDimensionless, readUnit, rational } from '../quantity/index.ts';
+import { either, equalD, isAngleUnit, isDimensionless, rational, readUnit } from '../quantity/index.ts';
 import { angleCounts, fitsAngle } from './counts.ts';
 import type { Expr } from './expr.ts';
 import { alike, type Part, powerByRational, quantity, quantityOf, refuseReading, refuseRevolutions } from './infer-rules.ts';
@@ -33,7 +33,8 @@ export function callOf(ctx: Context, call: Call, args: readonly Part[]): Term | 
     case 'hypot':
     case 'atan2': {
       for (const { expr, term } of args) {
-        if (term?.type.kind === 'quantity' && term.type.temperature === 'reading') return refuseReading(ctx, expr, term.type, call.name);
+        if (term?.type.kind === 'quantity' && term.type.temperature === 'reading')
+          return refuseReading(ctx, expr, term.type, call.name);
       }
       const met = alike(ctx, call.name, args, call.at);
       if (met === undefined || call.name === 'atan2') return met && angle;
@@ -114,11 +115,22 @@ export function lookUp(ctx: Context, expr: Lookup, key: Part | undefined): Term 
   const keys = table.columns[0];
   const column = table.columns.find((each) => each.name === expr.column);
   if (column === undefined || keys === undefined) {
-    return unknown(ctx, expr, 'column', expr.column, table.columns.map((each) => each.name));
+    return unknown(
+      ctx,
+      expr,
+      'column',
+      expr.column,
+      table.columns.map((each) => each.name),
+    );
   }
   const fits = keys.type === undefined ? fitsTextKey(ctx, expr, table, keys, key) : fitsNumericKey(ctx, expr, keys, key);
   if (expr.name === 'interpolate' && column.type === undefined) {
-    return report(ctx, 'text-use', `interpolate needs numbers, the column ${table.name}.${column.name} holds texts; use entry`, expr.at);
+    return report(
+      ctx,
+      'text-use',
+      `interpolate needs numbers, the column ${table.name}.${column.name} holds texts; use entry`,
+      expr.at,
+    );
   }
   if (!fits) return undefined;
   return { type: column.type ?? { kind: 'text', table: table.name, column: column.name } };
@@ -129,7 +141,8 @@ function unknown(ctx: Context, expr: Lookup, what: 'table' | 'column', name: str
   const nearest = nearestNames(name, all);
   const known = all.slice(0, 6).join(', ');
   const where = what === 'column' ? `the table ${expr.table} has no column ${name}` : `there is no table ${name}`;
-  const then = nearest.length > 0 ? `did you mean ${either(nearest)}` : known === '' ? 'the sheet has no tables yet' : `there are ${known}`;
+  const then =
+    nearest.length > 0 ? `did you mean ${either(nearest)}` : known === '' ? 'the sheet has no tables yet' : `there are ${known}`;
   const at = wordAt(ctx, expr, what);
   const fixes = nearest.map((text) => ({ from: at[0], to: at[1], text, label: `write ${text}` }));
   return report(ctx, `unknown-${what}`, `${where}; ${then}`, at, at === expr.at ? [] : fixes);
@@ -147,13 +160,23 @@ function wordAt(ctx: Context, expr: Lookup, what: 'table' | 'column'): readonly 
 
 function fitsTextKey(ctx: Context, expr: Lookup, table: TableType | TableData, keys: ColumnType, key: Part | undefined): boolean {
   if (expr.name === 'interpolate') {
-    report(ctx, 'text-use', `interpolate needs numeric keys, the first column ${table.name}.${keys.name} holds texts; use entry`, expr.at);
+    report(
+      ctx,
+      'text-use',
+      `interpolate needs numeric keys, the first column ${table.name}.${keys.name} holds texts; use entry`,
+      expr.at,
+    );
     return false;
   }
   if (key !== undefined) {
     if (key.term === undefined) return false;
     if (key.term.type.kind === 'text') return true;
-    report(ctx, 'text-use', `the rows of ${table.name} are found by text, ${writeExpr(key.expr)} is ${describe(key.term.type)}; give a choice or a text in quotes`, key.expr.at);
+    report(
+      ctx,
+      'text-use',
+      `the rows of ${table.name} are found by text, ${writeExpr(key.expr)} is ${describe(key.term.type)}; give a choice or a text in quotes`,
+      key.expr.at,
+    );
     return false;
   }
   const texts = textsOf(table, keys.name);
@@ -161,7 +184,13 @@ function fitsTextKey(ctx: Context, expr: Lookup, table: TableType | TableData, k
   if (texts === undefined || quoted.kind !== 'quoted' || texts.includes(quoted.text)) return true;
   const near = nearestText(quoted.text, texts);
   const nearest = near === undefined ? [] : [near];
-  const then = near !== undefined ? `did you mean "${near}"` : `its rows are ${texts.slice(0, 5).map((text) => `"${text}"`).join(', ')}`;
+  const then =
+    near !== undefined
+      ? `did you mean "${near}"`
+      : `its rows are ${texts
+          .slice(0, 5)
+          .map((text) => `"${text}"`)
+          .join(', ')}`;
   const fixes = nearest.map((text) => ({ from: quoted.at[0], to: quoted.at[1], text: `"${text}"`, label: `write "${text}"` }));
   report(ctx, 'unknown-text', `the table ${table.name} has no row "${quoted.text}"; ${then}`, quoted.at, fixes);
   return false;
@@ -174,7 +203,12 @@ function fitsNumericKey(ctx: Context, expr: Lookup, keys: ColumnType, key: Part 
   const type = quantityOf(ctx, key, `the key of ${expr.table}`);
   if (type === undefined) return false;
   if (!type.zero && !equalD(type.dimension, keys.type.dimension)) {
-    report(ctx, 'unlike-key', `the rows of ${expr.table} are found by ${describe(keys.type)}, ${writeExpr(key.expr)} is ${describe(type)}; give a key of that kind`, key.expr.at);
+    report(
+      ctx,
+      'unlike-key',
+      `the rows of ${expr.table} are found by ${describe(keys.type)}, ${writeExpr(key.expr)} is ${describe(type)}; give a key of that kind`,
+      key.expr.at,
+    );
     return false;
   }
   const column: Part = { expr: { kind: 'name', name: keys.name, at: expr.at }, term: { type: keys.type } };

@@ -54,7 +54,11 @@ export function infer(ctx: Context, expr: Expr): Term | undefined {
       return alike(ctx, '?:', [then, otherwise], expr.at);
     }
     case 'call':
-      return callOf(ctx, expr, expr.args.map((argument) => part(ctx, argument)));
+      return callOf(
+        ctx,
+        expr,
+        expr.args.map((argument) => part(ctx, argument)),
+      );
     case 'table': {
       const text = textKey(ctx, expr);
       const key = text && textLiteral(expr.key) ? undefined : part(ctx, expr.key);
@@ -92,7 +96,12 @@ function literal(ctx: Context, expr: Extract<Expr, { kind: 'quoted' }>): Term | 
     return report(ctx, read.problem.code, `"${expr.text}" is no quantity: ${read.problem.message}`, at, fixes);
   }
   if (read.value.tolerance !== undefined) {
-    return report(ctx, 'literal-tolerance', `"${expr.text}" has a tolerance, which a formula cannot carry; make it a given`, expr.at);
+    return report(
+      ctx,
+      'literal-tolerance',
+      `"${expr.text}" has a tolerance, which a formula cannot carry; make it a given`,
+      expr.at,
+    );
   }
   return { type: typeOfUnit(read.value.unit) };
 }
@@ -163,17 +172,30 @@ function compare(ctx: Context, expr: Extract<Expr, { kind: 'compare' }>): Term |
   }
   const order = expr.operators.find((operator) => operator !== '==' && operator !== '!=');
   if (order !== undefined) {
-    return report(ctx, 'text-use', `${writeExpr(text.expr)} is a text, and texts have no order: ${order} does not apply; use == or !=`, expr.at);
+    return report(
+      ctx,
+      'text-use',
+      `${writeExpr(text.expr)} is a text, and texts have no order: ${order} does not apply; use == or !=`,
+      expr.at,
+    );
   }
   for (const [index, side] of expr.sides.entries()) {
     const other = others[index];
     const quoted = textLiteral(side);
     if (quoted) checkText(ctx, quoted, text);
     else if (other?.term && other.term.type.kind !== 'text') {
-      return report(ctx, 'text-use', `cannot compare a text with a quantity: ${writeExpr(text.expr)} is a text, ${writeExpr(side)} is not; put the text in quotes`, side.at);
+      return report(
+        ctx,
+        'text-use',
+        `cannot compare a text with a quantity: ${writeExpr(text.expr)} is a text, ${writeExpr(side)} is not; put the text in quotes`,
+        side.at,
+      );
     }
   }
-  return ctx.problems.length === before && others.every((side, index) => side?.term !== undefined || textLiteral(expr.sides[index]!)) ? truthTerm : undefined;
+  return ctx.problems.length === before &&
+    others.every((side, index) => side?.term !== undefined || textLiteral(expr.sides[index]!))
+    ? truthTerm
+    : undefined;
 }
 
 /** A text compared with a choice must be one of the texts of its column. */
@@ -185,7 +207,19 @@ function checkText(ctx: Context, quoted: Extract<Expr, { kind: 'quoted' }>, besi
   if (texts === undefined || texts.includes(quoted.text)) return;
   const near = nearestText(quoted.text, texts);
   const nearest = near === undefined ? [] : [near];
-  const offered = near !== undefined ? `did you mean "${near}"` : `its texts are ${[...new Set(texts)].slice(0, 5).map((text) => `"${text}"`).join(', ')}`;
+  const offered =
+    near !== undefined
+      ? `did you mean "${near}"`
+      : `its texts are ${[...new Set(texts)]
+          .slice(0, 5)
+          .map((text) => `"${text}"`)
+          .join(', ')}`;
   const fixes = nearest.map((text) => ({ from: quoted.at[0], to: quoted.at[1], text: `"${text}"`, label: `write "${text}"` }));
-  report(ctx, 'unknown-text', `"${quoted.text}" is no text of ${type.table}.${type.column}, so ${writeExpr(beside.expr)} can never equal it; ${offered}`, quoted.at, fixes);
+  report(
+    ctx,
+    'unknown-text',
+    `"${quoted.text}" is no text of ${type.table}.${type.column}, so ${writeExpr(beside.expr)} can never equal it; ${offered}`,
+    quoted.at,
+    fixes,
+  );
 }

@@ -5,19 +5,37 @@
 // Not here: the walk (infer-node.ts), functions (infer-call.ts), the declared unit (infer-target.ts).
 
 import {
-  dimensionless, equalD, type Fix, isDimensionless, isZeroR, kindName, multiplyD, powerD, divideD, type Rational,
+  dimensionless,
+  divideD,
+  equalD,
+  type Fix,
+  isDimensionless,
+  isZeroR,
+  kindName,
+  multiplyD,
+  powerD,
+  type Rational,
 } from '../quantity/index.ts';
 import { divideCounts, fitsAngle, multiplyCounts, noCounts, powerCounts } from './counts.ts';
 import type { Expr, Span } from './expr.ts';
 import {
-  conversionNumber, exponentMustBeConstant, exponentNeedsNumber, exponentTooLarge, notAQuantity, revolutionsApart, revolutionsInside,
-  temperatureFault, unlikeOperands, unlikeSum, type Side,
+  conversionNumber,
+  exponentMustBeConstant,
+  exponentNeedsNumber,
+  exponentTooLarge,
+  notAQuantity,
+  revolutionsApart,
+  revolutionsInside,
+  type Side,
+  temperatureFault,
+  unlikeOperands,
+  unlikeSum,
 } from './messages.ts';
 import { proposeForRevolutions, proposeForTemperature, proposeWithoutLiteral } from './offers.ts';
 import { rationalOf } from './rational-exponent.ts';
+import { report } from './report.ts';
 import { isTemperatureKind, likeTemperatures, sumOfTemperatures } from './temperature.ts';
 import { type Context, countsOfShared, isPlainNumber, meet, number, type QuantityType, sharedOf, type Term } from './term.ts';
-import { report } from './report.ts';
 import { describe, unitOfType } from './wording.ts';
 
 export interface Part {
@@ -41,27 +59,51 @@ export function sumOf(ctx: Context, operator: '+' | '-', left: Part, right: Part
   const a = quantityOf(ctx, left, place);
   const b = quantityOf(ctx, right, place);
   if (a === undefined || b === undefined) return undefined;
-  const sides: readonly [Side, Side] = [{ expr: left.expr, type: a }, { expr: right.expr, type: b }];
+  const sides: readonly [Side, Side] = [
+    { expr: left.expr, type: a },
+    { expr: right.expr, type: b },
+  ];
   const temperature = sumOfTemperatures(operator, operandOf(a), operandOf(b));
   if (!a.zero && !b.zero && !equalD(a.dimension, b.dimension)) {
     const bare = bareNumber(sides);
     return report(ctx, 'unlike-sum', unlikeSum(operator, ...sides, bare?.message), at, bare?.fixes);
   }
   if (!isTemperatureKind(temperature)) {
-    return report(ctx, 'temperature', temperatureFault(temperature, sides, place), at, proposeForTemperature(ctx, temperature, sides, at));
+    return report(
+      ctx,
+      'temperature',
+      temperatureFault(temperature, sides, place),
+      at,
+      proposeForTemperature(ctx, temperature, sides, at),
+    );
   }
   if (a.zero) return right.term;
   if (b.zero) return left.term;
   const shared = meet([sharedOf(left.term!), sharedOf(right.term!)]);
   if (shared === undefined) {
-    const found = proposeForRevolutions(ctx, sides.map((side) => side.expr));
+    const found = proposeForRevolutions(
+      ctx,
+      sides.map((side) => side.expr),
+    );
     return report(ctx, 'revolutions', `${revolutionsApart('sum', ...sides)}${found.sentence}`, at, found.fixes);
   }
   const plain = left.term!.plain === true && right.term!.plain === true;
   if (plain && isTorqueBesideEnergy(a, b)) {
-    report(ctx, 'torque-energy', `${unlikeKinds(a, b)}; the dimensions agree, the kinds do not: check the formula`, at, [], 'warning');
+    report(
+      ctx,
+      'torque-energy',
+      `${unlikeKinds(a, b)}; the dimensions agree, the kinds do not: check the formula`,
+      at,
+      [],
+      'warning',
+    );
   }
-  const unitText = temperature === 'reading' ? (a.temperature === 'reading' ? a : b).unitText : temperature === 'difference' ? undefined : commonUnitText(a, b);
+  const unitText =
+    temperature === 'reading'
+      ? (a.temperature === 'reading' ? a : b).unitText
+      : temperature === 'difference'
+        ? undefined
+        : commonUnitText(a, b);
   return { type: quantity(a.dimension, countsOfShared(shared), temperature, unitText), shared, plain };
 }
 
@@ -110,14 +152,24 @@ export function alike(ctx: Context, where: string, parts: readonly Part[], at: S
   }
   const temperature = likeTemperatures(sides.map((side) => operandOf(side.type)));
   if (!isTemperatureKind(temperature)) {
-    return report(ctx, 'temperature', temperatureFault(temperature, sides, where), at, proposeForTemperature(ctx, temperature, sides, at));
+    return report(
+      ctx,
+      'temperature',
+      temperatureFault(temperature, sides, where),
+      at,
+      proposeForTemperature(ctx, temperature, sides, at),
+    );
   }
   if (first === undefined) return parts[0]!.term;
   const terms = parts.flatMap((part) => (part.term && !(part.term.type as QuantityType).zero ? [part.term] : []));
   const shared = meet(terms.map(sharedOf));
   if (shared === undefined) {
-    const other = solid.find((_, index) => index > 0 && meet([sharedOf(terms[0]!), sharedOf(terms[index]!)]) === undefined) ?? solid[1]!;
-    const found = proposeForRevolutions(ctx, sides.map((side) => side.expr));
+    const other =
+      solid.find((_, index) => index > 0 && meet([sharedOf(terms[0]!), sharedOf(terms[index]!)]) === undefined) ?? solid[1]!;
+    const found = proposeForRevolutions(
+      ctx,
+      sides.map((side) => side.expr),
+    );
     return report(ctx, 'revolutions', `${revolutionsApart(where, first, other)}${found.sentence}`, at, found.fixes);
   }
   const unitText = solid.every((side) => commonUnitText(first.type, side.type) !== undefined) ? first.type.unitText : undefined;
@@ -170,7 +222,8 @@ export function productOf(ctx: Context, factors: readonly Factor[], at: Span): T
   for (const [index, type] of types.entries()) {
     if (type === undefined) return undefined;
     const inverse = factors[index]!.inverse;
-    if (type.dimension !== dimensionless) dimension = inverse ? divideD(dimension, type.dimension) : multiplyD(dimension, type.dimension);
+    if (type.dimension !== dimensionless)
+      dimension = inverse ? divideD(dimension, type.dimension) : multiplyD(dimension, type.dimension);
     counts = inverse ? divideCounts(counts, type.counts) : multiplyCounts(counts, type.counts);
     if (!isBounded(dimension)) return report(ctx, 'exponent-range', exponentTooLarge(factors[index]!.expr), at);
     if (isPlainNumber(type) && type.unitText === undefined) continue;
@@ -215,7 +268,12 @@ export function powerByRational(ctx: Context, base: Part, type: QuantityType, ex
 }
 
 export function refuseReading(ctx: Context, expr: Expr, type: QuantityType, operation: string): undefined {
-  return report(ctx, 'temperature', temperatureFault('a temperature reading cannot be used here', [{ expr, type }], operation), expr.at);
+  return report(
+    ctx,
+    'temperature',
+    temperatureFault('a temperature reading cannot be used here', [{ expr, type }], operation),
+    expr.at,
+  );
 }
 
 export function refuseRevolutions(ctx: Context, inside: string, expr: Expr, type: QuantityType, whole = false): undefined {

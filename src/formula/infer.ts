@@ -41,7 +41,7 @@ export function inferFormula(formula: Formula, scope: Scope, target?: Unit): Inf
 function inferred(formula: Formula, scope: Scope, target: Unit | undefined, propose: boolean): Inferred {
   const ctx = contextOf(formula, scope, target, propose);
   const term = infer(ctx, formula.expr);
-  const value = term && valueOf(ctx, formula, term);
+  const value = term && asValue(ctx, formula, term);
   const fits = value !== undefined && (target === undefined || checkTarget(ctx, formula.expr, value, target));
   checkNumbers(ctx, formula.expr);
   const failedNames = formula.names.filter((name) => ctx.failed.has(name));
@@ -52,12 +52,22 @@ function inferred(formula: Formula, scope: Scope, target: Unit | undefined, prop
 }
 
 /** A derived quantity has a value: neither a text nor a truth value. */
-function valueOf(ctx: Context, formula: Formula, term: Term): Term | undefined {
+function asValue(ctx: Context, formula: Formula, term: Term): Term | undefined {
   if (term.type.kind === 'quantity') return term;
   const what = writeExpr(formula.expr);
   return term.type.kind === 'truth'
-    ? report(ctx, 'truth-use', `${what} is true or false, a quantity needs a value; write ${what} ? 1 : 0, or make it a criterion`, undefined)
-    : report(ctx, 'text-use', `${what} is a text, a quantity needs a value; look one up with entry, or compare the text with ==`, undefined);
+    ? report(
+        ctx,
+        'truth-use',
+        `${what} is true or false, a quantity needs a value; write ${what} ? 1 : 0, or make it a criterion`,
+        undefined,
+      )
+    : report(
+        ctx,
+        'text-use',
+        `${what} is a text, a quantity needs a value; look one up with entry, or compare the text with ==`,
+        undefined,
+      );
 }
 
 function contextOf(formula: Formula, scope: Scope, target: Unit | undefined, propose: boolean): Context {
@@ -76,7 +86,10 @@ function contextOf(formula: Formula, scope: Scope, target: Unit | undefined, pro
   };
 }
 
-const holds = (tried: Inferred): boolean => !tried.problems.some((problem) => problem.severity === 'error' && (problem.code === 'revolutions' || problem.code === 'conversion-number'));
+const holds = (tried: Inferred): boolean =>
+  !tried.problems.some(
+    (problem) => problem.severity === 'error' && (problem.code === 'revolutions' || problem.code === 'conversion-number'),
+  );
 
 /**
  * Both sides of a criterion, or of the equation of a sought cell: one kind of quantity, one count of revolutions.
@@ -88,7 +101,7 @@ export function inferComparison(left: Formula, right: Formula, scope: Scope, tar
     const ctx = contexts[index]!;
     const term = infer(ctx, formula.expr);
     checkNumbers(ctx, formula.expr);
-    return { expr: formula.expr, term: term && valueOf(ctx, formula, term) };
+    return { expr: formula.expr, term: term && asValue(ctx, formula, term) };
   });
   const both = contextOf({ ...left, text: '' }, scope, undefined, false);
   const known = parts.every((part) => part.term !== undefined);

@@ -15,15 +15,27 @@ import { op, operationCount } from './opcode.ts';
 import type { ProgramTable } from './program.ts';
 import { interpolateAt, rowOfNumber } from './table.ts';
 
-export type Kernel = (m: Float64Array, d: number, a: number, b: number, c: number, n: number, tables: readonly ProgramTable[]) => void;
+export type Kernel = (
+  m: Float64Array,
+  d: number,
+  a: number,
+  b: number,
+  c: number,
+  n: number,
+  tables: readonly ProgramTable[],
+) => void;
 
 /** Only for operations that are slow or rare: an entry costs a call. */
-const one = (f: (x: number) => number): Kernel => (m, d, a, _b, _c, n) => {
-  for (let i = 0; i < n; i++) m[d + i] = f(m[a + i]!);
-};
-const two = (f: (x: number, y: number) => number): Kernel => (m, d, a, b, _c, n) => {
-  for (let i = 0; i < n; i++) m[d + i] = f(m[a + i]!, m[b + i]!);
-};
+const one =
+  (f: (x: number) => number): Kernel =>
+  (m, d, a, _b, _c, n) => {
+    for (let i = 0; i < n; i++) m[d + i] = f(m[a + i]!);
+  };
+const two =
+  (f: (x: number, y: number) => number): Kernel =>
+  (m, d, a, b, _c, n) => {
+    for (let i = 0; i < n; i++) m[d + i] = f(m[a + i]!, m[b + i]!);
+  };
 
 const list: Kernel[] = new Array(operationCount);
 for (const [operation, kernel] of fusedKernels) list[operation] = kernel;

@@ -4,10 +4,22 @@
 // 2. What is to be typed stands in the syntax of formulas; what is shown is in the notation of print (writeExpr).
 // Not here: when a problem arises (infer*.ts), proposals that need proof (offers.ts).
 
-import { coherentUnit, divideD, type Dimension, type Unit, isZeroR, kindName, readUnit, signR, textR, withArticle, forceHint } from '../quantity/index.ts';
+import {
+  coherentUnit,
+  type Dimension,
+  divideD,
+  forceHint,
+  isZeroR,
+  kindName,
+  readUnit,
+  signR,
+  textR,
+  type Unit,
+  withArticle,
+} from '../quantity/index.ts';
 import type { Expr } from './expr.ts';
-import type { QuantityType } from './term.ts';
 import type { TemperatureFault } from './temperature.ts';
+import type { QuantityType } from './term.ts';
 import type { FormulaCounts, Type } from './type.ts';
 import { describe, kindOf, printUnit, unitOfType, writeExpr } from './wording.ts';
 
@@ -28,9 +40,11 @@ export function unlikeSum(operator: '+' | '-', left: Side, right: Side, bare?: s
 
 export function unlikeOperands(where: string, left: Side, right: Side, bare?: string): string {
   const what =
-    where === 'comparison' ? `cannot compare ${describe(left.type)} with ${describe(right.type)}: ${writeExpr(left.expr)} with ${writeExpr(right.expr)}`
-    : where === '?:' ? `the branches of ?: must be alike: ${shown(left)}, ${shown(right)}`
-    : `${where} needs quantities of one kind: ${shown(left)}, ${shown(right)}`;
+    where === 'comparison'
+      ? `cannot compare ${describe(left.type)} with ${describe(right.type)}: ${writeExpr(left.expr)} with ${writeExpr(right.expr)}`
+      : where === '?:'
+        ? `the branches of ?: must be alike: ${shown(left)}, ${shown(right)}`
+        : `${where} needs quantities of one kind: ${shown(left)}, ${shown(right)}`;
   return `${what}; ${bare ?? differBy(left.type.dimension, right.type.dimension)}`;
 }
 
@@ -40,7 +54,9 @@ function differBy(left: Dimension, right: Dimension): string {
   const shorter = coherentUnit(inverse).text.length < coherentUnit(ratio).text.length ? inverse : ratio;
   const kind = kindName(shorter);
   const unit = coherentUnit(shorter).text;
-  return kind.endsWith(unit) ? `a factor in ${unit} is missing or too many` : `${withArticle(kind)} (${unit}) is missing on one side or too many on the other`;
+  return kind.endsWith(unit)
+    ? `a factor in ${unit} is missing or too many`
+    : `${withArticle(kind)} (${unit}) is missing on one side or too many on the other`;
 }
 
 export function unlikeTarget(type: QuantityType, target: Unit, targetType: QuantityType): string {
@@ -87,7 +103,10 @@ export function notATruth(type: Type, expr: Expr, place: string): string {
 /** 'counts revolutions (r)', 'counts 1/r', 'counts no revolutions'. */
 export function countWords(counts: FormulaCounts): string {
   if (isZeroR(counts.r)) return isZeroR(counts.hz) ? 'counts no revolutions' : 'counts cycles (Hz), which may be revolutions';
-  const exponent = counts.r.n === 1 && counts.r.d === 1 ? 'r' : `r^${signR(counts.r) < 0 || counts.r.d !== 1 ? `(${textR(counts.r)})` : textR(counts.r)}`;
+  const exponent =
+    counts.r.n === 1 && counts.r.d === 1
+      ? 'r'
+      : `r^${signR(counts.r) < 0 || counts.r.d !== 1 ? `(${textR(counts.r)})` : textR(counts.r)}`;
   return counts.r.n === -1 && counts.r.d === 1 ? 'counts per revolution (1/r)' : `counts revolutions (${exponent})`;
 }
 
@@ -100,9 +119,11 @@ export function revolutionsInside(name: string, expr: Expr, type: QuantityType):
 }
 
 export function revolutionsAgainst(target: Unit, type: QuantityType): string {
-  const gives = !isZeroR(type.counts.r) ? countWords(type.counts)
-    : !isZeroR(type.counts.rad) ? 'gives radians, not revolutions'
-    : 'counts no revolutions';
+  const gives = !isZeroR(type.counts.r)
+    ? countWords(type.counts)
+    : !isZeroR(type.counts.rad)
+      ? 'gives radians, not revolutions'
+      : 'counts no revolutions';
   return `revolutions against ${printUnit(target.text)}: the formula ${gives}`;
 }
 

@@ -3,6 +3,7 @@
 // 1. Passed without a word: whole numbers up to 12, 0.5, the divisors of section properties and beam deflections, all exponents.
 // 2. Everything else is a warning, once a literal.
 
+import { childrenOf } from './children.ts';
 import type { Expr } from './expr.ts';
 import { report } from './report.ts';
 import type { Context } from './term.ts';
@@ -16,33 +17,22 @@ export function checkNumbers(ctx: Context, expr: Expr): void {
     case 'number': {
       const small = Number.isInteger(expr.value) && expr.value <= largestSmall;
       if (small || usual.has(expr.value) || ctx.spoken.has(expr)) return;
-      report(ctx, 'number-without-source', `${expr.text} is a number without a source: make it a given, with its unit and where it comes from`, expr.at, [], 'warning');
+      report(
+        ctx,
+        'number-without-source',
+        `${expr.text} is a number without a source: make it a given, with its unit and where it comes from`,
+        expr.at,
+        [],
+        'warning',
+      );
       return;
     }
-    case 'parens':
-    case 'minus':
-    case 'not':
-      return checkNumbers(ctx, expr.inner);
     case 'binary':
       checkNumbers(ctx, expr.left);
-      if (expr.operator !== '^') checkNumbers(ctx, expr.right);
-      else if (!isLiteral(expr.right)) checkNumbers(ctx, expr.right);
+      if (expr.operator !== '^' || !isLiteral(expr.right)) checkNumbers(ctx, expr.right);
       return;
-    case 'logic':
-      checkNumbers(ctx, expr.left);
-      return checkNumbers(ctx, expr.right);
-    case 'compare':
-      for (const side of expr.sides) checkNumbers(ctx, side);
-      return;
-    case 'choose':
-      for (const branch of [expr.test, expr.then, expr.otherwise]) checkNumbers(ctx, branch);
-      return;
-    case 'call':
-      for (const argument of expr.args) checkNumbers(ctx, argument);
-      return;
-    case 'table':
-      return checkNumbers(ctx, expr.key);
     default:
+      for (const part of childrenOf(expr)) checkNumbers(ctx, part);
   }
 }
 

@@ -5,12 +5,13 @@
 // Not here: when a problem arises (infer-rules.ts, infer-target.ts).
 
 import { addR, type Fix, isDimensionless, isZeroR, negR, oneR, type Rational } from '../quantity/index.ts';
+import { childrenOf } from './children.ts';
 import type { Expr, Span } from './expr.ts';
 import type { Side } from './messages.ts';
+import { plainName } from './symbols.ts';
 import type { TemperatureFault } from './temperature.ts';
 import type { Context, QuantityType, Scope } from './term.ts';
 import type { Type } from './type.ts';
-import { plainName } from './symbols.ts';
 
 export interface Offer {
   /** '; write …, or …', ready to follow the first half of the sentence. */
@@ -23,7 +24,8 @@ const mostAlone = 6;
 
 const nothing: Offer = { sentence: '', fixes: [] };
 const general: Offer = {
-  sentence: '; multiply by 2*pi where an angle is meant, give the other factor a unit per revolution such as mm/r, or divide by "1 r"',
+  sentence:
+    '; multiply by 2*pi where an angle is meant, give the other factor a unit per revolution such as mm/r, or divide by "1 r"',
   fixes: [],
 };
 
@@ -52,10 +54,12 @@ export function proposeForRevolutions(ctx: Context, parts: readonly Expr[], whol
   if (unit) phrases.push(unit);
   if (isCountTarget(ctx, names)) phrases.push('declare the unit r');
   for (const part of parts.slice(0, mostAlone)) {
-    const found = (['/"1 r"', '*"1 r"'] as const).map((tail) => ({
-      tail,
-      edit: append(ctx.text, part, tail, tail.startsWith('/') ? 'divide by "1 r"' : 'multiply by "1 r"'),
-    })).find(({ edit }) => ctx.prove!(applied(ctx.text, [edit]), ctx.scope));
+    const found = (['/"1 r"', '*"1 r"'] as const)
+      .map((tail) => ({
+        tail,
+        edit: append(ctx.text, part, tail, tail.startsWith('/') ? 'divide by "1 r"' : 'multiply by "1 r"'),
+      }))
+      .find(({ edit }) => ctx.prove!(applied(ctx.text, [edit]), ctx.scope));
     if (found === undefined) continue;
     offer(found.edit.label, [found.edit]);
     break;
@@ -77,33 +81,14 @@ type Sought = { readonly places: Expr[]; readonly name: string };
 function namesIn(parts: readonly Expr[]): Sought[] {
   const found = new Map<string, Sought>();
   const visit = (expr: Expr): void => {
-    switch (expr.kind) {
-      case 'name': {
-        const known = found.get(expr.name) ?? { name: expr.name, places: [] };
-        known.places.push(expr);
-        found.set(expr.name, known);
-        return;
-      }
-      case 'parens':
-      case 'minus':
-      case 'not':
-        return visit(expr.inner);
-      case 'binary':
-      case 'logic':
-        visit(expr.left);
-        return visit(expr.right);
-      case 'compare':
-        return expr.sides.forEach(visit);
-      case 'choose':
-        return [expr.test, expr.then, expr.otherwise].forEach(visit);
-      case 'call':
-        return expr.args.forEach(visit);
-      case 'table':
-        return visit(expr.key);
-      default:
+    if (expr.kind === 'name') {
+      const known = found.get(expr.name) ?? { name: expr.name, places: [] };
+      known.places.push(expr);
+      found.set(expr.name, known);
     }
+    for (const part of childrenOf(expr)) visit(part);
   };
-  parts.forEach(visit);
+  for (const part of parts) visit(part);
   return [...found.values()];
 }
 
@@ -115,7 +100,10 @@ function typed(ctx: Context, names: readonly Sought[]): Named[] {
 }
 
 /** 2*pi at each counted name: one name alone where that is enough, otherwise all of them. */
-function turnNames(ctx: Context, names: readonly Sought[]): { readonly shown: string; readonly edits: readonly Fix[] } | undefined {
+function turnNames(
+  ctx: Context,
+  names: readonly Sought[],
+): { readonly shown: string; readonly edits: readonly Fix[] } | undefined {
   const counted = typed(ctx, names).filter(({ type }) => !isZeroR(type.counts.r) || !isZeroR(type.counts.hz));
   const sets = counted.length > 1 && counted.length <= mostAlone ? [...counted.map((one) => [one]), counted] : [counted];
   for (const set of sets) {
@@ -140,8 +128,12 @@ function turn(text: string, place: Expr): Fix {
 function append(text: string, part: Expr, tail: string, label: string): Fix {
   const [from, to] = part.at;
   const old = text.slice(from, to);
-  const loose = part.kind === 'choose' || part.kind === 'compare' || part.kind === 'logic' || part.kind === 'not'
-    || (part.kind === 'binary' && (part.operator === '+' || part.operator === '-'));
+  const loose =
+    part.kind === 'choose' ||
+    part.kind === 'compare' ||
+    part.kind === 'logic' ||
+    part.kind === 'not' ||
+    (part.kind === 'binary' && (part.operator === '+' || part.operator === '-'));
   const changed = loose ? `(${old})${tail}` : `${old}${tail}`;
   const inPower = text.slice(0, from).trimEnd().endsWith('^') || text.slice(to).trimStart().startsWith('^');
   return { from, to, text: inPower ? `(${changed})` : changed, label };
@@ -150,7 +142,8 @@ function append(text: string, part: Expr, tail: string, label: string): Fix {
 /** A unit of another quantity that would make the formula fit: per revolution, or counted. */
 function otherUnit(ctx: Context, names: readonly Sought[]): string | undefined {
   for (const { name, type } of typed(ctx, names).slice(0, mostAlone)) {
-    if (isDimensionless(type.dimension) || type.temperature !== 'none' || !isZeroR(type.counts.r) || !isZeroR(type.counts.hz)) continue;
+    if (isDimensionless(type.dimension) || type.temperature !== 'none' || !isZeroR(type.counts.r) || !isZeroR(type.counts.hz))
+      continue;
     const unit = type.unitText;
     if (unit === undefined || !isZeroR(type.counts.rad)) continue;
     if (!isTime(type) && ctx.prove!(ctx.text, recounted(ctx.scope, name, negR(oneR)))) {
@@ -171,7 +164,8 @@ function isPowerOfTime(type: QuantityType, power: 1 | -1): boolean {
 }
 
 function recounted(scope: Scope, name: string, by: Rational): Scope {
-  const changed = (type: Type): Type => (type.kind === 'quantity' ? { ...type, counts: { ...type.counts, r: addR(type.counts.r, by) } } : type);
+  const changed = (type: Type): Type =>
+    type.kind === 'quantity' ? { ...type, counts: { ...type.counts, r: addR(type.counts.r, by) } } : type;
   return {
     typeOf: (asked) => {
       const type = scope.typeOf(asked);
@@ -194,13 +188,20 @@ function perRevolution(unit: string): string {
 
 function isCountTarget(ctx: Context, names: readonly Sought[]): boolean {
   const target = ctx.target;
-  return target !== undefined && typed(ctx, names).every(({ type }) => isZeroR(type.counts.rad)) && isDimensionless(target.dimension) && isZeroR(target.counts.r) && isZeroR(target.counts.rad)
-    && ctx.proveTarget?.('r') === true;
+  return (
+    target !== undefined &&
+    typed(ctx, names).every(({ type }) => isZeroR(type.counts.rad)) &&
+    isDimensionless(target.dimension) &&
+    isZeroR(target.counts.r) &&
+    isZeroR(target.counts.rad) &&
+    ctx.proveTarget?.('r') === true
+  );
 }
 
 export function applied(text: string, edits: readonly Fix[]): string {
   let changed = text;
-  for (const edit of [...edits].sort((a, b) => b.from - a.from)) changed = changed.slice(0, edit.from) + edit.text + changed.slice(edit.to);
+  for (const edit of [...edits].sort((a, b) => b.from - a.from))
+    changed = changed.slice(0, edit.from) + edit.text + changed.slice(edit.to);
   return changed;
 }
 
@@ -257,7 +258,9 @@ export function proposeWithoutLiteral(
   const edits = hidesTwo && pi ? [removal, { from: pi.at[0], to: pi.at[0], text: '2*', label: '' }] : [removal];
   const changed = applied(ctx.text, edits);
   if (!ctx.prove(changed, ctx.scope)) return [];
-  return [{ ...joined(ctx.text, edits, ''), label: `write ${changed.length > 40 ? `the formula without ${literal.text}` : changed}` }];
+  return [
+    { ...joined(ctx.text, edits, ''), label: `write ${changed.length > 40 ? `the formula without ${literal.text}` : changed}` },
+  ];
 }
 
 /** Takes a factor out of a product, with the sign before or after it. */

@@ -98,13 +98,34 @@ export const operationCount = Object.keys(op).length;
 type OneArgument = Exclude<FunctionName, 'min' | 'max' | 'hypot' | 'atan2'>;
 
 export const functionOp: { readonly [name in OneArgument]: number } = {
-  exp: op.exp, ln: op.ln, log10: op.log10, sqrt: op.sqrt, cbrt: op.cbrt, abs: op.abs, sign: op.sign,
-  sin: op.sin, cos: op.cos, tan: op.tan, asin: op.asin, acos: op.acos, atan: op.atan,
-  sinh: op.sinh, cosh: op.cosh, tanh: op.tanh, floor: op.floor, ceil: op.ceil, round: op.round,
+  exp: op.exp,
+  ln: op.ln,
+  log10: op.log10,
+  sqrt: op.sqrt,
+  cbrt: op.cbrt,
+  abs: op.abs,
+  sign: op.sign,
+  sin: op.sin,
+  cos: op.cos,
+  tan: op.tan,
+  asin: op.asin,
+  acos: op.acos,
+  atan: op.atan,
+  sinh: op.sinh,
+  cosh: op.cosh,
+  tanh: op.tanh,
+  floor: op.floor,
+  ceil: op.ceil,
+  round: op.round,
 };
 
 export const compareOp: { readonly [operator in CompareOperator]: number } = {
-  '<': op.less, '<=': op.lessEqual, '>': op.greater, '>=': op.greaterEqual, '==': op.equal, '!=': op.unequal,
+  '<': op.less,
+  '<=': op.lessEqual,
+  '>': op.greater,
+  '>=': op.greaterEqual,
+  '==': op.equal,
+  '!=': op.unequal,
 };
 
 type Basic = '+' | '-' | '*' | '/';

@@ -59,7 +59,14 @@ export function inOrder(_program: Program, memory: Float64Array, width: number, 
 }
 
 /** Marks with 1 the entries in which a range that has just run has no value; entries already marked stay. */
-export function markTrouble(_program: Program, memory: Float64Array, width: number, count: number, range: Range, flags: Uint8Array): void {
+export function markTrouble(
+  _program: Program,
+  memory: Float64Array,
+  width: number,
+  count: number,
+  range: Range,
+  flags: Uint8Array,
+): void {
   const from = range.dest * width;
   for (let i = 0; i < count; i++) if (memory[from + i]! * 0 !== 0) flags[i] = 1;
 }

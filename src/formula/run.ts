@@ -29,20 +29,38 @@ export function run(
 }
 
 function runMany(
-  code: Int32Array, tables: readonly ProgramTable[], m: Float64Array, width: number, count: number, start: number, end: number,
+  code: Int32Array,
+  tables: readonly ProgramTable[],
+  m: Float64Array,
+  width: number,
+  count: number,
+  start: number,
+  end: number,
 ): void {
   for (let at = start; at < end; at += stride) {
     const operation = code[at]!;
     const b = code[at + 3]!;
     const isLookup = operation >= op.interpolate && operation <= op.entryOfText;
     kernels[operation]!(
-      m, code[at + 1]! * width, code[at + 2]! * width, isLookup ? b : b * width, code[at + 4]! * width, count, tables,
+      m,
+      code[at + 1]! * width,
+      code[at + 2]! * width,
+      isLookup ? b : b * width,
+      code[at + 4]! * width,
+      count,
+      tables,
     );
   }
 }
 
 function runOne(
-  code: Int32Array, tables: readonly ProgramTable[], m: Float64Array, width: number, entry: number, start: number, end: number,
+  code: Int32Array,
+  tables: readonly ProgramTable[],
+  m: Float64Array,
+  width: number,
+  entry: number,
+  start: number,
+  end: number,
 ): void {
   for (let at = start; at < end; at += stride) {
     const d = code[at + 1]! * width + entry;
@@ -270,7 +288,7 @@ function runOne(
         break;
       case op.multiplyDivide: {
         const z = m[code[at + 4]! * width + entry]!;
-        m[d] = x * m[b * width + entry]! / z - (z - z);
+        m[d] = (x * m[b * width + entry]!) / z - (z - z);
         break;
       }
       case op.divideAdd: {
@@ -285,7 +303,7 @@ function runOne(
       }
       case op.divideMultiply: {
         const y = m[b * width + entry]!;
-        m[d] = x / y * m[code[at + 4]! * width + entry]! - (y - y);
+        m[d] = (x / y) * m[code[at + 4]! * width + entry]! - (y - y);
         break;
       }
       case op.divideDivide: {

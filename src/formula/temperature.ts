@@ -5,8 +5,13 @@
 // Not here: sentences (messages.ts), dimensions (infer.ts): both sides are temperatures already.
 
 export type TemperatureKind = 'none' | 'reading' | 'difference';
-export type TemperatureFault = 'reading + reading' | 'difference - reading' | 'reading and difference' | 'reading against difference'
-  | 'difference against reading' | 'a temperature reading cannot be used here';
+export type TemperatureFault =
+  | 'reading + reading'
+  | 'difference - reading'
+  | 'reading and difference'
+  | 'reading against difference'
+  | 'difference against reading'
+  | 'a temperature reading cannot be used here';
 
 /** `zero` marks the literal 0: it is no temperature, so it stands beside no reading. */
 export interface TemperatureOperand {
@@ -14,7 +19,11 @@ export interface TemperatureOperand {
   readonly zero: boolean;
 }
 
-export function sumOfTemperatures(operator: '+' | '-', left: TemperatureOperand, right: TemperatureOperand): TemperatureKind | TemperatureFault {
+export function sumOfTemperatures(
+  operator: '+' | '-',
+  left: TemperatureOperand,
+  right: TemperatureOperand,
+): TemperatureKind | TemperatureFault {
   const leftReads = left.kind === 'reading';
   const rightReads = right.kind === 'reading';
   if (leftReads && rightReads) return operator === '-' ? 'difference' : 'reading + reading';

@@ -3,7 +3,7 @@
 // Not here: the walk (infer.ts).
 
 import { dimensionless, isDimensionless, isZeroR, type Problem, type Unit } from '../quantity/index.ts';
-import { common, countsOfUnit, equalTriples, noCounts, type Standing, standing, settled, nearestZero } from './counts.ts';
+import { common, countsOfUnit, equalTriples, nearestZero, noCounts, type Standing, settled, standing } from './counts.ts';
 import type { Expr } from './expr.ts';
 import type { TableData } from './table.ts';
 import type { FormulaCounts, TableType, Type } from './type.ts';

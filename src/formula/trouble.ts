@@ -5,11 +5,29 @@
 // Not here: finding the trouble (explain.ts).
 
 import {
-  coherentUnit, type Dimension, dimensionless, divideD, equalD, multiplyD, numeralInUnit, numeralOfDouble, one, powerD, printNumeral, printQuantity,
-  type Problem, rational, readUnit, roundSignificant, significantDigits, type Unit, withoutTrailingZeros,
+  coherentUnit,
+  type Dimension,
+  dimensionless,
+  divideD,
+  equalD,
+  multiplyD,
+  numeralInUnit,
+  numeralOfDouble,
+  one,
+  type Problem,
+  powerD,
+  printNumeral,
+  printQuantity,
+  rational,
+  readUnit,
+  roundSignificant,
+  significantDigits,
+  type Unit,
+  withoutTrailingZeros,
 } from '../quantity/index.ts';
-import type { Expr } from './expr.ts';
 import type { Lookup } from './explain.ts';
+import { childrenOf } from './children.ts';
+import type { Expr } from './expr.ts';
 import { readLiteral } from './literal.ts';
 import { rationalOf } from './rational-exponent.ts';
 import { plainName } from './symbols.ts';
@@ -103,9 +121,11 @@ function dimensionOf(lookup: Lookup, expr: Expr): Dimension {
   }
 }
 
-const isZeroLiteral = (expr: Expr): boolean => (expr.kind === 'number' ? expr.value === 0 : expr.kind === 'parens' && isZeroLiteral(expr.inner));
+const isZeroLiteral = (expr: Expr): boolean =>
+  expr.kind === 'number' ? expr.value === 0 : expr.kind === 'parens' && isZeroLiteral(expr.inner);
 
-const isLiteral = (expr: Expr): boolean => expr.kind === 'number' || expr.kind === 'quoted' || (expr.kind === 'minus' && isLiteral(expr.inner));
+const isLiteral = (expr: Expr): boolean =>
+  expr.kind === 'number' || expr.kind === 'quoted' || (expr.kind === 'minus' && isLiteral(expr.inner));
 const unwrapped = (expr: Expr): Expr => (expr.kind === 'parens' ? unwrapped(expr.inner) : expr);
 const written = (expr: Expr): string => writeExpr(unwrapped(expr));
 
@@ -115,10 +135,15 @@ function noValue(expr: Extract<Expr, { kind: 'name' }>): Problem {
 
 function divisionByZero(lookup: Lookup, expr: Binary): Problem {
   if (expr.operator === '^') {
-    return error('division-by-zero', `division by zero: ${written(expr.left)} is 0 and has a negative exponent; check what makes it vanish`, expr);
+    return error(
+      'division-by-zero',
+      `division by zero: ${written(expr.left)} is 0 and has a negative exponent; check what makes it vanish`,
+      expr,
+    );
   }
   const right = unwrapped(expr.right);
-  const zero = right.kind === 'number' ? `the divisor is written as ${right.text}` : `${written(right)} is ${showPart(lookup, right, 0)}`;
+  const zero =
+    right.kind === 'number' ? `the divisor is written as ${right.text}` : `${written(right)} is ${showPart(lookup, right, 0)}`;
   const parts = partsOfZero(lookup, right);
   return error('division-by-zero', `division by zero: ${zero}${parts} in ${writeExpr(expr)}; check what makes it vanish`, expr);
 }
@@ -134,7 +159,11 @@ function partsOfZero(lookup: Lookup, expr: Expr): string {
 function rootOfNegative(lookup: Lookup, expr: Expr, radicand: Expr, value: number): Problem {
   const of = unwrapped(radicand);
   const is = isLiteral(of) ? '' : `${written(of)} is `;
-  return error('root-of-negative', `root of a negative number: ${is}${showPart(lookup, of, value)} in ${writeExpr(expr)}; a root needs 0 or more`, expr);
+  return error(
+    'root-of-negative',
+    `root of a negative number: ${is}${showPart(lookup, of, value)} in ${writeExpr(expr)}; a root needs 0 or more`,
+    expr,
+  );
 }
 
 function ofCall(lookup: Lookup, expr: Call, x: number): Problem | undefined {
@@ -146,7 +175,11 @@ function ofCall(lookup: Lookup, expr: Call, x: number): Problem | undefined {
     case 'ln':
     case 'log10':
       if (x > 0) return undefined;
-      return error('logarithm', `${expr.name} of ${x === 0 ? 'zero' : 'a negative number'}: ${is}; a logarithm needs a number above 0`, expr);
+      return error(
+        'logarithm',
+        `${expr.name} of ${x === 0 ? 'zero' : 'a negative number'}: ${is}; a logarithm needs a number above 0`,
+        expr,
+      );
     case 'asin':
     case 'acos': {
       if (Math.abs(x) <= 1) return undefined;
@@ -163,7 +196,10 @@ function ofCall(lookup: Lookup, expr: Call, x: number): Problem | undefined {
 }
 
 function tooLarge(lookup: Lookup, expr: Expr): Problem {
-  const names = namesIn(expr).filter((name) => Number.isFinite(lookup.value(name))).slice(0, 4).map((name) => `${plainName(name)} = ${show(lookup, lookup.value(name), lookup.unit?.(name) ?? one)}`);
+  const names = namesIn(expr)
+    .filter((name) => Number.isFinite(lookup.value(name)))
+    .slice(0, 4)
+    .map((name) => `${plainName(name)} = ${show(lookup, lookup.value(name), lookup.unit?.(name) ?? one)}`);
   const where = names.length === 0 ? '' : ` with ${names.join(', ')}`;
   return error('overflow', `${writeExpr(expr)} is too large for a number (beyond 1.8e308)${where}; check the values`, expr);
 }
@@ -172,11 +208,7 @@ function namesIn(expr: Expr): string[] {
   const found = new Set<string>();
   const visit = (node: Expr): void => {
     if (node.kind === 'name') found.add(node.name);
-    else if (node.kind === 'binary' || node.kind === 'logic') [node.left, node.right].forEach(visit);
-    else if (node.kind === 'parens' || node.kind === 'minus' || node.kind === 'not') visit(node.inner);
-    else if (node.kind === 'call') node.args.forEach(visit);
-    else if (node.kind === 'table') visit(node.key);
-    else if (node.kind === 'choose') [node.then, node.otherwise].forEach(visit);
+    for (const part of childrenOf(node)) visit(part);
   };
   visit(expr);
   return [...found];
@@ -200,14 +232,27 @@ function outside(lookup: Lookup, expr: Table, table: TableData, keys: TableColum
   const numbers = [...(keys.numbers ?? [])];
   const range = `${show(lookup, Math.min(...numbers), unit)} to ${show(lookup, Math.max(...numbers), unit)}`;
   const key = unwrapped(expr.key);
-  const what = key.kind === 'quoted' || key.kind === 'number' ? show(lookup, x, unit) : `${written(key)} = ${show(lookup, x, key.kind === 'name' ? unitOf(lookup, key) : unit)}`;
-  return error('beyond-table', `${what} lies beyond the table \`${table.name}\` (${range}); extend the table with a source, or change the value`, expr);
+  const what =
+    key.kind === 'quoted' || key.kind === 'number'
+      ? show(lookup, x, unit)
+      : `${written(key)} = ${show(lookup, x, key.kind === 'name' ? unitOf(lookup, key) : unit)}`;
+  return error(
+    'beyond-table',
+    `${what} lies beyond the table \`${table.name}\` (${range}); extend the table with a source, or change the value`,
+    expr,
+  );
 }
 
 function noRow(expr: Table, table: TableData, text: string): Problem {
   const keys = table.columns[0]?.texts ?? [];
   const nearest = nearestText(text, keys);
-  const then = nearest !== undefined ? `nearest: \`${nearest}\`` : `its rows: ${keys.slice(0, 5).map((key) => `\`${key}\``).join(', ')}`;
+  const then =
+    nearest !== undefined
+      ? `nearest: \`${nearest}\``
+      : `its rows: ${keys
+          .slice(0, 5)
+          .map((key) => `\`${key}\``)
+          .join(', ')}`;
   return error('no-row', `no row \`${text}\` in table ${table.name}; ${then}`, expr);
 }
 
@@ -218,14 +263,22 @@ function noRowOfNumber(lookup: Lookup, expr: Table, table: TableData, keys: Tabl
     if (!Number.isNaN(key) && (nearest === undefined || Math.abs(key - x) < Math.abs(nearest - x))) nearest = key;
   }
   const then = nearest === undefined ? 'the table is empty' : `nearest: ${show(lookup, nearest, unit)}`;
-  return error('no-row', `no row ${show(lookup, x, unit)} in table ${table.name}; ${then}; entry wants the exact key, interpolate reads between rows`, expr);
+  return error(
+    'no-row',
+    `no row ${show(lookup, x, unit)} in table ${table.name}; ${then}; entry wants the exact key, interpolate reads between rows`,
+    expr,
+  );
 }
 
 const noTable = (expr: Table): Problem =>
   error('no-table', `the table ${expr.table} has no column ${expr.column} to read; check the table`, expr);
 
 const unordered = (expr: Table, keys: TableColumnData): Problem =>
-  error('unordered-table', `cannot interpolate in ${expr.table}: its keys (${keys.name}) must rise or fall from row to row; sort the rows and remove doubles`, expr);
+  error(
+    'unordered-table',
+    `cannot interpolate in ${expr.table}: its keys (${keys.name}) must rise or fall from row to row; sort the rows and remove doubles`,
+    expr,
+  );
 
 const emptyEntry = (expr: Table): Problem =>
   error('no-value', `the table ${expr.table} has no number there in its column ${expr.column}; fill the entry`, expr);
@@ -233,5 +286,17 @@ const emptyEntry = (expr: Table): Problem =>
 const noText = (expr: Expr): Problem => error('no-value', `${writeExpr(expr)} is no text; compare it with a number`, expr);
 
 export const troubles = {
-  noValue, divisionByZero, rootOfNegative, ofCall, tooLarge, nearJump, outside, noRow, noRowOfNumber, noTable, unordered, emptyEntry, noText,
+  noValue,
+  divisionByZero,
+  rootOfNegative,
+  ofCall,
+  tooLarge,
+  nearJump,
+  outside,
+  noRow,
+  noRowOfNumber,
+  noTable,
+  unordered,
+  emptyEntry,
+  noText,
 };

@@ -59,7 +59,8 @@ function say(ctx: Context, expr: Expr, binding: 0 | 1 | 2): string {
   }
 }
 
-const isZero = (expr: Expr): boolean => (expr.kind === 'parens' ? isZero(expr.inner) : expr.kind === 'number' && expr.value === 0);
+const isZero = (expr: Expr): boolean =>
+  expr.kind === 'parens' ? isZero(expr.inner) : expr.kind === 'number' && expr.value === 0;
 
 const bound = (text: string, needed: boolean): string => (needed ? `(${text})` : text);
 
@@ -71,7 +72,9 @@ function binary(ctx: Context, expr: Extract<Expr, { kind: 'binary' }>, binding: 
   if (expr.operator === '+' || expr.operator === '-') {
     const left = say(ctx, expr.left, 0);
     const right = say(ctx, expr.right, 1);
-    return left === numberWord && right === numberWord ? numberWord : bound(`${left} ${expr.operator === '+' ? '+' : '−'} ${right}`, binding > 0);
+    return left === numberWord && right === numberWord
+      ? numberWord
+      : bound(`${left} ${expr.operator === '+' ? '+' : '−'} ${right}`, binding > 0);
   }
   const above: string[] = [];
   const below: string[] = [];
@@ -86,15 +89,21 @@ function binary(ctx: Context, expr: Extract<Expr, { kind: 'binary' }>, binding: 
 }
 
 function factors(ctx: Context, expr: Expr, inverse: boolean, above: string[], below: string[]): void {
-  if (expr.kind === 'parens' || expr.kind === 'minus') return factors(ctx, expr.inner, inverse, above, below);
-  if (expr.kind === 'binary' && (expr.operator === '*' || expr.operator === '/')) {
+  if (expr.kind === 'parens' || expr.kind === 'minus') {
+    factors(ctx, expr.inner, inverse, above, below);
+  } else if (expr.kind === 'binary' && (expr.operator === '*' || expr.operator === '/')) {
     factors(ctx, expr.left, inverse, above, below);
-    return factors(ctx, expr.right, expr.operator === '/' ? !inverse : inverse, above, below);
+    factors(ctx, expr.right, expr.operator === '/' ? !inverse : inverse, above, below);
+  } else {
+    (inverse ? below : above).push(say(ctx, expr, 1));
   }
-  (inverse ? below : above).push(say(ctx, expr, 1));
 }
 
-const superscripts: ReadonlyMap<string, string> = new Map([['2', '²'], ['3', '³'], ['4', '⁴']]);
+const superscripts: ReadonlyMap<string, string> = new Map([
+  ['2', '²'],
+  ['3', '³'],
+  ['4', '⁴'],
+]);
 
 function raised(exponent: Expr): string {
   if (exponent.kind === 'parens') return raised(exponent.inner);

@@ -3,7 +3,17 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
-  allFinite, compileFormulas, type Expr, evaluateTree, explain, type FunctionName, type Lookup, makeMemory, ProgramBuilder, run, type TableData,
+  allFinite,
+  compileFormulas,
+  type Expr,
+  evaluateTree,
+  explain,
+  type FunctionName,
+  type Lookup,
+  makeMemory,
+  ProgramBuilder,
+  run,
+  type TableData,
 } from '../../src/formula/index.ts';
 import { readUnit } from '../../src/quantity/index.ts';
 import { formulaOf } from './scope.ts';
@@ -40,7 +50,25 @@ const at = [0, 0] as const;
 
 const number = (value: number): Expr => ({ kind: 'number', text: String(value), value, at });
 const functions: readonly FunctionName[] = [
-  'exp', 'ln', 'log10', 'sqrt', 'cbrt', 'abs', 'sign', 'sin', 'cos', 'tan', 'asin', 'acos', 'atan', 'sinh', 'cosh', 'tanh', 'floor', 'ceil', 'round',
+  'exp',
+  'ln',
+  'log10',
+  'sqrt',
+  'cbrt',
+  'abs',
+  'sign',
+  'sin',
+  'cos',
+  'tan',
+  'asin',
+  'acos',
+  'atan',
+  'sinh',
+  'cosh',
+  'tanh',
+  'floor',
+  'ceil',
+  'round',
 ];
 
 const { value: values, truth: truths } = fc.letrec<{ value: Expr; truth: Expr }>((tie) => ({
@@ -48,43 +76,115 @@ const { value: values, truth: truths } = fc.letrec<{ value: Expr; truth: Expr }>
     { depthSize: 'small', withCrossShrink: true },
     fc.constantFrom(...names).map((name): Expr => ({ kind: 'name', name, at })),
     fc.constantFrom(0, 1, 2, 3, 0.5, 4, 10, 1e200).map(number),
-    fc.constantFrom<Expr>({ kind: 'constant', name: 'pi', at }, { kind: 'constant', name: 'e', at }, { kind: 'quoted', text: '250 mm', at }),
-    fc.record({
-      kind: fc.constant('binary' as const), operator: fc.constantFrom('+' as const, '-' as const, '*' as const, '/' as const, '^' as const), implicit: fc.constant(false),
-      left: tie('value'), right: tie('value'), at: fc.constant(at),
-    }),
-    fc.record({
-      kind: fc.constant('binary' as const), operator: fc.constantFrom('+' as const, '-' as const, '*' as const, '/' as const), implicit: fc.constant(false),
-      left: tie('value'), right: tie('value'), at: fc.constant(at),
-    }),
-    fc.tuple(tie('value'), fc.constantFrom(2, 3, 4, -1, -2, 0.5, 1, 0, 1.5)).map(
-      ([left, power]): Expr => ({ kind: 'binary', operator: '^', implicit: false, left, right: power < 0 ? { kind: 'minus', inner: number(-power), at } : number(power), at }),
+    fc.constantFrom<Expr>(
+      { kind: 'constant', name: 'pi', at },
+      { kind: 'constant', name: 'e', at },
+      { kind: 'quoted', text: '250 mm', at },
     ),
+    fc.record({
+      kind: fc.constant('binary' as const),
+      operator: fc.constantFrom('+' as const, '-' as const, '*' as const, '/' as const, '^' as const),
+      implicit: fc.constant(false),
+      left: tie('value'),
+      right: tie('value'),
+      at: fc.constant(at),
+    }),
+    fc.record({
+      kind: fc.constant('binary' as const),
+      operator: fc.constantFrom('+' as const, '-' as const, '*' as const, '/' as const),
+      implicit: fc.constant(false),
+      left: tie('value'),
+      right: tie('value'),
+      at: fc.constant(at),
+    }),
+    fc
+      .tuple(tie('value'), fc.constantFrom(2, 3, 4, -1, -2, 0.5, 1, 0, 1.5))
+      .map(
+        ([left, power]): Expr => ({
+          kind: 'binary',
+          operator: '^',
+          implicit: false,
+          left,
+          right: power < 0 ? { kind: 'minus', inner: number(-power), at } : number(power),
+          at,
+        }),
+      ),
     tie('value').map((inner): Expr => ({ kind: 'parens', inner, at })),
     tie('value').map((inner): Expr => ({ kind: 'minus', inner, at })),
-    fc.tuple(fc.constantFrom(...functions), tie('value')).map(([name, argument]): Expr => ({ kind: 'call', name, args: [argument], at })),
-    fc.tuple(fc.constantFrom('min' as const, 'max' as const), fc.array(tie('value'), { minLength: 1, maxLength: 4 })).map(([name, args]): Expr => ({ kind: 'call', name, args, at })),
+    fc
+      .tuple(fc.constantFrom(...functions), tie('value'))
+      .map(([name, argument]): Expr => ({ kind: 'call', name, args: [argument], at })),
+    fc
+      .tuple(fc.constantFrom('min' as const, 'max' as const), fc.array(tie('value'), { minLength: 1, maxLength: 4 }))
+      .map(([name, args]): Expr => ({ kind: 'call', name, args, at })),
     fc.array(tie('value'), { minLength: 2, maxLength: 5 }).map((args): Expr => ({ kind: 'call', name: 'hypot', args, at })),
     fc.tuple(tie('value'), tie('value')).map(([y, x]): Expr => ({ kind: 'call', name: 'atan2', args: [y, x], at })),
     // Parts that stand twice.
-    tie('value').map((part): Expr => ({ kind: 'binary', operator: '*', implicit: false, left: part, right: { kind: 'binary', operator: '-', implicit: false, left: number(1), right: part, at }, at })),
-    fc.record({ kind: fc.constant('choose' as const), test: tie('truth'), then: tie('value'), otherwise: tie('value'), at: fc.constant(at) }),
-    fc.tuple(fc.constantFrom('interpolate' as const, 'entry' as const), fc.constantFrom('mass', 'falling'), tie('value')).map(
-      ([name, column, key]): Expr => ({ kind: 'table', name, table: 'belts', column, key, at }),
+    tie('value').map(
+      (part): Expr => ({
+        kind: 'binary',
+        operator: '*',
+        implicit: false,
+        left: part,
+        right: { kind: 'binary', operator: '-', implicit: false, left: number(1), right: part, at },
+        at,
+      }),
     ),
-    fc.constantFrom<Expr>({ kind: 'name', name: 's', at }, { kind: 'name', name: 't', at }, { kind: 'quoted', text: 'steel', at }, { kind: 'quoted', text: 'none', at }).map(
-      (key): Expr => ({ kind: 'table', name: 'entry', table: 'surfaces', column: 'mu', key, at }),
-    ),
+    fc.record({
+      kind: fc.constant('choose' as const),
+      test: tie('truth'),
+      then: tie('value'),
+      otherwise: tie('value'),
+      at: fc.constant(at),
+    }),
+    fc
+      .tuple(fc.constantFrom('interpolate' as const, 'entry' as const), fc.constantFrom('mass', 'falling'), tie('value'))
+      .map(([name, column, key]): Expr => ({ kind: 'table', name, table: 'belts', column, key, at })),
+    fc
+      .constantFrom<Expr>(
+        { kind: 'name', name: 's', at },
+        { kind: 'name', name: 't', at },
+        { kind: 'quoted', text: 'steel', at },
+        { kind: 'quoted', text: 'none', at },
+      )
+      .map((key): Expr => ({ kind: 'table', name: 'entry', table: 'surfaces', column: 'mu', key, at })),
   ),
   truth: fc.oneof(
     { depthSize: 'small', withCrossShrink: true },
-    fc.tuple(fc.array(fc.constantFrom('<' as const, '<=' as const, '>' as const, '>=' as const, '==' as const, '!=' as const), { minLength: 1, maxLength: 3 }), fc.array(tie('value'), { minLength: 4, maxLength: 4 })).map(
-      ([operators, sides]): Expr => ({ kind: 'compare', operators, sides: sides.slice(0, operators.length + 1), at }),
-    ),
-    fc.tuple(fc.constantFrom('==' as const, '!=' as const), fc.constantFrom(...texts), fc.constantFrom<Expr>({ kind: 'quoted', text: 'rubber', at }, { kind: 'name', name: 't', at }, { kind: 'table', name: 'entry', table: 'belts', column: 'grade', key: number(1), at })).map(
-      ([operator, text, other]): Expr => ({ kind: 'compare', operators: [operator], sides: [{ kind: 'name', name: text, at }, other], at }),
-    ),
-    fc.record({ kind: fc.constant('logic' as const), operator: fc.constantFrom('and' as const, 'or' as const), left: tie('truth'), right: tie('truth'), at: fc.constant(at) }),
+    fc
+      .tuple(
+        fc.array(fc.constantFrom('<' as const, '<=' as const, '>' as const, '>=' as const, '==' as const, '!=' as const), {
+          minLength: 1,
+          maxLength: 3,
+        }),
+        fc.array(tie('value'), { minLength: 4, maxLength: 4 }),
+      )
+      .map(([operators, sides]): Expr => ({ kind: 'compare', operators, sides: sides.slice(0, operators.length + 1), at })),
+    fc
+      .tuple(
+        fc.constantFrom('==' as const, '!=' as const),
+        fc.constantFrom(...texts),
+        fc.constantFrom<Expr>(
+          { kind: 'quoted', text: 'rubber', at },
+          { kind: 'name', name: 't', at },
+          { kind: 'table', name: 'entry', table: 'belts', column: 'grade', key: number(1), at },
+        ),
+      )
+      .map(
+        ([operator, text, other]): Expr => ({
+          kind: 'compare',
+          operators: [operator],
+          sides: [{ kind: 'name', name: text, at }, other],
+          at,
+        }),
+      ),
+    fc.record({
+      kind: fc.constant('logic' as const),
+      operator: fc.constantFrom('and' as const, 'or' as const),
+      left: tie('truth'),
+      right: tie('truth'),
+      at: fc.constant(at),
+    }),
     tie('truth').map((inner): Expr => ({ kind: 'not', inner, at })),
   ),
 }));
@@ -94,7 +194,10 @@ const doubles = fc.oneof(
   fc.double({ min: -10, max: 10, noNaN: true }),
   fc.double({ noNaN: true, noDefaultInfinity: true }),
 );
-const entry = fc.record({ numbers: fc.tuple(doubles, doubles, doubles, doubles), texts: fc.tuple(fc.constantFrom('leather', 'rubber', 'B'), fc.constantFrom('steel', 'rubber', 'unheard of')) });
+const entry = fc.record({
+  numbers: fc.tuple(doubles, doubles, doubles, doubles),
+  texts: fc.tuple(fc.constantFrom('leather', 'rubber', 'B'), fc.constantFrom('steel', 'rubber', 'unheard of')),
+});
 type Entry = { readonly numbers: readonly number[]; readonly texts: readonly string[] };
 
 const lookupOf = (of: Entry, more: ReadonlyMap<string, number> = new Map()): Lookup => ({
@@ -104,8 +207,13 @@ const lookupOf = (of: Entry, more: ReadonlyMap<string, number> = new Map()): Loo
 });
 const known = { isText: (name: string) => texts.includes(name), table: (name: string) => tables.get(name) };
 
-function compiledValues(formulas: readonly { key: string; expr: Expr }[], entries: readonly Entry[], width: number): Float64Array[] {
-  const compiled = compileFormulas(formulas, [...names, ...texts], known);
+function compiledValues(
+  formulas: readonly { key: string; expr: Expr }[],
+  entries: readonly Entry[],
+  width: number,
+  constant: (name: string) => number | undefined = () => undefined,
+): Float64Array[] {
+  const compiled = compileFormulas(formulas, [...names, ...texts], { ...known, constant });
   const memory = makeMemory(compiled.program, width);
   for (const [index, of] of entries.entries()) {
     for (const [at, name] of names.entries()) memory[compiled.slot(name) * width + index] = of.numbers[at]!;
@@ -120,33 +228,64 @@ const checks = { numRuns: 1500, seed: 20261201 };
 describe('compiled columns', () => {
   it('give what the exact walk gives, bit for bit, and no value exactly where it finds a problem', () => {
     fc.assert(
-      fc.property(fc.oneof(values, truths), fc.array(entry, { minLength: 1, maxLength: 9 }), fc.nat(3), (expr, entries, spare) => {
-        const [column] = compiledValues([{ key: 'x', expr }], entries, entries.length + spare);
-        for (const [index, of] of entries.entries()) {
-          const walked = explain(expr, lookupOf(of));
-          const computed = column![index]!;
-          if (walked.ok) expect(computed).toBe(walked.value);
-          else expect(Number.isFinite(computed)).toBe(false);
-        }
-      }),
+      fc.property(
+        fc.oneof(values, truths),
+        fc.array(entry, { minLength: 1, maxLength: 9 }),
+        fc.nat(3),
+        (expr, entries, spare) => {
+          const [column] = compiledValues([{ key: 'x', expr }], entries, entries.length + spare);
+          for (const [index, of] of entries.entries()) {
+            const walked = explain(expr, lookupOf(of));
+            const computed = column![index]!;
+            if (walked.ok) expect(computed).toBe(walked.value);
+            else expect(Number.isFinite(computed)).toBe(false);
+          }
+        },
+      ),
       checks,
     );
   }, 60_000);
 
   it('compute several formulas together as each alone', () => {
     fc.assert(
-      fc.property(fc.array(values, { minLength: 2, maxLength: 4 }), fc.array(entry, { minLength: 1, maxLength: 7 }), (exprs, entries) => {
-        const formulas = exprs.map((expr, index) => ({ key: `x${index}`, expr }));
-        const last: Expr = { kind: 'binary', operator: '+', implicit: false, left: { kind: 'name', name: 'x0', at }, right: exprs[1]!, at };
-        const together = compiledValues([...formulas, { key: 'y', expr: last }], entries, entries.length);
-        for (const [index, formula] of formulas.entries()) {
-          expect(together[index]).toEqual(compiledValues([formula], entries, entries.length)[0]);
-        }
-        for (const [index, of] of entries.entries()) {
-          const x0 = together[0]![index]!;
-          const y = explain(last, lookupOf(of, new Map([['x0', x0]])));
-          if (y.ok) expect(together.at(-1)![index]).toBe(y.value);
-          else expect(Number.isFinite(together.at(-1)![index])).toBe(false);
+      fc.property(
+        fc.array(values, { minLength: 2, maxLength: 4 }),
+        fc.array(entry, { minLength: 1, maxLength: 7 }),
+        (exprs, entries) => {
+          const formulas = exprs.map((expr, index) => ({ key: `x${index}`, expr }));
+          const last: Expr = {
+            kind: 'binary',
+            operator: '+',
+            implicit: false,
+            left: { kind: 'name', name: 'x0', at },
+            right: exprs[1]!,
+            at,
+          };
+          const together = compiledValues([...formulas, { key: 'y', expr: last }], entries, entries.length);
+          for (const [index, formula] of formulas.entries()) {
+            expect(together[index]).toEqual(compiledValues([formula], entries, entries.length)[0]);
+          }
+          for (const [index, of] of entries.entries()) {
+            const x0 = together[0]![index]!;
+            const y = explain(last, lookupOf(of, new Map([['x0', x0]])));
+            if (y.ok) expect(together.at(-1)![index]).toBe(y.value);
+            else expect(Number.isFinite(together.at(-1)![index])).toBe(false);
+          }
+        },
+      ),
+      { ...checks, numRuns: 500 },
+    );
+  }, 60_000);
+
+  it('compute the same where quantities that do not vary are compiled in', () => {
+    fc.assert(
+      fc.property(values, fc.array(entry, { minLength: 1, maxLength: 6 }), (expr, entries) => {
+        const same = entries.map((of) => ({ ...of, numbers: [entries[0]!.numbers[0]!, ...of.numbers.slice(1)] }));
+        const plain = compiledValues([{ key: 'x', expr }], same, same.length);
+        const builtIn = compiledValues([{ key: 'x', expr }], same, same.length, (name) => (name === 'a' ? same[0]!.numbers[0]! : undefined));
+        for (const [index, value] of plain[0]!.entries()) {
+          if (Number.isFinite(value)) expect(builtIn[0]![index]).toBe(value);
+          else expect(Number.isFinite(builtIn[0]![index])).toBe(false);
         }
       }),
       { ...checks, numRuns: 500 },
@@ -163,7 +302,12 @@ describe('compiled columns', () => {
     expect(builder.slotOf('x')).toBe(first.dest);
     for (const program of [before, after]) {
       const memory = makeMemory(program, 1);
-      for (const [name, value] of [['a', 3], ['b', 4], ['c', 5]] as const) memory[builder.slotOf(name)] = value;
+      for (const [name, value] of [
+        ['a', 3],
+        ['b', 4],
+        ['c', 5],
+      ] as const)
+        memory[builder.slotOf(name)] = value;
       run(program, memory, 1, 1, first.start, first.end);
       expect(memory[first.dest]).toBe(17);
       if (program === before) continue;
@@ -210,22 +354,38 @@ describe('compiled columns', () => {
 
 describe('arithmetic', () => {
   const one = (text: string, numbers: Readonly<Record<string, number>> = {}): number =>
-    evaluateTree(formulaOf(text).expr, { value: (name) => numbers[name] ?? Number.NaN, text: () => undefined, table: () => undefined });
+    evaluateTree(formulaOf(text).expr, {
+      value: (name) => numbers[name] ?? Number.NaN,
+      text: () => undefined,
+      table: () => undefined,
+    });
 
   // IEEE 754-2019, 5.9 roundToIntegralTiesToEven; ISO 80000-1:2009 annex B rule A.
   it.each([
-    [0.5, 0], [1.5, 2], [2.5, 2], [-0.5, 0], [-1.5, -2], [-2.5, -2], [2.4999999, 2], [2.5000001, 3], [4503599627370497.5, 4503599627370498], [0.49999999999999994, 0],
+    [0.5, 0],
+    [1.5, 2],
+    [2.5, 2],
+    [-0.5, 0],
+    [-1.5, -2],
+    [-2.5, -2],
+    [2.4999999, 2],
+    [2.5000001, 3],
+    [2251799813685249.5, 2251799813685250],
+    [0.49999999999999994, 0],
   ])('rounds %d to %d', (x, whole) => {
     expect(one('round(x)', { x })).toBe(whole);
   });
 
   it('has powers of fixed form as exact as products', () => {
-    fc.assert(fc.property(fc.double({ min: -1e50, max: 1e50, noNaN: true }), (x) => {
-      expect(one('x^2', { x })).toBe(x * x);
-      expect(one('x^2', { x })).toBe(x ** 2);
-      if (Math.abs(x) > 1e-300) expect(one('x^(-1)', { x })).toBe(1 / x);
-      if (x >= 0) expect(one('x^0.5', { x })).toBe(Math.sqrt(x));
-    }), checks);
+    fc.assert(
+      fc.property(fc.double({ min: -1e50, max: 1e50, noNaN: true }), (x) => {
+        expect(one('x^2', { x })).toBe(x * x);
+        expect(one('x^2', { x })).toBe(x ** 2);
+        if (Math.abs(x) > 1e-300) expect(one('x^(-1)', { x })).toBe(1 / x);
+        if (x >= 0) expect(one('x^0.5', { x })).toBe(Math.sqrt(x));
+      }),
+      checks,
+    );
   });
 
   it('computes e^x as the exponential', () => {

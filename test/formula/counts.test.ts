@@ -3,8 +3,17 @@
 
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import {
+  common,
+  countsAgainst,
+  fitsAngle,
+  multiplyCounts,
+  nearestZero,
+  powerCounts,
+  standing,
+  stands,
+} from '../../src/formula/counts.ts';
 import { inferFormula, type Scope } from '../../src/formula/index.ts';
-import { common, countsAgainst, fitsAngle, multiplyCounts, nearestZero, powerCounts, standing, stands } from '../../src/formula/counts.ts';
 import type { FormulaCounts } from '../../src/formula/type.ts';
 import { compareR, negR, type Rational, rational, textR } from '../../src/quantity/index.ts';
 import { formulaOf, scopeOf, unitOf } from './scope.ts';
@@ -39,7 +48,8 @@ describe('standing', () => {
         const s = standing(of);
         const wrong: string[] = [];
         for (let k = -30; k <= 30; k++) {
-          for (const base of [rational(k), rational(of.r.n + k * of.r.d, of.r.d)]) if (stands(s, base) !== values.has(textR(base))) wrong.push(textR(base));
+          for (const base of [rational(k), rational(of.r.n + k * of.r.d, of.r.d)])
+            if (stands(s, base) !== values.has(textR(base))) wrong.push(textR(base));
         }
         expect(wrong).toEqual([]);
         const nearest = nearestZero(s);
@@ -58,7 +68,9 @@ describe('standing', () => {
         const both = [...defined(a).keys()].filter((value) => defined(b).has(value));
         const found = common(standing(a), standing(b));
         expect(found !== undefined).toBe(both.length > 0);
-        expect([...defined(a).keys()].filter((value) => found !== undefined && stands(found, rational(...fraction(value))))).toEqual(both);
+        expect(
+          [...defined(a).keys()].filter((value) => found !== undefined && stands(found, rational(...fraction(value)))),
+        ).toEqual(both);
       }),
       checks,
     );
@@ -78,7 +90,9 @@ describe('standing', () => {
   it('needs some whole j with r + hz − j = 0 for an angle', () => {
     fc.assert(
       fc.property(counts, (of) => {
-        const whole = wholes(of.pi).some((j) => compareR(rational(of.r.n * of.hz.d + of.hz.n * of.r.d, of.r.d * of.hz.d), rational(j)) === 0);
+        const whole = wholes(of.pi).some(
+          (j) => compareR(rational(of.r.n * of.hz.d + of.hz.n * of.r.d, of.r.d * of.hz.d), rational(j)) === 0,
+        );
         expect(fitsAngle(of)).toBe(whole);
       }),
       checks,
@@ -92,20 +106,45 @@ const fraction = (text: string): [number, number] => {
 };
 
 describe('targets', () => {
-  const of = (r: number, hz: number, pi: number, rad: number): FormulaCounts => ({ r: rational(r), hz: rational(hz), pi: rational(pi), rad: rational(rad) });
+  const of = (r: number, hz: number, pi: number, rad: number): FormulaCounts => ({
+    r: rational(r),
+    hz: rational(hz),
+    pi: rational(pi),
+    rad: rational(rad),
+  });
   it.each([
-    [of(1, 0, 0, 0), 'r/min', 'fits'], [of(1, 0, 0, 0), '1/s', 'fits'], [of(1, 0, 0, 0), 'Hz', 'fits'], [of(1, 0, 0, 0), 'rad/s', 'revolutions'],
-    [of(2, 0, 0, 0), '1/s', 'revolutions'], [of(-1, 0, 0, 0), 's', 'fits'], [of(-2, 0, 0, 0), 's', 'revolutions'], [of(-1, 0, 0, 0), '1/s', 'revolutions'],
-    [of(0, 0, 0, 1), 'Hz', 'radians'], [of(0, 0, -1, 1), 'Hz', 'fits'], [of(0, 0, 0, 1), '1/s', 'fits'], [of(0, 0, 0, 0), 'Hz', 'fits'],
-    [of(0, 1, 0, 0), 'r/min', 'fits'], [of(0, 1, 0, 0), 'rad/s', 'revolutions'], [of(0, 1, 1, 0), 'rad/s', 'fits'], [of(1, 0, 1, 0), 'deg', 'fits'],
-    [of(1, 0, 0, 0), 'mm/r', 'revolutions'], [of(-1, 0, 0, 0), 'mm/r', 'fits'], [of(1, 0, 0, 0), '1', 'revolutions'], [of(1, 0, 0, 0), 'r', 'fits'],
+    [of(1, 0, 0, 0), 'r/min', 'fits'],
+    [of(1, 0, 0, 0), '1/s', 'fits'],
+    [of(1, 0, 0, 0), 'Hz', 'fits'],
+    [of(1, 0, 0, 0), 'rad/s', 'revolutions'],
+    [of(2, 0, 0, 0), '1/s', 'revolutions'],
+    [of(-1, 0, 0, 0), 's', 'fits'],
+    [of(-2, 0, 0, 0), 's', 'revolutions'],
+    [of(-1, 0, 0, 0), '1/s', 'revolutions'],
+    [of(0, 0, 0, 1), 'Hz', 'radians'],
+    [of(0, 0, -1, 1), 'Hz', 'fits'],
+    [of(0, 0, 0, 1), '1/s', 'fits'],
+    [of(0, 0, 0, 0), 'Hz', 'fits'],
+    [of(0, 1, 0, 0), 'r/min', 'fits'],
+    [of(0, 1, 0, 0), 'rad/s', 'revolutions'],
+    [of(0, 1, 1, 0), 'rad/s', 'fits'],
+    [of(1, 0, 1, 0), 'deg', 'fits'],
+    [of(1, 0, 0, 0), 'mm/r', 'revolutions'],
+    [of(-1, 0, 0, 0), 'mm/r', 'fits'],
+    [of(1, 0, 0, 0), '1', 'revolutions'],
+    [of(1, 0, 0, 0), 'r', 'fits'],
   ] as const)('%o against %s: %s', (counted, target, verdict) => {
     expect(countsAgainst(counted, unitOf(target))).toBe(verdict);
   });
 });
 
 describe('hostile formulas', () => {
-  const scope: Scope = scopeOf({ n: 'r/min', L: 'm', f: 'Hz', ...Object.fromEntries(Array.from({ length: 60 }, (_, index) => [`n_${index}`, 'r/min'])) });
+  const scope: Scope = scopeOf({
+    n: 'r/min',
+    L: 'm',
+    f: 'Hz',
+    ...Object.fromEntries(Array.from({ length: 60 }, (_, index) => [`n_${index}`, 'r/min'])),
+  });
   it.each([
     ['a long sum that fails', Array.from({ length: 60 }, (_, index) => `n_${index}*L`).join(' + '), 'm/s'],
     ['a long product', Array.from({ length: 120 }, () => 'n*f').join('*'), 'W'],

@@ -5,8 +5,17 @@ import { type Expr, explain, type Lookup, type TableData } from '../../src/formu
 import { formulaOf, unitOf } from './scope.ts';
 
 const quantities: ReadonlyMap<string, readonly [si: number, unit: string]> = new Map<string, readonly [number, string]>([
-  ['d_1', [0.2, 'mm']], ['d_2', [0.2, 'mm']], ['C', [5, 'm']], ['F_1', [100, 'N']], ['F_2', [300, 'N']], ['mu', [1.2, '1']],
-  ['theta', [Math.PI, 'deg']], ['z', [4.2, '1']], ['P', [1e300, 'W']], ['T_a', [293.15, 'degC']], ['T_b', [293.15, 'degC']],
+  ['d_1', [0.2, 'mm']],
+  ['d_2', [0.2, 'mm']],
+  ['C', [5, 'm']],
+  ['F_1', [100, 'N']],
+  ['F_2', [300, 'N']],
+  ['mu', [1.2, '1']],
+  ['theta', [Math.PI, 'deg']],
+  ['z', [4.2, '1']],
+  ['P', [1e300, 'W']],
+  ['T_a', [293.15, 'degC']],
+  ['T_b', [293.15, 'degC']],
 ]);
 const belts: TableData = {
   name: 'belts',
@@ -33,7 +42,11 @@ const falling: TableData = {
   ],
   rows: 3,
 };
-const doubled: TableData = { ...falling, name: 'doubled', columns: [{ ...falling.columns[0]!, numbers: Float64Array.of(1, 1, 2) }, falling.columns[1]!] };
+const doubled: TableData = {
+  ...falling,
+  name: 'doubled',
+  columns: [{ ...falling.columns[0]!, numbers: Float64Array.of(1, 1, 2) }, falling.columns[1]!],
+};
 const tables = new Map([belts, surfaces, falling, doubled].map((table) => [table.name, table]));
 
 const lookup: Lookup = {
@@ -56,23 +69,63 @@ const value = (text: string): number => {
 
 describe('trouble', () => {
   it.each([
-    ['C/(d_2 - d_1)', 'division-by-zero', 'division by zero: d_2 - d_1 is 0 mm (d_2 = 200 mm, d_1 = 200 mm) in C/(d_2 - d_1); check what makes it vanish'],
-    ['(F_1 - F_1)/0', 'division-by-zero', 'division by zero: the divisor is written as 0 in (F_1 - F_1)/0; check what makes it vanish'],
-    ['(d_1 - d_2)^(-1)', 'division-by-zero', 'division by zero: d_1 - d_2 is 0 and has a negative exponent; check what makes it vanish'],
+    [
+      'C/(d_2 - d_1)',
+      'division-by-zero',
+      'division by zero: d_2 - d_1 is 0 mm (d_2 = 200 mm, d_1 = 200 mm) in C/(d_2 - d_1); check what makes it vanish',
+    ],
+    [
+      '(F_1 - F_1)/0',
+      'division-by-zero',
+      'division by zero: the divisor is written as 0 in (F_1 - F_1)/0; check what makes it vanish',
+    ],
+    [
+      '(d_1 - d_2)^(-1)',
+      'division-by-zero',
+      'division by zero: d_1 - d_2 is 0 and has a negative exponent; check what makes it vanish',
+    ],
     ['asin(mu)', 'beyond-one', 'asin(1.2): no angle has a sine beyond 1; μ must lie between −1 and 1'],
     ['acos(-mu)', 'beyond-one', 'acos(−1.2): no angle has a cosine below −1; -μ must lie between −1 and 1'],
-    ['sqrt(F_1 - F_2)', 'root-of-negative', 'root of a negative number: F_1 - F_2 is −200 N in sqrt(F_1 - F_2); a root needs 0 or more'],
-    ['(F_1^2 - F_2^2)^0.5', 'root-of-negative', 'root of a negative number: F_1^2 - F_2^2 is −80 000 N² in (F_1^2 - F_2^2)^0.5; a root needs 0 or more'],
-    ['(F_1/F_2 - 2)^1.5', 'root-of-negative', 'root of a negative number: F_1/F_2 - 2 is −1.666 67 in (F_1/F_2 - 2)^1.5; a root needs 0 or more'],
+    [
+      'sqrt(F_1 - F_2)',
+      'root-of-negative',
+      'root of a negative number: F_1 - F_2 is −200 N in sqrt(F_1 - F_2); a root needs 0 or more',
+    ],
+    [
+      '(F_1^2 - F_2^2)^0.5',
+      'root-of-negative',
+      'root of a negative number: F_1^2 - F_2^2 is −80 000 N² in (F_1^2 - F_2^2)^0.5; a root needs 0 or more',
+    ],
+    [
+      '(F_1/F_2 - 2)^1.5',
+      'root-of-negative',
+      'root of a negative number: F_1/F_2 - 2 is −1.666 67 in (F_1/F_2 - 2)^1.5; a root needs 0 or more',
+    ],
     ['ln(F_1/F_2 - F_1/F_2)', 'logarithm', 'ln of zero: F_1/F_2 - F_1/F_2 is 0; a logarithm needs a number above 0'],
     ['log10(-mu)', 'logarithm', 'log10 of a negative number: -μ is −1.2; a logarithm needs a number above 0'],
     ['exp(z*1000)', 'overflow', 'exp(z·1000) is too large for a number (beyond 1.8e308) with z = 4.2; check the values'],
     ['P*P*z', 'overflow', 'P·P is too large for a number (beyond 1.8e308) with P = 1 × 10³⁰⁰ W; check the values'],
-    ['interpolate(belts, m, C)', 'beyond-table', 'C = 5 m lies beyond the table `belts` (0.1 m to 2 m); extend the table with a source, or change the value'],
-    ['interpolate(belts, m, d_1/4)', 'beyond-table', 'd_1/4 = 0.05 m lies beyond the table `belts` (0.1 m to 2 m); extend the table with a source, or change the value'],
+    [
+      'interpolate(belts, m, C)',
+      'beyond-table',
+      'C = 5 m lies beyond the table `belts` (0.1 m to 2 m); extend the table with a source, or change the value',
+    ],
+    [
+      'interpolate(belts, m, d_1/4)',
+      'beyond-table',
+      'd_1/4 = 0.05 m lies beyond the table `belts` (0.1 m to 2 m); extend the table with a source, or change the value',
+    ],
     ['interpolate(belts, m, "1.5 m")', 'no-value', 'the table belts has no number there in its column m; fill the entry'],
-    ['interpolate(doubled, y, 1.5)', 'unordered-table', 'cannot interpolate in doubled: its keys (x) must rise or fall from row to row; sort the rows and remove doubles'],
-    ['entry(belts, m, "1.5 m")', 'no-row', 'no row 1.5 m in table belts; nearest: 1 m; entry wants the exact key, interpolate reads between rows'],
+    [
+      'interpolate(doubled, y, 1.5)',
+      'unordered-table',
+      'cannot interpolate in doubled: its keys (x) must rise or fall from row to row; sort the rows and remove doubles',
+    ],
+    [
+      'entry(belts, m, "1.5 m")',
+      'no-row',
+      'no row 1.5 m in table belts; nearest: 1 m; entry wants the exact key, interpolate reads between rows',
+    ],
     ['entry(surfaces, mu, other)', 'no-row', 'no row `rubber` in table surfaces; nearest: `rubber on steel`'],
     ['entry(surfaces, mu, "x")', 'no-row', 'no row `x` in table surfaces; its rows: `leather on iron`, `rubber on steel`'],
     ['F_9 + F_1', 'no-value', 'F_9 has no value here; give it one first'],
@@ -153,7 +206,15 @@ describe('tables', () => {
     const between = formulaOf('interpolate(belts, m, "0.55 m")').expr;
     const at = formulaOf('interpolate(belts, m, "1 m")').expr;
     const walked = explain(between, lookup);
-    expect(walked.ok && walked.taken.table(between)).toEqual({ kind: 'interpolate', x0: 0.1, x1: 1, y0: 1, y1: 2, xUnit: unitOf('m'), yUnit: unitOf('kg/m') });
+    expect(walked.ok && walked.taken.table(between)).toEqual({
+      kind: 'interpolate',
+      x0: 0.1,
+      x1: 1,
+      y0: 1,
+      y1: 2,
+      xUnit: unitOf('m'),
+      yUnit: unitOf('kg/m'),
+    });
     const row = explain(at, lookup);
     expect(row.ok && row.taken.table(at)).toEqual({ kind: 'entry', value: 2, unit: unitOf('kg/m') });
   });
@@ -161,9 +222,17 @@ describe('tables', () => {
 
 describe('jumps', () => {
   it.each([
-    ['ceil(3.0000000001)', 4, true], ['ceil(2.9999999999)', 3, true], ['ceil(3.00000001)', 4, false], ['floor(0.1*3*10)', 3, true],
-    ['round(2.5)', 2, true], ['round(3.5)', 4, true], ['round(2.50000001)', 3, false], ['floor(3000000.001)', 3000000, true], ['floor(3000000.1)', 3000000, false],
-    ['round(3)', 3, false], ['ceil(z)', 5, false],
+    ['ceil(3.0000000001)', 4, true],
+    ['ceil(2.9999999999)', 3, true],
+    ['ceil(3.00000001)', 4, false],
+    ['floor(0.1*3*10)', 3, true],
+    ['round(2.5)', 2, true],
+    ['round(3.5)', 4, true],
+    ['round(2.50000001)', 3, false],
+    ['floor(3000000.001)', 3000000, true],
+    ['floor(3000000.1)', 3000000, false],
+    ['round(3)', 3, false],
+    ['ceil(z)', 5, false],
   ])('%s is %d; warned of: %s', (text, whole, warned) => {
     const walked = run(text);
     expect(walked.ok && walked.value).toBe(whole);

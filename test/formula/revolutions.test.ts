@@ -9,11 +9,58 @@ import { inferFormula } from '../../src/formula/index.ts';
 import { formulaOf, scopeOf, unitOf } from './scope.ts';
 
 const scope = scopeOf({
-  n: 'r/min', n_1: 'r/min', n_2: 'r/min', omega: 'rad/s', omega_1: 'rad/s', omega_2: 'rad/s', f: 'Hz', f_s: '1/s', n_si: '1/s',
-  v: 'm/s', v_x: 'm/s', d: 'm', d_1: 'm', d_2: 'm', D: 'm', C: 'm', L: 'm', r: 'm', t: 'm', pt: 'm',
-  M: 'N*m', P: 'W', F: 'N', th: 'deg', phi: 'rad', mu: '1', s: '1', z: '1', N: '1', p: '1', Nr: 'r', zr: '1/r',
-  V_r: 'cm^3/r', f_r: 'mm/r', W_r: 'J/r', W_j: 'J', V: 'cm^3', T_a: 'degC', T_b: 'degC', dT: 'K', T_K: 'K',
-  J: 'kg*m^2', k_t: 'N*m', m: 'kg/m', mass: 'kg', ts: 's', Cd: 'N', Pd: 'N', Q: 'm^3/s', c: 'J/(kg*K)', h_t: 'W/(m^2*K)', Ar: 'm^2',
+  n: 'r/min',
+  n_1: 'r/min',
+  n_2: 'r/min',
+  omega: 'rad/s',
+  omega_1: 'rad/s',
+  omega_2: 'rad/s',
+  f: 'Hz',
+  f_s: '1/s',
+  n_si: '1/s',
+  v: 'm/s',
+  v_x: 'm/s',
+  d: 'm',
+  d_1: 'm',
+  d_2: 'm',
+  D: 'm',
+  C: 'm',
+  L: 'm',
+  r: 'm',
+  t: 'm',
+  pt: 'm',
+  M: 'N*m',
+  P: 'W',
+  F: 'N',
+  th: 'deg',
+  phi: 'rad',
+  mu: '1',
+  s: '1',
+  z: '1',
+  N: '1',
+  p: '1',
+  Nr: 'r',
+  zr: '1/r',
+  V_r: 'cm^3/r',
+  f_r: 'mm/r',
+  W_r: 'J/r',
+  W_j: 'J',
+  V: 'cm^3',
+  T_a: 'degC',
+  T_b: 'degC',
+  dT: 'K',
+  T_K: 'K',
+  J: 'kg*m^2',
+  k_t: 'N*m',
+  m: 'kg/m',
+  mass: 'kg',
+  ts: 's',
+  Cd: 'N',
+  Pd: 'N',
+  Q: 'm^3/s',
+  c: 'J/(kg*K)',
+  h_t: 'W/(m^2*K)',
+  Ar: 'm^2',
 });
 
 type Row = readonly [formula: string, target: string, sense: 'right' | 'wrong', refused?: string];
@@ -106,20 +153,28 @@ const rows: readonly Row[] = [
 ];
 
 const refusals = (formula: string, target: string): readonly string[] =>
-  inferFormula(formulaOf(formula), scope, unitOf(target)).problems.filter((problem) => problem.severity === 'error').map((problem) => problem.message);
+  inferFormula(formulaOf(formula), scope, unitOf(target))
+    .problems.filter((problem) => problem.severity === 'error')
+    .map((problem) => problem.message);
 
 describe('verdicts', () => {
-  it.each(rows.map(([formula, target, sense, refused]) => ({ formula, target, sense, refused })))('$formula against $target ($sense in the trade)', ({ formula, target, refused }) => {
-    const messages = refusals(formula, target);
-    if (refused === undefined) expect(messages).toEqual([]);
-    else {
-      expect(messages).toHaveLength(1);
-      expect(messages[0]).toMatch(new RegExp(`^${refused.replace(/[+()]/g, '\\$&')}: .{20,}`));
-    }
-  });
+  it.each(rows.map(([formula, target, sense, refused]) => ({ formula, target, sense, refused })))(
+    '$formula against $target ($sense in the trade)',
+    ({ formula, target, refused }) => {
+      const messages = refusals(formula, target);
+      if (refused === undefined) expect(messages).toEqual([]);
+      else {
+        expect(messages).toHaveLength(1);
+        expect(messages[0]).toMatch(new RegExp(`^${refused.replace(/[+()]/g, '\\$&')}: .{20,}`));
+      }
+    },
+  );
 
   const unjust = rows.filter(([, , sense, refused]) => sense === 'right' && refused !== undefined);
-  it.each(unjust.map(([formula, target]) => ({ formula, target })))('$formula against $target is right but refused: its message names the correction', ({ formula, target }) => {
-    expect(refusals(formula, target)[0]).toMatch(/2\*pi|\/r\)|·r\)|"1 r"|-273\.15 degC/);
-  });
+  it.each(unjust.map(([formula, target]) => ({ formula, target })))(
+    '$formula against $target is right but refused: its message names the correction',
+    ({ formula, target }) => {
+      expect(refusals(formula, target)[0]).toMatch(/2\*pi|\/r\)|·r\)|"1 r"|-273\.15 degC/);
+    },
+  );
 });

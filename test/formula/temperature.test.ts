@@ -4,7 +4,12 @@
 // thermodynamic and Celsius temperature; NIST SP 811, 8.5: t/°C = T/K − 273.15; intervals are equal in K and °C).
 
 import { describe, expect, it } from 'vitest';
-import { likeTemperatures, sumOfTemperatures, temperatureAgainst, type TemperatureOperand } from '../../src/formula/temperature.ts';
+import {
+  likeTemperatures,
+  sumOfTemperatures,
+  type TemperatureOperand,
+  temperatureAgainst,
+} from '../../src/formula/temperature.ts';
 
 const operands = {
   reading: { kind: 'reading', zero: false },
