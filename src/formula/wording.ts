@@ -74,8 +74,19 @@ function write(expr: Expr, room: number): string {
   }
 }
 
+// Types of names live as long as their cells and are asked for by every formula that uses them.
+const kinds = new WeakMap<Type, string>();
+
 /** 'force', 'number', 'text', 'truth value'. */
 export function kindOf(type: Type): string {
+  const known = kinds.get(type);
+  if (known !== undefined) return known;
+  const kind = kindAnew(type);
+  kinds.set(type, kind);
+  return kind;
+}
+
+function kindAnew(type: Type): string {
   if (type.kind === 'truth') return 'truth value';
   if (type.kind === 'text') return 'text';
   if (type.temperature === 'reading') return 'temperature reading';
