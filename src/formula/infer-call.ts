@@ -4,7 +4,7 @@
 // 2. floor, ceil and round take bare numbers only: of anything else the result would depend on the unit.
 // Not here: arity (the walk of the reader has checked it), numbers (explain.ts, run.ts).
 
-import { either, equalD, isAngleUnit, isDimensionless, rational, readUnit } from '../quantity/index.ts';
+import { either, equalD, type Fix, isAngleUnit, isDimensionless, rational, readUnit } from '../quantity/index.ts';
 import { angleCounts, fitsAngle } from './counts.ts';
 import type { Expr } from './expr.ts';
 import { alike, type Part, powerByRational, quantity, quantityOf, refuseReading, refuseRevolutions } from './infer-rules.ts';
@@ -84,7 +84,7 @@ function wholeNumber(ctx: Context, name: string, part: Part): Term | undefined {
   const declaredAngle = part.term?.plain === true && type.unitText !== undefined && isAngle(type.unitText);
   if (!isDimensionless(type.dimension) || declaredAngle || !fitsAngle(type.counts)) {
     if (isDimensionless(type.dimension) && !declaredAngle) return refuseRevolutions(ctx, name, part.expr, type, true);
-    return report(ctx, 'rounding-unit', roundingNeedsNumber(name, part.expr, type), part.expr.at, rounded(ctx, name, part, type));
+    return report(ctx, 'rounding-unit', roundingNeedsNumber(name, part.expr, type), part.expr.at, rounded(ctx, part, type));
   }
   return numberTerm;
 }
@@ -94,7 +94,8 @@ function isAngle(unitText: string): boolean {
   return unit.ok && isAngleUnit(unit.value);
 }
 
-function rounded(ctx: Context, _name: string, part: Part, type: QuantityType) {
+/** Offered for a name: the count in its declared unit. */
+function rounded(ctx: Context, part: Part, type: QuantityType): readonly Fix[] {
   if (type.unitText === undefined || part.expr.kind !== 'name') return [];
   const unit = `"1 ${type.unitText}"`;
   const [from, to] = part.expr.at;
