@@ -28,7 +28,8 @@ const examples: readonly Example[] = [
   },
   {
     id: 'A2',
-    source: 'Rope friction example, transtutors.com civil engineering, friction: weights from 94.78 N to 10 550.72 N stay at rest',
+    source:
+      'Rope friction example, transtutors.com civil engineering, friction: weights from 94.78 N to 10 550.72 N stay at rest',
     tag: 'print seen',
     template: 'capstan',
     givens: { F_load: '1000 N', N: '1.5', mu: '0.25' },
@@ -79,7 +80,10 @@ const examples: readonly Example[] = [
         name: 'F_hold',
         unit: 'N',
         recomputed: '118.2172',
-        wrong: { printed: '304800', because: 'the ratio was applied the wrong way round: the holding force would exceed the load' },
+        wrong: {
+          printed: '304800',
+          because: 'the ratio was applied the wrong way round: the holding force would exceed the load',
+        },
       },
     ],
   },
@@ -115,7 +119,13 @@ const examples: readonly Example[] = [
     givens: { F_load: '2000 N', N: '2.5', mu: '0.25' },
     checks: [
       { name: 'k', recomputed: '50.75402', printed: '51', wrong: { printed: '52', because: 'the source disagrees with itself' } },
-      { name: 'F_hold', unit: 'N', recomputed: '39.40575', printed: '39', wrong: { printed: '40', because: 'the source disagrees with itself' } },
+      {
+        name: 'F_hold',
+        unit: 'N',
+        recomputed: '39.40575',
+        printed: '39',
+        wrong: { printed: '40', because: 'the source disagrees with itself' },
+      },
     ],
   },
 ];
@@ -139,7 +149,9 @@ describe('A9, table of force ratios by turns and friction', () => {
     test(`${turns} turns at friction 0.1 to 0.7`, () => {
       for (const [index, ratio] of ratios.entries()) {
         const k = valueOf(solve('capstan', { N: String(turns), mu: `0.${index + 1}` }), 'k');
-        expect(Math.abs(k - Number(ratio)), `${turns} turns, mu 0.${index + 1}: ${k}`).toBeLessThanOrEqual(halfUnit(ratio) * 1.001);
+        expect(Math.abs(k - Number(ratio)), `${turns} turns, mu 0.${index + 1}: ${k}`).toBeLessThanOrEqual(
+          halfUnit(ratio) * 1.001,
+        );
       }
     });
   }

@@ -68,7 +68,12 @@ export function valueOf(calculation: Calculation, name: string, unit = '1', load
   const index = loadCase === undefined ? 0 : calculation.cases.findIndex((one) => one.id === loadCase);
   const si = state.si[index];
   if (si === undefined || Number.isNaN(si)) {
-    throw new Error(`${name} has no value: ${calculation.problems().map((problem) => `${problem.cell}: ${problem.message}`).join('; ')}`);
+    throw new Error(
+      `${name} has no value: ${calculation
+        .problems()
+        .map((problem) => `${problem.cell}: ${problem.message}`)
+        .join('; ')}`,
+    );
   }
   return si / read.value.si;
 }
@@ -96,7 +101,9 @@ export function check(calculation: Calculation, one: Check): void {
   }
   if (one.wrong !== undefined) {
     const gap = Math.abs(actual - Number(one.wrong.printed));
-    expect(gap, `${one.name} must not come to ${one.wrong.printed}: ${one.wrong.because}`).toBeGreaterThan(halfUnit(one.wrong.printed));
+    expect(gap, `${one.name} must not come to ${one.wrong.printed}: ${one.wrong.because}`).toBeGreaterThan(
+      halfUnit(one.wrong.printed),
+    );
   }
 }
 
@@ -114,4 +121,9 @@ export function testExamples(examples: readonly Example[]): void {
 /** Speed of a pulley of diameter `d` (m) in r/min whose rim runs at `v` (m/s), to 17 digits. */
 export function speedFor(v: number, d: number): string {
   return `${(v / (Math.PI * d)) * 60} r/min`;
+}
+
+/** Two pulleys `C` (m) apart whose open belt wraps the first, of diameter `d` (m), by `degrees`. */
+export function wrapped(degrees: number, d = 0.1, C = 1): Readonly<Record<string, string>> {
+  return { d_1: `${d} m`, d_2: `${d + 2 * C * Math.sin(((180 - degrees) * Math.PI) / 360)} m`, C: `${C} m` };
 }

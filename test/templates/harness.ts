@@ -8,14 +8,24 @@ import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { fromSI } from '../../src/quantity/index.ts';
 import { makeRecord } from '../../src/record/index.ts';
-import { type Calculation, calculate, type DerivedCell, type GivenCell, readSheet, type Sheet, writeSheet } from '../../src/sheet/index.ts';
+import {
+  type Calculation,
+  calculate,
+  type DerivedCell,
+  type GivenCell,
+  readSheet,
+  type Sheet,
+  writeSheet,
+} from '../../src/sheet/index.ts';
 import { fault } from './lines.ts';
 import { listOf, publishedNames } from './names.ts';
 import { randomFrom, rangeOf, varied, variedInOne } from './vary.ts';
 
 const folder = new URL('../../templates/', import.meta.url);
 const ending = '.sheet.json';
-export const templateIds = readdirSync(folder).filter((file) => file.endsWith(ending)).map((file) => file.slice(0, -ending.length));
+export const templateIds = readdirSync(folder)
+  .filter((file) => file.endsWith(ending))
+  .map((file) => file.slice(0, -ending.length));
 const seed = Number(process.env['TIGHTSIDE_SEED'] ?? 20_261_201);
 const variations = 200;
 
@@ -29,7 +39,8 @@ function sheetOf(id: string): Sheet {
   return read.value;
 }
 
-const said = (calculation: Calculation) => calculation.problems().map((problem) => `${problem.cell}: ${problem.code}: ${problem.message}`);
+const said = (calculation: Calculation) =>
+  calculation.problems().map((problem) => `${problem.cell}: ${problem.code}: ${problem.message}`);
 
 /** Faults of all numeric steps that have a value, one line each. */
 function faultsOf(calculation: Calculation): string[] {
@@ -134,13 +145,16 @@ function testTemplate(id: string): void {
 
   test('every reference is cited and every citation has its reference', () => {
     const references = new Set((sheet.references ?? []).map((one) => one.id));
-    const cited = new Set([...JSON.stringify({ ...sheet, references: [] }).matchAll(/\[(R\d+)\]/g)].map((match) => match[1] ?? ''));
+    const cited = new Set(
+      [...JSON.stringify({ ...sheet, references: [] }).matchAll(/\[(R\d+)\]/g)].map((match) => match[1] ?? ''),
+    );
     expect([...cited].sort()).toEqual([...references].sort());
   });
 
   test('every given and every derived line is used, or is a result', () => {
     const results = new Set([...listOf(names.results), ...listOf(names.further)]);
-    const computing = (cellId: string) => ['derived', 'criterion', 'sought'].includes(sheet.cells.find((cell) => cell.id === cellId)?.kind ?? '');
+    const computing = (cellId: string) =>
+      ['derived', 'criterion', 'sought'].includes(sheet.cells.find((cell) => cell.id === cellId)?.kind ?? '');
     const idle = [...givens, ...derived].filter((cell) => !results.has(cell.name) && !calculation.use(cell.id).some(computing));
     expect(idle.map((cell) => cell.name)).toEqual([]);
   });
@@ -166,9 +180,12 @@ function testTemplate(id: string): void {
       faults.push(...faultsOf(one).map((text) => `round ${round}: ${text}`));
     }
     expect(faults.length, faults.slice(0, 10).join('\n')).toBe(0);
-    expect(whole, `variations without an error; errors: ${[...new Set(errors)].join(', ')}`).toBeGreaterThanOrEqual(variations / 2);
+    expect(whole, `variations without an error; errors: ${[...new Set(errors)].join(', ')}`).toBeGreaterThanOrEqual(
+      variations / 2,
+    );
     // Corners where two givens meet are rare: more draws, without their records, until each criterion has said both.
-    for (let round = 0; round < 20 * variations && verdicts.oneSided().length > 0; round += 1) verdicts.note(calculate(varied(sheet, random)));
+    for (let round = 0; round < 20 * variations && verdicts.oneSided().length > 0; round += 1)
+      verdicts.note(calculate(varied(sheet, random)));
     expect(verdicts.oneSided()).toEqual([]);
   }, 120_000);
 

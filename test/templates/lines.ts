@@ -26,7 +26,10 @@ export function readNumeral(text: string): Read {
   const match = /^(-?)(\d+)(?:\.(\d+))?(?:(?:\u00a0|\s)?×(?:\u00a0|\s)?10([⁻⁰¹²³⁴⁵⁶⁷⁸⁹]+)|e([+-]?\d+))?/u.exec(plain);
   if (!match) throw new Error(`no numeral at the start of “${text}”`);
   const [, sign, whole, decimals = '', raised, typed] = match;
-  const exponent = raised === undefined ? Number(typed ?? 0) : Number([...raised].map((c) => (c === '⁻' ? '-' : superscripts.indexOf(c))).join(''));
+  const exponent =
+    raised === undefined
+      ? Number(typed ?? 0)
+      : Number([...raised].map((c) => (c === '⁻' ? '-' : superscripts.indexOf(c))).join(''));
   return { value: Number(`${sign}${whole}.${decimals || '0'}e${exponent}`), unit: 10 ** (exponent - decimals.length) };
 }
 
@@ -38,8 +41,10 @@ function isRounded(value: number, printed: Read): boolean {
 /** What is wrong with one step in one case; '' where nothing is. `si` and `shown` are the true value in SI and in the unit of the step. */
 export function fault(step: Step, one: StepCase, si: number, shown: number): string {
   const where = `${step.number} ${step.name ?? step.cell} in ${one.case}`;
-  if (one.calculatorLine === null || one.calculatorResult === null || one.result === null) return `${where}: no calculator line or result`;
-  if (!one.closes) return `${where}: does not close (${one.reason ?? 'no reason'}): ${one.calculatorLine} -> ${one.calculatorResult}`;
+  if (one.calculatorLine === null || one.calculatorResult === null || one.result === null)
+    return `${where}: no calculator line or result`;
+  if (!one.closes)
+    return `${where}: does not close (${one.reason ?? 'no reason'}): ${one.calculatorLine} -> ${one.calculatorResult}`;
   const wanted = readNumeral(one.calculatorResult);
   const found = evaluateOutside(one.calculatorLine);
   if (!(Math.abs(found - wanted.value) <= wanted.unit * (1 + 1e-9))) {

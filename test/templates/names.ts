@@ -21,7 +21,11 @@ export const publishedNames: ReadonlyMap<string, Names> = new Map<string, Names>
   ['flat-belt-crossed', flatBelt],
   [
     'flat-belt-idler',
-    { givens: `${flatBelt.givens} x_I y_I d_I`, results: `${flatBelt.results} theta_I F_WI`, further: 'i_gov theta_0 F_W2 F_W02 F_WI0' },
+    {
+      givens: `${flatBelt.givens} x_I y_I d_I`,
+      results: `${flatBelt.results} theta_I F_WI`,
+      further: 'i_gov theta_0 F_W2 F_W02 F_WI0',
+    },
   ],
   [
     'v-belt',
@@ -45,7 +49,10 @@ export const publishedNames: ReadonlyMap<string, Names> = new Map<string, Names>
       results: 'k F_slack F_tight M F_tight_rev F_slack_rev M_rev mu_lock F_req F_req_rev p_max sigma',
     },
   ],
-  ['band-brake-two-way', { givens: 'D theta mu F l a w w_b t p_allow sigma_allow M_req', results: 'k F_tight F_slack M p_max sigma F_req' }],
+  [
+    'band-brake-two-way',
+    { givens: 'D theta mu F l a w w_b t p_allow sigma_allow M_req', results: 'k F_tight F_slack M p_max sigma F_req' },
+  ],
   ['band-and-block', { givens: 'D N_b delta mu F_slack', results: 'k F_tight M', further: 'k_band F_slack_req' }],
   [
     'brake-stop-heat',

@@ -63,5 +63,8 @@ export function varied(sheet: Sheet, random: () => number): Sheet {
 /** One given drawn anew, all others as they stand: finds what a single value can upset. */
 export function variedInOne(sheet: Sheet, name: string, random: () => number): Sheet {
   const all = varied(sheet, random);
-  return { ...sheet, cells: sheet.cells.map((cell, index) => (cell.kind === 'given' && cell.name === name ? all.cells[index]! : cell)) };
+  return {
+    ...sheet,
+    cells: sheet.cells.map((cell, index) => (cell.kind === 'given' && cell.name === name ? all.cells[index]! : cell)),
+  };
 }
