@@ -2,10 +2,24 @@ export { type Calculation, type Changed, calculate } from './calculation.ts';
 export * from './cases.ts';
 export * from './criterion.ts';
 export * from './document.ts';
+export {
+  type ComparisonDraft,
+  checkComparison,
+  checkEquation,
+  checkFormula,
+  type DraftCase,
+  type DraftPlace,
+  type DraftVerdict,
+  type FormulaDraft,
+  quantityNames,
+  type TwoSides,
+  tableNames,
+} from './draft.ts';
 export * from './edit.ts';
 export { type FileProblem, type ReadSheet, readSheet, writeSheet } from './file.ts';
 export { buildGraph, type Graph } from './graph.ts';
 export * from './history.ts';
+export * from './insert-block.ts';
 export { badCharacters } from './json-text.ts';
 export * from './numbering.ts';
 export { nameFault } from './rename.ts';

@@ -1,8 +1,9 @@
-// A quantity gets another name: its cell, and every place that names it.
+// Quantities and tables get other names: their cells, and every place that names them.
 //
 // 1. Formulas are rewritten by their tokens: `F_1` in `F_10`, in a quoted literal or as a table or column is left alone.
 // 2. A name is found in whatever alphabet it was typed (μ_1, mu_1) and replaced by the new one as typed.
 // 3. Everything else in a text stays as it stands, spaces included.
+// 4. All names of a renaming are replaced at once: two may change places.
 // Not here: whether the new name may be taken (nameFault says so; edit.ts does what it is told).
 
 import { canonicalName, isName, reserved, tokenize } from '../formula/index.ts';
@@ -27,23 +28,34 @@ function definesName(cell: Cell): cell is Naming {
   return cell.kind === 'given' || cell.kind === 'derived' || cell.kind === 'sought';
 }
 
+/** What quantities and tables are called instead; undefined where a name stays. Quantities are asked for by canonical name. */
+export interface Renaming {
+  quantity(name: string): string | undefined;
+  table(name: string): string | undefined;
+}
+
 /** The cells that change when quantity `from` becomes `to`. */
 export function renamedCells(sheet: Sheet, from: string, to: string): Cell[] {
   const name = canonicalName(from);
+  const renaming: Renaming = { quantity: (known) => (known === name ? to : undefined), table: () => undefined };
   const cells: Cell[] = [];
   for (const cell of sheet.cells) {
-    const next = renamedCell(cell, name, to);
+    const next = renamedCell(cell, renaming);
     if (next !== cell) cells.push(next);
   }
   return cells;
 }
 
-function renamedCell(cell: Cell, from: string, to: string): Cell {
-  const inText = (text: string): string => renameInFormula(text, from, to);
-  const whole = (text: string): string => (canonicalName(text.trim()) === from ? to : text);
+/** The cell with all names replaced at once; itself where nothing is called otherwise. */
+export function renamedCell(cell: Cell, renaming: Renaming): Cell {
+  const inText = (text: string): string => renameInFormula(text, renaming);
+  const whole = (text: string): string => renaming.quantity(canonicalName(text.trim())) ?? text;
   switch (cell.kind) {
     case 'given':
-      return changed(cell, { name: whole(cell.name) });
+      return changed(cell, {
+        name: whole(cell.name),
+        ...(cell.choices === undefined ? {} : { choices: renameInChoices(cell.choices, renaming) }),
+      });
     case 'derived':
       return changed(cell, { name: whole(cell.name), formula: inText(cell.formula) });
     case 'criterion':
@@ -54,8 +66,10 @@ function renamedCell(cell: Cell, from: string, to: string): Cell {
         where: inText(cell.where),
         ...(cell.instead === undefined ? {} : { instead: whole(cell.instead) }),
       });
+    case 'table':
+      return changed(cell, { name: renaming.table(cell.name) ?? cell.name });
     case 'note':
-      return changed(cell, { text: renameInNote(cell, from, to) });
+      return changed(cell, { text: renameInNote(cell, renaming) });
     case 'drawing': {
       const uses = Object.entries(cell.uses).map(([part, name]) => [part, whole(name)] as const);
       return uses.every(([part, name]) => cell.uses[part] === name) ? cell : { ...cell, uses: Object.fromEntries(uses) };
@@ -76,7 +90,16 @@ function changed<Kind extends Cell>(cell: Kind, texts: Partial<Record<keyof Kind
   return differs ? { ...cell, ...texts } : cell;
 }
 
-function renameInFormula(text: string, from: string, to: string): string {
+function renameInChoices(choices: string, renaming: Renaming): string {
+  const dot = choices.indexOf('.');
+  const table = dot > 0 ? renaming.table(choices.slice(0, dot)) : undefined;
+  return table === undefined ? choices : table + choices.slice(dot);
+}
+
+/** Arguments of a table function that are no quantities: the table, then the column. */
+const namesTable = 2;
+
+function renameInFormula(text: string, renaming: Renaming): string {
   const tokens = tokenize(text);
   let result = '';
   let copied = 0;
@@ -85,13 +108,16 @@ function renameInFormula(text: string, from: string, to: string): string {
   for (const [i, token] of tokens.entries()) {
     if (token.kind === 'open') {
       const before = tokens[i - 1];
-      brackets.push(before?.kind === 'name' && (before.text === 'entry' || before.text === 'interpolate') ? 2 : 0);
+      brackets.push(before?.kind === 'name' && (before.text === 'entry' || before.text === 'interpolate') ? namesTable : 0);
     } else if (token.kind === 'close') {
       brackets.pop();
     } else if (token.kind === 'comma') {
       const left = brackets.pop();
       if (left !== undefined) brackets.push(Math.max(0, left - 1));
-    } else if (token.kind === 'name' && (brackets.at(-1) ?? 0) === 0 && canonicalName(token.text) === from) {
+    } else if (token.kind === 'name') {
+      const left = brackets.at(-1) ?? 0;
+      const to = left === 0 ? renaming.quantity(token.text) : left === namesTable ? renaming.table(token.text) : undefined;
+      if (to === undefined) continue;
       result += text.slice(copied, token.from) + to;
       copied = token.to;
     }
@@ -99,11 +125,12 @@ function renameInFormula(text: string, from: string, to: string): string {
   return result + text.slice(copied);
 }
 
-function renameInNote(cell: NoteCell, from: string, to: string): string {
+function renameInNote(cell: NoteCell, renaming: Renaming): string {
   let result = '';
   let copied = 0;
   for (const live of liveNames(cell)) {
-    if (live.name !== from) continue;
+    const to = renaming.quantity(live.name);
+    if (to === undefined) continue;
     result += `${cell.text.slice(copied, live.from)}{${to}}`;
     copied = live.to;
   }

@@ -51,7 +51,7 @@ function begun(from: Sheet, origin: Pick<Sheet, 'template' | 'carriedFrom'>): Sh
 }
 
 /** What a title block says of the kind of document, not of the job. */
-function generic({ documentType, classification, language }: TitleBlock): TitleBlock {
+export function generic({ documentType, classification, language }: TitleBlock): TitleBlock {
   return {
     ...(documentType === undefined ? {} : { documentType }),
     ...(classification === undefined ? {} : { classification }),
@@ -59,7 +59,8 @@ function generic({ documentType, classification, language }: TitleBlock): TitleB
   };
 }
 
-function withoutJob(cell: Cell): Cell {
+/** The cell for another job: a given is carried over; what tracked or excused the old one is gone. */
+export function withoutJob(cell: Cell): Cell {
   if (cell.kind === 'given') {
     const { toConfirm: _, ...rest } = cell;
     return { ...rest, carriedOver: true };
