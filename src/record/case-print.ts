@@ -10,7 +10,7 @@ import { canonicalName, type Formula, type Taken } from '../formula/index.ts';
 import { isAngleUnit, type Numeral, one, type Unit, unitOf } from '../quantity/index.ts';
 import type { Calculation, CriterionState, DerivedState } from '../sheet/index.ts';
 import { type ClosingItem, type ClosingStep, closeSteps, type OpenReason, type Verdict } from './closing.ts';
-import { comesOut } from './comes-out.ts';
+import { comesOut, lastUnit } from './comes-out.ts';
 import { type Line, type Operand, readLine } from './line.ts';
 import { calculatorNumeral, computedNumber, type PrintedNumber, typedNumber } from './numerals.ts';
 import { type ComputedState, stepOrder } from './step-order.ts';
@@ -152,6 +152,7 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     const own = line(state.formula);
     if (own === undefined) return;
     const calculators: (Numeral | undefined)[] = [];
+    const calculatorAt = (d: number) => (calculators[d] ??= calculatorNumeral(si, slot.number.numeral(d), slot.number.unit));
     addStep(state.cell.id, 'line', {
       operands: itemsOf(own.operands),
       result: slot.item,
@@ -160,10 +161,10 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
         const d = at(slot, digits);
         const numeral = slot.number.numeral(d);
         const { unit } = slot.number;
-        calculators[d] ??= calculatorNumeral(si, numeral, unit);
-        if (comesOut(own.value(values), numeral, calculators[d], unit, own.whole, start)) return 'closed';
+        if (comesOut(own.value(values), numeral, calculatorAt(d), unit, own.whole, start)) return 'closed';
         return own.sameWay(values) ? 'cancellation' : 'jump';
       },
+      scaled: (digits) => own.value(numbers(digits)) / lastUnit(calculatorAt(at(slot, digits))),
     });
     addDecisions(state.cell.id, own);
   };
@@ -213,6 +214,10 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
         const value = lineResult(leftLine.value(values), rightLine.value(values));
         if (comesOut(value, result.numeral(start), calculator, resultUnit, false, start)) return 'closed';
         return leftLine.sameWay(values) && rightLine.sameWay(values) ? 'cancellation' : 'jump';
+      },
+      scaled: (digits) => {
+        const values = numbers(digits);
+        return lineResult(leftLine.value(values), rightLine.value(values)) / lastUnit(calculator);
       },
     });
     addStep(cell.id, 'relation', {

@@ -2,10 +2,12 @@
 //
 // 1. An item is a printed number whose digits may grow: a derived quantity, an angle given in degrees where it prints in
 //    rad, a side of a criterion. All items start at the digits of the sheet and never exceed the cap.
-// 2. From the last step backwards, all items that an open step prints are raised by one digit until it closes; that may
+// 2. From the last step backwards, the items that an open step prints are raised by one digit until it closes; that may
 //    open other steps, the item's own among them, so passes repeat until nothing changes.
-// 3. A step that stays open at the cap is given up with its reason, and what was raised for it alone goes back.
-// 4. An item that is exact at its digits is not raised: more digits would only be zeros.
+// 3. Not raised is what could not help: an item that is exact at its digits, and one whose rounding moves the line by less
+//    than a tenth of the last digit while that of others moves it by more.
+// 4. A step that stays open at the cap is given up with its reason, and what was raised for it alone goes back. Where a step
+//    would close with its result at the digits of the sheet, the one that asked more of that result is given up instead.
 // Not here: what a number or a step is (numerals.ts, lines.ts). This file knows counters and verdicts only.
 
 /** Why a step cannot be made to close. */
@@ -26,6 +28,8 @@ export interface ClosingStep {
   readonly result: number;
   /** Judges the line with the digits (indexed by item) as they stand. */
   readonly judge: (digits: ArrayLike<number>) => Verdict;
+  /** The line's value in units of the last digit of its result; missing where the step is about more than one number. */
+  readonly scaled?: (digits: ArrayLike<number>) => number;
 }
 
 export interface Closing {
@@ -37,6 +41,10 @@ export interface Closing {
 
 /** Most significant digits that a number is printed with: every decimal of 15 digits survives the way through a double. */
 export const mostDigits = 15;
+
+/** As good as the true value: a numeral of this many digits reads back as the same double. */
+const allDigits = 17;
+const negligible = 0.1;
 
 /** A sheet made to begin anew without end keeps, from here on, some digits that nobody needs. */
 const mostRestarts = 100;
@@ -68,7 +76,7 @@ export function closeSteps(
       let verdict = step.judge(digits);
       if (verdict === 'closed') continue;
       const before = step.operands.map((item) => digits[item] ?? first);
-      while (verdict !== 'closed' && raise(step.operands, items, digits, cap)) verdict = step.judge(digits);
+      while (verdict !== 'closed' && raise(step, items, digits, cap)) verdict = step.judge(digits);
       if (verdict === 'closed') {
         raisedFor[i] = 1;
         changed = true;
@@ -78,34 +86,64 @@ export function closeSteps(
         });
         continue;
       }
-      open.set(i, verdict);
-      if (raisedFor[i] === 0 || restarts >= mostRestarts) {
-        // Nobody has seen these digits yet: taking them back is the same as never having tried.
-        step.operands.forEach((item, k) => {
-          digits[item] = before[k] ?? first;
-        });
-      } else {
-        restarts += 1;
-        digits.fill(first);
-        dirty.fill(1);
-        raisedFor.fill(0);
-        changed = true;
-        break;
-      }
+      step.operands.forEach((item, k) => {
+        digits[item] = before[k] ?? first;
+      });
+      const asker = restarts < mostRestarts ? askerOf(i) : -1;
+      open.set(asker < 0 ? i : asker, verdict);
+      // Nobody has seen digits of a step that never closed: they are back already. Otherwise all begins anew without it.
+      if ((asker < 0 && raisedFor[i] === 0) || restarts >= mostRestarts) continue;
+      restarts += 1;
+      digits.fill(first);
+      dirty.fill(1);
+      raisedFor.fill(0);
+      changed = true;
+      break;
     }
   }
   return { digits, open };
+
+  /** The step for which the result of step i has more digits than i can serve; -1 where i fails by itself. */
+  function askerOf(i: number): number {
+    const step = steps[i];
+    const now = step === undefined ? first : (digits[step.result] ?? first);
+    if (step === undefined || now <= first) return -1;
+    const before = step.operands.map((item) => digits[item] ?? first);
+    digits[step.result] = first;
+    let verdict = step.judge(digits);
+    while (verdict !== 'closed' && raise(step, items, digits, cap)) verdict = step.judge(digits);
+    step.operands.forEach((item, k) => {
+      digits[item] = before[k] ?? first;
+    });
+    digits[step.result] = now - 1;
+    const askers = (touching[step.result] ?? []).filter(
+      (k) => k !== i && raisedFor[k] === 1 && steps[k]?.judge(digits) !== 'closed',
+    );
+    digits[step.result] = now;
+    return verdict === 'closed' ? (askers.at(-1) ?? -1) : -1;
+  }
 }
 
-function raise(operands: readonly number[], items: readonly ClosingItem[], digits: Uint8Array, cap: number): boolean {
-  let raised = false;
-  for (const item of operands) {
-    const now = digits[item] ?? cap;
-    if (now >= cap || items[item]?.exactAt(now) === true) continue;
-    digits[item] = now + 1;
-    raised = true;
-  }
-  return raised;
+function raise(step: ClosingStep, items: readonly ClosingItem[], digits: Uint8Array, cap: number): boolean {
+  const able = step.operands.filter((item) => (digits[item] ?? cap) < cap && items[item]?.exactAt(digits[item] ?? cap) !== true);
+  const chosen = able.length > 1 ? telling(step, able, digits) : able;
+  for (const item of chosen) digits[item] = (digits[item] ?? 0) + 1;
+  return chosen.length > 0;
+}
+
+/** Those whose rounding can be seen in the result; all where none stands out. */
+function telling(step: ClosingStep, able: readonly number[], digits: Uint8Array): readonly number[] {
+  const { scaled } = step;
+  if (scaled === undefined) return able;
+  const here = scaled(digits);
+  const seen = able.filter((item) => {
+    const now = digits[item] ?? 0;
+    digits[item] = allDigits;
+    const moved = Math.abs(scaled(digits) - here);
+    digits[item] = now;
+    return !(moved < negligible);
+  });
+  return seen.length > 0 ? seen : able;
 }
 
 function stepsByItem(count: number, steps: readonly ClosingStep[]): readonly (readonly number[])[] {

@@ -98,15 +98,44 @@ describe('closing', () => {
   });
 
   test('a step that closed first and is given up in a later pass takes its digits back', () => {
-    // Step 1 closes with item 0 at 5 digits until item 2 has 6 digits; then never. Step 0, judged after it, raises item 2.
+    // Step 1 closes with items 0 and 1 at 5 digits, and never once item 1 has 6; step 0, judged after it, wants 6 of item 1.
     const free: ClosingItem = { exactAt: () => false };
     const steps: ClosingStep[] = [
-      { operands: [2], result: 3, judge: (d) => (d[2]! >= 6 ? 'closed' : 'cancellation') },
-      { operands: [0], result: 2, judge: (d) => (d[2]! < 6 && d[0]! >= 5 ? 'closed' : 'cancellation') },
+      { operands: [1], result: -1, judge: (d) => (d[1]! >= 6 ? 'closed' : 'cancellation') },
+      { operands: [0, 1], result: 2, judge: (d) => (d[1]! < 6 && d[0]! >= 5 ? 'closed' : 'cancellation') },
+    ];
+    const { digits, open } = closeSteps([free, free, free], steps, 4);
+    expect([...open]).toEqual([[1, 'cancellation']]);
+    expect([...digits]).toEqual([4, 6, 4]);
+  });
+
+  test('where a step cannot serve the digits asked of its result, the one that asked is given up', () => {
+    // Step 1 wants 15 digits of item 1. Step 0 can give item 1 no more than 10, and needs item 0 at 5 for 4 of them.
+    const free: ClosingItem = { exactAt: () => false };
+    const steps: ClosingStep[] = [
+      { operands: [0], result: 1, judge: (d) => (d[1]! <= 10 && d[0]! > d[1]! ? 'closed' : 'cancellation') },
+      { operands: [1], result: 2, judge: (d) => (d[1]! >= 15 ? 'closed' : 'cancellation') },
+      { operands: [1], result: 3, judge: (d) => (d[1]! >= 6 ? 'closed' : 'cancellation') },
     ];
     const { digits, open } = closeSteps([free, free, free, free], steps, 4);
     expect([...open]).toEqual([[1, 'cancellation']]);
-    expect([...digits]).toEqual([4, 4, 6, 4]);
+    expect([...digits]).toEqual([7, 6, 4, 4]);
+  });
+
+  test('a number whose rounding cannot be seen in the result is not raised along with one that can', () => {
+    // c = a + b with a = 70 615.0533, b = 0.074 222 888: c = 70 615.1275 to the unit of 0.0001 needs a to 9 digits, b to 3 at most.
+    const a = 70615.0533;
+    const b = 0.074222888;
+    const values = [a, b, a + b];
+    const items = values.map(item);
+    const printed = (d: ArrayLike<number>) => items[0]!.printed(d[0]!) + items[1]!.printed(d[1]!);
+    const sum: ClosingStep = {
+      operands: [0, 1],
+      result: -1,
+      judge: (d) => (Math.abs(printed(d) - 70615.1275) <= 1e-4 ? 'closed' : 'cancellation'),
+      scaled: (d) => printed(d) / 1e-4,
+    };
+    expect([...closeSteps(items.slice(0, 2), [sum], 4).digits]).toEqual([9, 4]);
   });
 
   test('an exact operand is not padded with zeros, and the cap holds', () => {
