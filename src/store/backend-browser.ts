@@ -179,6 +179,7 @@ export async function browserBackend(opening: Opening): Promise<BrowserBackend> 
         return row;
       }),
     file: (id) => run(['files'], 'readonly', (t) => t.objectStore('files').get(id)),
+    files: () => run(['files'], 'readonly', (t) => t.objectStore('files').getAll()),
     putFile: (row) => run(['files'], 'readwrite', async (t) => void (await t.objectStore('files').put(row))),
     removeFile: (id) => run(['files'], 'readwrite', (t) => t.objectStore('files').delete(id)),
     meta: (key) => run(['meta'], 'readonly', async (t) => (await t.objectStore('meta').get(key))?.value),

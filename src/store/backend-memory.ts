@@ -93,6 +93,7 @@ export function memoryBackend(): Backend {
       return row;
     },
     file: async (id) => files.get(id),
+    files: async () => [...files.values()],
     async putFile(row) {
       files.set(row.id, row);
     },

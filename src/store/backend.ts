@@ -61,6 +61,7 @@ export interface Backend {
   putTemplate(row: TemplateRow): Promise<void>;
   removeTemplate(id: string): Promise<TemplateRow | undefined>;
   file(id: string): Promise<FileRow | undefined>;
+  files(): Promise<readonly FileRow[]>;
   putFile(row: FileRow): Promise<void>;
   removeFile(id: string): Promise<void>;
   meta(key: string): Promise<unknown>;

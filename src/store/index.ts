@@ -1,5 +1,7 @@
 export { bundleFormat } from './bundle.ts';
+export * from './files.ts';
 export * from './keeper.ts';
+export * from './offline.ts';
 export * from './persistence.ts';
 export type { StoreCode, StoreProblem, WayOut } from './problem.ts';
 export { StoreFault } from './problem.ts';
