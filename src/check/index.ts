@@ -1,1 +1,2 @@
 export * from './fingerprint.ts';
+export * from './template.ts';
