@@ -21,6 +21,8 @@ export interface Io {
   same(one: string, other: string): Promise<boolean>;
   out(text: string): void;
   err(text: string): void;
+  /** Paths of the sheet files in a folder. */
+  sheetFiles(folder: string): Promise<readonly string[]>;
   /** Names of the files in the folder of templates, and the text of one. */
   templateFiles(): Promise<readonly string[]>;
   templateText(file: string): Promise<string>;
@@ -44,10 +46,14 @@ export function nodeIo(
     },
     out: streams.out,
     err: streams.err,
-    templateFiles: async () =>
-      (await attempt('read', templates, () => readdir(templates))).filter((file) => file.endsWith('.sheet.json')).sort(),
+    sheetFiles: async (path) => (await sheetNames(path)).map((file) => join(path, file)),
+    templateFiles: () => sheetNames(templates),
     templateText: async (file) => utf8(file, await attempt('read', file, () => readFile(join(templates, file)))),
   };
+}
+
+async function sheetNames(folder: string): Promise<string[]> {
+  return (await attempt('read', folder, () => readdir(folder))).filter((file) => file.endsWith('.sheet.json')).sort();
 }
 
 const reasons: ReadonlyMap<string, string> = new Map([

@@ -4,7 +4,9 @@
 // 2. Trouble of the user ends in lines on standard error and an exit of 1 to 4; anything else that is thrown is our own fault.
 // Not here: what the commands do (commands/).
 
+import { add } from './commands/add.ts';
 import { calc } from './commands/calc.ts';
+import { keep } from './commands/keep.ts';
 import { newSheet } from './commands/new.ts';
 import { record } from './commands/record.ts';
 import { templates } from './commands/templates.ts';
@@ -18,6 +20,8 @@ export { nodeIo } from './io.ts';
 const commands: ReadonlyMap<string, (argv: readonly string[], io: Io) => Promise<number>> = new Map([
   ['templates', templates],
   ['new', newSheet],
+  ['keep', keep],
+  ['add', add],
   ['calc', calc],
   ['record', record],
 ]);

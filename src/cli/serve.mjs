@@ -7,7 +7,7 @@
 
 import { createReadStream, realpathSync, statSync } from 'node:fs';
 import { createServer } from 'node:http';
-import { extname, join, resolve, sep } from 'node:path';
+import { basename, extname, join, resolve, sep } from 'node:path';
 
 const types = new Map([
   ['.html', 'text/html; charset=utf-8'],
@@ -29,6 +29,9 @@ const headers = {
   'Cross-Origin-Opener-Policy': 'same-origin',
   'Cross-Origin-Resource-Policy': 'same-origin',
 };
+
+/** The worker that keeps the page for use without a network fetches the files of the page, and nothing else. */
+const workerPolicy = { 'Content-Security-Policy': "default-src 'none'; connect-src 'self'" };
 
 /** The file a request path means, or null. `folder` must be a real path. */
 export function fileOf(folder, requestPath) {
@@ -67,6 +70,7 @@ export async function serve(folder, { port = 0, orNext = false } = {}) {
     if (file === null) return answer(404, 'There is no such file.');
     response.writeHead(200, {
       ...headers,
+      ...(basename(file) === 'offline-worker.js' ? workerPolicy : {}),
       'Content-Type': types.get(extname(file)) ?? 'application/octet-stream',
       'Content-Length': statSync(file).size,
       // Names under assets/ change with their content; everything else may change under its name.

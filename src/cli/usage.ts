@@ -6,7 +6,7 @@
 
 import { parseArgs } from 'node:util';
 import { nearestNames } from '../formula/index.ts';
-import type { Assignment } from '../sheet/index.ts';
+import type { Assignment, Connection } from '../sheet/index.ts';
 
 export const exits = { fine: 0, notMet: 1, sheetErrors: 2, fileTrouble: 3, wrongUsage: 4 } as const;
 
@@ -14,11 +14,19 @@ export class UsageTrouble extends Error {}
 
 export const help = `tightside: calculation sheets for belt drives, band brakes, capstans and ropes
 
-  tightside templates [--json]
-      the built-in templates, their givens and results
+  tightside templates [--json] [--also FOLDER]
+      the built-in templates, their givens and results; with --also the own ones in FOLDER too
   tightside new TEMPLATE -o FILE [--set NAME="VALUE" …] [--case ID:NAME="VALUE" …] [--force]
       a new sheet from a template; what --set names is confirmed, the rest stays carried over;
+      TEMPLATE is the id of a built-in one or the path of a file: an own template, or an earlier sheet;
       a file that is there already is replaced only with --force
+  tightside keep FILE --as ID -o OUT [--job TEXT] [--caution TEXT] [--limit TEXT …] [--title TEXT] [--force]
+      keeps a sheet as an own template: same lines and sample values, nothing of the old job; says what the
+      sheet lacks where it cannot be one (a caution, a criterion, sources, a step that closes …);
+      caution and limits are taken from its notes where they are not given here
+  tightside add FILE TEMPLATE --suffix B -o OUT [--connect NAME="FORMULA" …] [--set …] [--case …] [--title TEXT] [--force]
+      puts a template into a sheet as a block with a suffix on its names: F_1 becomes F_1_B;
+      a connected given becomes a formula of the sheet: --connect n_1="n_2" makes n_1_B = n_2
   tightside calc FILE [--set NAME="VALUE" …] [--case ID:NAME="VALUE" …] [--json]
       values, criteria and problems of a sheet; the file stays as it is
   tightside record FILE --to html|json [-o OUT]
@@ -34,7 +42,7 @@ Exit: 0 fine · 1 a criterion is not met · 2 the sheet has errors · 3 a file c
 
 /** Commands of the plan that this version does not have. */
 const later: ReadonlySet<string> = new Set(['compare', 'check', 'study']);
-const commands = ['templates', 'new', 'calc', 'record', 'help'];
+const commands = ['templates', 'new', 'keep', 'add', 'calc', 'record', 'help'];
 
 export function unknownCommand(word: string): UsageTrouble {
   if (later.has(word)) return new UsageTrouble(`${word} is not in this version; tightside --help lists what is`);
@@ -44,7 +52,7 @@ export function unknownCommand(word: string): UsageTrouble {
   );
 }
 
-type OptionName = 'json' | 'force' | 'output' | 'set' | 'case' | 'to';
+type OptionName = keyof typeof optionTypes;
 const optionTypes = {
   json: { type: 'boolean' },
   force: { type: 'boolean' },
@@ -52,6 +60,14 @@ const optionTypes = {
   set: { type: 'string', multiple: true },
   case: { type: 'string', multiple: true },
   to: { type: 'string' },
+  also: { type: 'string' },
+  as: { type: 'string' },
+  title: { type: 'string' },
+  job: { type: 'string' },
+  caution: { type: 'string' },
+  limit: { type: 'string', multiple: true },
+  suffix: { type: 'string' },
+  connect: { type: 'string', multiple: true },
 } as const;
 
 export interface Arguments {
@@ -61,6 +77,10 @@ export interface Arguments {
   readonly output?: string;
   readonly to?: string;
   readonly assignments: readonly Assignment[];
+  /** Options that hold a text, as typed. */
+  readonly texts: Readonly<Partial<Record<'also' | 'as' | 'title' | 'job' | 'caution' | 'suffix', string>>>;
+  readonly limits?: readonly string[];
+  readonly connections: readonly Connection[];
 }
 
 /** Reads the arguments behind the command; `takes` lists its options, `names` its positional arguments. */
@@ -86,6 +106,9 @@ export function readArguments(
     to,
     set,
     case: one,
+    limit,
+    connect,
+    ...texts
   } = read.values as {
     readonly json?: boolean;
     readonly force?: boolean;
@@ -93,7 +116,9 @@ export function readArguments(
     readonly to?: string;
     readonly set?: readonly string[];
     readonly case?: readonly string[];
-  };
+    readonly limit?: readonly string[];
+    readonly connect?: readonly string[];
+  } & Arguments['texts'];
   return {
     positionals: read.positionals,
     json: json ?? false,
@@ -101,6 +126,9 @@ export function readArguments(
     ...(output === undefined ? {} : { output }),
     ...(to === undefined ? {} : { to }),
     assignments: [...(set ?? []).map(forAll), ...(one ?? []).map(forOne)],
+    texts,
+    ...(limit === undefined ? {} : { limits: limit }),
+    connections: (connect ?? []).map(connection),
   };
 }
 
@@ -141,6 +169,18 @@ function forOne(text: string): Assignment {
   if (colon <= 0 || sign <= colon + 1)
     throw new UsageTrouble(`--case wants ID:NAME="VALUE", as in --case start:K_A="1.5", but got ${clip(text)}`);
   return { case: text.slice(0, colon).trim(), name: text.slice(colon + 1, sign).trim(), value: text.slice(sign + 1) };
+}
+
+function connection(text: string): Connection {
+  const sign = text.indexOf('=');
+  if (sign <= 0) throw new UsageTrouble(`--connect wants NAME="FORMULA", as in --connect n_1="n_2", but got ${clip(text)}`);
+  return { name: text.slice(0, sign).trim(), formula: text.slice(sign + 1) };
+}
+
+/** The file that a command writes. */
+export function outputOf(command: string, args: Arguments): string {
+  if (args.output === undefined || args.output === '') throw new UsageTrouble(`${command} wants -o FILE, the file to write`);
+  return args.output;
 }
 
 export function clip(text: string): string {
