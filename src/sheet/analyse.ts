@@ -22,6 +22,7 @@ import {
   one,
   type Problem,
   type Unit,
+  unitOf,
   type Value,
   withArticle,
 } from '../quantity/index.ts';
@@ -328,15 +329,18 @@ function analyseDerived(node: Node, around: Surroundings, report: Report): void 
   if (waiting || inferred.type === undefined || inferred.problems.some((problem) => problem.severity === 'error')) return;
   node.type = typeOfResult(inferred, node.reading.unit);
   if (node.type.kind !== 'quantity') return;
-  node.unit = node.reading.unit ?? unitOf(node.type);
+  node.unit = node.reading.unit ?? printUnitOf(node.type);
   node.jumps = hasJump(formula);
   node.broken = around.twice.has(node.cell.id);
 }
 
-function unitOf(type: Type): Unit {
+/** What a quantity without a declared unit is printed in; a temperature reading stays a reading. */
+function printUnitOf(type: Type): Unit {
   if (type.kind !== 'quantity') return one;
-  return coherentUnit(type.dimension, type.counts.r);
+  return type.temperature === 'reading' ? celsius : coherentUnit(type.dimension, type.counts.r);
 }
+
+const celsius = unitOf('degC');
 
 /**
  * The type of the unknown alone, so that the cells of its own loop can be analysed after it; its equation follows when they
@@ -453,7 +457,7 @@ function analyseCriterion(node: Node, around: Surroundings, report: Report): voi
   if (waiting || inferred.type === undefined || inferred.type.kind !== 'quantity') return;
   if (inferred.problems.some((problem) => problem.severity === 'error')) return;
   node.type = inferred.type;
-  node.unit = node.reading.unit ?? sideUnit([left, right], around) ?? unitOf(inferred.type);
+  node.unit = node.reading.unit ?? sideUnit([left, right], around) ?? printUnitOf(inferred.type);
   node.jumps = hasJump(left) || hasJump(right);
   node.broken = false;
 }

@@ -21,6 +21,13 @@ describe('values', () => {
     ]);
   });
 
+  it('of a temperature reading without a declared unit stay a reading', () => {
+    const calculation = calculate(sheetOf(['T_a = 20 °C', 'T_b = 80 °C', 'T_m := T_a + (T_b - T_a)/2', 'dT := T_b - T_a']));
+    expect(calculation.state('T_m')).toMatchObject({ unit: { text: '°C' } });
+    expect(si(calculation, 'T_m')[0]).toBeCloseTo(323.15, 10);
+    expect(calculation.state('dT')).toMatchObject({ unit: { text: 'K' } });
+  });
+
   it('stand side by side, one for each case', () => {
     const sheet = sheetOf(['K = 1.0', 'P = 2 kW', 'Q [kW] := K*P', 'Q <= P'], { cases: [{ id: 'run' }, { id: 'start' }] });
     const cells = sheet.cells.map((cell) =>
