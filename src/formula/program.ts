@@ -31,9 +31,9 @@ export interface Program {
   readonly tables: readonly ProgramTable[];
 }
 
-/** Memory for `width` entries a column, constants filled in. */
-export function makeMemory(program: Program, width: number): Float64Array {
-  const memory = new Float64Array(program.slots * width);
+/** Memory for `width` entries a column, constants filled in; `more` entries are left behind the last column. */
+export function makeMemory(program: Program, width: number, more = 0): Float64Array {
+  const memory = new Float64Array(program.slots * width + more);
   fillConstants(program, memory, width);
   return memory;
 }
@@ -51,6 +51,27 @@ export function allFinite(memory: Float64Array, width: number, count: number, fr
     for (let i = from; i < from + count; i++) trouble += memory[i]! * 0;
   }
   return trouble === 0;
+}
+
+/** Whether the first `count` entries of the columns that begin at `starts` are all finite. */
+export function finiteFrom(memory: Float64Array, starts: Int32Array, count: number): boolean {
+  // Four sums side by side: one alone would wait for itself at every entry.
+  let one = 0;
+  let two = 0;
+  let three = 0;
+  let four = 0;
+  for (const start of starts) {
+    let at = start;
+    const end = at + count;
+    for (const last = end - 3; at < last; at = (at + 4) | 0) {
+      one += memory[at]! * 0;
+      two += memory[(at + 1) | 0]! * 0;
+      three += memory[(at + 2) | 0]! * 0;
+      four += memory[(at + 3) | 0]! * 0;
+    }
+    for (; at < end; at = (at + 1) | 0) one += memory[at]! * 0;
+  }
+  return one + two + three + four === 0;
 }
 
 /** Whether a range that has just run has a value in each of the first `count` entries. */

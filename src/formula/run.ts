@@ -28,6 +28,31 @@ export function run(
   for (let entry = even; entry < count; entry++) runOne(program.code, program.tables, memory, width, entry, start, end);
 }
 
+/**
+ * Computes `count` entries, an even number, of the whole program, the column of each slot lying anywhere in the memory:
+ * from starts[slot] on. So results can be written where they are wanted.
+ */
+export function runAt(program: Program, memory: Float64Array, starts: Int32Array, count: number): void {
+  const { code, tables } = program;
+  for (let at = 0; at < code.length; at += stride) {
+    const operation = code[at]!;
+    const b = code[at + 3]!;
+    kernels[operation]!(
+      memory,
+      starts[code[at + 1]!]!,
+      starts[code[at + 2]!]!,
+      isLookup(operation) ? b : starts[b]!,
+      starts[code[at + 4]!]!,
+      count,
+      tables,
+    );
+  }
+}
+
+function isLookup(operation: number): boolean {
+  return operation >= op.interpolate && operation <= op.entryOfText;
+}
+
 function runMany(
   code: Int32Array,
   tables: readonly ProgramTable[],
@@ -40,12 +65,11 @@ function runMany(
   for (let at = start; at < end; at += stride) {
     const operation = code[at]!;
     const b = code[at + 3]!;
-    const isLookup = operation >= op.interpolate && operation <= op.entryOfText;
     kernels[operation]!(
       m,
       code[at + 1]! * width,
       code[at + 2]! * width,
-      isLookup ? b : b * width,
+      isLookup(operation) ? b : b * width,
       code[at + 4]! * width,
       count,
       tables,

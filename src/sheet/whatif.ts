@@ -1,16 +1,17 @@
 // What if a given were another: samples of some givens, what follows from them, the sheet itself untouched.
 //
 // 1. Only cells between what is varied and what is wanted are computed; all other numbers are those of the sheet's case.
-// 2. The program is compiled once; `run` computes in blocks that stay in the processor's cache and allocates nothing after its
-//    first call for a count.
+// 2. The program is compiled once; quantities that do not vary are compiled in.
 // 3. A sample in which a cell has no value gives NaN, also where the trouble would vanish on the way (1/(a/0) is no 0).
-// Not here: choosing samples, statistics (src/study).
+// 4. Only cells that no later one always reads are looked over: trouble in the others shows there.
+// Not here: the loop over the samples (sampler.ts), choosing samples, statistics (src/study).
 
-import { compileFormulas, explain, type Formula, inOrder, type Lookup, makeMemory, markTrouble, run } from '../formula/index.ts';
+import { alwaysRead, compileFormulas, explain, type Formula, type Lookup, markTrouble } from '../formula/index.ts';
 import type { Columns } from './columns.ts';
 import type { Graph } from './graph.ts';
 import type { Names } from './names.ts';
 import { computedFormulas, type Node } from './node.ts';
+import { makeSampler } from './sampler.ts';
 
 export interface WhatIfRequest {
   /** Names of the quantities to vary: givens, or derived quantities taken as given. */
@@ -44,8 +45,6 @@ export interface Surface {
   lookup(caseIndex: number): Lookup;
 }
 
-const block = 256;
-
 interface Step {
   readonly key: string;
   readonly formula: Formula;
@@ -71,76 +70,66 @@ export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
   for (const { node, side, key } of wanted) {
     if (node !== undefined && side === undefined && !varied.has(node) && !isStep.has(node)) constants.add(key);
   }
-  const names = {
-    isText: (name: string) => sheet.names.quantities.get(name)?.texts !== undefined,
-    table: (name: string) => sheet.names.tables.get(name)?.table,
-    ...(sheet.nodes[0] === undefined ? {} : { decimalSign: sheet.nodes[0].reading.decimalSign }),
-  };
   const compiled = compileFormulas(
     steps.map((step) => ({ key: step.key, expr: step.formula.expr })),
     [...inputs, ...constants],
-    names,
+    {
+      isText: (name) => sheet.names.quantities.get(name)?.texts !== undefined,
+      table: (name) => sheet.names.tables.get(name)?.table,
+      constant: (name) => (constants.has(name) ? numberOf(name) : undefined),
+      ...(sheet.nodes[0] === undefined ? {} : { decimalSign: sheet.nodes[0].reading.decimalSign }),
+    },
   );
-  const { program, ranges } = compiled;
-  const memory = makeMemory(program, block);
-  for (const name of constants) {
+  /** The value of a quantity that does not vary; undefined for a text. */
+  function numberOf(name: string): number | undefined {
     const node = sheet.names.quantities.get(name)!;
-    const text = node.texts?.[request.caseIndex];
-    const value =
-      node.texts === undefined
-        ? sheet.columns.read(node, 0, request.caseIndex)
-        : text === undefined
-          ? Number.NaN
-          : compiled.textNumber(text);
-    const slot = compiled.slot(name);
-    memory.fill(value, slot * block, (slot + 1) * block);
+    return node.texts === undefined ? sheet.columns.read(node, 0, request.caseIndex) : undefined;
   }
-  const inputSlots = inputs.map((name) => compiled.slot(name));
-  const outputSlots = wanted.map((want) => compiled.slot(want.key));
-  const flags = new Uint8Array(block);
-  let outputs: Float64Array[] = [];
-  let capacity = 0;
+  const textNumberOf = (name: string): number => {
+    const text = sheet.names.quantities.get(name)?.texts?.[request.caseIndex];
+    return text === undefined ? Number.NaN : compiled.textNumber(text);
+  };
+  const { program, ranges } = compiled;
 
-  /** Entries of a cell that are not in order: told apart one by one, since an untaken branch may be out of order. */
-  const settle = (step: Step, slot: number, count: number): void => {
-    flags.fill(0, 0, count);
-    markTrouble(program, memory, block, count, ranges[steps.indexOf(step)]!, flags);
+  /** Entries of a cell that are not in order: told apart one by one, as explain finds trouble that an infinity would hide. */
+  const settle = (memory: Float64Array, width: number, at: number, count: number): void => {
+    const flags = new Uint8Array(count);
+    markTrouble(program, memory, width, count, ranges[at]!, flags);
     const base = sheet.lookup(request.caseIndex);
     for (let entry = 0; entry < count; entry += 1) {
       if (flags[entry] === 0) continue;
-      const result = explain(step.formula.expr, {
+      const result = explain(steps[at]!.formula.expr, {
         ...base,
-        value: (name) => memory[compiled.slot(name) * block + entry]!,
+        value: (name) => memory[compiled.slot(name) * width + entry]!,
       });
-      memory[slot * block + entry] = result.ok ? result.value : Number.NaN;
+      memory[ranges[at]!.dest * width + entry] = result.ok ? result.value : Number.NaN;
     }
   };
 
   return {
     computes: [...new Set(way.flatMap((step) => (step.node === undefined ? [] : [step.node.cell.id])))],
-    run(samples, count) {
-      if (count > capacity) {
-        outputs = wanted.map(() => new Float64Array(count));
-        capacity = count;
-      }
-      for (let start = 0; start < count; start += block) {
-        const size = Math.min(block, count - start);
-        for (let input = 0; input < inputSlots.length; input += 1) {
-          memory.set(samples[input]!.subarray(start, start + size), inputSlots[input]! * block);
-        }
-        for (let at = 0; at < steps.length; at += 1) {
-          const range = ranges[at]!;
-          run(program, memory, block, size, range.start, range.end);
-          if (!inOrder(program, memory, block, size, range)) settle(steps[at]!, range.dest, size);
-        }
-        for (let output = 0; output < outputSlots.length; output += 1) {
-          const from = outputSlots[output]! * block;
-          outputs[output]!.set(memory.subarray(from, from + size), start);
-        }
-      }
-      return count === capacity ? outputs : outputs.map((column) => column.subarray(0, count));
-    },
+    run: makeSampler({
+      program,
+      ranges,
+      inputs: inputs.map((name) => compiled.slot(name)),
+      outputs: wanted.map((want) => compiled.slot(want.key)),
+      checked: unread(steps).map((at) => ranges[at]!.dest),
+      constants: [...constants].map((name) => ({ slot: compiled.slot(name), value: numberOf(name) ?? textNumberOf(name) })),
+      settle,
+    }),
   };
+}
+
+/** Steps that no later one reads in every entry: where all of these are finite, all steps are. */
+function unread(steps: readonly Step[]): number[] {
+  const read = new Set<string>();
+  const found: number[] = [];
+  for (let at = steps.length - 1; at >= 0; at -= 1) {
+    const { key, formula } = steps[at]!;
+    if (!read.has(key)) found.push(at);
+    for (const name of alwaysRead(formula.expr)) read.add(name);
+  }
+  return found;
 }
 
 function known(sheet: Surface, name: string): Node {

@@ -43,6 +43,7 @@ export const outputs = [
   'P_lim',
   'b_req',
   'v_opt',
+  'F_0eff',
   'P_0',
   'S_slip',
   'F_0req',
@@ -85,6 +86,7 @@ export function flatBelt(input: readonly Float64Array[], output: readonly Float6
     o_P_lim,
     o_b_req,
     o_v_opt,
+    o_F_0eff,
     o_P_0,
     o_S_slip,
     o_F_0req,
@@ -99,7 +101,7 @@ export function flatBelt(input: readonly Float64Array[], output: readonly Float6
     o_psi_W,
     o_F_W0,
     o_F_W0new,
-  ] = output as Float64Array[] & { length: 34 };
+  ] = output as Float64Array[] & { length: 35 };
   for (let i = 0; i < count; i += 1) {
     const d1 = d_1![i]!;
     const d2 = d_2![i]!;
@@ -132,8 +134,9 @@ export function flatBelt(input: readonly Float64Array[], output: readonly Float6
     o_k![i] = k;
     const Fu = duty / v;
     o_F_u![i] = Fu;
-    o_F_1min![i] = Fc + (Fu * k) / (k - 1);
-    o_F_2min![i] = Fc + Fu / (k - 1);
+    const F1min = Fc + (Fu * k) / (k - 1);
+    o_F_1min![i] = F1min;
+    o_F_2min![i] = F1min - Fu;
     const F1lim = sigma_allow![i]! * width * thick;
     o_F_1lim![i] = F1lim;
     const F2lim = Fc + (F1lim - Fc) / k;
@@ -142,25 +145,26 @@ export function flatBelt(input: readonly Float64Array[], output: readonly Float6
     o_b_req![i] = (Fu * k) / ((k - 1) * (sigma_allow![i]! - rho![i]! * (vCase * vCase)) * thick);
     o_v_opt![i] = Math.sqrt(F1lim / (3 * m));
     const F0 = F_0![i]!;
-    const P0 = (2 * (F0 - Fc) * v * (k - 1)) / (k + 1);
+    const F0e = F0 - Fc;
+    o_F_0eff![i] = F0e;
+    const P0 = (2 * F0e * v * (k - 1)) / (k + 1);
     o_P_0![i] = P0;
     o_S_slip![i] = P0 / duty;
     o_F_0req![i] = Fc + (S_req![i]! * Fu * (k + 1)) / (2 * (k - 1));
     const F1 = F0 + Fu / 2;
     o_F_1![i] = F1;
-    const F2 = F0 - Fu / 2;
-    o_F_2![i] = F2;
+    o_F_2![i] = F0 - Fu / 2;
     const sigma1 = F1 / (width * thick);
     o_sigma_1![i] = sigma1;
     const sigmaB = (E_b![i]! * thick) / Math.min(d1, d2);
     o_sigma_b![i] = sigmaB;
     o_sigma_max![i] = sigma1 + sigmaB;
-    const F1e = F1 - Fc;
+    const F1e = F0e + Fu / 2;
     o_F_1eff![i] = F1e;
-    const F2e = F2 - Fc;
+    const F2e = F0e - Fu / 2;
     o_F_2eff![i] = F2e;
     o_F_W![i] = Math.sqrt(F1e * F1e + F2e * F2e - 2 * F1e * F2e * Math.cos(theta1));
-    o_psi_W![i] = Math.atan2((F1e - F2e) * Math.sin(beta), (F1e + F2e) * Math.cos(beta));
+    o_psi_W![i] = Math.atan2(Fu * Math.sin(beta), (F1e + F2e) * Math.cos(beta));
     const FW0 = 2 * F0 * Math.sin(theta1 / 2);
     o_F_W0![i] = FW0;
     o_F_W0new![i] = f_new![i]! * FW0;
