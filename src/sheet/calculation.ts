@@ -155,6 +155,7 @@ class Engine implements Calculation {
     shape.relink(stale, names, sameRows);
     if (!sameRows) runner.resize(shape.nodes.length);
     for (const node of taken.restyled) runner.moved[node.index] = 1;
+    for (const node of shape.noteInterpolated()) runner.moved[node.index] = 1;
     if (!sameReading || runner.columns.wasteful) {
       runner.startOver(this.cases.length);
       for (const node of shape.nodes) stale.add(node);

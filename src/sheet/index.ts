@@ -27,5 +27,6 @@ export { nameFault } from './rename.ts';
 export { idPattern } from './schema.ts';
 export type { FoundRoot, Search, Solver } from './sought.ts';
 export * from './state.ts';
+export * from './table-text.ts';
 export * from './template.ts';
 export type { WhatIf, WhatIfRequest } from './whatif.ts';

@@ -4,6 +4,7 @@
 // 2. Tables have a name space of their own.
 // 3. Names are looked up in Maps only: a quantity may be called `constructor`.
 
+import { type Formula, tokenize } from '../formula/index.ts';
 import type { Node } from './node.ts';
 import type { CellProblem } from './state.ts';
 
@@ -58,4 +59,25 @@ export function usedNodes(node: Node, names: Names): Node[] {
   for (const live of node.reading.mentions) add(names.quantities.get(live.name));
   if (node.cell.kind === 'sought') found.delete(node);
   return [...found];
+}
+
+const nothing: ReadonlySet<string> = new Set();
+const keptTables = new WeakMap<Formula, ReadonlySet<string>>();
+
+/** Tables between whose rows the formula interpolates. */
+export function interpolatedTables(formula: Formula): ReadonlySet<string> {
+  if (formula.tables.length === 0) return nothing;
+  let found = keptTables.get(formula);
+  if (found === undefined) {
+    const tokens = tokenize(formula.text);
+    found = new Set(
+      tokens.flatMap((token, at) => {
+        const table = tokens[at + 2];
+        const calls = token.kind === 'name' && token.text === 'interpolate' && tokens[at + 1]?.kind === 'open';
+        return calls && table?.kind === 'name' ? [table.text] : [];
+      }),
+    );
+    keptTables.set(formula, found);
+  }
+  return found;
 }

@@ -23,6 +23,7 @@ export interface Node {
   direct: Node[];
   between: Node[];
   equation: CellProblem[];
+  equationType: Type | undefined;
   solutions: (Solution | undefined)[];
   broken: boolean;
   type: Type | undefined;
@@ -33,6 +34,8 @@ export interface Node {
   values: (Value | undefined)[];
   texts: (string | undefined)[] | undefined;
   table: TableData | undefined;
+  /** Table: some formula interpolates over it. */
+  interpolated: boolean;
   placed: CellProblem[];
   failed: (CellProblem | undefined)[];
   warned: CellProblem[];
@@ -53,6 +56,7 @@ export function newNode(cell: Cell, reading: Reading, index: number): Node {
     direct: [],
     between: [],
     equation: [],
+    equationType: undefined,
     solutions: [],
     broken: true,
     type: undefined,
@@ -62,6 +66,7 @@ export function newNode(cell: Cell, reading: Reading, index: number): Node {
     values: [],
     texts: undefined,
     table: undefined,
+    interpolated: false,
     placed: [],
     failed: [],
     warned: [],

@@ -8,7 +8,7 @@ import type { Columns } from './columns.ts';
 import { judge } from './criterion.ts';
 import type { Node } from './node.ts';
 import type { CellProblem, CellState } from './state.ts';
-import { readTable } from './table.ts';
+import { readTable, unsortedAxis } from './table.ts';
 
 export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string) => string): CellState {
   const { cell, index, reading } = node;
@@ -20,6 +20,7 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
     ...usedAbove(node, numberOf),
     ...node.failed.filter((problem) => problem !== undefined),
     ...node.warned,
+    ...(cell.kind === 'table' && node.interpolated ? unsortedAxis(cell, node.table) : []),
   ];
   const type = node.type === undefined ? {} : { type: node.type };
   const unit = node.unit === undefined ? {} : { unit: node.unit };
@@ -62,6 +63,7 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
         ...(left === undefined ? {} : { left }),
         ...(right === undefined ? {} : { right }),
         si: columns.copy(node, 0),
+        ...(node.equationType === undefined ? {} : { equationType: node.equationType }),
         solutions: node.solutions,
       };
     }
@@ -69,6 +71,7 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
       const [left, right] = reading.formulas;
       const leftSi = columns.copy(node, 0);
       const rightSi = columns.copy(node, 1);
+      const isReading = node.type?.kind === 'quantity' && node.type.temperature === 'reading';
       const verdicts = Array.from(leftSi, (value, at) => judge(value, cell.relation, rightSi[at]!));
       return {
         kind: 'criterion',
@@ -82,7 +85,8 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
         leftSi,
         rightSi,
         met: verdicts.map((verdict) => verdict.met),
-        utilisation: verdicts.map((verdict) => verdict.utilisation),
+        // The zero of a temperature scale is no zero of demand or capacity: readings have no utilisation.
+        utilisation: verdicts.map((verdict) => (isReading ? null : verdict.utilisation)),
       };
     }
     case 'table':

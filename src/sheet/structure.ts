@@ -6,7 +6,7 @@
 
 import type { Sheet } from './document.ts';
 import { buildGraph, type Graph } from './graph.ts';
-import { type Names, resolveNames, usedNodes } from './names.ts';
+import { interpolatedTables, type Names, resolveNames, usedNodes } from './names.ts';
 import { type Node, newNode } from './node.ts';
 import { lineNumbers } from './numbering.ts';
 import { type DecimalSign, liveNames, readCell } from './reading.ts';
@@ -130,6 +130,22 @@ export class Structure {
     for (const node of this.nodes) {
       if (before.get(node.cell.id)?.message !== this.looped.get(node.cell.id)?.message) stale.add(node);
     }
+  }
+
+  /** Notes which tables are interpolated over; returns those of which that moved. */
+  noteInterpolated(): readonly Node[] {
+    if (this.names.tables.size === 0) return [];
+    const tables = new Set<string>();
+    for (const { reading } of this.nodes)
+      for (const formula of reading.formulas) if (formula) for (const name of interpolatedTables(formula)) tables.add(name);
+    const moved: Node[] = [];
+    for (const [name, node] of this.names.tables) {
+      if (node.interpolated === tables.has(name)) continue;
+      node.interpolated = !node.interpolated;
+      node.snapshot = undefined;
+      moved.push(node);
+    }
+    return moved;
   }
 
   private describeLoops(): ReadonlyMap<string, CellProblem> {

@@ -108,7 +108,8 @@ function readColumn(
   return { name: column.name, texts, numbers, unit: unit.value, type: typeOfUnit(unit.value) };
 }
 
-function readEntry(text: string, unit: Unit, decimalSign: DecimalSign): number | Problem {
+/** The number of an entry in coherent SI, or what keeps it from being one of the column's unit. */
+export function readEntry(text: string, unit: Unit, decimalSign: DecimalSign): number | Problem {
   const read = readValue(text, { decimalSign });
   if (!read.ok) return read.problem;
   const value = read.value;
@@ -119,4 +120,34 @@ function readEntry(text: string, unit: Unit, decimalSign: DecimalSign): number |
     severity: 'error',
     message: `${text} is ${withArticle(value.unit)}, the column holds ${withArticle(unit)}`,
   };
+}
+
+/** The first row at which the keys stop to rise, or to fall, throughout; undefined where they do not, or where one is no number. */
+export function unsortedRow(keys: Float64Array): number | undefined {
+  if (keys.some(Number.isNaN)) return undefined;
+  const rises = keys.length > 1 && keys[1]! > keys[0]!;
+  for (let row = 1; row < keys.length; row += 1) {
+    if (rises ? !(keys[row]! > keys[row - 1]!) : !(keys[row]! < keys[row - 1]!)) return row;
+  }
+  return undefined;
+}
+
+/** The warning of a table that a formula interpolates over, where its keys are out of order. */
+export function unsortedAxis(
+  cell: TableCell,
+  data: TableData | undefined,
+): readonly (FieldProblem & { readonly cell: string })[] {
+  const key = data?.columns[0];
+  const row = key?.numbers && unsortedRow(key.numbers);
+  if (key === undefined || row === undefined) return [];
+  const [now, last] = [key.texts[row], key.texts[row - 1]];
+  return [
+    {
+      code: 'unsorted-axis',
+      severity: 'warning',
+      message: `column ${key.name} neither rises nor falls throughout: row ${row + 1} (${now}) follows row ${row} (${last}); a formula interpolates over it, sort the rows`,
+      field: `rows.${row}.0`,
+      cell: cell.id,
+    },
+  ];
 }
