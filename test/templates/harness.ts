@@ -33,7 +33,7 @@ function textOf(id: string): string {
   return readFileSync(new URL(`${id}${ending}`, folder), 'utf8');
 }
 
-function sheetOf(id: string): Sheet {
+export function sheetOf(id: string): Sheet {
   const read = readSheet(textOf(id));
   if (!read.ok) throw new Error(read.problems.map((problem) => problem.message).join('\n'));
   return read.value;
@@ -43,7 +43,7 @@ const said = (calculation: Calculation) =>
   calculation.problems().map((problem) => `${problem.cell}: ${problem.code}: ${problem.message}`);
 
 /** Faults of all numeric steps that have a value, one line each. */
-function faultsOf(calculation: Calculation): string[] {
+export function faultsOf(calculation: Calculation): string[] {
   return makeRecord(calculation).steps.flatMap((step) =>
     step.kind !== 'derived' || !step.numeric
       ? []
