@@ -78,6 +78,8 @@ export interface Desk {
   setForAll(forAll: boolean): void;
   finish(): void;
   cancel(): void;
+  /** A value that was carried over holds for this sheet as well. */
+  confirm(cell: string): void;
   setBasis(cell: string, basis: Basis | null): void;
   /** Basis and source that stood beside the number before the last one. */
   formerProvenance(cell: string): Provenance | undefined;
@@ -294,6 +296,14 @@ export function createDesk(first: Sheet): Desk {
       if (editing === null) return;
       editing = null;
       show(kept);
+      changed();
+    },
+    confirm(id) {
+      const cell = givenOf(id);
+      if (cell?.carriedOver === undefined) return;
+      const { carriedOver: _, ...rest } = cell;
+      keep(rest, `confirmation of ${cell.name}`);
+      announcement = `${cell.name} is confirmed`;
       changed();
     },
     setBasis(id, basis) {

@@ -7,6 +7,9 @@
 
 import katex from 'katex';
 import { unwatchFit, watchFit } from './fit.ts';
+import { allowTallSigns } from './tall-signs.ts';
+
+allowTallSigns();
 
 const drawn = new Map<string, DocumentFragment>();
 const mostDrawn = 5000;

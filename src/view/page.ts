@@ -18,7 +18,7 @@ import { outline } from './outline.ts';
 import type { PaperElement } from './paper.ts';
 import { preparePrint } from './print.ts';
 import type { RowElement } from './row.ts';
-import { side } from './side.ts';
+import { openPoints, originAndUse } from './side.ts';
 import { words } from './text.ts';
 import { countLines } from './waiting.ts';
 
@@ -88,7 +88,7 @@ export class PageElementRoot extends PageElement {
     if (desk === undefined) return html`<p class="loading">Opening the sheet …</p>`;
     const { drawn: model } = desk;
     const goTo = (cell: string) => this.#goTo(cell);
-    const beside = side(desk, goTo);
+    const beside = originAndUse(desk, goTo, this.narrow ? 1 : 2);
     return html`
       <a class="skip" href="#paper" @click=${this.#skip}>To the sheet</a>
       ${this.#bar(desk)}
@@ -98,8 +98,9 @@ export class PageElementRoot extends PageElement {
             ? html`<details class="outline"><summary>Sections and criteria</summary>${outline(model, this.section, goTo)}</details>`
             : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}${keys()}</aside>`
         }
-        <main id="paper">${this.opening === null ? nothing : openingNote(this.opening, { open: this.#openAnyway, dismiss: this.#dismiss })}<ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}></ts-paper></main>
-        <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${beside}</aside>
+        <main id="paper">${this.opening === null ? nothing : openingNote(this.opening, { open: this.#openAnyway, dismiss: this.#dismiss })}<ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}
+            .beside=${this.narrow ? beside : null}></ts-paper></main>
+        <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${this.narrow ? nothing : beside}${openPoints(desk, goTo)}</aside>
       </div>
       <p class="unseen" role="status">${desk.announcement}</p>`;
   }

@@ -5,7 +5,7 @@
 // 3. Leaving a field keeps what was typed; focus then stays where it was.
 // Not here: a single row (row.ts), what lies beside the paper (page.ts).
 
-import { html, nothing } from 'lit';
+import { html, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
@@ -29,11 +29,18 @@ const noProblems: readonly CellProblem[] = [];
 const pageStep = 8;
 
 export class PaperElement extends PageElement {
-  static override properties = { desk: { attribute: false }, version: { attribute: false }, printing: { attribute: false } };
+  static override properties = {
+    desk: { attribute: false },
+    version: { attribute: false },
+    printing: { attribute: false },
+    beside: { attribute: false },
+  };
   declare desk: Desk;
   /** Raised by the page whenever the desk has changed. */
   declare version: number;
   declare printing: boolean;
+  /** Origin and use of the chosen row, where the window has no room for them at the side. */
+  declare beside: TemplateResult | null;
   #place: Place | null = null;
   #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
     all: noProblems,
@@ -90,7 +97,8 @@ export class PaperElement extends PageElement {
     const former = line.kind === 'step' && line.step.kind === 'given' ? formerText(desk, cell) : '';
     return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.drawn.cases}
       .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
-      .chosen=${desk.chosen === cell} .editing=${editing} .printing=${this.printing} .former=${former}></ts-row>`;
+      .chosen=${desk.chosen === cell} .editing=${editing} .printing=${this.printing} .former=${former}
+      .beside=${desk.chosen === cell && !this.printing ? this.beside : null}></ts-row>`;
   }
 
   #sortProblems() {

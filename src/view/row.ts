@@ -29,6 +29,7 @@ export class RowElement extends PageElement {
     editing: { attribute: false },
     printing: { attribute: false },
     former: { attribute: false },
+    beside: { attribute: false },
   };
   declare desk: Desk;
   declare line: Line;
@@ -42,6 +43,8 @@ export class RowElement extends PageElement {
   declare printing: boolean;
   /** A source that stood beside the number before the last one, and could be kept. */
   declare former: string;
+  /** What stands under the row in a narrow window. */
+  declare beside: TemplateResult | null;
 
   protected override render() {
     const { line } = this;
@@ -74,11 +77,11 @@ export class RowElement extends PageElement {
             ? html`${source(step.source)}${step.basis === undefined || isStateWord(step.basis) ? nothing : html` <span class="basis">${step.basis}</span>`}`
             : sourceEditor(this.desk, editingSource, step)
         }
-        ${state.map((note) => html`<span class="tag ${isOpen(note) ? 'open' : ''}">${note}</span>`)}
+        ${state.filter((note) => !isLong(note)).map(tag)}
       </div>
       <div role="gridcell" class="calculation ${choices === undefined ? '' : 'across'}" data-column="1" tabindex=${this.#tab(1)}
         aria-readonly=${choices === undefined ? 'true' : nothing}>
-        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span></div>
+        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}</div>
         <div class="formula">
           ${equation(step, this.reading, this.cases, this.printing)}
           ${choices === undefined ? nothing : this.#choice(step, editingValue, choices)}
@@ -126,8 +129,14 @@ export class RowElement extends PageElement {
         ? html`<p class="remark"><button type="button" class="word" @click=${() => this.desk.restoreProvenance(step.cell)}>keep the former source</button>
             <span class="former">${this.former}</span></p>`
         : nothing;
-    if (editing === null && texts.length === 0 && offer === nothing) return nothing;
-    return html`<div class="below">${editing === null ? nothing : editorNotes(this.desk, editing, step, this.cases)}${texts}${offer}</div>`;
+    const confirm =
+      this.chosen && editing === null && step.kind === 'given' && step.notes.some((note) => note.startsWith('carried over'))
+        ? html`<p class="remark"><button type="button" class="word" @click=${() => this.desk.confirm(step.cell)}>confirm the value for this sheet</button></p>`
+        : nothing;
+    if (editing === null && texts.length === 0 && offer === nothing && confirm === nothing && this.beside === null)
+      return nothing;
+    return html`<div class="below">${editing === null ? nothing : editorNotes(this.desk, editing, step, this.cases)}${texts}${confirm}${offer}
+      ${this.beside === null ? nothing : html`<div class="beside">${this.beside}</div>`}</div>`;
   }
 }
 
@@ -146,6 +155,10 @@ function result(step: Step, each: StepCase, typed: string) {
   return html`<b class=${each.met ? 'met' : 'not-met'}>${each.met ? 'met' : 'not met'}</b> <span class="utilisation">${quantity(each.result)}</span>`;
 }
 
+const tag = (note: string) => html`<span class="tag ${isOpen(note) ? 'open' : ''}">${note}</span>`;
+/** Notes that need the width of the calculation. */
+const isLong = (note: string) => isOpen(note) && note !== noSource;
+const noSource = 'no source';
 const isStateWord = (text: string) => text === 'assumed' || text === 'measured';
-const isOpen = (note: string) => note.startsWith('carried over') || note.startsWith('to be confirmed') || note === 'no source';
+const isOpen = (note: string) => note.startsWith('carried over') || note.startsWith('to be confirmed') || note === noSource;
 const isState = (note: string) => isStateWord(note) || isOpen(note);

@@ -1,6 +1,6 @@
 // What lies at the right of the paper: origin and use of the chosen line, and what is still open in the sheet.
 //
-// 1. Origin goes two steps back: what the line uses, and what that uses; a line met twice is shown once.
+// 1. Origin goes up to two steps back: what the line uses, and what that uses; a line met twice is shown once.
 // 2. Up and down move in the lists, Enter goes to the line, Escape back to the paper.
 // Not here: following a jump (page.ts).
 
@@ -17,13 +17,14 @@ interface Entry {
   readonly depth: number;
 }
 
-export function side(desk: Desk, goTo: GoTo) {
+/** `deep`: how many steps back the origin goes. */
+export function originAndUse(desk: Desk, goTo: GoTo, deep: 1 | 2) {
   const { chosen, drawn: model } = desk;
   const steps = new Map(model.steps.map((step) => [step.cell, step]));
   const line = chosen === null ? undefined : model.lines.find((one) => one.kind !== 'step' && one.cell === chosen);
   const step = chosen === null ? undefined : steps.get(chosen);
   const what = step?.number ?? (line?.kind === 'table' ? line.title : undefined);
-  const origin = chosen === null ? [] : originOf(desk, chosen);
+  const origin = chosen === null ? [] : originOf(desk, chosen, deep);
   const use = chosen === null ? [] : desk.calculation.use(chosen).map((cell) => ({ cell, depth: 0 }));
   const list = (entries: readonly Entry[]) =>
     html`<ul>${entries.map((entry) => html`<li>${item(desk, steps, entry, goTo)}</li>`)}</ul>`;
@@ -36,20 +37,20 @@ export function side(desk: Desk, goTo: GoTo) {
             ${origin.length === 0 ? html`<p class="quiet">${step === undefined ? 'A table of the sheet.' : given(step)}</p>` : list(origin)}</section>
           <section id="use" aria-labelledby="use-title"><h2 id="use-title">Use</h2>
             ${use.length === 0 ? html`<p class="quiet">Nothing in this sheet uses it.</p>` : list(use)}</section>`
-    }
-    ${openPoints(desk, goTo)}`;
+    }`;
 }
 
 const given = (step: Step) =>
   step.kind === 'given' ? (step.source === '' ? 'Given here, without a source.' : step.source) : 'It uses no other line.';
 
-function originOf(desk: Desk, cell: string): readonly Entry[] {
+function originOf(desk: Desk, cell: string, deep: 1 | 2): readonly Entry[] {
   const seen = new Set([cell]);
   const entries: Entry[] = [];
   for (const first of desk.calculation.origin(cell)) {
     if (seen.has(first)) continue;
     seen.add(first);
     entries.push({ cell: first, depth: 0 });
+    if (deep === 1) continue;
     for (const second of desk.calculation.origin(first)) {
       if (seen.has(second) || desk.calculation.origin(cell).includes(second)) continue;
       seen.add(second);
@@ -75,7 +76,7 @@ function item(desk: Desk, steps: ReadonlyMap<string, Step>, { cell, depth }: Ent
     <span class="value">${quantity(shown)}</span><span class="number">${step.number}</span></button>`;
 }
 
-function openPoints({ drawn: model }: Desk, goTo: GoTo) {
+export function openPoints({ drawn: model }: Desk, goTo: GoTo) {
   const { wrong: lines, waiting } = countLines(model.problems);
   const wrong = new Set(lines);
   const warnings = model.problems.filter((problem) => problem.severity === 'warning');

@@ -1,7 +1,7 @@
 // The page in a real browser: the example as the ruled sheet, a given changed in place, what follows from it, and the way back.
 // What the page prints is compared with the record computed here in Node from the same sheet.
 
-import { readFileSync } from 'node:fs';
+import { readdirSync, readFileSync } from 'node:fs';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
@@ -90,7 +90,14 @@ describe('a given changed in place', () => {
     expect(await page.locator('.bars ts-bar[data-over]').count()).toBe(2);
     expect(await page.locator('.bars .not-met').first().textContent()).toContain('not met');
     expect(await status()).toContain('2 criteria are not met');
-    await expect.poll(() => rowOf('P_0').locator('annotation').last().textContent()).toContain('900');
+    // The equations too: every step that follows shows the numbers of its record.
+    const followers = recordWith({ F_0: '900 N' }).steps.filter((step) => step.kind === 'derived' && moved.includes(step.cell));
+    for (const step of followers) {
+      const substituted = step.cases[0]?.substituted ?? '';
+      await expect
+        .poll(() => page.locator(`ts-row[data-cell="${step.cell}"] annotation`).allTextContents(), { timeout: 10_000 })
+        .toContainEqual(expect.stringContaining(substituted));
+    }
     // The number changed: its source spoke of another one.
     expect(await rowOf('F_0').locator('.source').textContent()).toContain('no source');
     await page.keyboard.press('Control+z');
@@ -234,7 +241,35 @@ describe('origin and use', () => {
       const step = record.steps.find((one) => one.name === name);
       expect(names).toContainEqual(`${step?.title} ${step?.cases[0]?.result} ${step?.number}`);
     }
-    expect(await page.locator('#use').textContent()).toContain('Nothing in this sheet uses it');
+    expect(await page.locator('#use li').count()).toBe(calculate(example).use(idOf('F_1min')).length);
+  });
+});
+
+describe('a value carried over', () => {
+  it('says from where, is confirmed on its line, and is counted', async () => {
+    const row = rowOf('E_b');
+    expect(await row.textContent()).toContain('carried over from CS-009');
+    const open = () => page.locator('.bar .state').textContent();
+    const before = Number(/(\d+) to confirm/u.exec((await open()) ?? '')?.[1]);
+    expect(before).toBeGreaterThan(0);
+    await row.locator('.label').click();
+    await row.getByRole('button', { name: 'confirm the value' }).click();
+    await expect.poll(() => row.textContent()).not.toContain('carried over');
+    await expect.poll(open).toContain(`${before - 1} to confirm`);
+    await page.keyboard.press('Control+z');
+    await expect.poll(() => row.textContent()).toContain('carried over from CS-009');
+  });
+});
+
+describe('a narrow window', () => {
+  it('shows origin and use under the chosen line', async () => {
+    await page.setViewportSize({ width: 800, height: 1000 });
+    await rowOf('F_1min').locator('.label').click();
+    await expect.poll(() => rowOf('F_1min').locator('#origin li').count()).toBeGreaterThan(2);
+    await rowOf('F_1min').locator('#origin li button').first().click();
+    await expect
+      .poll(() => page.locator('ts-row.chosen').getAttribute('data-cell'))
+      .toBe(calculate(example).origin(idOf('F_1min'))[0]);
   });
 });
 
@@ -264,6 +299,34 @@ describe('the file', () => {
     }
   });
 
+  it('of every template opens with every formula set and every result as in its record', { timeout: 240_000 }, async () => {
+    const folder = new URL('../../templates/', import.meta.url);
+    const files = readdirSync(folder).filter((name) => name.endsWith('.sheet.json'));
+    expect(files.length).toBeGreaterThanOrEqual(3);
+    for (const name of files) {
+      const text = readFileSync(new URL(name, folder), 'utf8');
+      const read = readSheet(text);
+      if (!read.ok) throw new Error(`${name} cannot be read`);
+      await page.locator('#sheet-file').setInputFiles({ name, mimeType: 'application/json', buffer: Buffer.from(text) });
+      await expect.poll(() => page.locator('h1').textContent()).toBe(read.value.title);
+      // Nothing waits to be typeset any more, and nothing fell back to its text.
+      await expect
+        .poll(
+          () =>
+            page.evaluate(() => [...document.querySelectorAll('.paper ts-math')].filter((one) => one.firstChild === null).length),
+          { timeout: 30_000 },
+        )
+        .toBe(0);
+      expect(await page.locator('.paper ts-math code').count(), name).toBe(0);
+      const printed = await resultsOn(page);
+      const record = makeRecord(calculate(read.value));
+      for (const step of record.steps.filter((one) => one.kind === 'derived')) {
+        expect(printed[step.cell], `${name} ${step.number}`).toEqual(step.cases.map((each) => each.result ?? 'no value'));
+      }
+      expect(opened.violations, name).toEqual([]);
+    }
+  });
+
   it('with markup in its texts shows them as texts', async () => {
     const hostile = '<img src=x onerror="document.title=1"><script>document.title=2</script>';
     const sheet = {
@@ -288,7 +351,7 @@ describe('the file', () => {
     expect(await page.title()).toContain('<img');
     expect(await page.locator('ts-row.step').count()).toBe(2);
     expect(await page.evaluate(() => getComputedStyle(document.body).display)).toBe('block');
-    expect(await resultsOn(page)).toMatchObject({ d1: ['4.000 m'] });
+    expect(await resultsOn(page)).toMatchObject({ d1: ['4.000\u00a0m'] });
   });
 
   it('that is saved holds the sheet as it stands', async () => {

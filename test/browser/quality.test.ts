@@ -22,13 +22,14 @@ interface Finding {
   readonly nodes: readonly { readonly target: readonly string[]; readonly failureSummary?: string }[];
 }
 
+// The drawn half of a formula is hidden from assistive tools and inherits its ink; the spoken half (MathML) is examined.
 async function findings(page: Page): Promise<string[]> {
   await page.evaluate(axeSource);
   const violations = await page.evaluate(async () => {
     const { axe } = globalThis as unknown as {
-      axe: { run(root: Document, options: object): Promise<{ violations: Finding[]; passes: unknown[] }> };
+      axe: { run(context: object, options: object): Promise<{ violations: Finding[]; passes: unknown[] }> };
     };
-    const result = await axe.run(document, { resultTypes: ['violations', 'passes'] });
+    const result = await axe.run({ exclude: [['.katex-html']] }, { resultTypes: ['violations'], iframes: false });
     return result.passes.length < 20 ? [{ id: `only ${result.passes.length} rules ran`, nodes: [] }] : result.violations;
   });
   return violations.map(
@@ -56,6 +57,7 @@ describe('accessibility rules', () => {
     ['dark', 320],
   ] as const)(
     'find nothing, %s at %i px, at rest, while typing an error, and with criteria not met',
+    { timeout: 240_000 },
     async (colorScheme, width) => {
       const { page, close } = await open(browser, { colorScheme, viewport: { width, height: 900 } });
       expect(await findings(page)).toEqual([]);

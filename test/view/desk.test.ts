@@ -161,6 +161,18 @@ describe('the desk', () => {
     expect(given(desk, 'g2').carriedOver).toBeUndefined();
   });
 
+  it('confirms a carried-over value as it stands, and takes that back', () => {
+    const desk = createDesk(small);
+    desk.confirm('g2');
+    expect(given(desk, 'g2')).toMatchObject({ value: '3 m', source: 'drawing' });
+    expect(given(desk, 'g2').carriedOver).toBeUndefined();
+    expect(desk.undoLabel).toBe('confirmation of b');
+    desk.undo();
+    expect(given(desk, 'g2').carriedOver).toBe(true);
+    desk.confirm('g1');
+    expect(desk.undoLabel).toBeNull();
+  });
+
   it('states a source without touching the number', () => {
     const desk = createDesk(small);
     desk.begin('g3', 'source', 0);

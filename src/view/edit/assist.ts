@@ -7,7 +7,7 @@
 // Not here: what is wrong with the text (src/sheet/draft.ts), the list on the screen (code-mirror.ts, suggest.ts).
 
 import { canonicalName, functionNames, plainName, type Token, tokenize } from '../../formula/index.ts';
-import { equalD, kindName, type Unit, unitNames, unitOf } from '../../quantity/index.ts';
+import { equalD, kindName, printValue, type Unit, unitNames, unitOf } from '../../quantity/index.ts';
 import { type Calculation, type QuantityState, quantityNames, tableNames } from '../../sheet/index.ts';
 import type { Entry, PartRole } from './entry.ts';
 import { printSi } from './print-live.ts';
@@ -124,18 +124,22 @@ function quantities(begun: string, { calculation, own }: Where): Proposal[] {
 
 /** 'Belt speed · 15.18 m/s'; by case where the values differ. */
 export function describe(state: QuantityState, calculation: Calculation): string {
+  const symbol = plainName(canonicalName(state.cell.name));
+  const title = state.cell.title ?? (symbol === state.cell.name ? '' : symbol);
+  return [title, describeValues(state, calculation)].filter((part) => part !== '').join(' · ');
+}
+
+/** '15.18 m/s', or one after the other where the cases differ. */
+export function describeValues(state: QuantityState, calculation: Calculation): string {
   const values =
     state.kind === 'given' && state.texts !== undefined
       ? state.texts.map((text) => text ?? '')
       : [...state.si].map((si, index) => {
-          const typed = state.kind === 'given' ? state.values[index]?.text : undefined;
-          return typed ?? printSi(si, state.unit, calculation);
+          const typed = state.kind === 'given' ? state.values[index] : undefined;
+          return typed === undefined ? printSi(si, state.unit, calculation) : printValue(typed, calculation.style);
         });
   const different = [...new Set(values)];
-  const shown = different.length > 3 ? `${different.slice(0, 3).join(', ')} …` : different.join(', ');
-  const symbol = plainName(canonicalName(state.cell.name));
-  const title = state.cell.title ?? (symbol === state.cell.name ? '' : symbol);
-  return [title, shown].filter((part) => part !== '').join(' · ');
+  return different.length > 3 ? `${different.slice(0, 3).join(', ')} …` : different.join(', ');
 }
 
 function functions(begun: string, text: string, to: number): Proposal[] {
