@@ -2,7 +2,7 @@
 //
 // 1. The shape is that of the command line's contract: { title, cases, fingerprint?, steps, … }; keys are never left out, null says "none".
 // 2. `steps` holds what is a number: givens, derived quantities, criteria. Choices of texts stand beside it.
-// 3. A sought quantity that has no value yet stands under `unsolved`.
+// 3. A sought quantity stands among the steps; one without a value in some case is listed under `unsolved` as well.
 
 import type { RecordModel, Step } from './model.ts';
 
@@ -85,7 +85,7 @@ export function recordJson(model: RecordModel, fingerprint?: string): JsonRecord
     cases: model.cases.map((each) => each.id),
     ...(fingerprint === undefined ? {} : { fingerprint }),
     status: model.status,
-    steps: model.steps.filter((step) => step.numeric && step.kind !== 'sought').map(jsonStep),
+    steps: model.steps.filter((step) => step.numeric).map(jsonStep),
     choices: model.steps
       .filter((step) => !step.numeric)
       .map((step) => ({
@@ -95,7 +95,7 @@ export function recordJson(model: RecordModel, fingerprint?: string): JsonRecord
         values: step.cases.map((each) => each.result),
       })),
     unsolved: model.steps
-      .filter((step) => step.kind === 'sought')
+      .filter((step) => step.kind === 'sought' && step.cases.some((each) => each.result === null))
       .map((step) => ({ number: step.number, cell: step.cell, name: step.name ?? '' })),
     summary: model.summary.map(({ number, cell, title, governing }) => ({ number, cell, title, governing })),
     assumptions: model.assumptions.map(({ number, text, value, source, toConfirm }) => ({

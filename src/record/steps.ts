@@ -7,7 +7,6 @@
 
 import {
   calculatorLine,
-  canonicalName,
   type Expr,
   type Formula,
   lineNumber,
@@ -16,31 +15,15 @@ import {
   type Taken,
   texName,
   texSubstituted,
-  texSymbols,
   texText,
 } from '../formula/index.ts';
-import {
-  type Numeral,
-  one,
-  plainNumeral,
-  printQuantity,
-  printValue,
-  texQuantity,
-  texValue,
-  type Unit,
-} from '../quantity/index.ts';
-import type {
-  Calculation,
-  CellProblem,
-  CriterionState,
-  DerivedState,
-  GivenState,
-  QuantityState,
-  SoughtState,
-} from '../sheet/index.ts';
+import { one, plainNumeral, printQuantity, printValue, texQuantity, texValue } from '../quantity/index.ts';
+import type { Calculation, CriterionState, DerivedState, GivenState, QuantityState } from '../sheet/index.ts';
 import type { CasePrint, Printed, PrintedVerdict } from './case-print.ts';
 import type { Step, StepCase } from './model.ts';
 import { calculatorNumeral, givenNumeral } from './numerals.ts';
+import { soughtStep } from './sought-step.ts';
+import { failed, head, nameOf, problemIn, resultOf, symbolsOf, warnings } from './step-parts.ts';
 import { demandIsLeft, texRelation, texUnmet } from './verdict.ts';
 import { citationNotes, givenNotes, isBlank, noSource } from './words.ts';
 
@@ -53,11 +36,9 @@ export function makeStep(calculation: Calculation, state: QuantityState | Criter
     case 'criterion':
       return criterionStep(calculation, state, prints);
     case 'sought':
-      return soughtStep(calculation, state);
+      return soughtStep(calculation, state, prints);
   }
 }
-
-const nameOf = (state: QuantityState): string => canonicalName(state.cell.name);
 
 /** The printed value of a quantity in one case, for a text that names it; null where it has none. */
 export function printedValue(calculation: Calculation, state: QuantityState, print: CasePrint): string | null {
@@ -97,35 +78,6 @@ function substitution(calculation: Calculation, print: CasePrint): Substitution 
   };
   substitutions.set(print, made);
   return made;
-}
-
-const keptSymbols = new WeakMap<Expr, { readonly decimalSign: string; readonly tex: string }>();
-
-function symbolsOf(expr: Expr, calculation: Calculation): string {
-  const { decimalSign } = calculation.style;
-  const known = keptSymbols.get(expr);
-  if (known?.decimalSign === decimalSign) return known.tex;
-  const tex = texSymbols(expr, calculation.style);
-  keptSymbols.set(expr, { decimalSign, tex });
-  return tex;
-}
-
-function problemIn(problems: readonly CellProblem[], caseId: string): CellProblem | undefined {
-  return problems.find((problem) => problem.severity === 'error' && (problem.case === undefined || problem.case === caseId));
-}
-
-function failed(caseId: string, problems: readonly CellProblem[]): StepCase {
-  const problem = problemIn(problems, caseId);
-  return {
-    case: caseId,
-    substituted: '',
-    result: null,
-    resultTex: null,
-    calculatorLine: null,
-    calculatorResult: null,
-    closes: false,
-    ...(problem === undefined ? {} : { problem }),
-  };
 }
 
 function givenStep(calculation: Calculation, state: GivenState): Step {
@@ -313,41 +265,6 @@ function sidesTex(calculation: Calculation, state: CriterionState, verdict: Prin
   return `${quantityTex(calculation, verdict.sides[0])} ${relation} ${quantityTex(calculation, verdict.sides[1])}`;
 }
 
-function soughtStep(calculation: Calculation, state: SoughtState): Step {
-  const { cell, left, right } = state;
-  const symbol = texName(nameOf(state));
-  const equation =
-    left && right ? `${symbol}:\\; ${symbolsOf(left.expr, calculation)} = ${symbolsOf(right.expr, calculation)}` : symbol;
-  return {
-    ...head(calculation, state),
-    kind: 'sought',
-    symbols: equation,
-    notes: [
-      ...(isBlank(cell.source) ? [noSource] : []),
-      ...citationNotes(cell.source, calculation.sheet),
-      ...warnings(state.problems),
-    ],
-    numeric: true,
-    cases: calculation.cases.map((each) => failed(each.id, state.problems)),
-  };
-}
-
-function head(calculation: Calculation, state: QuantityState | CriterionState) {
-  const { cell } = state;
-  return {
-    number: calculation.numberOf(cell.id),
-    cell: cell.id,
-    ...(state.kind === 'criterion' ? {} : { name: nameOf(state), symbol: texName(nameOf(state)) }),
-    title: cell.title ?? '',
-    source: cell.source ?? '',
-    unit: state.unit?.text ?? cell.unit ?? '',
-  };
-}
-
-function resultOf(calculation: Calculation, numeral: Numeral, unit: Unit) {
-  return { result: printQuantity(numeral, unit, calculation.style), resultTex: texQuantity(numeral, unit, calculation.style) };
-}
-
 function closingOf(print: CasePrint, cell: string) {
   const reason = print.open(cell);
   return reason === undefined ? { closes: true } : { closes: false, reason };
@@ -372,16 +289,4 @@ function seeBelow(calculation: Calculation, index: number, formulas: readonly Fo
     }
   }
   return [...numbers].map((number) => `see ${number} below`);
-}
-
-const saidOtherwise = new Set(['used-above', 'not-solved']);
-
-function warnings(problems: readonly CellProblem[]): readonly string[] {
-  return [
-    ...new Set(
-      problems
-        .filter((problem) => problem.severity === 'warning' && !saidOtherwise.has(problem.code))
-        .map((problem) => problem.message),
-    ),
-  ];
 }

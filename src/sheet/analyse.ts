@@ -396,10 +396,12 @@ function* givenNames(around: Surroundings): Iterable<string> {
 export function analyseEquation(node: Node, around: Surroundings): void {
   const [left, right] = node.reading.formulas;
   node.equation = [];
+  node.equationType = undefined;
   if (node.broken || left === undefined || right === undefined || node.cell.kind !== 'sought') return;
   const report = (problem: Problem, offset?: number) =>
     node.equation.push({ ...(offset === undefined ? problem : shifted(problem, offset)), cell: node.cell.id, field: 'where' });
   const compared = inferComparison(left, right, scopeOf(around));
+  node.equationType = compared.type;
   for (const problem of compared.leftProblems) report(problem, 0);
   for (const problem of compared.rightProblems) report(problem, node.cell.where.length - right.text.length);
   const waiting = firstBroken(node, [left, right], around);

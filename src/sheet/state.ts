@@ -78,6 +78,8 @@ export interface SoughtState extends StateBase {
   readonly type?: Type;
   readonly unit?: Unit;
   readonly si: Float64Array;
+  /** Type of both sides of the equation. */
+  readonly equationType?: Type;
   /** One entry a case. */
   readonly solutions: readonly (Solution | undefined)[];
 }
