@@ -39,6 +39,10 @@ const kindWords: Readonly<Record<Cell['kind'], string>> = {
 };
 
 let count = 0;
+const nextId = (stem: string) => {
+  count += 1;
+  return `${stem}-${count}`;
+};
 
 export class CellFieldsElement extends PageElement {
   static override properties = { calculation: { attribute: false }, cell: { attribute: false }, draft: { state: true } };
@@ -47,7 +51,7 @@ export class CellFieldsElement extends PageElement {
   declare cell: Cell;
   declare draft: Cell;
   #of: Cell | undefined;
-  readonly #id = `cell-fields-${(count += 1)}`;
+  readonly #id = nextId('cell-fields');
 
   constructor() {
     super();

@@ -83,7 +83,8 @@ export function withBlock(cell: TableCell, row: number, column: number, block: s
     .slice(0, mostRows - row);
   const rows = cell.rows.map((one) => [...one]);
   lines.forEach((line, index) => {
-    const target = (rows[row + index] ??= cell.columns.map(() => ''));
+    const target = rows[row + index] ?? cell.columns.map(() => '');
+    rows[row + index] = target;
     line.split('\t').forEach((entry, at) => {
       if (column + at < cell.columns.length) target[column + at] = entry.trim();
     });

@@ -14,6 +14,10 @@ import { keepKeys } from './keep-keys.ts';
 import { focusFixes, problemLine } from './problem-line.ts';
 
 let count = 0;
+const nextId = (stem: string) => {
+  count += 1;
+  return `${stem}-${count}`;
+};
 
 export class ValueFieldElement extends PageElement {
   static override properties = {
@@ -34,7 +38,7 @@ export class ValueFieldElement extends PageElement {
   /** More than one: a text of several lines, in which Enter begins the next. */
   declare lines: number;
   declare propose: ((text: string, caret: number) => Proposals | undefined) | null;
-  readonly #id = `field-${(count += 1)}`;
+  readonly #id = nextId('field');
 
   constructor() {
     super();
