@@ -8,7 +8,7 @@
 // Not here: opening and versions (database.ts).
 
 import type { IDBPTransaction, StoreNames } from 'idb';
-import { type Backend, firstKept, type KeptWithSteps } from './backend.ts';
+import { type Backend, firstKept, isNewer, type KeptWithSteps } from './backend.ts';
 import { type Database, type OpenedDatabase, type Opening, openDatabase, type Tables } from './database.ts';
 import { problemOf, StoreFault, storeProblem } from './problem.ts';
 import type { SheetHead, TextRow } from './rows.ts';
@@ -89,15 +89,24 @@ export async function browserBackend(opening: Opening): Promise<BrowserBackend> 
         return { head, text: row.text, position: row.position, draft: row.draft ?? null };
       }),
     claim: (id, writer, pruning) =>
-      run(['sheets', 'texts', 'steps'], 'readwrite', async (t) => {
+      run(['sheets', 'texts', 'steps', 'left'], 'readwrite', async (t) => {
         const steps = t.objectStore('steps');
-        const [before, row, rows] = await Promise.all([
+        const [before, text, line, allLeft] = await Promise.all([
           t.objectStore('sheets').get(id),
           t.objectStore('texts').get(id),
           steps.getAll(stepsOf(id)),
+          t.objectStore('left').getAll(),
         ]);
-        if (before === undefined || row === undefined) return undefined;
-        const head: SheetHead = { ...before, writer, rev: before.rev + 1 };
+        if (before === undefined || text === undefined) return undefined;
+        const behind = allLeft.filter((one) => one.sheet === id);
+        const left = behind.find((one) => isNewer(one, before));
+        const orphans = behind.filter((one) => one.writer !== before.writer);
+        const head: SheetHead = { ...(left?.head ?? before), writer, rev: before.rev + 1 };
+        const row = left === undefined ? text : textRow(id, left);
+        const rows = left?.steps ?? line;
+        if (left !== undefined)
+          await Promise.all([t.objectStore('texts').put(row), steps.delete(stepsOf(id)), ...rows.map((one) => steps.put(one))]);
+        if (behind.some((one) => one.writer === before.writer)) await t.objectStore('left').delete(before.writer);
         const first = firstKept(rows, row.position, pruning);
         const writes: Promise<unknown>[] = [t.objectStore('sheets').put(head)];
         if (rows[0] !== undefined && rows[0].n < first)
@@ -109,8 +118,17 @@ export async function browserBackend(opening: Opening): Promise<BrowserBackend> 
           position: row.position,
           draft: row.draft ?? null,
           steps: rows.filter((one) => one.n >= first),
+          orphans,
         };
       }),
+    leave: (row) =>
+      run(['left'], 'readwrite', async (t) => {
+        const put = t.objectStore('left').put(row);
+        // Left to itself the transaction would end after an answer that a closing page never gets.
+        t.commit();
+        await put;
+      }),
+    dropLeft: (writer) => run(['left'], 'readwrite', (t) => t.objectStore('left').delete(writer)),
     create: (kept) =>
       run(['sheets', 'texts', 'steps'], 'readwrite', async (t) => {
         await Promise.all([
@@ -120,7 +138,7 @@ export async function browserBackend(opening: Opening): Promise<BrowserBackend> 
         ]);
       }),
     write: (change) =>
-      run(['sheets', 'texts', 'steps'], 'readwrite', async (t) => {
+      run(['sheets', 'texts', 'steps', 'left'], 'readwrite', async (t) => {
         const { id, writer } = change.head;
         const there = await t.objectStore('sheets').get(id);
         if (there === undefined) throw new StoreFault(storeProblem('gone'));
@@ -132,6 +150,7 @@ export async function browserBackend(opening: Opening): Promise<BrowserBackend> 
           t.objectStore('texts').put(textRow(id, change)),
           ...(change.dropFrom === null ? [] : [steps.delete(stepsOf(id, change.dropFrom))]),
           ...change.put.map((row) => steps.put(row)),
+          t.objectStore('left').delete(writer),
         ]);
         return there.rev + 1;
       }),

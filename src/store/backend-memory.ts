@@ -36,8 +36,11 @@ export function memoryBackend(): Backend {
         line.filter((row) => row.n >= first),
       );
       sheets.set(id, { ...head, writer, rev: head.rev + 1 });
-      return kept(id);
+      return { ...kept(id)!, orphans: [] };
     },
+    // The memory goes with the page: nothing can be left in it.
+    async leave() {},
+    async dropLeft() {},
     async create(row) {
       if (sheets.has(row.head.id) || trash.has(row.head.id)) throw new RangeError(`there is a sheet ${row.head.id} already`);
       sheets.set(row.head.id, row.head);

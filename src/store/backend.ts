@@ -6,7 +6,7 @@
 //    where an earlier write of its own has failed).
 // Not here: when and what is written (keeper.ts, shelf.ts).
 
-import type { Draft, FileRow, SheetHead, StepRow, TemplateRow, TrashRow } from './rows.ts';
+import type { Draft, FileRow, LeftRow, SheetHead, StepRow, TemplateRow, TrashRow } from './rows.ts';
 
 /** A sheet as it is kept. */
 export interface KeptSheet {
@@ -17,6 +17,10 @@ export interface KeptSheet {
 }
 export interface KeptWithSteps extends KeptSheet {
   readonly steps: readonly StepRow[];
+}
+export interface Claimed extends KeptWithSteps {
+  /** Left behind by writers that had been replaced already: not part of the sheet. */
+  readonly orphans: readonly LeftRow[];
 }
 /** One write: the head, the text, and what changed in the line of steps. */
 export interface SheetWrite {
@@ -44,12 +48,15 @@ export interface Backend {
   heads(): Promise<readonly SheetHead[]>;
   /** Undefined where there is no such sheet on the shelf. */
   read(id: string): Promise<KeptSheet | undefined>;
-  /** Makes `writer` the tab that may write, prunes old steps, and reads the sheet. */
-  claim(id: string, writer: string, pruning: Pruning): Promise<KeptWithSteps | undefined>;
+  /** Makes `writer` the tab that may write, takes in what the last one left behind, prunes old steps, and reads the sheet. */
+  claim(id: string, writer: string, pruning: Pruning): Promise<Claimed | undefined>;
   /** A new sheet; throws where its id is taken. */
   create(kept: KeptWithSteps): Promise<void>;
   /** Resolves to the new rev. Faults: 'gone', 'overtaken', 'full', 'not-kept'. */
   write(change: SheetWrite): Promise<number>;
+  /** Puts down what a closing page has not written yet. */
+  leave(row: LeftRow): Promise<void>;
+  dropLeft(writer: string): Promise<void>;
   /** Marks a text that cannot be read; the rest of the row stays. */
   setAside(id: string, reason: string): Promise<void>;
   remove(id: string, at: number): Promise<TrashRow | undefined>;
@@ -68,6 +75,10 @@ export interface Backend {
   putMeta(key: string, value: unknown): Promise<void>;
   close(): void;
 }
+
+/** Whether what was left behind is newer than the row: of the same writer, and not written in the ordinary way after all. */
+export const isNewer = (left: LeftRow, head: SheetHead): boolean =>
+  left.writer === head.writer && (left.rev === null || left.rev >= head.rev);
 
 /** The first `n` that stays. `rows` in order of `n`; steps that can be redone always stay. */
 export function firstKept(rows: readonly StepRow[], position: number, { before, least, most }: Pruning): number {

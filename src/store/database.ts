@@ -9,7 +9,7 @@
 
 import { type DBSchema, type IDBPDatabase, type IDBPTransaction, openDB, type StoreNames } from 'idb';
 import { problemOf, StoreFault, type StoreProblem, storeProblem } from './problem.ts';
-import type { FileRow, MetaRow, SheetHead, StepRow, TemplateRow, TextRow, TrashRow } from './rows.ts';
+import type { FileRow, LeftRow, MetaRow, SheetHead, StepRow, TemplateRow, TextRow, TrashRow } from './rows.ts';
 import { to1 } from './upgrade/to1.ts';
 
 export interface Tables extends DBSchema {
@@ -18,6 +18,7 @@ export interface Tables extends DBSchema {
   steps: { key: [string, number]; value: StepRow };
   trash: { key: string; value: TrashRow };
   templates: { key: string; value: TemplateRow };
+  left: { key: string; value: LeftRow };
   files: { key: string; value: FileRow };
   meta: { key: string; value: MetaRow };
 }
@@ -45,11 +46,12 @@ export interface OpenedDatabase {
   readonly fresh: boolean;
 }
 
-/** Opens the database. Throws a StoreFault: 'newer', or 'unavailable' where the browser has none for us. */
+/** Opens the database. Throws a StoreFault: 'newer', 'not-upgraded', or 'unavailable' where the browser has none for us. */
 export async function openDatabase(opening: Opening): Promise<OpenedDatabase> {
   const steps = opening.upgrades ?? upgrades;
   let fresh = false;
   let waiting = false;
+  let upgradeFault: unknown;
   const wait = (problem: StoreProblem): void => {
     waiting = true;
     opening.onWait?.(problem);
@@ -64,9 +66,9 @@ export async function openDatabase(opening: Opening): Promise<OpenedDatabase> {
         try {
           for (const step of steps.slice(before)) await step(database, transaction);
         } catch (cause) {
+          upgradeFault = cause;
           transaction.done.catch(() => undefined);
           transaction.abort();
-          throw cause;
         }
       },
       blocked: () => wait(storeProblem('blocked')),
@@ -78,6 +80,7 @@ export async function openDatabase(opening: Opening): Promise<OpenedDatabase> {
     });
     return { db, fresh };
   } catch (cause) {
+    if (upgradeFault !== undefined) throw new StoreFault(storeProblem('not-upgraded', { cause: upgradeFault }));
     const problem = problemOf(cause);
     throw new StoreFault(problem.code === 'not-kept' ? storeProblem('unavailable', { cause }) : problem);
   } finally {

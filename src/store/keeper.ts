@@ -8,13 +8,13 @@
 // 5. Trouble never empties the screen: `sheet` stays what it was, and the problem names the ways out.
 // Not here: when the next write starts (queue.ts), the list of sheets (shelf.ts), what is drawn (src/view).
 
-import { type History, readSheet, type Sheet } from '../sheet/index.ts';
-import type { KeptWithSteps } from './backend.ts';
+import { emptyHistory, type History, readSheet, type Sheet } from '../sheet/index.ts';
+import type { Claimed, KeptWithSteps } from './backend.ts';
 import { newRow } from './head.ts';
 import type { Lock } from './holder.ts';
 import { problemOf, type StoreProblem, storeProblem } from './problem.ts';
 import { type Queue, startQueue } from './queue.ts';
-import type { Draft, SheetHead } from './rows.ts';
+import type { Draft, LeftRow, SheetHead } from './rows.ts';
 import { sharing } from './sheet-text.ts';
 import { historyOf } from './steps.ts';
 import { newId, type Store } from './store.ts';
@@ -89,9 +89,11 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
 
   let lock: Lock | null = await locks.take(lockName, { lost: lose });
   let row: KeptWithSteps | undefined;
+  let orphans: readonly LeftRow[] = [];
   try {
     const read = lock === null ? await backend.read(id) : await claim();
     row = read === undefined ? undefined : { steps: [], ...read };
+    if (read !== undefined && 'orphans' in read) orphans = (read as Claimed).orphans;
   } catch (cause) {
     lock?.release();
     return { ok: false, problem: problemOf(cause) };
@@ -100,6 +102,7 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
     lock?.release();
     return { ok: false, problem: storeProblem('not-here') };
   }
+  const rescued = await rescue(store, orphans);
   const first = readSheet(row.text);
   if (!first.ok) {
     lock?.release();
@@ -111,10 +114,11 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
       : storeProblem('unreadable', { detail: `The trouble begins at ${detail}.` });
     return { ok: false, problem, text: row.text, title: row.head.title };
   }
-  const note =
-    lock !== null && historyOf(row.steps, row.position) === undefined
-      ? 'The steps to undo of this sheet could not be read; the sheet itself is complete.'
-      : null;
+  const noSteps = lock !== null && historyOf(row.steps, row.position) === undefined;
+  const notes = [
+    ...(noSteps ? ['The steps to undo of this sheet could not be read; the sheet itself is complete.'] : []),
+    ...rescued.map((one) => `What a closed tab had not kept yet is now the sheet “${one.title}”.`),
+  ];
 
   let role: Role = lock === null ? 'follower' : 'writer';
   let handedTo: string | null = null;
@@ -373,5 +377,25 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
       hub.post({ kind: 'ask', sheet: id, tab: me });
     });
 
-  return { ok: true, keeper, note };
+  return { ok: true, keeper, note: notes.length === 0 ? null : notes.join(' ') };
+}
+
+/** What closed tabs left behind for a sheet that another tab had taken over already becomes sheets of their own. */
+async function rescue(store: Store, orphans: readonly LeftRow[]): Promise<readonly SheetHead[]> {
+  const made: SheetHead[] = [];
+  for (const { writer, sheet, text, steps, position, draft } of orphans) {
+    const read = readSheet(text);
+    if (!read.ok) continue;
+    const title = `${read.value.title} (changes not kept)`;
+    const history = historyOf(steps, position)?.history ?? emptyHistory;
+    const row = newRow({ ...read.value, title }, { history, draft, copyOf: sheet });
+    try {
+      await store.backend.create(row);
+      await store.backend.dropLeft(writer);
+      made.push(row.head);
+    } catch {
+      // It stays where it is until there is room for it.
+    }
+  }
+  return made;
 }

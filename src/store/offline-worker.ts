@@ -14,7 +14,7 @@ interface Asked extends Event {
   respondWith(answer: Promise<Response>): void;
 }
 interface Worker {
-  readonly registration: { readonly scope: string; readonly active: unknown };
+  readonly registration: { readonly scope: string; readonly waiting: unknown; readonly installing: unknown };
   readonly clients: { matchAll(options: object): Promise<readonly unknown[]>; claim(): Promise<void> };
   skipWaiting(): Promise<void>;
   addEventListener(kind: 'install' | 'activate', listener: (event: Event) => void): void;
@@ -46,7 +46,9 @@ worker.addEventListener('message', (event) => {
 worker.addEventListener('fetch', (event) => {
   const { request } = event;
   if (request.method !== 'GET' || !request.url.startsWith(scope)) return;
-  if (request.mode === 'navigate') {
+  const { origin, pathname } = new URL(request.url);
+  const isPage = [scope, new URL('index.html', scope).href].includes(origin + pathname);
+  if (request.mode === 'navigate' && isPage) {
     event.respondWith(page(request));
     event.waitUntil(tidy());
   } else event.respondWith(kept(request));
@@ -66,8 +68,8 @@ async function kept(request: Request): Promise<Response> {
 async function tidy(): Promise<void> {
   const windows = await worker.clients.matchAll({ type: 'window', includeUncontrolled: true });
   if (windows.length > 1) return;
-  // A version that is waiting has its files already.
-  const waiting = (worker.registration as unknown as { readonly waiting: unknown; readonly installing: unknown }) ?? null;
-  if (waiting.waiting !== null || waiting.installing !== null) return;
+  // A later version that waits, or is on its way, has its files already.
+  const { waiting, installing } = worker.registration;
+  if (waiting !== null || installing !== null) return;
   for (const name of await caches.keys()) if (name.startsWith(family) && name !== mine) await caches.delete(name);
 }

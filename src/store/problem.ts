@@ -16,6 +16,7 @@ export type StoreCode =
   | 'not-here'
   | 'overtaken'
   | 'unavailable'
+  | 'not-upgraded'
   | 'unreadable'
   | 'lost'
   | 'newer-sheet'
@@ -76,6 +77,10 @@ const table: Readonly<Record<StoreCode, readonly [string, readonly WayOut[]]>> =
   unavailable: [
     'This browser keeps nothing for this page: private windows and some settings forbid it. You can work, but everything is gone when the tab closes: save the sheet as a file.',
     ['save as a file'],
+  ],
+  'not-upgraded': [
+    'The sheets in this browser could not be brought into the form that this version needs. They are unchanged. Reload the page; until it works, nothing you write here is kept: save the sheet as a file.',
+    ['reload', 'save as a file'],
   ],
   unreadable: [
     'The text of this sheet cannot be read. It is kept as it is, and nothing will overwrite it. Download the text to look at it or to mend it.',

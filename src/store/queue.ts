@@ -1,7 +1,8 @@
 // The writes of one open sheet: what is handed over is durable within a second, and "kept" means that the transaction has completed.
 //
 // 1. The first change after a quiet moment starts a clock of `delay`; when it has run, everything handed over by then is written at once.
-// 2. `hurry` writes without waiting, even while another write is under way: a page that is being closed has no later.
+// 2. `hurry` does not wait, not even for an answer: a page that is being closed sees none. What it puts down becomes part of the sheet when
+//    it is opened next, unless the ordinary write came through.
 // 3. Writes follow each other by rev. After one has failed, the next writes the whole line of steps anew: nothing is built on what is not there.
 // 4. A write that failed for want of room, or for no reason that we know, is tried again by itself, with growing pauses, and on every change.
 // Not here: who may write (keeper.ts).
@@ -26,7 +27,7 @@ export interface Queue {
   readonly behind: boolean;
   readonly problem: StoreProblem | null;
   put(work: Work): void;
-  /** Starts writing now what is not being written yet. */
+  /** Puts down at once what is not durable yet, and starts writing it: the page may be gone in a moment. */
   hurry(): void;
   /** True when all that was handed over until now is durable, false when it could not be kept. */
   kept(): Promise<boolean>;
@@ -112,6 +113,25 @@ export function startQueue(options: QueueOptions): Queue {
         if (under === 0 && handed > durable && problem === null) start(delay);
       });
   };
+  const putDown = () => {
+    const { sheet, history, draft } = work;
+    const now = Date.now();
+    const whole = lineChange(head.id, { first: base?.line.first ?? 1, steps: [] }, history, now);
+    // Writes under way may or may not come through: it builds on whatever of this writer is there in the end.
+    const rev = under > 0 || base === null ? null : base.rev;
+    backend
+      .leave({
+        writer: head.writer,
+        sheet: head.id,
+        rev,
+        head: headOf(sheet, { ...head, changed: now }),
+        text: keptText(sheet),
+        position: whole.position,
+        draft,
+        steps: whole.put,
+      })
+      .catch(() => undefined);
+  };
   const succeeded = (rev: number, mine: number, next: SheetHead, line: KeptLine) => {
     durable = Math.max(durable, mine);
     head = { ...next, rev };
@@ -156,7 +176,9 @@ export function startQueue(options: QueueOptions): Queue {
       options.onChange();
     },
     hurry() {
-      if (!stopped && (handed > issued || (problem !== null && under === 0 && handed > durable))) issue();
+      if (stopped || handed <= durable) return;
+      putDown();
+      if (handed > issued || (problem !== null && under === 0)) issue();
     },
     kept() {
       if (handed <= durable) return Promise.resolve(true);

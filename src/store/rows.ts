@@ -49,6 +49,22 @@ export interface StepRow {
   readonly at: number;
   readonly step: HistoryStep;
 }
+/**
+ * What a page that was being closed had not written yet, put down in one request that asks for nothing: a closing page sees no answer.
+ * It becomes part of the sheet when the sheet is claimed next.
+ */
+export interface LeftRow {
+  readonly writer: string;
+  readonly sheet: string;
+  /** The rev that it builds on; null: any of this writer. */
+  readonly rev: number | null;
+  readonly head: SheetHead;
+  readonly text: string;
+  readonly position: number;
+  readonly draft: Draft | null;
+  /** The whole line. */
+  readonly steps: readonly StepRow[];
+}
 export interface TrashRow {
   readonly id: string;
   readonly head: SheetHead;
