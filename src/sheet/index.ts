@@ -29,4 +29,5 @@ export type { FoundRoot, Search, Solver } from './sought.ts';
 export * from './state.ts';
 export * from './table-text.ts';
 export * from './template.ts';
+export * from './template-compare.ts';
 export type { WhatIf, WhatIfRequest } from './whatif.ts';
