@@ -64,7 +64,7 @@ export default defineConfig(({ mode }) => ({
   ssr: { noExternal: true as const },
   test: {
     projects: [
-      { extends: true, test: { name: 'node', include: ['test/**/*.test.ts'], exclude: ['test/browser/**'] } },
+      { extends: true, test: { name: 'node', include: ['test/**/*.test.ts'], exclude: ['test/browser/**'], testTimeout: 60_000 } },
       {
         extends: true,
         test: {

