@@ -93,7 +93,7 @@ export class ProgramBuilder {
       this.#keptOf = new Map();
       this.#kept = 0;
     }
-    this.#shared.count(expr);
+    this.#shared.count(expr, !this.#shareAcross);
     return this.#append(expr, dest, names);
   }
 

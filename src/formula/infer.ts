@@ -71,12 +71,21 @@ function asValue(ctx: Context, formula: Formula, term: Term): Term | undefined {
 }
 
 function contextOf(formula: Formula, scope: Scope, target: Unit | undefined, propose: boolean): Context {
-  const base = { scope, text: formula.text, target, problems: [], failed: new Set<string>(), spoken: new Set<never>(), propose };
-  if (!propose) return base;
+  const { text } = formula;
+  const problems: Problem[] = [];
+  const failed = new Set<string>();
+  const spoken = new Set<never>();
+  if (!propose) return { scope, text, target, problems, failed, spoken, propose };
   return {
-    ...base,
-    prove: (text, changed) => {
-      const read = parseFormula(text);
+    scope,
+    text,
+    target,
+    problems,
+    failed,
+    spoken,
+    propose,
+    prove: (other, changed) => {
+      const read = parseFormula(other);
       return read.ok && holds(inferred(read.value, changed, target, false));
     },
     proveTarget: (unit) => {

@@ -3,6 +3,7 @@
 // 1. Parts are equal when they are written alike, parentheses aside: nothing is rearranged.
 // 2. Names, literals and their signs are no parts: reading a column costs nothing.
 
+import { childrenOf } from './children.ts';
 import type { Expr } from './expr.ts';
 
 export class Shared {
@@ -10,9 +11,9 @@ export class Shared {
   readonly #numberOf = new Map<Expr, number>();
   readonly #times: number[] = [];
 
-  /** Takes in a formula. */
-  count(expr: Expr): void {
-    this.#number(expr);
+  /** Takes in a formula. One that stands `alone` and is too small to hold anything twice is passed over. */
+  count(expr: Expr, alone = false): void {
+    if (!alone || weight(expr, 0) > 2) this.#number(expr);
   }
 
   /** The number of a part that stands more than once; undefined for all others. */
@@ -66,6 +67,17 @@ export class Shared {
   #list(exprs: readonly Expr[]): string {
     return exprs.map((expr) => this.#number(expr)).join(' ');
   }
+}
+
+/** Number of parts that are no leaves, up to 3: two equal ones need a third around them. */
+function weight(expr: Expr, counted: number): number {
+  if (isLeaf(expr)) return counted;
+  let sum = expr.kind === 'parens' || expr.kind === 'minus' ? counted : counted + 1;
+  for (const part of childrenOf(expr)) {
+    if (sum > 2) return sum;
+    sum = weight(part, sum);
+  }
+  return sum;
 }
 
 function isLeaf(expr: Expr): boolean {

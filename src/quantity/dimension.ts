@@ -18,8 +18,9 @@ export const dimensionless: Dimension = baseLetters.map(() => zeroR);
 const combine = (a: Dimension, b: Dimension, join: (x: Rational, y: Rational) => Rational): Dimension =>
   a.map((exponent, place) => join(exponent, b[place] ?? zeroR));
 
-export const multiplyD = (a: Dimension, b: Dimension): Dimension => combine(a, b, addR);
-export const divideD = (a: Dimension, b: Dimension): Dimension => combine(a, b, subR);
+export const multiplyD = (a: Dimension, b: Dimension): Dimension =>
+  a === dimensionless ? b : b === dimensionless ? a : combine(a, b, addR);
+export const divideD = (a: Dimension, b: Dimension): Dimension => (b === dimensionless ? a : combine(a, b, subR));
 export const powerD = (a: Dimension, exponent: Rational): Dimension => a.map((each) => mulR(each, exponent));
 export const isDimensionless = (a: Dimension): boolean => a.every(isZeroR);
 

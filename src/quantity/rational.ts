@@ -17,12 +17,17 @@ function gcd(a: number, b: number): number {
 
 export const zeroR: Rational = { n: 0, d: 1 };
 export const oneR: Rational = { n: 1, d: 1 };
+/** Exponents are mostly these: one object each. */
+const smallest = -8;
+const small: readonly Rational[] = Array.from({ length: 17 }, (_, at) =>
+  at + smallest === 0 ? zeroR : at + smallest === 1 ? oneR : { n: at + smallest, d: 1 },
+);
 
 /** n/d in lowest terms. Throws RangeError unless both are safe integers and d is not 0. */
 export function rational(n: number, d = 1): Rational {
   if (!Number.isSafeInteger(n) || !Number.isSafeInteger(d) || d === 0) throw new RangeError(`no rational number: ${n}/${d}`);
   if (n === 0) return zeroR;
-  if (d === 1) return n === 1 ? oneR : { n, d };
+  if (d === 1) return small[n - smallest] ?? { n, d };
   const common = gcd(n, d) * Math.sign(d);
   return { n: n / common, d: d / common };
 }
