@@ -6,18 +6,24 @@
 // Not here: errors, which go to standard error (outcome.ts).
 
 import { plainName } from '../formula/index.ts';
-import type { RecordModel, Step } from '../record/index.ts';
-import type { Calculation } from '../sheet/index.ts';
+import { comparisonWords, type RecordModel, type Step, templateWords } from '../record/index.ts';
+import type { Calculation, TemplateComparison } from '../sheet/index.ts';
 import { type Column, oneLine, problemLine, tableLines, width } from './report.ts';
 
 const widestTitle = 60;
 
-export function listing(path: string, calculation: Calculation, model: RecordModel): string {
+export function listing(
+  path: string,
+  calculation: Calculation,
+  model: RecordModel,
+  template: TemplateComparison | undefined,
+): string {
   const blocks = [
     oneLine(`${model.title} (${model.status})`),
     body(calculation, model),
     notMet(calculation, model),
     notConfirmed(model),
+    fromTemplate(calculation, template),
     warnings(path, calculation),
   ];
   return `${blocks.filter((block) => block !== '').join('\n\n')}\n`;
@@ -98,6 +104,17 @@ function notMet(calculation: Calculation, model: RecordModel): string {
 function notConfirmed(model: RecordModel): string {
   const names = model.openPoints.filter((point) => point.kind === 'carried over').map((point) => nameOf(model, point.cell));
   return names.length === 0 ? '' : `Carried over, not confirmed: ${names.join(', ')}`;
+}
+
+/** Nothing where everything is the template's. */
+function fromTemplate(calculation: Calculation, template: TemplateComparison | undefined): string {
+  if (template === undefined || (template.removed.length === 0 && template.cells.every(({ state }) => state === 'untouched')))
+    return '';
+  const lines = template.cells.flatMap(({ cell, name, state, was, now }) => {
+    const label = [calculation.numberOf(cell), name === undefined ? '' : plainName(name)].filter((word) => word !== '').join(' ');
+    return state === 'changed' ? [oneLine(`${label}: was ${was}; is ${now}`)] : [];
+  });
+  return [oneLine(`Beside ${templateWords(template)}: ${comparisonWords(template)}`), ...lines].join('\n');
 }
 
 function nameOf(model: RecordModel, cell: string): string {

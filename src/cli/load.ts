@@ -7,7 +7,7 @@
 
 import { nearestNames } from '../formula/index.ts';
 import type { Assignment } from '../sheet/index.ts';
-import { readSheet, type Sheet, setValues, writeSheet } from '../sheet/index.ts';
+import { compareWithTemplate, readSheet, type Sheet, setValues, type TemplateComparison, writeSheet } from '../sheet/index.ts';
 import { FileTrouble, type Io } from './io.ts';
 import { clip, exits, UsageTrouble } from './usage.ts';
 
@@ -80,6 +80,15 @@ function templateIn(io: Io, file: string, text: string): Sheet | undefined {
 function byId(a: Sheet, b: Sheet): number {
   const [one, other] = [a.templateInfo?.id ?? '', b.templateInfo?.id ?? ''];
   return one < other ? -1 : one > other ? 1 : 0;
+}
+
+/** The sheet beside the template that it came from: the file that is named, else the built-in one; undefined where there is none. */
+export async function comparison(io: Io, sheet: Sheet, path: string | undefined): Promise<TemplateComparison | undefined> {
+  if (path !== undefined) return compareWithTemplate(sheet, await loadTemplate(io, path));
+  const file = `${sheet.template?.id ?? ''}.sheet.json`;
+  if (sheet.template === undefined || !(await io.templateFiles()).includes(file)) return undefined;
+  const template = readSheet(await io.templateText(file));
+  return template.ok ? compareWithTemplate(sheet, template.value) : undefined;
 }
 
 /** A built-in template by its id, or the sheet of a file by its path: an own template or an earlier sheet. */

@@ -27,10 +27,11 @@ export const help = `tightside: calculation sheets for belt drives, band brakes,
   tightside add FILE TEMPLATE --suffix B -o OUT [--connect NAME="FORMULA" …] [--set …] [--case …] [--title TEXT] [--force]
       puts a template into a sheet as a block with a suffix on its names: F_1 becomes F_1_B;
       a connected given becomes a formula of the sheet: --connect n_1="n_2" makes n_1_B = n_2
-  tightside calc FILE [--set NAME="VALUE" …] [--case ID:NAME="VALUE" …] [--json]
-      values, criteria and problems of a sheet; the file stays as it is
-  tightside record FILE --to html|json [-o OUT]
-      the calculation record, to OUT or standard output
+  tightside calc FILE [--set NAME="VALUE" …] [--case ID:NAME="VALUE" …] [--template TEMPLATE] [--json]
+      values, criteria and problems of a sheet; the file stays as it is; formulas that are not those of the
+      template it came from are shown; --template names an own one, a built-in one is known
+  tightside record FILE --to html|json [-o OUT] [--template TEMPLATE]
+      the calculation record, to OUT or standard output; beside the template as for calc
 
   --set NAME="VALUE"      the value for all cases: --set n_1="1450 r/min" --set μ_1="0.28 ± 0.04"
   --case ID:NAME="VALUE"  then the value for one case: --case start:K_A="1.5"
@@ -61,6 +62,7 @@ const optionTypes = {
   case: { type: 'string', multiple: true },
   to: { type: 'string' },
   also: { type: 'string' },
+  template: { type: 'string' },
   as: { type: 'string' },
   title: { type: 'string' },
   job: { type: 'string' },
@@ -78,7 +80,7 @@ export interface Arguments {
   readonly to?: string;
   readonly assignments: readonly Assignment[];
   /** Options that hold a text, as typed. */
-  readonly texts: Readonly<Partial<Record<'also' | 'as' | 'title' | 'job' | 'caution' | 'suffix', string>>>;
+  readonly texts: Readonly<Partial<Record<'also' | 'template' | 'as' | 'title' | 'job' | 'caution' | 'suffix', string>>>;
   readonly limits?: readonly string[];
   readonly connections: readonly Connection[];
 }

@@ -1,11 +1,12 @@
 // What other rooms may use of the record. Only exports stand here.
 
 export type { OpenReason } from './closing.ts';
+export { comparisonWords, templateWords } from './from-template.ts';
 export { criteriaWords, footerCaution, recordHtml } from './html.ts';
 export type { Face, RecordAssets } from './html-style.ts';
 export { type JsonRecord, type JsonStep, type JsonStepCase, recordJson } from './json.ts';
 export { loadRecordAssets } from './load-assets.ts';
-export { makeRecord } from './make.ts';
+export { makeRecord, type RecordOptions } from './make.ts';
 export type {
   Assumption,
   CriterionSummary,

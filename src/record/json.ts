@@ -29,6 +29,8 @@ export interface JsonStep {
   readonly unit: string;
   readonly source: string;
   readonly notes: readonly string[];
+  /** Beside the template; null where the record was made without one. */
+  readonly template: 'untouched' | 'changed' | 'added' | null;
   readonly cases: readonly JsonStepCase[];
 }
 
@@ -122,6 +124,7 @@ function jsonStep(step: Step): JsonStep {
     unit: step.unit,
     source: step.source,
     notes: step.notes,
+    template: step.template ?? null,
     cases: step.cases.map((each) => ({
       case: each.case,
       substituted: each.substituted,

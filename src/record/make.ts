@@ -5,23 +5,30 @@
 // Not here: the steps (steps.ts), their digits (case-print.ts), the lists at the head (heads.ts), forms (html.ts, json.ts).
 
 import { printNumeral, readNumeral } from '../quantity/index.ts';
-import type { Calculation, CellState, LoadCase, NoteState, TableState } from '../sheet/index.ts';
+import type { Calculation, CellState, LoadCase, NoteState, TableState, TemplateComparison } from '../sheet/index.ts';
 import { type CasePrint, printCases } from './case-print.ts';
+import { comparisonWords, templateWords, withTemplate } from './from-template.ts';
 import { assumptionsOf, openPointsOf, referencesOf, summaryOf } from './heads.ts';
 import type { Line, RecordModel } from './model.ts';
 import { readProse } from './prose.ts';
 import { makeStep, printedValue } from './steps.ts';
 import { citationNotes, inCases, isBlank, noSource, replaceLive } from './words.ts';
 
-export function makeRecord(calculation: Calculation): RecordModel {
+export interface RecordOptions {
+  /** The sheet beside its template (compareWithTemplate): said at the head and on the steps that are not the template's. */
+  readonly template?: TemplateComparison;
+}
+
+export function makeRecord(calculation: Calculation, options: RecordOptions = {}): RecordModel {
   const { sheet } = calculation;
   const prints = printCases(calculation);
   const titles = calculation.cases.map(caseTitle);
-  const lines: Line[] = [];
+  const plain: Line[] = [];
   for (const cell of sheet.cells) {
     const state = calculation.state(cell.id);
-    if (state !== undefined) lines.push(lineOf(calculation, state, prints, titles));
+    if (state !== undefined) plain.push(lineOf(calculation, state, prints, titles));
   }
+  const lines = withTemplate(plain, options.template);
   const steps = lines.flatMap((line) => (line.kind === 'step' ? [line.step] : []));
   const problems = calculation.problems();
   const assumptions = assumptionsOf(calculation, steps, lines, titles);
@@ -34,7 +41,7 @@ export function makeRecord(calculation: Calculation): RecordModel {
     purpose: live(sheet.purpose),
     method: live(sheet.method),
     conclusion: live(sheet.conclusion),
-    origin: originOf(calculation),
+    origin: originOf(calculation, options.template),
     limits: sheet.templateInfo?.limits ?? [],
     caution: sheet.templateInfo?.caution ?? '',
     cases: calculation.cases.map((each, k) => ({ id: each.id, title: titles[k] ?? each.id })),
@@ -53,7 +60,7 @@ function caseTitle(each: LoadCase, _index: number, all: readonly LoadCase[]): st
   return all.length === 1 && each.id === 'base' ? '' : each.id;
 }
 
-function originOf(calculation: Calculation): string {
+function originOf(calculation: Calculation, comparison: TemplateComparison | undefined): string {
   const { template, carriedFrom } = calculation.sheet;
   const parts: string[] = [];
   if (template !== undefined) parts.push(`template ${template.id}, version ${template.version}`);
@@ -63,6 +70,10 @@ function originOf(calculation: Calculation): string {
         .filter((part) => part !== '')
         .join(' '),
     );
+  }
+  if (comparison !== undefined) {
+    const same = template?.id === comparison.id && template.version === comparison.version;
+    parts.push(`${same ? '' : `beside ${templateWords(comparison)}: `}${comparisonWords(comparison)}`);
   }
   return parts.join('; ');
 }

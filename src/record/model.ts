@@ -53,6 +53,8 @@ export interface Step {
   readonly relation?: Relation;
   /** What a reader must know: 'see 3.2 below', 'assumed', 'carried over, not confirmed', 'no source' … */
   readonly notes: readonly string[];
+  /** Beside the template that the sheet came from, where the record was made with it. */
+  readonly template?: 'untouched' | 'changed' | 'added';
   /** Why a criterion that is not met may stand. */
   readonly justification?: string;
   /** False for a choice of texts and for a truth: there is nothing to calculate. */

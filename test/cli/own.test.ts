@@ -196,3 +196,39 @@ describe('add', () => {
     expect(done.err[0]).toMatch(expected);
   });
 });
+
+describe('a sheet beside its template', () => {
+  it('says nothing while every formula is the template\u2019s, in JSON the count', async () => {
+    const { out } = await tightside('calc', at('job.sheet.json'));
+    expect(out).not.toContain('Beside template');
+    const json = JSON.parse((await tightside('calc', at('job.sheet.json'), '--json')).out) as { template: object };
+    expect(json.template).toMatchObject({ id: 'capstan', version: 1, changed: [], added: [], removed: [] });
+  });
+
+  it('shows a changed formula with what it was, in calc and record', async () => {
+    const sheet = sheetIn('job.sheet.json');
+    const was = sheet.cells.find((cell) => cell.kind === 'derived' && cell.name === 'F_hold');
+    if (was?.kind !== 'derived') throw new Error('no F_hold');
+    const cells = sheet.cells.map((cell) => (cell === was ? { ...was, formula: `(${was.formula})/2` } : cell));
+    writeFileSync(at('changed.sheet.json'), JSON.stringify({ ...sheet, cells }));
+    const { out } = await tightside('calc', at('changed.sheet.json'));
+    expect(out).toMatch(/Beside template capstan, version 1: \d+ formulas and criteria untouched; 1 changed\n/);
+    expect(out).toContain(`F_hold: was ${was.formula}, in N; is (${was.formula})/2, in N`);
+    const record = JSON.parse((await tightside('record', at('changed.sheet.json'), '--to', 'json')).out) as {
+      steps: { name: string; template: string; notes: string[] }[];
+    };
+    const step = record.steps.find(({ name }) => name === 'F_hold');
+    expect(step?.template).toBe('changed');
+    expect(step?.notes).toContain(`formula changed: in template capstan, version 1, it was ${was.formula}, in N`);
+  });
+
+  it('is compared with an own template that is named', async () => {
+    const own = at('shelf/bollard.sheet.json');
+    const alone = JSON.parse((await tightside('calc', at('next.sheet.json'), '--json')).out) as { template?: object };
+    expect(alone.template).toBeUndefined();
+    const beside = JSON.parse((await tightside('calc', at('next.sheet.json'), '--json', '--template', own)).out) as {
+      template: object;
+    };
+    expect(beside.template).toMatchObject({ id: 'bollard', version: 1, changed: [] });
+  });
+});

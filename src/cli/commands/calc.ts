@@ -9,20 +9,25 @@ import { fingerprints } from '../../check/index.ts';
 import { canonicalName } from '../../formula/index.ts';
 import { fromSI, type Unit } from '../../quantity/index.ts';
 import { makeRecord, type RecordModel, type Step } from '../../record/index.ts';
-import { type Calculation, calculate, type QuantityState } from '../../sheet/index.ts';
+import { type Calculation, calculate, type QuantityState, type TemplateComparison } from '../../sheet/index.ts';
 import { solver } from '../../study/index.ts';
 import type { Io } from '../io.ts';
 import { listing } from '../listing.ts';
-import { loadSheet, withValues } from '../load.ts';
+import { comparison, loadSheet, withValues } from '../load.ts';
 import { stateExit, writeProblems } from '../outcome.ts';
 import { readArguments } from '../usage.ts';
 
 export async function calc(argv: readonly string[], io: Io): Promise<number> {
-  const args = readArguments('calc', argv, ['set', 'case', 'json'], ['FILE']);
+  const args = readArguments('calc', argv, ['set', 'case', 'json', 'template'], ['FILE']);
   const path = args.positionals[0]!;
   const calculation = calculate(withValues(await loadSheet(io, path), args.assignments, path), solver);
-  const model = makeRecord(calculation);
-  io.out(args.json ? `${JSON.stringify(calculationJson(calculation, model), null, 2)}\n` : listing(path, calculation, model));
+  const template = await comparison(io, calculation.sheet, args.texts.template);
+  const model = makeRecord(calculation, template === undefined ? {} : { template });
+  io.out(
+    args.json
+      ? `${JSON.stringify(calculationJson(calculation, model, template), null, 2)}\n`
+      : listing(path, calculation, model, template),
+  );
   writeProblems(io, path, calculation);
   return stateExit(calculation);
 }
@@ -44,6 +49,16 @@ interface CalculationJson {
     readonly code: string;
     readonly message: string;
   }[];
+  /** Where the template that the sheet came from is at hand. */
+  readonly template?: TemplateJson;
+}
+interface TemplateJson {
+  readonly id: string;
+  readonly version: number;
+  readonly untouched: number;
+  readonly changed: readonly { readonly cell: string; readonly name: string; readonly was: string; readonly now: string }[];
+  readonly added: readonly string[];
+  readonly removed: readonly string[];
 }
 interface QuantityJson {
   readonly unit: string;
@@ -52,7 +67,11 @@ interface QuantityJson {
   readonly printed: readonly (string | null)[];
 }
 
-function calculationJson(calculation: Calculation, model: RecordModel): CalculationJson {
+function calculationJson(
+  calculation: Calculation,
+  model: RecordModel,
+  template: TemplateComparison | undefined,
+): CalculationJson {
   const steps = new Map(model.steps.map((step) => [step.cell, step]));
   const quantities = new Map<string, QuantityJson>();
   const criteria: CalculationJson['criteria'][number][] = [];
@@ -72,6 +91,20 @@ function calculationJson(calculation: Calculation, model: RecordModel): Calculat
     quantities: Object.fromEntries(quantities),
     criteria,
     problems: calculation.problems().map(({ cell, severity, code, message }) => ({ cell, severity, code, message })),
+    ...(template === undefined ? {} : { template: templateJson(template) }),
+  };
+}
+
+function templateJson({ id, version, cells, removed }: TemplateComparison): TemplateJson {
+  return {
+    id,
+    version,
+    untouched: cells.filter(({ state }) => state === 'untouched').length,
+    changed: cells.flatMap(({ cell, name = '', state, was = '', now = '' }) =>
+      state === 'changed' ? [{ cell, name, was, now }] : [],
+    ),
+    added: cells.flatMap(({ cell, state }) => (state === 'added' ? [cell] : [])),
+    removed: removed.map(({ name, title }) => name ?? title),
   };
 }
 

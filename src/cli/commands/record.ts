@@ -5,14 +5,14 @@ import { loadRecordAssets, makeRecord, recordHtml, recordJson } from '../../reco
 import { calculate } from '../../sheet/index.ts';
 import { solver } from '../../study/index.ts';
 import type { Io } from '../io.ts';
-import { loadSheet } from '../load.ts';
+import { comparison, loadSheet } from '../load.ts';
 import { stateExit, writeProblems } from '../outcome.ts';
 import { clip, readArguments, UsageTrouble } from '../usage.ts';
 
 const later: ReadonlySet<string> = new Set(['pdf', 'md', 'tex', 'csv']);
 
 export async function record(argv: readonly string[], io: Io): Promise<number> {
-  const args = readArguments('record', argv, ['to', 'output'], ['FILE']);
+  const args = readArguments('record', argv, ['to', 'output', 'template'], ['FILE']);
   const path = args.positionals[0]!;
   const form = args.to;
   if (form === undefined) throw new UsageTrouble('record wants --to html or --to json');
@@ -22,7 +22,8 @@ export async function record(argv: readonly string[], io: Io): Promise<number> {
   const out = args.output ?? '-';
   if (await io.same(path, out)) throw new UsageTrouble(`-o ${clip(out)} is the sheet itself; choose another file for the record`);
   const calculation = calculate(await loadSheet(io, path), solver);
-  const model = makeRecord(calculation);
+  const template = await comparison(io, calculation.sheet, args.texts.template);
+  const model = makeRecord(calculation, template === undefined ? {} : { template });
   const text =
     form === 'html'
       ? recordHtml(model, await loadRecordAssets())
