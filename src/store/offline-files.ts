@@ -27,7 +27,9 @@ export function offlineFiles(): Plugin {
         }
         if (!files.includes('index.html')) this.error('there is no index.html to be served without a network');
         const version = digest.digest('hex').slice(0, 16);
-        const source = code.replace('__VERSION__', version).replace('__FILES__', JSON.stringify(files).replaceAll("'", "\\'"));
+        const list = JSON.stringify(JSON.stringify(files));
+        const source = code.replace('__VERSION__', version).replace(/(["'`])__FILES__\1/u, () => list);
+        if (source.includes('__')) this.error('the list of files could not be put into the offline worker');
         this.emitFile({ type: 'asset', fileName: workerFile, source });
       },
     },

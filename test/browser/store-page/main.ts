@@ -66,7 +66,11 @@ function undone(name: string): (string | null)[] {
   return found;
 }
 
+declare const __MARK__: string;
+
 const all = {
+  /** Which build this is. */
+  mark: __MARK__,
   now,
   begin,
   set,
