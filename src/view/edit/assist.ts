@@ -86,7 +86,11 @@ export function proposeInFormula(text: string, caret: number, where: Where): Pro
   const begun = text.slice(from, caret);
   if (call !== undefined && call.argument < 2) return inTable(call, begun, from, to, where.calculation);
   if (begun === '' && !where.asked) return undefined;
-  return found(from, to, [...quantities(begun, where), ...functions(begun, text, to), ...constants(begun)]);
+  const list = [...quantities(begun, where), ...functions(begun, text, to), ...constants(begun)];
+  // What stands there complete need not be offered alone.
+  if (!where.asked && list.length === 1 && list[0]?.label === canonicalName(begun) && list[0].write === undefined)
+    return undefined;
+  return found(from, to, list);
 }
 
 function found(from: number, to: number, list: readonly Proposal[]): Proposals | undefined {
@@ -156,7 +160,7 @@ function functions(begun: string, text: string, to: number): Proposal[] {
 
 function constants(begun: string): Proposal[] {
   const list: Proposal[] = [{ kind: 'constant', label: 'pi', detail: 'π = 3.141 592 65…' }];
-  return begun === '' ? [] : list.filter(({ label }) => label.startsWith(canonicalName(begun).toLowerCase()));
+  return begun === '' ? list : list.filter(({ label }) => label.startsWith(canonicalName(begun).toLowerCase()));
 }
 
 interface TableCall {
@@ -275,13 +279,15 @@ export function proposeUnits(text: string, caret: number, { asked, like, alone =
   if (begun === '' && !asked) return undefined;
   // A name of an exponent or a number's own e: `1e`.
   if (!alone && /\d$/u.test(before.slice(0, from)) && /^[eE]$/u.test(begun)) return undefined;
-  const typed = plainUnit(begun);
+  const typed = typedUnit(begun);
+  const hasSigns = /[*^]/u.test(typed);
   const ranked = allUnits().flatMap((unit) => {
     const isLike = like !== undefined && equalD(unit.dimension, like.dimension);
     if (typed === '') return like === undefined || isLike ? [{ unit, rank: 0 }] : [];
-    if (unit.plain === typed) return [{ unit, rank: isLike ? 0 : 1 }];
-    if (unit.plain.startsWith(typed)) return [{ unit, rank: isLike ? 2 : 3 }];
-    return unit.plain.toLowerCase().startsWith(typed.toLowerCase()) ? [{ unit, rank: isLike ? 4 : 5 }] : [];
+    const form = hasSigns ? unit.typed : unit.plain;
+    if (form === typed) return [{ unit, rank: isLike ? 0 : 1 }];
+    if (form.startsWith(typed)) return [{ unit, rank: isLike ? 2 : 3 }];
+    return form.toLowerCase().startsWith(typed.toLowerCase()) ? [{ unit, rank: isLike ? 4 : 5 }] : [];
   });
   ranked.sort((a, b) => a.rank - b.rank);
   const space = !alone && /\d$/u.test(before.slice(0, from)) ? ' ' : '';
@@ -295,6 +301,8 @@ export function proposeUnits(text: string, caret: number, { asked, like, alone =
 
 interface KnownUnit {
   readonly text: string;
+  /** As typed with its signs, and without them: `mm^2`, `mm2`. */
+  readonly typed: string;
   readonly plain: string;
   readonly kind: string;
   readonly dimension: Unit['dimension'];
@@ -304,18 +312,27 @@ let known: readonly KnownUnit[] | undefined;
 function allUnits(): readonly KnownUnit[] {
   known ??= [...new Set(unitNames())].map((text) => {
     const unit = unitOf(text);
-    return { text, plain: plainUnit(text), kind: kindName(unit.dimension, text), dimension: unit.dimension };
+    return {
+      text,
+      typed: typedUnit(text),
+      plain: withoutSigns(typedUnit(text)),
+      kind: kindName(unit.dimension, text),
+      dimension: unit.dimension,
+    };
   });
   return known;
 }
 
-/** As one types it: mm^2 for mm², N*m for N·m, um for µm, deg for °. */
-function plainUnit(text: string): string {
+const withoutSigns = (text: string) => text.replace(/[*^]/gu, '');
+
+/** As one types it: mm^2 for mm², N*m for N·m, um for µm. */
+function typedUnit(text: string): string {
   const raised = '⁰¹²³⁴⁵⁶⁷⁸⁹';
   return text
-    .replace(/[⁰¹²³⁴⁵⁶⁷⁸⁹]/gu, (sign) => String(raised.indexOf(sign)))
+    .replace(/[⁰¹²³⁴⁵⁶⁷⁸⁹]+/gu, (signs) => `^${[...signs].map((sign) => raised.indexOf(sign)).join('')}`)
     .replace(/[µμ]/gu, 'u')
-    .replace(/[·*^\s]/gu, '');
+    .replace(/[·⋅]/gu, '*')
+    .replace(/\s/gu, '');
 }
 
 /** What could stand at the caret of the empty line, by what the piece at the caret is. */

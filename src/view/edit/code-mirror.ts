@@ -68,8 +68,10 @@ export function createLineView(options: LineViewOptions): LineView {
       extensions: [
         Prec.highest(
           keymap.of([
-            { key: 'Alt-Enter', run: () => firstFix !== undefined && (applyFix(firstFix), true) },
+            { key: 'Alt-Enter', run: () => applyFirst() },
             { key: 'ArrowDown', run: ({ state }) => completionStatus(state) !== 'active' && options.below() },
+            // A list that is about to open is no reason to press Escape twice.
+            { key: 'Escape', run: ({ state }) => completionStatus(state) !== 'active' && did(options.cancel) },
           ]),
         ),
         autocompletion({
@@ -82,8 +84,7 @@ export function createLineView(options: LineViewOptions): LineView {
         }),
         // Behind the keys of the list: what it takes is not ours.
         keymap.of([
-          { key: 'Enter', run: () => (options.commit(), true) },
-          { key: 'Escape', run: () => (options.cancel(), true) },
+          { key: 'Enter', run: () => did(options.commit) },
           ...historyKeymap,
           ...defaultKeymap.filter(({ key }) => key !== 'Mod-Enter'),
         ]),
@@ -113,6 +114,11 @@ export function createLineView(options: LineViewOptions): LineView {
       userEvent: 'input.fix',
     });
     view.focus();
+  };
+  const applyFirst = () => {
+    if (firstFix === undefined) return false;
+    applyFix(firstFix);
+    return true;
   };
   return {
     content: view.contentDOM,
@@ -147,6 +153,12 @@ export function createLineView(options: LineViewOptions): LineView {
     },
   };
 }
+
+/** A key that was taken. */
+const did = (action: () => void): true => {
+  action();
+  return true;
+};
 
 const oneLine = (text: string) => text.replace(/\s*[\r\n\u2028\u2029]+\s*/gu, ' ');
 

@@ -122,7 +122,9 @@ function readTable(text: string, whole: Reach): Entry | undefined {
   const columns = pieceOf(text, body)
     .split(',')
     .map((piece): TableColumn => {
-      const [, name, unit] = /^([^[\]]*?)\s*(?:\[([^\]]*)\])?$/u.exec(piece.trim()) ?? [, piece.trim()];
+      const found = /^([^[\]]*?)\s*(?:\[([^\]]*)\])?$/u.exec(piece.trim());
+      const name = found === null ? piece.trim() : found[1];
+      const unit = found?.[2];
       return { name: name ?? '', ...(unit === undefined ? {} : { unit: unit.trim() }) };
     })
     .filter((column) => column.name !== '');

@@ -15,7 +15,7 @@ import {
   withArticle,
 } from '../../quantity/index.ts';
 import { type Calculation, type Cell, nameFault } from '../../sheet/index.ts';
-import { proposeInFormula, type Proposals, proposeUnits } from './assist.ts';
+import { type Proposals, proposeInFormula, proposeUnits } from './assist.ts';
 import { type CellField, fieldText } from './cell-forms.ts';
 import { live, splitComparison } from './live.ts';
 import { moved } from './print-live.ts';

@@ -9,8 +9,8 @@
 import type { Fix, Problem } from '../../quantity/index.ts';
 import type { Proposals } from './assist.ts';
 import type { LineView } from './code-mirror.ts';
-import { lineSheet } from './line-style.ts';
 import { keepKeys } from './keep-keys.ts';
+import { lineSheet } from './line-style.ts';
 import type { Mark } from './marks.ts';
 
 let sheet: CSSStyleSheet | undefined;

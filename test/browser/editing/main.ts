@@ -4,7 +4,7 @@ import 'katex/dist/katex.min.css';
 import '../../../src/view/page.css';
 import '../../../src/view/sheet.css';
 import '../../../src/view/edit/edit.css';
-import { calculate, type Cell, newCellId, type Sheet } from '../../../src/sheet/index.ts';
+import { type Cell, calculate, newCellId, type Sheet } from '../../../src/sheet/index.ts';
 import {
   type CellFieldsElement,
   defineEditing,
