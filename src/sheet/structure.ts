@@ -150,23 +150,27 @@ export class Structure {
 
   private describeLoops(): ReadonlyMap<string, CellProblem> {
     const problems = new Map<string, CellProblem>();
-    for (let index = 0; index < this.nodes.length; index += 1) {
-      const loop = this.graph.loopOf[index]!;
-      if (loop < 0) continue;
-      const node = this.nodes[index]!;
-      const path = this.graph.loops[loop]!.map((member) => this.nodes[member]!);
-      const shown = path.slice(0, 8).map((member) => {
-        const number = this.numbers.get(member.cell.id);
-        return `${member.name ?? member.cell.id}${number === undefined ? '' : ` (${number})`}`;
-      });
-      const rest = path.length > 8 ? ` → … ${path.length - 8} more` : '';
-      const message =
-        path.length === 1
-          ? `${shown[0]} is defined by itself; make it a sought cell with an equation, or name the value on the right differently`
-          : `${shown.join(' → ')}${rest} → ${path[0]!.name ?? path[0]!.cell.id} use each other in a loop; break it, or make one of them a sought cell with an equation`;
+    const messages = this.graph.loops.map((loop) => this.loopMessage(loop));
+    for (const [index, node] of this.nodes.entries()) {
+      const message = messages[this.graph.loopOf[index]!];
+      if (message === undefined) continue;
       problems.set(node.cell.id, { code: 'loop', severity: 'error', message, cell: node.cell.id, field: 'formula' });
     }
     return problems;
+  }
+
+  private loopMessage(loop: readonly number[]): string {
+    const shown = loop.slice(0, 8).map((member) => {
+      const { cell, name } = this.nodes[member]!;
+      const number = this.numberOf(cell.id);
+      return `${name ?? cell.id}${number === '' ? '' : ` (${number})`}`;
+    });
+    if (loop.length === 1) {
+      return `${shown[0]} is defined by itself; make it a sought cell with an equation, or name the value on the right differently`;
+    }
+    const rest = loop.length > 8 ? ` → … ${loop.length - 8} more` : '';
+    const first = this.nodes[loop[0]!]!;
+    return `${shown.join(' → ')}${rest} → ${first.name ?? first.cell.id} use each other in a loop; break it, or make one of them a sought cell with an equation`;
   }
 }
 
