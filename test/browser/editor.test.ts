@@ -335,8 +335,6 @@ describe('for everybody', () => {
       await part('fields g3').getByLabel('Value for all cases').fill('900 newtons');
       await retype('formula', 'log(F_1) + F');
       await expect.poll(() => part('formula').locator('[role="option"]').count()).toBeGreaterThan(0);
-      if (process.env['EDITING_SHOTS'])
-        await page.screenshot({ path: `${process.env['EDITING_SHOTS']}-${colorScheme}.png`, fullPage: true });
       await page.evaluate(axeSource);
       const found = await page.evaluate(async () => {
         const { axe } = globalThis as unknown as {

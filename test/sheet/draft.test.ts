@@ -4,11 +4,11 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   type Cell,
+  type CriterionCell,
   calculate,
   checkComparison,
   checkEquation,
   checkFormula,
-  type CriterionCell,
   type DerivedCell,
 } from '../../src/sheet/index.ts';
 import { sheetOf, withLine } from './build.ts';
