@@ -1,6 +1,6 @@
 // Everything that is kept, as one file: the bundle, written and read.
 //
-// 1. The texts of sheets and templates stand in it as they are kept, character for character: also one that cannot be read.
+// 1. The texts of sheets and templates stand in it as in a file of their own, character for character; one that cannot be read, as it is.
 // 2. Reading it never overwrites: what is here already with the same text is left out, another text under the same id comes beside it.
 // 3. A bundle of a later version is refused whole; a sheet in it that cannot be read is refused by itself, and said.
 // Not in it: steps to undo, the trash, handles of files on the disk.

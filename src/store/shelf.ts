@@ -110,7 +110,7 @@ export function openShelf(store: Store): Shelf {
     const inTrash = new Set((await backend.trash()).map((row) => row.id));
     for (const one of read.value.sheets) {
       const there = await backend.read(one.id);
-      if (there?.text === one.text) {
+      if (there !== undefined && fileText(there.text) === fileText(one.text)) {
         into.same += 1;
         continue;
       }
@@ -126,7 +126,7 @@ export function openShelf(store: Store): Shelf {
     const own = new Map((await backend.templates()).map((row) => [row.id, row]));
     for (const one of read.value.templates) {
       const there = own.get(one.id);
-      if (there?.text === one.text) {
+      if (there !== undefined && fileText(there.text) === fileText(one.text)) {
         into.same += 1;
         continue;
       }
@@ -190,7 +190,7 @@ export function openShelf(store: Store): Shelf {
       if (kept === undefined) throw new StoreFault(storeProblem('not-here'));
       const read = readSheet(kept.text);
       const name = read.ok ? sheetFileName(read.value) : `${fileWords(kept.head.title)} (cannot be read).json`;
-      return { name, text: read.ok ? writeSheet(read.value) : kept.text };
+      return { name, text: fileText(kept.text) };
     },
     templates: async () => [...(await backend.templates())].sort((one, other) => one.title.localeCompare(other.title)),
     async keepTemplate(sheet, about) {
@@ -218,7 +218,7 @@ export function openShelf(store: Store): Shelf {
         else if (read.value.templateInfo === undefined) into.sheets.push(await put(read.value));
         else {
           const own = new Map((await backend.templates()).map((row) => [row.id, row]));
-          if ([...own.values()].some((row) => row.text === keptText(read.value))) into.same += 1;
+          if ([...own.values()].some((row) => fileText(row.text) === writeSheet(read.value))) into.same += 1;
           else into.templates.push(await takeTemplate(read.value, Date.now(), own));
         }
       }
@@ -228,16 +228,23 @@ export function openShelf(store: Store): Shelf {
       const sheets: BundledSheet[] = [];
       for (const { id, made } of await backend.heads()) {
         const kept = await backend.read(id);
-        if (kept !== undefined) sheets.push({ id, made, changed: kept.head.changed, text: kept.text });
+        if (kept !== undefined) sheets.push({ id, made, changed: kept.head.changed, text: fileText(kept.text) });
       }
+      const templates = (await backend.templates()).map((row) => ({ ...row, text: fileText(row.text) }));
       const day = new Date().toISOString().slice(0, 10);
-      return { name: `Tightside, all sheets, ${day}.json`, text: writeBundle(sheets, await backend.templates()) };
+      return { name: `Tightside, all sheets, ${day}.json`, text: writeBundle(sheets, templates) };
     },
     subscribe(listener) {
       listeners.add(listener);
       return () => listeners.delete(listener);
     },
   };
+}
+
+/** A kept text as it stands in a file; one that cannot be read stays as it is. */
+function fileText(text: string): string {
+  const read = readSheet(text);
+  return read.ok ? writeSheet(read.value) : text;
 }
 
 interface Taken {
