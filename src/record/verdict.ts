@@ -17,11 +17,15 @@ import {
 import type { Relation } from '../sheet/index.ts';
 
 const hundredths = -2;
+const thousands = 3;
 
 /** `utilisation` is positive and finite; `met` the verdict on the unrounded sides. */
 export function utilisationNumeral(utilisation: number, relation: Relation, met: boolean): Numeral {
   const full = numeralOfDouble(utilisation);
-  let printed = firstPlace(full) < hundredths + 1 ? roundSignificant(full, 2, 'up') : roundAtPlace(full, hundredths, 'up');
+  const first = firstPlace(full);
+  // Two decimals tell what matters near 1; far below they would tell nothing, far above more than anybody can use.
+  const significant = first < hundredths + 1 ? 2 : first >= thousands ? 4 : undefined;
+  let printed = significant === undefined ? roundAtPlace(full, hundredths, 'up') : roundSignificant(full, significant, 'up');
   const strict = relation === '<' || relation === '>';
   // Met with < or >: the true value is below 1, and so is the printed one, with as many decimals as that takes.
   while (met && strict && utilisation < 1 && Number(plainNumeral(printed)) >= 1 && lastPlace(printed) > -18) {

@@ -20,6 +20,9 @@ describe('utilisation', () => {
     [1.0001, '<=', false, '1.01'],
     [1.11, '>=', false, '1.11'],
     [12.341, '<=', false, '12.35'],
+    [741.7103, '<=', false, '741.72'],
+    [7417.103, '<=', false, '7418'],
+    [74171.03, '<=', false, '7.418e+4'],
     // Not met although the quotient of the doubles is 1: the sides differ by less than the quotient can hold.
     [1, '<=', false, '1.01'],
     // Not met with < although both sides are equal: at the limit is not below it.
