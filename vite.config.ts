@@ -9,6 +9,7 @@
 import { gzipSync } from 'node:zlib';
 import type { Plugin } from 'vite';
 import { defineConfig } from 'vitest/config';
+import { offlineFiles } from './src/store/offline-files.ts';
 
 /** kB = 1000 bytes, gzip level 9: the script that must arrive before the first screen stands. */
 const firstScreenLimit = 250;
@@ -49,7 +50,7 @@ const firstScreenSize: Plugin = {
 export default defineConfig(({ mode }) => ({
   base: './',
   resolve: { tsconfigPaths: false },
-  plugins: [woff2Only, ...(mode === 'cli' ? [] : [firstScreenSize])],
+  plugins: [woff2Only, ...(mode === 'cli' ? [] : [firstScreenSize, offlineFiles()])],
   build:
     mode === 'cli'
       ? {
@@ -64,7 +65,10 @@ export default defineConfig(({ mode }) => ({
   ssr: { noExternal: true as const },
   test: {
     projects: [
-      { extends: true, test: { name: 'node', include: ['test/**/*.test.ts'], exclude: ['test/browser/**'], testTimeout: 60_000 } },
+      {
+        extends: true,
+        test: { name: 'node', include: ['test/**/*.test.ts'], exclude: ['test/browser/**'], testTimeout: 60_000 },
+      },
       {
         extends: true,
         test: {

@@ -166,6 +166,7 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
         const kept = await backend.read(id);
         if (closed || role !== 'follower') break;
         if (kept === undefined) queue.fail(storeProblem('gone'));
+        else if (kept.head.rev === queue.head.rev && queue.problem === null) continue;
         else if (show({ ...kept, steps: [] })) emit({ kind: 'followed' });
       } catch (cause) {
         queue.fail(problemOf(cause));
@@ -292,8 +293,11 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
   page?.addEventListener('visibilitychange', hidden);
   page?.addEventListener('freeze', leaving);
   if (page !== null) addEventListener('pagehide', leaving);
-  if (role === 'follower') queueForTurn();
-  else hub.post({ kind: 'kept', sheet: id, rev: row.head.rev });
+  if (role === 'follower') {
+    queueForTurn();
+    // Something may have been kept between the reading above and the listening.
+    void follow();
+  } else hub.post({ kind: 'kept', sheet: id, rev: row.head.rev });
 
   const keeper: Keeper = {
     id,

@@ -4,6 +4,7 @@ import fc from 'fast-check';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { type History, perform, redo, type Sheet, undo } from '../../src/sheet/index.ts';
 import type { Backend } from '../../src/store/backend.ts';
+import { newRow } from '../../src/store/head.ts';
 import { locksOf } from '../../src/store/holder.ts';
 import { openSheet } from '../../src/store/keeper.ts';
 import { StoreFault, storeProblem } from '../../src/store/problem.ts';
@@ -167,6 +168,67 @@ describe('what is handed over', () => {
     let now = { sheet: again.sheet, history: again.history };
     while (now.history.past.length > 0) now = undo(now.sheet, now.history)!;
     expect(valueOf(now.sheet, 'F_0')).toBe('59 N');
+  });
+});
+
+describe('what a closing page put down', () => {
+  /** Leaves the sheet as a page does that sees no answer any more. */
+  const leftBehind = async (store: Store, id: string, force: string) => {
+    const dead: Backend = { ...store.backend, write: () => new Promise(() => undefined) };
+    const keeper = await opened({ ...store, backend: dead }, id, 60_000);
+    set(keeper, 'F_0', force);
+    const { head } = keeper;
+    const change = newRow(keeper.sheet, { id, history: keeper.history, draft: 'typed' });
+    await store.backend.leave({ ...change, sheet: id, writer: head.writer, rev: head.rev, head });
+    return keeper;
+  };
+
+  it('is part of the sheet when it is opened next, with its step and its draft, once', async () => {
+    const store = await tab();
+    const id = await onShelf(store);
+    await leftBehind(store, id, '5 N');
+    const keeper = await opened(store, id);
+    expect(valueOf(keeper.sheet, 'F_0')).toBe('5 N');
+    expect(keeper.draft).toBe('typed');
+    expect(valueOf(undo(keeper.sheet, keeper.history)!.sheet, 'F_0')).toBe('900 N');
+    set(keeper, 'F_0', '6 N');
+    await keeper.close();
+    expect(valueOf((await opened(store, id)).sheet, 'F_0')).toBe('6 N');
+  });
+
+  it('gives way to the ordinary write where that came through', async () => {
+    const store = await tab();
+    const id = await onShelf(store);
+    const keeper = await opened(store, id, 60_000);
+    const before = keeper.head;
+    set(keeper, 'F_0', '6 N');
+    expect(await keeper.kept()).toBe(true);
+    const old = newRow({ ...keeper.sheet, title: 'old' }, { id });
+    await store.backend.leave({ ...old, sheet: id, writer: before.writer, rev: before.rev, head: { ...before, title: 'old' } });
+    const again = await opened(store, id);
+    expect([again.sheet.title, valueOf(again.sheet, 'F_0')]).toEqual(['Drive', '6 N']);
+  });
+
+  it('becomes a sheet of its own where another tab had taken over already', async () => {
+    const store = await tab();
+    const id = await onShelf(store);
+    const late = await leftBehind(store, id, '5 N');
+    const { head } = late;
+    const other = await opened(store, id);
+    set(other, 'F_0', '7 N');
+    await other.close();
+    const change = newRow(late.sheet, { id, history: late.history });
+    await store.backend.leave({ ...change, sheet: id, writer: head.writer, rev: head.rev, head });
+    const done = await openSheet(store, id);
+    if (!done.ok) throw new Error(done.problem.message);
+    expect(valueOf(done.keeper.sheet, 'F_0')).toBe('7 N');
+    expect(done.note).toBe('What a closed tab had not kept yet is now the sheet “Drive (changes not kept)”.');
+    const copies = await openShelf(store).list('changes not kept');
+    expect(copies.map((one) => one.copyOf)).toEqual([id]);
+    expect(valueOf((await opened(store, copies[0]!.id)).sheet, 'F_0')).toBe('5 N');
+    await done.keeper.close();
+    await opened(store, id);
+    expect((await openShelf(store).list('changes not kept')).length).toBe(1);
   });
 });
 
