@@ -2,7 +2,7 @@
 //
 // 1. A kernel fills m[d .. d+n) from m[a .. a+n), m[b .. b+n), m[c .. c+n): offsets into the one memory, not slots; n is even.
 // 2. d may be the same column as an operand, never half overlapping one.
-// 3. Each kernel does exactly what its case in run.ts does, entry by entry.
+// 3. Each kernel does exactly what its case in run-one.ts does, entry by entry.
 // 4. Trouble never hides: where an infinite operand would give an ordinary result (x/∞, e^−∞, atan ∞, min, comparisons), the
 //    operand is subtracted from itself, which is 0 for every finite number and NaN otherwise. So a result is finite exactly
 //    where everything that it was computed from is.

@@ -1,7 +1,7 @@
 // The instructions of a compiled formula: what the numbers in a program mean.
 //
 // 1. An instruction is five integers: operation, destination slot, operand slots a, b, c (unused ones are 0).
-// 2. The list is closed: there is one kernel (kernels.ts, kernels-fused.ts) and one case in run.ts for each operation.
+// 2. The list is closed: there is one kernel (kernels.ts, kernels-fused.ts) and one case in run-one.ts for each operation.
 // 3. For lookups b is the number of a table of the program, not a slot.
 // 4. `addK` and the like compute what `add` does; their operand K is a constant, read once for a whole column.
 // 5. Two steps in one: `multiplyAdd` is (a*b) + c, `subtractByMultiply` is c − (a*b). Each step rounds by itself.
