@@ -166,7 +166,7 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
         const kept = await backend.read(id);
         if (closed || role !== 'follower') break;
         if (kept === undefined) queue.fail(storeProblem('gone'));
-        else if (kept.head.rev === queue.head.rev && queue.problem === null) continue;
+        else if (kept.head.rev === queue.head.rev && queue.problem === null && !queue.behind) continue;
         else if (show({ ...kept, steps: [] })) emit({ kind: 'followed' });
       } catch (cause) {
         queue.fail(problemOf(cause));
