@@ -87,4 +87,115 @@ describe('a given varied in a what-if', () => {
       expect(alone).toEqual(together.map((column) => column[at]));
     }
   });
+
+  it('finds the one sample without a value in a full block, also where a later cell does not need the failed one', () => {
+    const calculation = calculate(
+      sheetOf(['a = 1 m', 'b = 1 m', 'c := b/(a - b)', 'safe := a > "2 m" ? 7 : c', 'w := 2*safe', 'unused := sqrt(a/b - 0.5)']),
+    );
+    const study = calculation.whatIf({ vary: ['a'], want: ['c', 'safe', 'w', 'unused'], caseIndex: 0 });
+    const a = Float64Array.from({ length: 2048 }, (_, i) => 3 + i / 100);
+    a[700] = 1;
+    a[1300] = 0.25;
+    const [c, safe, w, unused] = study.run([a], 2048);
+    const without = (column: Float64Array) => [...column.keys()].filter((i) => Number.isNaN(column[i]));
+    expect(without(c!)).toEqual([700]);
+    expect(without(safe!)).toEqual([700]);
+    expect(without(w!)).toEqual([700]);
+    expect(without(unused!)).toEqual([1300]);
+    expect(w![1300]).toBe(2 / (0.25 - 1));
+    expect(w![699]).toBe(14);
+    expect(c![699]).toBe(1 / (a[699]! - 1));
+  });
+
+  it('keeps a part apart from its like in a branch that is not taken', () => {
+    const calculation = calculate(
+      sheetOf([
+        'a = 1 m',
+        'b = 1 m',
+        'w := a > b ? b/(a - b) : 5',
+        'u := a > b ? 1 : 2',
+        'v := a > b and b/(a - b) > 2 ? 8 : 9',
+        'c := b/(a - b)',
+      ]),
+    );
+    const study = calculation.whatIf({ vary: ['a'], want: ['w', 'u', 'v', 'c'], caseIndex: 0 });
+    const a = Float64Array.from({ length: 1024 }, (_, i) => (i % 3) * 0.75 + 0.25);
+    const columns = study.run([a], 1024);
+    const expected = a.reduce<number[][]>(
+      (rows, x) => {
+        const quotient = x === 1 ? Number.NaN : 1 / (x - 1);
+        rows[0]!.push(x > 1 ? quotient : 5);
+        rows[1]!.push(x > 1 ? 1 : 2);
+        rows[2]!.push(x > 1 && quotient > 2 ? 8 : 9);
+        rows[3]!.push(quotient);
+        return rows;
+      },
+      [[], [], [], []],
+    );
+    expect(columns.map((column) => [...column])).toEqual(expected);
+  });
+
+  it('gives a quantity as often as it is wanted, also a varied one and one that does not move', () => {
+    const calculation = calculate(sheetOf(['a = 1 m', 'b = 2 m', 'c := a + b', 'k := 3*b']));
+    const study = calculation.whatIf({ vary: ['a'], want: ['c', 'a', 'c', 'k', 'b'], caseIndex: 0 });
+    for (const count of [1, 3, 1500, 512, 2]) {
+      const a = Float64Array.from({ length: count }, (_, i) => i + 0.5);
+      const columns = study.run([a], count).map((column) => [...column]);
+      const sums = Array.from(a, (x) => x + 2);
+      expect(columns).toEqual([sums, [...a], sums, Array.from(a, () => 6), Array.from(a, () => 2)]);
+    }
+  });
+
+  it('gives for random cells in full blocks what each sample gives alone', () => {
+    const parts = [
+      'a',
+      'b',
+      '(a - b)',
+      'b*b/(a - b)',
+      'sqrt(a/b - 1)*b',
+      '(a > b ? a : b)',
+      'k*a',
+      'a*exp(k*a/b)',
+      'ln(a/b - 0.5)*a',
+    ];
+    const part = fc.constantFrom(...parts);
+    const formula = fc.oneof(
+      fc.tuple(part, fc.constantFrom('+', '-'), part).map((words) => words.join(' ')),
+      fc.tuple(part, part, part, part).map(([p, q, r, s]) => `${p} > ${q} ? ${r} : ${s}`),
+      fc.tuple(part, part, part, part, part).map(([p, q, r, s, t]) => `${p} > ${q} and ${r} < ${s} ? ${t} : ${p}`),
+      fc.tuple(part, part).map(([p, q]) => `max(${p}, ${q})`),
+      part.map((p) => `2*${p} + c_0`),
+      part.map((p) => `c_1 > ${p} ? c_0 : ${p}`),
+    );
+    fc.assert(
+      fc.property(
+        fc.array(formula, { minLength: 5, maxLength: 5 }),
+        fc.double({ min: 0.3, max: 2, noNaN: true }),
+        (formulas, k) => {
+          const derived = formulas.map(
+            (text, i) =>
+              `c_${i} := ${i === 0 ? text.replace('c_0', 'a').replace('c_1', 'b') : i === 1 ? text.replace('c_1', 'b') : text}`,
+          );
+          const calculation = calculate(sheetOf(['a = 1 m', 'b = 1 m', `k = ${k}`, ...derived]));
+          const want = formulas.map((_, i) => `c_${i}`);
+          expect(calculation.problems().filter((problem) => problem.case === undefined && problem.severity === 'error')).toEqual(
+            [],
+          );
+          const a = Float64Array.from({ length: 512 }, (_, i) =>
+            i % 37 === 0 ? 1 : i % 41 === 0 ? 0 : 1 + (i % 100) / 25 - (i % 7) / 10,
+          );
+          const together = calculation.whatIf({ vary: ['a'], want, caseIndex: 0 });
+          const alone = calculation.whatIf({ vary: ['a'], want, caseIndex: 0 });
+          const columns = together.run([a], 512);
+          for (const at of [0, 1, 37, 41, 100, 205, 511]) {
+            const one = alone.run([a.subarray(at, at + 1)], 1).map((column) => column[0]);
+            expect(columns.map((column) => column[at])).toEqual(one);
+            calculation.update(sheetOf([`a = ${a[at]} m`, 'b = 1 m', `k = ${k}`, ...derived]));
+            expect(one).toEqual(want.map((name) => calculation.named(name)!.si[0]));
+          }
+        },
+      ),
+      { numRuns: 60, seed: 7 },
+    );
+  }, 60_000);
 });
