@@ -29,6 +29,7 @@ export class PageElementRoot extends PageElement {
     printing: { state: true },
     section: { state: true },
     opening: { state: true },
+    unfolded: { state: true },
     narrow: { state: true },
   };
   declare desk: Desk | undefined;
@@ -36,6 +37,8 @@ export class PageElementRoot extends PageElement {
   declare printing: boolean;
   declare section: string | null;
   declare narrow: boolean;
+  /** In a narrow window: origin and use stand under the chosen row. */
+  declare unfolded: boolean;
   /** A file that was refused, or waits until changes of the sheet on the desk are dealt with. */
   declare opening: Opening | null;
   #trail: string[] = [];
@@ -50,6 +53,7 @@ export class PageElementRoot extends PageElement {
     this.printing = false;
     this.section = null;
     this.opening = null;
+    this.unfolded = false;
     this.narrow = this.#width.matches;
   }
 
@@ -60,7 +64,7 @@ export class PageElementRoot extends PageElement {
     addEventListener('afterprint', this.#afterPrint);
     addEventListener('beforeunload', this.#beforeUnload);
     addEventListener('keydown', this.#onKey);
-    this.addEventListener('walk', this.#onWalk as EventListener);
+    this.addEventListener('walk', (event) => void this.#onWalk(event as CustomEvent<Walk>));
   }
 
   override disconnectedCallback() {
@@ -99,7 +103,7 @@ export class PageElementRoot extends PageElement {
             : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}${keys()}</aside>`
         }
         <main id="paper">${this.opening === null ? nothing : openingNote(this.opening, { open: this.#openAnyway, dismiss: this.#dismiss })}<ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}
-            .beside=${this.narrow ? beside : null}></ts-paper></main>
+            .foldable=${this.narrow} .beside=${this.narrow && this.unfolded ? beside : null}></ts-paper></main>
         <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${this.narrow ? nothing : beside}${openPoints(desk, goTo)}</aside>
       </div>
       <p class="unseen" role="status">${desk.announcement}</p>`;
@@ -193,11 +197,19 @@ export class PageElementRoot extends PageElement {
     this.narrow = this.#width.matches;
   };
 
-  #onWalk = (event: CustomEvent<'origin' | 'use' | 'back'>) => {
+  #onWalk = async (event: CustomEvent<Walk>) => {
+    if (event.detail === 'fold' || event.detail === 'leave') {
+      this.unfolded = event.detail === 'fold' && !this.unfolded;
+      return;
+    }
     if (event.detail === 'back') {
       const cell = this.#trail.pop();
       if (cell !== undefined) void this.#paper?.goTo(cell);
       return;
+    }
+    if (this.narrow && !this.unfolded) {
+      this.unfolded = true;
+      await this.#complete();
     }
     const target =
       this.querySelector<HTMLElement>(`#${event.detail} button`) ?? this.querySelector<HTMLElement>(`#${event.detail}`);
@@ -283,13 +295,18 @@ export class PageElementRoot extends PageElement {
     document.documentElement.toggleAttribute('data-print', true);
     // The rows draw what print adds before the print goes on: all of it happens in the pause after this handler.
     queueMicrotask(async () => {
-      await this.updateComplete;
-      await this.#paper?.updateComplete;
-      await Promise.all([...this.querySelectorAll('ts-row')].map((row) => (row as RowElement).updateComplete));
+      await this.#complete();
       typesetAll();
       fitAll(this);
     });
   };
+  /** Page, paper and rows are drawn. */
+  async #complete() {
+    await this.updateComplete;
+    await this.#paper?.updateComplete;
+    await Promise.all([...this.querySelectorAll('ts-row')].map((row) => (row as RowElement).updateComplete));
+  }
+
   #afterPrint = () => {
     this.printing = false;
     document.documentElement.toggleAttribute('data-print', false);
@@ -299,6 +316,9 @@ export class PageElementRoot extends PageElement {
     if (this.desk?.unsaved) event.preventDefault();
   };
 }
+
+/** Where a row asks to go, or that what is unfolded under it be folded. */
+type Walk = 'origin' | 'use' | 'back' | 'fold' | 'leave';
 
 const keys = () =>
   html`<details class="keys"><summary>Keys</summary><dl>${keyList.map(([key, does]) => html`<div><dt>${key}</dt><dd>${does}</dd></div>`)}</dl></details>`;

@@ -34,6 +34,7 @@ export class PaperElement extends PageElement {
     version: { attribute: false },
     printing: { attribute: false },
     beside: { attribute: false },
+    foldable: { attribute: false },
   };
   declare desk: Desk;
   /** Raised by the page whenever the desk has changed. */
@@ -41,6 +42,7 @@ export class PaperElement extends PageElement {
   declare printing: boolean;
   /** Origin and use of the chosen row, where the window has no room for them at the side. */
   declare beside: TemplateResult | null;
+  declare foldable: boolean;
   #place: Place | null = null;
   #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
     all: noProblems,
@@ -98,7 +100,8 @@ export class PaperElement extends PageElement {
     return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.drawn.cases}
       .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
       .chosen=${desk.chosen === cell} .editing=${editing} .printing=${this.printing} .former=${former}
-      .beside=${desk.chosen === cell && !this.printing ? this.beside : null}></ts-row>`;
+      .beside=${desk.chosen === cell && !this.printing ? this.beside : null}
+      .foldable=${this.foldable && desk.chosen === cell && !this.printing}></ts-row>`;
   }
 
   #sortProblems() {
@@ -151,7 +154,12 @@ export class PaperElement extends PageElement {
       this.#place = { cell: at.cell, column: at.column };
       this.requestUpdate();
     }
+    if (this.desk.chosen === at.cell) return;
+    const top = at.row.getBoundingClientRect().top;
+    if (this.beside !== null) this.dispatchEvent(new CustomEvent('walk', { detail: 'leave', bubbles: true }));
     this.desk.choose(at.cell);
+    // What folds up above must not move the row away from under the pointer.
+    void this.updateComplete.then(() => scrollBy(0, at.row.getBoundingClientRect().top - top));
   };
 
   #onLeave = (event: FocusEvent) => {

@@ -30,6 +30,7 @@ export class RowElement extends PageElement {
     printing: { attribute: false },
     former: { attribute: false },
     beside: { attribute: false },
+    foldable: { attribute: false },
   };
   declare desk: Desk;
   declare line: Line;
@@ -45,6 +46,7 @@ export class RowElement extends PageElement {
   declare former: string;
   /** What stands under the row in a narrow window. */
   declare beside: TemplateResult | null;
+  declare foldable: boolean;
 
   protected override render() {
     const { line } = this;
@@ -81,7 +83,7 @@ export class RowElement extends PageElement {
       </div>
       <div role="gridcell" class="calculation ${choices === undefined ? '' : 'across'}" data-column="1" tabindex=${this.#tab(1)}
         aria-readonly=${choices === undefined ? 'true' : nothing}>
-        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}</div>
+        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}${this.foldable ? this.#fold() : nothing}</div>
         <div class="formula">
           ${equation(step, this.reading, this.cases, this.printing)}
           ${choices === undefined ? nothing : this.#choice(step, editingValue, choices)}
@@ -90,6 +92,11 @@ export class RowElement extends PageElement {
       </div>
       ${choices === undefined ? step.cases.map((each, index) => this.#result(step, each, index, editingValue)) : nothing}
     `;
+  }
+
+  #fold() {
+    const fold = () => this.dispatchEvent(new CustomEvent('walk', { detail: 'fold', bubbles: true }));
+    return html`<button type="button" class="word fold" aria-expanded=${this.beside !== null} @click=${fold}>origin and use</button>`;
   }
 
   #choice(step: Step, editing: Editing | null, choices: readonly string[]) {

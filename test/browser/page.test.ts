@@ -262,14 +262,21 @@ describe('a value carried over', () => {
 });
 
 describe('a narrow window', () => {
-  it('shows origin and use under the chosen line', async () => {
+  it('shows origin and use under the chosen line, and lets one walk on from there', async () => {
     await page.setViewportSize({ width: 800, height: 1000 });
     await rowOf('F_1min').locator('.label').click();
-    await expect.poll(() => rowOf('F_1min').locator('#origin li').count()).toBeGreaterThan(2);
+    await rowOf('F_1min').getByRole('button', { name: 'origin and use' }).click();
+    const origin = calculate(example).origin(idOf('F_1min'));
+    await expect.poll(() => rowOf('F_1min').locator('#origin li').count()).toBe(origin.length);
     await rowOf('F_1min').locator('#origin li button').first().click();
-    await expect
-      .poll(() => page.locator('ts-row.chosen').getAttribute('data-cell'))
-      .toBe(calculate(example).origin(idOf('F_1min'))[0]);
+    await expect.poll(() => page.locator('ts-row.chosen').getAttribute('data-cell')).toBe(origin[0]);
+    await page.keyboard.press('>');
+    await expect.poll(() => page.evaluate(() => document.activeElement?.closest('section')?.id)).toBe('use');
+    // A press on another line folds it up, and still hits that line.
+    await rowOf('F_0').locator('.result').first().click();
+    await expect.poll(() => page.locator('.beside').count()).toBe(0);
+    expect(await field().count()).toBe(1);
+    await page.keyboard.press('Escape');
   });
 });
 

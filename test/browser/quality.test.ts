@@ -6,7 +6,8 @@ import { createRequire } from 'node:module';
 import { gzipSync } from 'node:zlib';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
-import { connect, idOf, open, recordWith } from './open.ts';
+import { type Sheet, writeSheet } from '../../src/sheet/index.ts';
+import { connect, open, recordWith } from './open.ts';
 import { readPdf } from './pdf.ts';
 
 let browser: Browser;
@@ -41,12 +42,88 @@ async function findings(page: Page): Promise<string[]> {
   );
 }
 
-const beginTyping = async (page: Page, text: string) => {
-  await page
-    .locator(`ts-row[data-cell="${idOf('F_0')}"] .result`)
-    .first()
-    .click();
-  await page.locator('.typing').fill(text);
+/** A sheet with a line of every kind in every state: quick to examine, and more than one example shows. */
+const everyKind: Sheet = {
+  format: 'tightside-sheet/1',
+  title: 'Every kind of line',
+  purpose: 'Shows **every** kind of line.\n\n- one\n- two',
+  method: 'By hand [R1].',
+  status: 'for checking',
+  references: [{ id: 'R1', document: 'Handbook', edition: '2020', title: 'Chapter 1' }],
+  titleBlock: { documentNumber: 'T-1', revision: 'A', organisation: 'Works', date: '2026-12-01' },
+  cases: [
+    { id: 'run', title: 'Steady running' },
+    { id: 'start', title: 'Start-up' },
+  ],
+  cells: [
+    { id: 'h1', kind: 'heading', level: 1, text: 'Givens' },
+    { id: 'n1', kind: 'note', text: 'An assumption with `code`.', role: 'assumption' },
+    { id: 'n2', kind: 'note', text: 'A caution.', role: 'caution' },
+    { id: 'h2', kind: 'heading', level: 2, text: 'Second level' },
+    {
+      id: 'g1',
+      kind: 'given',
+      name: 'a',
+      title: 'Length',
+      value: '2 m',
+      unit: 'm',
+      basis: 'assumed',
+      source: '[R1] table 1',
+      toConfirm: 'P-1',
+    },
+    {
+      id: 'g2',
+      kind: 'given',
+      name: 'b',
+      title: 'Width',
+      value: '3 m',
+      byCase: { start: '4 m' },
+      unit: 'm',
+      source: 'drawing',
+      carriedOver: true,
+    },
+    { id: 'g3', kind: 'given', name: 'c', title: 'Without a source', value: '1 kg', range: '2 kg to 3 kg' },
+    {
+      id: 't1',
+      kind: 'table',
+      name: 'pairs',
+      title: 'Pairs',
+      columns: [
+        { name: 'pair', title: 'Pair' },
+        { name: 'mu', title: 'Friction', unit: '1' },
+      ],
+      rows: Array.from({ length: 20 }, (_, row) => [`pair ${row}`, `0.${10 + row}`]),
+      source: '[R1]',
+    },
+    { id: 'g4', kind: 'given', name: 'pair', title: 'Chosen pair', value: 'pair 3', choices: 'pairs.pair', source: 'drawing' },
+    { id: 'h3', kind: 'heading', level: 1, text: 'Derived' },
+    { id: 'd1', kind: 'derived', name: 'A', title: 'Area', formula: 'a*b', unit: 'm^2', source: 'rectangle' },
+    {
+      id: 'd2',
+      kind: 'derived',
+      name: 'w',
+      title: 'Wide',
+      formula: '(a + b + a + b)*(a - b)*(a + b)*(a + b)/((a + 2*b)*(a + 3*b)*(a + 4*b)*(a + 5*b))',
+      source: 'nowhere',
+    },
+    { id: 'd3', kind: 'derived', name: 'x', title: 'Wrong', formula: 'a + c', source: 'nowhere' },
+    { id: 'd4', kind: 'derived', name: 'y', title: 'Waiting', formula: '2*x', source: 'nowhere' },
+    { id: 'd5', kind: 'derived', name: 'z', title: 'Branch', formula: 'a > b ? a : b', source: 'nowhere' },
+    { id: 'k1', kind: 'criterion', title: 'Met', left: 'A', relation: '<=', right: '"20 m^2"', source: 'brief' },
+    {
+      id: 'k2',
+      kind: 'criterion',
+      title: 'Not met in one case',
+      left: 'A',
+      relation: '<=',
+      right: '"7 m^2"',
+      source: 'brief',
+      justification: 'agreed',
+    },
+    { id: 'k3', kind: 'criterion', title: 'Without a verdict', left: 'y', relation: '<=', right: '"7 m"', source: 'brief' },
+    { id: 'w1', kind: 'drawing', title: 'Drawing', layout: 'two pulleys, open belt', uses: { driver: 'a' } },
+  ],
+  conclusion: 'It holds.',
 };
 
 describe('accessibility rules', () => {
@@ -56,20 +133,39 @@ describe('accessibility rules', () => {
     ['light', 800],
     ['dark', 320],
   ] as const)(
-    'find nothing, %s at %i px, at rest, while typing an error, and with criteria not met',
+    'find nothing, %s at %i px, in any kind of line and of typing',
     { timeout: 240_000 },
     async (colorScheme, width) => {
       const { page, close } = await open(browser, { colorScheme, viewport: { width, height: 900 } });
-      expect(await findings(page)).toEqual([]);
-      await beginTyping(page, '900 xx');
-      expect(await findings(page)).toEqual([]);
-      await page.locator('.typing').fill('900 N');
-      await page.keyboard.press('Enter');
-      await page.waitForSelector('.bar .not-met');
-      expect(await findings(page)).toEqual([]);
+      await page
+        .locator('#sheet-file')
+        .setInputFiles({ name: 'every.sheet.json', mimeType: 'application/json', buffer: Buffer.from(writeSheet(everyKind)) });
+      await page.waitForSelector('ts-row[data-cell="k3"]', { state: 'attached' });
+      const row = (cell: string) => page.locator(`ts-row[data-cell="${cell}"]`);
+      await row('d1').locator('.label').click();
+      expect(await findings(page), 'a derived line chosen').toEqual([]);
+      await row('g1').locator('.result').first().click();
+      await page.locator('.typing').fill('2 metrex');
+      await page.waitForSelector('.editor-problems .error');
+      expect(await findings(page), 'an error typed').toEqual([]);
+      await page.locator('.typing').press('Enter');
+      await page.waitForSelector('.unread');
+      expect(await findings(page), 'an error kept').toEqual([]);
+      await row('g4').locator('.choice').click();
+      expect(await findings(page), 'a choice open').toEqual([]);
+      await page.locator('.typing').press('Escape');
+      await row('g3').locator('.source').click();
+      await page.waitForSelector('textarea.typing');
+      expect(await findings(page), 'a source open').toEqual([]);
       await close();
     },
   );
+
+  it('find nothing in the whole example', { timeout: 240_000 }, async () => {
+    const { page, close } = await open(browser);
+    expect(await findings(page)).toEqual([]);
+    await close();
+  });
 });
 
 describe('the width of the window', () => {

@@ -16,7 +16,8 @@ declare module 'vitest' {
 }
 
 export default async function setup(project: TestProject) {
-  const folder = new URL('../../dist/page', import.meta.url).pathname;
+  // Another built page can be tested by naming its folder.
+  const folder = process.env['TIGHTSIDE_PAGE'] ?? new URL('../../dist/page', import.meta.url).pathname;
   if (!existsSync(folder)) throw new Error('There is no built page: run npm run build first.');
   const server = await serve(folder);
   const found = findChromium();
