@@ -61,7 +61,14 @@ export default defineConfig(({ mode }) => ({
           minify: false,
           rolldownOptions: { output: { entryFileNames: 'main.js' } },
         }
-      : { outDir: 'dist/page', target: 'es2022', emptyOutDir: true, assetsInlineLimit: 0, modulePreload: { polyfill: false } },
+      : {
+          outDir: 'dist/page',
+          target: 'es2022',
+          emptyOutDir: true,
+          assetsInlineLimit: 0,
+          modulePreload: { polyfill: false },
+          chunkSizeWarningLimit: 1000,
+        },
   ssr: { noExternal: true as const },
   test: {
     projects: [

@@ -60,7 +60,7 @@ export function isBuilt() {
 export function build() {
   const vite = join(root, 'node_modules/vite/bin/vite.js');
   return (
-    run(process.execPath, [vite, 'build', '--logLevel', 'warn']) &&
-    run(process.execPath, [vite, 'build', '--mode', 'cli', '--logLevel', 'warn'])
+    run(process.execPath, [vite, 'build', '--logLevel', 'error']) &&
+    run(process.execPath, [vite, 'build', '--mode', 'cli', '--logLevel', 'error'])
   );
 }
