@@ -9,6 +9,8 @@ export interface Pair {
   reference(): number;
   /** Relative difference of the checksums that still counts as the same work. */
   readonly tolerance: number;
+  /** 15 where nothing is said; fewer for work that takes seconds. */
+  readonly pairs?: number;
 }
 
 export interface Measured {
@@ -17,8 +19,7 @@ export interface Measured {
   readonly reference: number;
 }
 
-const pairsMeasured = 15;
-const warmUps = 3;
+const usualPairs = 15;
 
 export function measure(pair: Pair): Measured {
   const timed = (work: () => number): [number, number] => {
@@ -26,6 +27,8 @@ export function measure(pair: Pair): Measured {
     const sum = work();
     return [performance.now() - start, sum];
   };
+  const pairs = pair.pairs ?? usualPairs;
+  const warmUps = Math.ceil(pairs / 5);
   for (let i = 0; i < warmUps; i += 1) {
     pair.ours();
     pair.reference();
@@ -33,7 +36,7 @@ export function measure(pair: Pair): Measured {
   const ratios: number[] = [];
   const ours: number[] = [];
   const reference: number[] = [];
-  for (let i = 0; i < pairsMeasured; i += 1) {
+  for (let i = 0; i < pairs; i += 1) {
     const first = timed(i % 2 === 0 ? pair.ours : pair.reference);
     const second = timed(i % 2 === 0 ? pair.reference : pair.ours);
     const [mine, theirs] = i % 2 === 0 ? [first, second] : [second, first];
