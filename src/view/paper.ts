@@ -20,6 +20,11 @@ interface Place {
   readonly column: number;
 }
 
+interface PlacedCell extends Place {
+  readonly element: HTMLElement;
+  readonly row: HTMLElement;
+}
+
 interface Section {
   readonly key: string;
   readonly lines: readonly Line[];
@@ -44,6 +49,7 @@ export class PaperElement extends PageElement {
   declare beside: TemplateResult | null;
   declare foldable: boolean;
   #place: Place | null = null;
+  #pressed: PlacedCell | null = null;
   #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
     all: noProblems,
     of: new Map(),
@@ -58,7 +64,7 @@ export class PaperElement extends PageElement {
     const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
     return html`${titleBlock(model)}${head(desk)}
       <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} @keydown=${this.#onKey} @focusin=${this.#onFocus}
-        @focusout=${this.#onLeave} @click=${this.#onClick}>
+        @focusout=${this.#onLeave} @pointerdown=${this.#onPress} @click=${this.#onClick}>
         <div role="rowgroup" class="heads">${this.#columnHeads(heads)}</div>
         ${repeat(
           sections,
@@ -139,7 +145,7 @@ export class PaperElement extends PageElement {
     target?.focus();
   }
 
-  #cellAt(target: EventTarget | null): (Place & { readonly element: HTMLElement; readonly row: HTMLElement }) | null {
+  #cellAt(target: EventTarget | null): PlacedCell | null {
     if (!(target instanceof Element)) return null;
     const row = target.closest<HTMLElement>('ts-row');
     const element = target.closest<HTMLElement>('[data-column]') ?? row?.querySelector<HTMLElement>('[data-column]') ?? null;
@@ -172,8 +178,14 @@ export class PaperElement extends PageElement {
     if (leavesRow || toCell) this.desk.finish();
   };
 
+  #onPress = (event: PointerEvent) => {
+    this.#pressed = this.#cellAt(event.target);
+  };
+
   #onClick = (event: MouseEvent) => {
-    const at = this.#cellAt(event.target);
+    const hit = this.#cellAt(event.target);
+    // A press makes its row the chosen one, and the row may grow before the pointer is lifted: what was pressed counts.
+    const at = this.#pressed !== null && this.#pressed.row === hit?.row ? this.#pressed : hit;
     if (at === null || isField(event.target) || (event.target as Element).closest('a, button, label')) return;
     if (!isWritable(at.element)) return;
     // Text that is being selected is being read, not typed into.
@@ -230,7 +242,7 @@ export class PaperElement extends PageElement {
     }
   };
 
-  #does(command: Command, at: Place & { readonly element: HTMLElement; readonly row: HTMLElement }): boolean {
+  #does(command: Command, at: PlacedCell): boolean {
     const rows = () => [...this.querySelectorAll<HTMLElement>('ts-row')];
     const columns = [...at.row.querySelectorAll<HTMLElement>('[data-column]')].map((one) => Number(one.dataset['column']));
     const toRow = (index: number) => {
