@@ -8,7 +8,7 @@
 import { plainName } from '../formula/index.ts';
 import { comparisonWords, type RecordModel, type Step, templateWords } from '../record/index.ts';
 import type { Calculation, TemplateComparison } from '../sheet/index.ts';
-import { type Column, oneLine, problemLine, tableLines, width } from './report.ts';
+import { type Column, oneLine, problemLine, tableLines, tellOnce, width } from './report.ts';
 
 const widestTitle = 60;
 
@@ -124,7 +124,7 @@ function nameOf(model: RecordModel, cell: string): string {
 
 function warnings(path: string, calculation: Calculation): string {
   const cells = new Map(calculation.sheet.cells.map((cell) => [cell.id, cell]));
-  const found = calculation.problems().filter((problem) => problem.severity === 'warning');
+  const found = tellOnce(calculation).filter((problem) => problem.severity === 'warning' && problem.code !== 'not-met');
   return found.length === 0
     ? ''
     : ['Warnings', ...found.map((problem) => problemLine(path, calculation, cells, problem))].join('\n');

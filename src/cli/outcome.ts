@@ -2,7 +2,7 @@
 
 import type { Calculation } from '../sheet/index.ts';
 import type { Io } from './io.ts';
-import { problemLine } from './report.ts';
+import { problemLine, tellOnce } from './report.ts';
 import { exits } from './usage.ts';
 
 /** 2 where the sheet has an error, else 1 where a criterion is not met, else 0. */
@@ -18,8 +18,7 @@ export function stateExit(calculation: Calculation): number {
 /** Errors to standard error, one line each. */
 export function writeProblems(io: Io, path: string, calculation: Calculation): void {
   const cells = new Map(calculation.sheet.cells.map((cell) => [cell.id, cell]));
-  const lines = calculation
-    .problems()
+  const lines = tellOnce(calculation)
     .filter((problem) => problem.severity === 'error')
     .map((problem) => `${problemLine(path, calculation, cells, problem)}\n`);
   if (lines.length > 0) io.err(lines.join(''));

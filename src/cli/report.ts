@@ -11,13 +11,36 @@ export function problemLine(
   path: string,
   calculation: Calculation,
   cells: ReadonlyMap<string, Cell>,
-  problem: CellProblem,
+  problem: ToldProblem,
 ): string {
   const cell = cells.get(problem.cell);
   const name = cell && 'name' in cell ? canonicalName(cell.name) : '';
   const words = [calculation.numberOf(problem.cell), name, `(${problem.cell})`].filter((word) => word !== '');
-  const inCase = problem.case === undefined || calculation.cases.length === 1 ? '' : `, case ${problem.case}`;
+  const inCase = problem.cases === '' ? '' : `, ${problem.cases}`;
   return oneLine(`${path}: cell ${words.join(' ')}${inCase}: ${problem.message}`);
+}
+
+export interface ToldProblem extends CellProblem {
+  /** 'case start', 'cases run, start'; empty where it concerns every case. */
+  readonly cases: string;
+}
+
+/** The problems of a sheet, each sentence of a cell once, with the cases it concerns where these are not all. */
+export function tellOnce(calculation: Calculation): readonly ToldProblem[] {
+  const told = new Map<string, { readonly problem: CellProblem; readonly cases: string[] }>();
+  for (const problem of calculation.problems()) {
+    const key = JSON.stringify([problem.cell, problem.severity, problem.code, problem.message]);
+    const known = told.get(key);
+    if (known === undefined) told.set(key, { problem, cases: problem.case === undefined ? [] : [problem.case] });
+    else if (problem.case !== undefined) known.cases.push(problem.case);
+  }
+  return [...told.values()].map(({ problem, cases }) => ({
+    ...problem,
+    cases:
+      cases.length === 0 || cases.length === calculation.cases.length
+        ? ''
+        : `${cases.length === 1 ? 'case' : 'cases'} ${cases.join(', ')}`,
+  }));
 }
 
 export function oneLine(text: string): string {

@@ -5,7 +5,7 @@
 // Not here: what a command does (commands/).
 
 import { parseArgs } from 'node:util';
-import { nearestNames } from '../formula/index.ts';
+import { canonicalName, nearestNames } from '../formula/index.ts';
 import type { Assignment, Connection } from '../sheet/index.ts';
 
 export const exits = { fine: 0, notMet: 1, sheetErrors: 2, fileTrouble: 3, wrongUsage: 4 } as const;
@@ -127,7 +127,7 @@ export function readArguments(
     force: force ?? false,
     ...(output === undefined ? {} : { output }),
     ...(to === undefined ? {} : { to }),
-    assignments: [...(set ?? []).map(forAll), ...(one ?? []).map(forOne)],
+    assignments: once([...(set ?? []).map(forAll), ...(one ?? []).map(forOne)]),
     texts,
     ...(limit === undefined ? {} : { limits: limit }),
     connections: (connect ?? []).map(connection),
@@ -157,6 +157,20 @@ function parsed(
     const wants = /argument missing|argument is ambiguous/.test(text) ? 'wants a value behind it' : 'takes no value';
     throw new UsageTrouble(`${option === '' ? 'an option' : option.replace(/,$/, '')} ${wants}; tightside --help shows how`);
   }
+}
+
+/** One value for one quantity: of two, nobody could say which was meant. */
+function once(assignments: readonly Assignment[]): readonly Assignment[] {
+  const seen = new Set<string>();
+  for (const { name, case: only } of assignments) {
+    const key = `${only ?? ''}:${canonicalName(name)}`;
+    if (seen.has(key)) {
+      const where = only === undefined ? '' : ` in case ${clip(only)}`;
+      throw new UsageTrouble(`${clip(name)} is set twice${where}; leave one of the two out`);
+    }
+    seen.add(key);
+  }
+  return assignments;
 }
 
 function forAll(text: string): Assignment {

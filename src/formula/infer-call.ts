@@ -112,7 +112,11 @@ export function textKey(ctx: Context, expr: Lookup): boolean {
 /** `key` is undefined where it is a quoted text for a column of texts. */
 export function lookUp(ctx: Context, expr: Lookup, key: Part | undefined): Term | undefined {
   const table = ctx.scope.table(expr.table);
-  if (table === undefined) return unknown(ctx, expr, 'table', expr.table, ctx.scope.tableNames());
+  if (table === undefined) {
+    const names = [...ctx.scope.tableNames()];
+    // A table that is there and has no columns to read has had its say at its own cell.
+    return names.includes(expr.table) ? undefined : unknown(ctx, expr, 'table', expr.table, names);
+  }
   const keys = table.columns[0];
   const column = table.columns.find((each) => each.name === expr.column);
   if (column === undefined || keys === undefined) {

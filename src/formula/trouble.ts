@@ -25,8 +25,8 @@ import {
   type Unit,
   withoutTrailingZeros,
 } from '../quantity/index.ts';
-import type { Lookup } from './explain.ts';
 import { childrenOf } from './children.ts';
+import type { Lookup } from './explain.ts';
 import type { Expr } from './expr.ts';
 import { readLiteral } from './literal.ts';
 import { rationalOf } from './rational-exponent.ts';

@@ -6,6 +6,7 @@
 // Not here: the catalogue (catalogue.ts).
 
 import { allSpellings, misusedPrefix, symbolOfText, unitRows, usualSymbols } from './catalogue.ts';
+import { equalD } from './dimension.ts';
 import type { Failure } from './problem.ts';
 import { either, fail, quote } from './problem.ts';
 import { prefixes } from './unit-row.ts';
@@ -126,6 +127,8 @@ function runTogether(text: string): readonly string[] {
   const pairs: string[] = [];
   for (let cut = 1; cut < text.length; cut++) {
     const [left, right] = [symbolOfText(text.slice(0, cut)), symbolOfText(text.slice(cut))];
+    // kN·N is nobody's unit: a letter too many is likelier than a force times a force.
+    if (left && right && equalD(left.dimension, right.dimension)) continue;
     if (left && right && usual.has(left.text) && usual.has(right.text)) pairs.push(`${left.text}·${right.text}`);
   }
   return pairs;

@@ -19,6 +19,21 @@ export interface RecordOptions {
   readonly template?: TemplateComparison;
 }
 
+/** Printed values of every quantity, by cell id, one entry a case: the numerals of the record without its typesetting. */
+export function printedValues(calculation: Calculation): ReadonlyMap<string, readonly (string | null)[]> {
+  const prints = printCases(calculation);
+  const printed = new Map<string, readonly (string | null)[]>();
+  for (const cell of calculation.sheet.cells) {
+    const state = calculation.state(cell.id);
+    if (state?.kind !== 'given' && state?.kind !== 'derived' && state?.kind !== 'sought') continue;
+    printed.set(
+      cell.id,
+      prints.map((print) => printedValue(calculation, state, print)),
+    );
+  }
+  return printed;
+}
+
 export function makeRecord(calculation: Calculation, options: RecordOptions = {}): RecordModel {
   const { sheet } = calculation;
   const prints = printCases(calculation);

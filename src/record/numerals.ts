@@ -57,10 +57,3 @@ export function calculatorNumeral(value: number, printed: Numeral, unit: Unit, r
   if (unit.reading !== undefined) return roundAtPlace(full, lastPlace(printed), rounding);
   return roundSignificant(full, significantDigits(printed), rounding);
 }
-
-/** A given's calculator result: exact, with the zeros that were typed (`0.200` for 200 mm). */
-export function givenNumeral(value: number, typed: Numeral): Numeral {
-  const full = numeralOfDouble(value);
-  if (isZeroNumeral(full)) return full;
-  return roundSignificant(full, Math.max(significantDigits(full), Math.min(significantDigits(typed), 17)));
-}

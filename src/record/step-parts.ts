@@ -9,7 +9,7 @@ import type { StepCase } from './model.ts';
 
 export const nameOf = (state: QuantityState): string => canonicalName(state.cell.name);
 
-const saidOtherwise = new Set(['used-above', 'not-solved']);
+const saidOtherwise = new Set(['used-above', 'not-solved', 'not-met']);
 
 const keptSymbols = new WeakMap<Expr, { readonly decimalSign: string; readonly tex: string }>();
 export function symbolsOf(expr: Expr, calculation: Calculation): string {

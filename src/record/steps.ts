@@ -21,7 +21,7 @@ import { one, plainNumeral, printQuantity, printValue, texQuantity, texValue } f
 import type { Calculation, CriterionState, DerivedState, GivenState, QuantityState } from '../sheet/index.ts';
 import type { CasePrint, Printed, PrintedVerdict } from './case-print.ts';
 import type { Step, StepCase } from './model.ts';
-import { calculatorNumeral, givenNumeral } from './numerals.ts';
+import { calculatorNumeral } from './numerals.ts';
 import { soughtStep } from './sought-step.ts';
 import { failed, head, nameOf, problemIn, resultOf, symbolsOf, warnings } from './step-parts.ts';
 import { demandIsLeft, texRelation, texUnmet } from './verdict.ts';
@@ -104,7 +104,7 @@ function givenStep(calculation: Calculation, state: GivenState): Step {
       result: printValue(value, calculation.style),
       resultTex: texValue(value, calculation.style),
       calculatorLine: String(value.si),
-      calculatorResult: plainNumeral(givenNumeral(value.si, value.numeral)),
+      calculatorResult: plainNumeral(calculatorNumeral(value.si, value.numeral, value.unit)),
       closes: true,
     };
   });

@@ -242,7 +242,12 @@ class Engine implements Calculation {
       node.snapshot = undefined;
       this.runner.outdated[node.index] = 0;
     }
-    node.snapshot ??= snapshotOf(node, this.runner.columns, (cell) => this.numberOf(cell));
+    node.snapshot ??= snapshotOf(
+      node,
+      this.runner.columns,
+      (cell) => this.numberOf(cell),
+      (index) => this.cases[index]!.id,
+    );
     return node.snapshot;
   }
 

@@ -57,7 +57,11 @@ export function faultOf(fault: JsonFault): Found {
         what: `the key \`${shorten(fault.found)}\` stands there twice (${place}); keep one`,
       };
     case 'unknown-key':
-      return { path: fault.path.slice(0, -1), code: 'unknown-key', what: `unknown key \`${shorten(fault.found)}\` (${place})` };
+      return {
+        path: fault.path.slice(0, -1),
+        code: 'unknown-key',
+        what: `unknown key \`${shorten(fault.found)}\` (${place}); remove it`,
+      };
     case 'bad-character':
       return { path: fault.path, code: 'bad-character', what: `the text holds ${fault.expected} (${place}); remove it` };
   }
@@ -111,7 +115,7 @@ export function issueOf(issue: Issue, value: unknown): Found {
     return {
       path: parent,
       code: 'unknown-key',
-      what: `unknown key \`${shorten(key)}\`${proposal(key, knownKeys(parent, value))}`,
+      what: `unknown key \`${shorten(key)}\`${proposal(key, knownKeys(parent, value), '; remove it, no such key is known here')}`,
     };
   }
   if (last?.origin === 'key') {

@@ -106,7 +106,7 @@ function withoutRepeats(found: readonly Found[]): Found[] {
   const seen = new Set<string>();
   return found.filter(({ path, code, what }) => {
     // A refused key is found by the scan, with its line, and again by the schema, without.
-    const key = JSON.stringify([path, code, what.replace(/ \(line .*\)$/, '')]);
+    const key = JSON.stringify([path, code, what.replace(/(?: \(line |; remove it).*$/, '')]);
     if (seen.has(key)) return false;
     seen.add(key);
     return true;

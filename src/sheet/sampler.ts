@@ -34,8 +34,8 @@ export function makeSampler(sampling: Sampling): Sampler {
   const starts = new Int32Array(program.slots);
   const checkedStarts = new Int32Array(checked.length);
   let width = 0;
-  let memory = new Float64Array(0);
-  let columns: Float64Array[] = [];
+  let memory: Float64Array = new Float64Array(0);
+  let columns: readonly Float64Array[] = [];
   let capacity = 0;
 
   const reserve = (count: number): void => {

@@ -6,11 +6,17 @@
 import { usedAbove } from './analyse.ts';
 import type { Columns } from './columns.ts';
 import { judge } from './criterion.ts';
+import type { CriterionCell } from './document.ts';
 import type { Node } from './node.ts';
 import type { CellProblem, CellState } from './state.ts';
 import { readTable, unsortedAxis } from './table.ts';
 
-export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string) => string): CellState {
+export function snapshotOf(
+  node: Node,
+  columns: Columns,
+  numberOf: (cell: string) => string,
+  caseId: (index: number) => string,
+): CellState {
   const { cell, index, reading } = node;
   const own = cell.kind === 'table' ? readTable(cell, reading.decimalSign).problems : reading.problems;
   const problems: CellProblem[] = [
@@ -77,7 +83,14 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
         kind: 'criterion',
         cell,
         index,
-        problems,
+        problems: [
+          ...problems,
+          ...consequences(
+            cell,
+            verdicts.map((verdict) => verdict.met),
+            caseId,
+          ),
+        ],
         ...type,
         ...unit,
         ...(left === undefined ? {} : { left }),
@@ -96,4 +109,17 @@ export function snapshotOf(node: Node, columns: Columns, numberOf: (cell: string
     default:
       return { kind: 'plain', cell, index, problems };
   }
+}
+
+/** What follows for the sheet where the criterion is not met, as its author wrote it: a warning in each case concerned. */
+function consequences(
+  cell: CriterionCell,
+  met: readonly (boolean | null)[],
+  caseId: (index: number) => string,
+): readonly CellProblem[] {
+  const text = cell.ifNotMet?.trim() ?? '';
+  if (text === '') return [];
+  return met.flatMap((each, index) =>
+    each === false ? [{ code: 'not-met', severity: 'warning', message: text, cell: cell.id, case: caseId(index) }] : [],
+  );
 }

@@ -150,10 +150,15 @@ export class Structure {
 
   private describeLoops(): ReadonlyMap<string, CellProblem> {
     const problems = new Map<string, CellProblem>();
-    const messages = this.graph.loops.map((loop) => this.loopMessage(loop));
+    const told = new Map<number, string>();
     for (const [index, node] of this.nodes.entries()) {
-      const message = messages[this.graph.loopOf[index]!];
-      if (message === undefined) continue;
+      const number = this.graph.loopOf[index]!;
+      const loop = this.graph.loops[number];
+      if (loop === undefined) continue;
+      // The whole way round is told at the first cell of the sheet that lies in it; the others point there.
+      const where = told.get(number);
+      const message = where === undefined ? this.loopMessage(loop) : `is part of the loop told at ${where}`;
+      if (where === undefined) told.set(number, this.numberOf(node.cell.id) || (node.name ?? node.cell.id));
       problems.set(node.cell.id, { code: 'loop', severity: 'error', message, cell: node.cell.id, field: 'formula' });
     }
     return problems;

@@ -36,19 +36,23 @@ describe('a refusal names the place, what is there and what should be', () => {
     [
       'unknown key that is like none',
       withCells(given(', "zzzzzzzz": 1')),
-      'unknown-key | cells[0] (given mu_1): unknown key `zzzzzzzz`',
+      'unknown-key | cells[0] (given mu_1): unknown key `zzzzzzzz`; remove it, no such key is known here',
     ],
     [
       '__proto__ in a cell',
       withCells(given(', "__proto__": {}')),
-      'unknown-key | cells[0] (given mu_1): unknown key `__proto__` (line 1, column 119)',
+      'unknown-key | cells[0] (given mu_1): unknown key `__proto__` (line 1, column 119); remove it',
     ],
     [
       'constructor as a case',
       withCells(given(', "byCase": {"constructor": "1"}')),
-      'unknown-key | cells[0] (given mu_1).byCase: unknown key `constructor` (line 1, column 130)',
+      'unknown-key | cells[0] (given mu_1).byCase: unknown key `constructor` (line 1, column 130); remove it',
     ],
-    ['toString in the sheet', `{${head}, "cells": [], "toString": 1}`, 'unknown-key | unknown key `toString`'],
+    [
+      'toString in the sheet',
+      `{${head}, "cells": [], "toString": 1}`,
+      'unknown-key | unknown key `toString`; remove it, no such key is known here',
+    ],
     [
       'missing key',
       withCells('{"id": "g1", "kind": "given", "name": "x"}'),

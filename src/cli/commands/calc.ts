@@ -8,13 +8,14 @@
 import { fingerprints } from '../../check/index.ts';
 import { canonicalName } from '../../formula/index.ts';
 import { fromSI, type Unit } from '../../quantity/index.ts';
-import { makeRecord, type RecordModel, type Step } from '../../record/index.ts';
+import { makeRecord, printedValues } from '../../record/index.ts';
 import { type Calculation, calculate, type QuantityState, type TemplateComparison } from '../../sheet/index.ts';
 import { solver } from '../../study/index.ts';
 import type { Io } from '../io.ts';
 import { listing } from '../listing.ts';
 import { comparison, loadSheet, withValues } from '../load.ts';
 import { stateExit, writeProblems } from '../outcome.ts';
+import { tellOnce } from '../report.ts';
 import { readArguments } from '../usage.ts';
 
 export async function calc(argv: readonly string[], io: Io): Promise<number> {
@@ -22,11 +23,10 @@ export async function calc(argv: readonly string[], io: Io): Promise<number> {
   const path = args.positionals[0]!;
   const calculation = calculate(withValues(await loadSheet(io, path), args.assignments, path), solver);
   const template = await comparison(io, calculation.sheet, args.texts.template);
-  const model = makeRecord(calculation, template === undefined ? {} : { template });
   io.out(
     args.json
-      ? `${JSON.stringify(calculationJson(calculation, model, template), null, 2)}\n`
-      : listing(path, calculation, model, template),
+      ? `${JSON.stringify(calculationJson(calculation, template), null, 2)}\n`
+      : listing(path, calculation, makeRecord(calculation, template === undefined ? {} : { template }), template),
   );
   writeProblems(io, path, calculation);
   return stateExit(calculation);
@@ -67,12 +67,8 @@ interface QuantityJson {
   readonly printed: readonly (string | null)[];
 }
 
-function calculationJson(
-  calculation: Calculation,
-  model: RecordModel,
-  template: TemplateComparison | undefined,
-): CalculationJson {
-  const steps = new Map(model.steps.map((step) => [step.cell, step]));
+function calculationJson(calculation: Calculation, template: TemplateComparison | undefined): CalculationJson {
+  const printed = printedValues(calculation);
   const quantities = new Map<string, QuantityJson>();
   const criteria: CalculationJson['criteria'][number][] = [];
   for (const cell of calculation.sheet.cells) {
@@ -81,7 +77,7 @@ function calculationJson(
       criteria.push({ id: cell.id, title: state.cell.title ?? '', met: state.met, utilisation: state.utilisation.map(number) });
     } else if (state?.kind === 'given' || state?.kind === 'derived' || state?.kind === 'sought') {
       const name = canonicalName(state.cell.name);
-      if (!quantities.has(name)) quantities.set(name, quantityJson(state, steps.get(cell.id)));
+      if (!quantities.has(name)) quantities.set(name, quantityJson(state, printed.get(cell.id) ?? []));
     }
   }
   return {
@@ -90,7 +86,12 @@ function calculationJson(
     cases: calculation.cases.map(({ id }) => id),
     quantities: Object.fromEntries(quantities),
     criteria,
-    problems: calculation.problems().map(({ cell, severity, code, message }) => ({ cell, severity, code, message })),
+    problems: tellOnce(calculation).map(({ cell, severity, code, message, cases }) => ({
+      cell,
+      severity,
+      code,
+      message: cases === '' ? message : `${cases}: ${message}`,
+    })),
     ...(template === undefined ? {} : { template: templateJson(template) }),
   };
 }
@@ -108,15 +109,28 @@ function templateJson({ id, version, cells, removed }: TemplateComparison): Temp
   };
 }
 
-function quantityJson(state: QuantityState, step: Step | undefined): QuantityJson {
+function quantityJson(state: QuantityState, printed: readonly (string | null)[]): QuantityJson {
   const { unit } = state;
   const si = Array.from(state.si, number);
   return {
-    unit: unit?.text ?? '',
+    unit: state.cell.kind === 'given' && state.cell.choices !== undefined ? '' : (state.cell.unit ?? typedUnit(unit)),
     values: unit === undefined ? si.map(() => null) : si.map((value) => inUnit(value, unit)),
     si,
-    printed: si.map((_, i) => step?.cases[i]?.result ?? null),
+    printed: si.map((_, i) => printed[i] ?? null),
   };
+}
+
+/** Units as programs write them: the signs that stand close behind a number have names. */
+const named: ReadonlyMap<string, string> = new Map([
+  ['°', 'deg'],
+  ['′', 'arcmin'],
+  ['″', 'arcsec'],
+  ['°C', 'degC'],
+  ['°F', 'degF'],
+]);
+
+function typedUnit(unit: Unit | undefined): string {
+  return unit === undefined ? '' : (named.get(unit.text) ?? unit.text);
 }
 
 function inUnit(si: number | null, unit: Unit): number | null {

@@ -50,6 +50,6 @@ function faultLines(path: string, calculation: Calculation, faults: readonly Tem
     const message = option === undefined ? fault.message : `${fault.message} (${option} "…")`;
     return fault.cell === undefined
       ? `${path}: ${message}`
-      : problemLine(path, calculation, cells, { ...fault, message, cell: fault.cell });
+      : problemLine(path, calculation, cells, { ...fault, message, cell: fault.cell, cases: '' });
   });
 }
