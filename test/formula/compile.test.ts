@@ -97,18 +97,16 @@ const { value: values, truth: truths } = fc.letrec<{ value: Expr; truth: Expr }>
       right: tie('value'),
       at: fc.constant(at),
     }),
-    fc
-      .tuple(tie('value'), fc.constantFrom(2, 3, 4, -1, -2, 0.5, 1, 0, 1.5))
-      .map(
-        ([left, power]): Expr => ({
-          kind: 'binary',
-          operator: '^',
-          implicit: false,
-          left,
-          right: power < 0 ? { kind: 'minus', inner: number(-power), at } : number(power),
-          at,
-        }),
-      ),
+    fc.tuple(tie('value'), fc.constantFrom(2, 3, 4, -1, -2, 0.5, 1, 0, 1.5)).map(
+      ([left, power]): Expr => ({
+        kind: 'binary',
+        operator: '^',
+        implicit: false,
+        left,
+        right: power < 0 ? { kind: 'minus', inner: number(-power), at } : number(power),
+        at,
+      }),
+    ),
     tie('value').map((inner): Expr => ({ kind: 'parens', inner, at })),
     tie('value').map((inner): Expr => ({ kind: 'minus', inner, at })),
     fc
@@ -282,7 +280,9 @@ describe('compiled columns', () => {
       fc.property(values, fc.array(entry, { minLength: 1, maxLength: 6 }), (expr, entries) => {
         const same = entries.map((of) => ({ ...of, numbers: [entries[0]!.numbers[0]!, ...of.numbers.slice(1)] }));
         const plain = compiledValues([{ key: 'x', expr }], same, same.length);
-        const builtIn = compiledValues([{ key: 'x', expr }], same, same.length, (name) => (name === 'a' ? same[0]!.numbers[0]! : undefined));
+        const builtIn = compiledValues([{ key: 'x', expr }], same, same.length, (name) =>
+          name === 'a' ? same[0]!.numbers[0]! : undefined,
+        );
         for (const [index, value] of plain[0]!.entries()) {
           if (Number.isFinite(value)) expect(builtIn[0]![index]).toBe(value);
           else expect(Number.isFinite(builtIn[0]![index])).toBe(false);
