@@ -3,7 +3,6 @@
 // 1. Nothing in a formula can load, link or size anything beyond a line (KaTeX's trust is off, sizes and macros are limited).
 // 2. A formula that cannot be set prints as its text: a record never fails for a formula.
 
-// biome-ignore lint/style/noRestrictedImports: here KaTeX makes text from text; it touches no page.
 import katex from 'katex';
 import { escapeHtml } from './escape.ts';
 

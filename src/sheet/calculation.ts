@@ -12,7 +12,8 @@
 
 import type { Lookup } from '../formula/index.ts';
 import type { Problem } from '../quantity/index.ts';
-import { analyse, analyseEquation, type Surroundings } from './analyse.ts';
+import { analyse } from './analyse.ts';
+import { analyseEquation } from './analyse-sought.ts';
 import { casesOf } from './cases.ts';
 import type { LoadCase, Sheet } from './document.ts';
 import { type Node, typeKey } from './node.ts';
@@ -22,6 +23,7 @@ import { snapshotOf } from './snapshot.ts';
 import { type Solver, solveSought } from './sought.ts';
 import type { CellProblem, CellState, QuantityState, TableState } from './state.ts';
 import { Structure, sameMeaningBesidesNumbers } from './structure.ts';
+import type { Surroundings } from './surroundings.ts';
 import { prepareWhatIf, type Surface, type WhatIf, type WhatIfRequest } from './whatif.ts';
 
 export interface Changed extends Iterable<string> {

@@ -7,13 +7,13 @@
 
 import { canonicalName, explain, type Formula, type Lookup, run } from '../formula/index.ts';
 import type { Problem } from '../quantity/index.ts';
-import { waitsFor } from './analyse.ts';
 import { Columns } from './columns.ts';
 import { buildGraph, type Graph } from './graph.ts';
 import { computedFormulas, type Node } from './node.ts';
 import { makePlan, mode, type Plan } from './plan.ts';
 import type { Solved } from './sought.ts';
 import type { CellProblem } from './state.ts';
+import { waitsFor } from './surroundings.ts';
 
 export interface World {
   numberOf(cell: string): string;

@@ -1,11 +1,11 @@
-// Group E: drive pulleys of belt conveyors, against a published lecture after CEMA and its wrap factors.
+// Group E: drive pulleys of belt conveyors, against published course notes after CEMA and its wrap factors.
 //
 // Not here: resistances to motion.
 
 import { describe, expect, test } from 'vitest';
 import { type Example, halfUnit, solve, testExamples, valueOf } from './template.ts';
 
-const AGH = 'Kasza & Kulinowski, AGH Cracow lecture after CEMA, 5th ed., ja.scribd.com/document/320588794';
+const AGH = 'Kasza & Kulinowski, AGH Cracow, course notes after CEMA, 5th ed., ja.scribd.com/document/320588794';
 
 const examples: readonly Example[] = [
   {
@@ -13,7 +13,7 @@ const examples: readonly Example[] = [
     source: `${AGH}: 115 ft of 11 lb/ft, sag force 1856.2 lb, return resistance 544.5 lb, wrap factor 0.08`,
     tag: 'print seen',
     template: 'conveyor-pulley',
-    // 1/(e^(mu theta) − 1) = 0.08 at 0.35; the sag force of the lecture as one idler pitch of 1 ft at 12.5 % of (11 + 1845.2) lb/ft.
+    // 1/(e^(mu theta) − 1) = 0.08 at 0.35; the sag force of the notes as one idler pitch of 1 ft at 12.5 % of (11 + 1845.2) lb/ft.
     givens: {
       xi: '1',
       F_U: '14598.2 lbf',
