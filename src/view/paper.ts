@@ -9,9 +9,10 @@ import { html, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
-import type { Desk } from './desk.ts';
+import type { Desk, InPlace } from './desk.ts';
 import { PageElement } from './element.ts';
 import { foot, head, titleBlock } from './heads.ts';
+import { hasFormula, loadEditing } from './in-place.ts';
 import { type Command, commandOf, isWriting } from './keys.ts';
 import { cellOf } from './share.ts';
 
@@ -58,7 +59,7 @@ export class PaperElement extends PageElement {
     const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
     return html`${titleBlock(model)}${head(desk)}
       <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} @keydown=${this.#onKey} @focusin=${this.#onFocus}
-        @focusout=${this.#onLeave} @click=${this.#onClick}>
+        @focusout=${this.#onLeave} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel}>
         <div role="rowgroup" class="heads">${this.#columnHeads(heads)}</div>
         ${repeat(
           sections,
@@ -96,10 +97,11 @@ export class PaperElement extends PageElement {
     const { desk } = this;
     const cell = cellOf(line);
     const editing = desk.editing?.cell === cell ? desk.editing : null;
+    const inPlace = desk.inPlace?.cell === cell ? desk.inPlace : null;
     const former = line.kind === 'step' && line.step.kind === 'given' ? formerText(desk, cell) : '';
     return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.drawn.cases}
       .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
-      .chosen=${desk.chosen === cell} .editing=${editing} .printing=${this.printing} .former=${former}
+      .chosen=${desk.chosen === cell} .editing=${editing} .inPlace=${inPlace} .printing=${this.printing} .former=${former}
       .beside=${desk.chosen === cell && !this.printing ? this.beside : null}
       .foldable=${this.foldable && desk.chosen === cell && !this.printing}></ts-row>`;
   }
@@ -163,7 +165,13 @@ export class PaperElement extends PageElement {
   };
 
   #onLeave = (event: FocusEvent) => {
-    const { editing } = this.desk;
+    const { editing, inPlace } = this.desk;
+    if (inPlace !== null) {
+      const to = event.relatedTarget;
+      // A click beside the fields of the line takes the focus nowhere, and ends nothing.
+      if (!inPlace.unreadable && to instanceof Node && !this.#rowOf(inPlace.cell)?.contains(to)) this.desk.finish();
+      return;
+    }
     if (editing === null) return;
     const row = this.#rowOf(editing.cell);
     const to = event.relatedTarget;
@@ -175,16 +183,47 @@ export class PaperElement extends PageElement {
   #onClick = (event: MouseEvent) => {
     const at = this.#cellAt(event.target);
     if (at === null || isField(event.target) || (event.target as Element).closest('a, button, label')) return;
-    if (!isWritable(at.element)) return;
+    const target = event.target as Element;
+    if (target.closest('.in-place')) return;
+    const onFormula = target.closest('.formula') !== null && this.#formulaAt(at.cell);
+    if (!onFormula && !isWritable(at.element)) return;
     // Text that is being selected is being read, not typed into.
     if (getSelection()?.isCollapsed === false) return;
-    this.#edit(at);
+    if (onFormula) void this.#inPlace(at.cell, 'formula');
+    else this.#edit(at);
   };
 
   #edit(at: Place & { readonly element: HTMLElement }, text?: string) {
     const field = at.column === 0 ? 'source' : 'value';
     const caseIndex = at.column >= 2 ? at.column - 2 : this.desk.reading;
     if (isWritable(at.element)) this.desk.begin(at.cell, field, caseIndex, text);
+  }
+
+  #formulaAt(cell: string) {
+    const found = this.desk.kept.cells.find((one) => one.id === cell);
+    return found !== undefined && hasFormula(found);
+  }
+
+  async #inPlace(cell: string, what: InPlace['what']) {
+    await loadEditing();
+    this.desk.beginInPlace(cell, what);
+  }
+
+  #onCommit = () => {
+    const place = this.desk.inPlace;
+    if (place === null || place.unreadable) return;
+    this.#backTo(place.cell);
+    this.desk.finish();
+  };
+  #onCancel = () => {
+    const place = this.desk.inPlace;
+    if (place === null) return;
+    this.desk.cancel();
+    this.#backTo(place.cell);
+  };
+  /** The cell takes the focus before the piece goes, so that it is never lost. */
+  #backTo(cell: string) {
+    this.#focus(cell, this.#place?.column ?? 1);
   }
 
   async #stop(keep: boolean) {
@@ -204,6 +243,7 @@ export class PaperElement extends PageElement {
   #onKey = (event: KeyboardEvent) => {
     const at = this.#cellAt(event.target);
     if (at === null || event.isComposing) return;
+    if (this.desk.inPlace !== null && event.target !== at.element) return;
     if (this.desk.editing !== null && event.target instanceof HTMLElement && event.target !== at.element) {
       if (event.key === 'Enter' && !(event.target instanceof HTMLTextAreaElement && event.shiftKey)) {
         if (event.target instanceof HTMLButtonElement) return;
@@ -277,7 +317,11 @@ export class PaperElement extends PageElement {
         toRow(index() + pageStep);
         return true;
       case 'edit':
-        this.#edit(at);
+        if (isWritable(at.element)) this.#edit(at);
+        else void this.#inPlace(at.cell, this.#formulaAt(at.cell) ? 'formula' : 'fields');
+        return true;
+      case 'edit-all':
+        void this.#inPlace(at.cell, 'fields');
         return true;
       case 'origin':
       case 'use':
