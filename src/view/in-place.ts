@@ -7,7 +7,7 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { Cell } from '../sheet/index.ts';
 import type { Desk, InPlace } from './desk.ts';
-import type { CellDetail, FormulaDetail } from './edit/index.ts';
+import type { CellDetail, EntryDetail, FormulaDetail } from './edit/index.ts';
 
 let loading: Promise<void> | undefined;
 
@@ -63,4 +63,21 @@ export async function focusInPlace(row: HTMLElement) {
   await piece?.updateComplete;
   if (piece?.focusOn !== undefined) piece.focusOn();
   else piece?.focus();
+}
+
+/** The foot of a section: a word until somebody wants the line, then the line. */
+export function entryRow(
+  desk: Desk,
+  title: string,
+  open: boolean,
+  heard: { begin(): void; entry(detail: EntryDetail): void; leave(): void },
+): TemplateResult {
+  const label = title === '' ? 'New line' : `New line in ${title}`;
+  return html`<div role="row" class="row entry"><div role="gridcell" class="source"></div>
+    <div role="gridcell" class="calculation across">${
+      open
+        ? html`<ts-entry-line .calculation=${desk.calculation} .label=${label} @cancel=${heard.leave}
+            @entry=${(event: CustomEvent<EntryDetail>) => heard.entry(event.detail)}></ts-entry-line>`
+        : html`<button type="button" class="word" aria-label=${label} @click=${heard.begin}>New line</button>`
+    }</div></div>`;
 }

@@ -9,10 +9,10 @@ import { html, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
-import type { Desk, InPlace } from './desk.ts';
+import type { Desk, InPlace, NewCell } from './desk.ts';
 import { PageElement } from './element.ts';
 import { foot, head, titleBlock } from './heads.ts';
-import { hasFormula, loadEditing } from './in-place.ts';
+import { entryRow, hasFormula, loadEditing } from './in-place.ts';
 import { type Command, commandOf, isWriting } from './keys.ts';
 import { cellOf } from './share.ts';
 
@@ -45,6 +45,8 @@ export class PaperElement extends PageElement {
   declare beside: TemplateResult | null;
   declare foldable: boolean;
   #place: Place | null = null;
+  /** Sections whose new line is open, by key. */
+  readonly #entries = new Set<string>();
   #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
     all: noProblems,
     of: new Map(),
@@ -59,13 +61,14 @@ export class PaperElement extends PageElement {
     const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
     return html`${titleBlock(model)}${head(desk)}
       <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} @keydown=${this.#onKey} @focusin=${this.#onFocus}
-        @focusout=${this.#onLeave} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel}>
+        @focusout=${this.#onLeave} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel} @edit-all=${this.#onEditAll}>
         <div role="rowgroup" class="heads">${this.#columnHeads(heads)}</div>
         ${repeat(
           sections,
           (section) => section.key,
           (section) => html`<div role="rowgroup" class="section" id=${`section-${section.key}`} data-section=${section.key}>
             ${repeat(section.lines, cellOf, (line, index) => html`${this.#row(line, place)}${this.printing && index === 0 ? this.#columnHeads(heads) : nothing}`)}
+            ${this.printing ? nothing : this.#entryRow(section)}
           </div>`,
         )}
       </div>
@@ -104,6 +107,65 @@ export class PaperElement extends PageElement {
       .chosen=${desk.chosen === cell} .editing=${editing} .inPlace=${inPlace} .printing=${this.printing} .former=${former}
       .beside=${desk.chosen === cell && !this.printing ? this.beside : null}
       .foldable=${this.foldable && desk.chosen === cell && !this.printing}></ts-row>`;
+  }
+
+  #entryRow({ key, lines }: Section) {
+    const [first] = lines;
+    const last = lines.at(-1);
+    return entryRow(this.desk, first?.kind === 'heading' ? first.text : '', this.#entries.has(key), {
+      begin: () => void this.#enter(key),
+      entry: ({ draft }) => void this.#insert(key, draft, last === undefined ? null : cellOf(last)),
+      leave: () => {
+        this.#entries.delete(key);
+        this.#focus(this.#place?.cell ?? (last === undefined ? '' : cellOf(last)), this.#place?.column ?? 1);
+        this.requestUpdate();
+      },
+    });
+  }
+
+  /** Opens the new line of a section and puts the focus into it. */
+  async #enter(key: string) {
+    await loadEditing();
+    this.#entries.add(key);
+    this.requestUpdate();
+    await this.updateComplete;
+    const line = this.#sectionOf(key)?.querySelector<HTMLElement & { updateComplete?: Promise<unknown> }>('ts-entry-line');
+    await line?.updateComplete;
+    line?.scrollIntoView({ block: 'nearest' });
+    line?.focus();
+  }
+
+  async #insert(key: string, draft: NewCell, after: string | null) {
+    const id = this.desk.insert(draft, after);
+    await this.#drawn();
+    // What follows a new section belongs to it.
+    if (this.#sectionOf(id) !== null) {
+      this.#entries.delete(key);
+      await this.#enter(id);
+    }
+    this.#rowOf(id)?.parentElement?.querySelector('ts-entry-line')?.scrollIntoView({ block: 'nearest' });
+  }
+
+  #sectionOf(key: string): HTMLElement | null {
+    return this.querySelector(`[data-section="${CSS.escape(key)}"]`);
+  }
+
+  /** What the desk has now stands on the paper. */
+  async #drawn() {
+    await (this.closest('ts-page') as PageElement | null)?.updateComplete;
+    await this.updateComplete;
+  }
+
+  #onEditAll = (event: Event) => {
+    const at = this.#cellAt(event.target);
+    if (at !== null) void this.#inPlace(at.cell, 'fields');
+  };
+
+  async #move(at: Place, step: -1 | 1) {
+    if (!this.desk.move(at.cell, step)) return;
+    await this.#drawn();
+    this.#focus(at.cell, at.column);
+    this.#rowOf(at.cell)?.scrollIntoView({ block: 'nearest' });
   }
 
   #sortProblems() {
@@ -322,6 +384,21 @@ export class PaperElement extends PageElement {
         return true;
       case 'edit-all':
         void this.#inPlace(at.cell, 'fields');
+        return true;
+      case 'new-line':
+        void this.#enter(at.row.parentElement?.dataset['section'] ?? '');
+        return true;
+      case 'remove': {
+        const all = rows();
+        const next = all[index() + 1] ?? all[index() - 1];
+        // The neighbour takes the focus before the row goes, so that it is never lost.
+        if (next !== undefined) this.#focus(next.dataset['cell'] ?? '', at.column);
+        this.desk.remove(at.cell);
+        return true;
+      }
+      case 'move-up':
+      case 'move-down':
+        void this.#move(at, command === 'move-up' ? -1 : 1);
         return true;
       case 'origin':
       case 'use':

@@ -53,7 +53,8 @@ export class RowElement extends PageElement {
 
   protected override render() {
     const { line } = this;
-    if (line.kind !== 'step') return otherLine(line, (column) => (this.column === column ? 0 : -1), this.problems, this.#all());
+    if (line.kind !== 'step')
+      return otherLine(line, (column) => (this.column === column ? 0 : -1), this.problems, html`${this.#toAll()}${this.#all()}`);
     return this.#step(line.step);
   }
 
@@ -73,6 +74,12 @@ export class RowElement extends PageElement {
     return inPlace?.what === 'fields'
       ? html`<div class="below">${fieldsInPlace(this.desk, inPlace)}${this.#brought()}</div>`
       : nothing;
+  }
+
+  #toAll() {
+    if (!this.chosen || this.printing || this.inPlace !== null || this.editing !== null) return nothing;
+    const open = () => this.dispatchEvent(new CustomEvent('edit-all', { bubbles: true }));
+    return html`<button type="button" class="word edit-all" title="Everything of the line as a form: Shift+Enter" @click=${open}>Edit all</button>`;
   }
 
   #brought() {
@@ -100,7 +107,7 @@ export class RowElement extends PageElement {
       </div>
       <div role="gridcell" class="calculation ${choices === undefined ? '' : 'across'}" data-column="1" tabindex=${this.#tab(1)}
         aria-readonly=${choices === undefined && step.kind === 'given' ? 'true' : nothing}>
-        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}${this.foldable ? this.#fold() : nothing}</div>
+        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}${this.foldable ? this.#fold() : nothing}${this.#toAll()}</div>
         <div class="formula">
           ${this.inPlace?.what === 'formula' ? html`${formulaInPlace(this.desk, this.inPlace)}${this.#brought()}` : equation(step, this.reading, this.cases, this.printing)}
           ${choices === undefined ? nothing : this.#choice(step, editingValue, choices)}

@@ -88,3 +88,69 @@ describe('a formula on the page', () => {
     expect(await focusedRow()).toBe(idOf('F_u'));
   });
 });
+
+describe('lines of the sheet', () => {
+  const lines = () => page.locator('ts-row').evaluateAll((rows) => rows.map((row) => (row as HTMLElement).dataset['cell']));
+
+  it('a new derived quantity from the foot of a section computes, and undo takes it out', async () => {
+    const before = await lines();
+    const results = await resultsOn(page);
+    await toRow('F_u');
+    await page.keyboard.press('Control+Enter');
+    const line = page.locator('ts-entry-line');
+    await line.locator('.cm-content').waitFor();
+    await page.keyboard.type('F_trial = 2*F_u');
+    await expect.poll(() => line.locator('.edit-becomes').textContent()).toContain('a derived quantity');
+    await page.keyboard.press('Enter');
+    await expect.poll(async () => (await lines()).length).toBe(before.length + 1);
+    const added = (await lines()).find((id) => !before.includes(id)) ?? '';
+    const cell: Cell = { id: added, kind: 'derived', name: 'F_trial', formula: '2*F_u' };
+    const wanted = recordOf([...example.cells, cell]).steps.find((step) => step.cell === added);
+    await expect.poll(async () => (await resultsOn(page))[added]).toEqual(wanted?.cases.map((each) => each.result));
+    // At the end of the section of F_u, with the focus still in the line, which is empty again.
+    expect(await page.locator(`ts-row[data-cell="${added}"] + .entry ts-entry-line`).count()).toBe(1);
+    expect(await page.evaluate(() => document.activeElement?.closest('ts-entry-line') !== null)).toBe(true);
+    expect(await line.locator('.cm-content').textContent()).not.toContain('F_trial');
+    await page.keyboard.press('Escape');
+    await expect.poll(focusedRow).toBe(idOf('F_u'));
+    await page.keyboard.press('Control+z');
+    await expect.poll(lines).toEqual(before);
+    expect(await resultsOn(page)).toEqual(results);
+  });
+
+  it('are moved and removed by keyboard, with the focus kept and the way back', async () => {
+    const before = await lines();
+    const id = idOf('F_u');
+    const at = before.indexOf(id);
+    await toRow('F_u');
+    await page.keyboard.press('Alt+ArrowDown');
+    await expect.poll(lines).toEqual(before.toSpliced(at, 1).toSpliced(at + 1, 0, id));
+    await expect.poll(focusedRow).toBe(id);
+    await page.keyboard.press('Alt+ArrowUp');
+    await expect.poll(lines).toEqual(before);
+    await expect.poll(focusedRow).toBe(id);
+    await page.keyboard.press('Control+Delete');
+    await expect.poll(lines).toEqual(before.toSpliced(at, 1));
+    expect(await focusedRow()).toBe(before[at + 1]);
+    await page.keyboard.press('Control+z');
+    await expect.poll(lines).toEqual(before);
+    await expect.poll(() => resultsOn(page)).toEqual(resultsOf(recordOf(example.cells)));
+  });
+
+  it('a quantity renamed in the form of its line is renamed wherever it is used, in one step', async () => {
+    const before = await resultsOn(page);
+    await toRow('F_u');
+    await page.keyboard.press('Shift+Enter');
+    const field = rowOf('F_u').locator('[data-key="name"]').locator('input, textarea').first();
+    await field.fill('F_pull');
+    await rowOf('F_u').locator('.cell-actions button').first().click();
+    await expect.poll(undoable).toBe(true);
+    await expect.poll(() => resultsOn(page)).toEqual(before);
+    expect(await focusedRow()).toBe(idOf('F_u'));
+    expect(await page.locator('ts-row .problem.error').count()).toBe(0);
+    expect(await page.locator('.tools button').first().getAttribute('title')).toContain('F_u renamed F_pull');
+    await page.keyboard.press('Control+z');
+    await expect.poll(undoable).toBe(false);
+    expect(await resultsOn(page)).toEqual(before);
+  });
+});
