@@ -429,5 +429,6 @@ function sectionsOf(lines: readonly Line[]): readonly Section[] {
     if (last === undefined || (line.kind === 'heading' && line.level === 1)) sections.push({ key: cellOf(line), lines: [line] });
     else last.lines.push(line);
   }
-  return sections;
+  // A sheet without a line still has a place where the first one is typed.
+  return sections.length === 0 ? [{ key: '', lines: [] }] : sections;
 }

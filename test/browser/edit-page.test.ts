@@ -1,10 +1,12 @@
 // Lines of the sheet edited on the page, by keyboard alone: a formula with an error seen and corrected, new lines, and the way back.
 // What the page prints is compared with the record computed here in Node from the same sheet.
 
+import { readFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
-import { type Cell, calculate } from '../../src/sheet/index.ts';
+import { type Cell, calculate, writeSheet } from '../../src/sheet/index.ts';
 import { connect, example, idOf, type Opened, open, resultsOf, resultsOn } from './open.ts';
 
 let browser: Browser;
@@ -152,5 +154,65 @@ describe('lines of the sheet', () => {
     await page.keyboard.press('Control+z');
     await expect.poll(undoable).toBe(false);
     expect(await resultsOn(page)).toEqual(before);
+  });
+});
+
+describe('a sheet without a line', () => {
+  it('is begun from its one new line: a heading opens a section, and what follows stands in it', async () => {
+    const text = writeSheet({ format: 'tightside-sheet/1', title: 'Empty', cells: [] });
+    await page
+      .locator('#sheet-file')
+      .setInputFiles({ name: 'empty.sheet.json', mimeType: 'application/json', buffer: Buffer.from(text) });
+    await expect.poll(() => page.locator('h1').textContent()).toBe('Empty');
+    await page.getByRole('button', { name: 'New line' }).click();
+    await page.locator('ts-entry-line .cm-content').waitFor();
+    await page.keyboard.type('# Forces');
+    await page.keyboard.press('Enter');
+    await expect.poll(() => page.locator('.section h2').textContent()).toContain('Forces');
+    await expect.poll(() => page.evaluate(() => document.activeElement?.closest('ts-entry-line') != null)).toBe(true);
+    await page.keyboard.type('F_1 = 900 N');
+    await page.keyboard.press('Enter');
+    await expect.poll(() => page.locator('ts-row.given .result').first().textContent()).toContain('900');
+    await expect.poll(() => page.evaluate(() => document.activeElement?.closest('ts-entry-line') != null)).toBe(true);
+    expect(await page.locator('.section').count()).toBe(1);
+  });
+});
+
+describe('accessibility rules', () => {
+  const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
+  const findings = async () => {
+    await page.evaluate(axeSource);
+    return page.evaluate(async (row) => {
+      interface Finding {
+        readonly id: string;
+        readonly nodes: readonly { readonly target: readonly string[]; readonly failureSummary?: string }[];
+      }
+      const { axe } = globalThis as unknown as {
+        axe: { run(context: object, options: object): Promise<{ violations: Finding[]; passes: unknown[] }> };
+      };
+      const context = { include: [[`.section:has(#row-${row})`]], exclude: [['.katex-html']] };
+      const { violations, passes } = await axe.run(context, { resultTypes: ['violations'], iframes: false });
+      if (passes.length < 5) return [`only ${passes.length} rules ran`];
+      return violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.target.join(' ')} ${nodes[0]?.failureSummary}`);
+    }, idOf('F_u'));
+  };
+
+  it('find nothing in a chosen line, a formula with an error, a form, a new line', async () => {
+    await toRow('F_u');
+    expect(await findings(), 'a chosen line').toEqual([]);
+    await editFormula('F_u', 'K_A*P/(v');
+    await rowOf('F_u').locator('.problem.error').waitFor();
+    expect(await findings(), 'a formula with an error').toEqual([]);
+    await page.keyboard.press('Escape');
+    if ((await rowOf('F_u').locator('ts-formula-editor').count()) > 0) await page.keyboard.press('Escape');
+    await page.keyboard.press('Shift+Enter');
+    await rowOf('F_u').locator('.cell-actions').waitFor();
+    expect(await findings(), 'a form').toEqual([]);
+    await page.keyboard.press('Escape');
+    await expect.poll(focusedRow).toBe(idOf('F_u'));
+    await page.keyboard.press('Control+Enter');
+    await page.locator('ts-entry-line .cm-content').waitFor();
+    await page.keyboard.type('x = 2*F_nowhere');
+    expect(await findings(), 'a new line').toEqual([]);
   });
 });
