@@ -91,6 +91,40 @@ describe('a formula on the page', () => {
   });
 });
 
+describe('a criterion on the page', () => {
+  const criterion = example.cells.find((cell) => cell.kind === 'criterion');
+  const row = () => page.locator(`ts-row[data-cell="${criterion?.id}"]`);
+
+  it('without its relation is not kept and loses nothing; with another relation it is judged anew', async () => {
+    if (criterion?.kind !== 'criterion') throw new Error('the example has no criterion');
+    const { left, right } = criterion;
+    const wanted = resultsOf(
+      recordOf(
+        example.cells.map((cell) => (cell.id === criterion.id ? { ...criterion, relation: '<', left: `2*(${left})` } : cell)),
+      ),
+    );
+    await row().locator('.label').click();
+    await row().locator('.formula').click();
+    const line = row().locator('ts-formula-editor .cm-content');
+    await line.waitFor();
+    expect(await line.textContent()).toBe(`${left} ${criterion.relation} ${right}`);
+    await page.keyboard.press('Control+a');
+    await page.keyboard.type(`2*(${left})`);
+    await row().locator('.problem.error').waitFor();
+    await page.keyboard.press('Enter');
+    await page.locator('.label').first().click();
+    expect(await line.textContent()).toBe(`2*(${left})`);
+    await line.click();
+    await page.keyboard.press('End');
+    await page.keyboard.type(` < ${right}`);
+    await expect.poll(() => resultsOn(page)).toEqual(wanted);
+    await page.keyboard.press('Enter');
+    await expect.poll(undoable).toBe(true);
+    expect(await focusedRow()).toBe(criterion.id);
+    expect(await resultsOn(page)).toEqual(wanted);
+  });
+});
+
 describe('lines of the sheet', () => {
   const lines = () => page.locator('ts-row').evaluateAll((rows) => rows.map((row) => (row as HTMLElement).dataset['cell']));
 
