@@ -7,22 +7,27 @@
 // 4. A key stroke recalculates at once; the lines are laid out anew when somebody asks for them (`model`), so that what is typed is
 //    painted first.
 // 5. Lines that print alike before and after a change are the same objects, so that only what changed is drawn again.
+// 6. A line that is edited in its place is a draft beside the kept cell under the same rules; leaving it keeps the draft as one step.
 // Not here: elements of the page; computing (src/sheet) and printing (src/record).
 
-import { makeRecord, type RecordModel } from '../record/index.ts';
+import { makeRecord } from '../record/index.ts';
 import {
-  type Basis,
-  type Calculation,
+  type Cell,
   type CellProblem,
   calculate,
+  type Edit,
   emptyHistory,
   type GivenCell,
   type History,
+  nameFault,
+  newCellId,
   perform,
   redo,
   type Sheet,
   undo,
 } from '../sheet/index.ts';
+import { solver } from '../study/index.ts';
+import type { Desk, Editing, InPlace } from './desk-face.ts';
 import {
   heldValue,
   type Provenance,
@@ -33,73 +38,23 @@ import {
   withSource,
   withValue,
 } from './given.ts';
-import { shareModel } from './share.ts';
+import { alike, shareModel } from './share.ts';
 import { countLines, waits } from './waiting.ts';
 
-export type Field = 'value' | 'source';
-
-export interface Editing {
-  readonly cell: string;
-  readonly field: Field;
-  /** Index of the case whose value is edited. */
-  readonly at: number;
-  /** True: the value holds for every case that has none of its own. */
-  readonly forAll: boolean;
-  readonly text: string;
-  readonly before: string;
-  /** Errors and warnings of the text as typed; empty where it reads well. */
-  readonly problems: readonly CellProblem[];
-}
-
-export interface Desk {
-  readonly sheet: Sheet;
-  readonly calculation: Calculation;
-  /** The lines as they are now. */
-  readonly model: RecordModel;
-  /** The lines as last asked for: what stands on the screen while the next ones are made. */
-  readonly drawn: RecordModel;
-  readonly chosen: string | null;
-  /** Index of the case whose numbers stand in the equations. */
-  readonly reading: number;
-  readonly editing: Editing | null;
-  readonly undoLabel: string | null;
-  readonly redoLabel: string | null;
-  /** True where there are changes that no file has. */
-  readonly unsaved: boolean;
-  /** What happened last, in words, for those who do not see it. */
-  readonly announcement: string;
-  subscribe(listener: () => void): () => void;
-  open(sheet: Sheet): void;
-  choose(cell: string | null): void;
-  read(caseIndex: number): void;
-  /** Begins typing. `text` replaces what stands there. False where the cell cannot be typed into. */
-  begin(cell: string, field: Field, caseIndex: number, text?: string): boolean;
-  type(text: string): void;
-  setForAll(forAll: boolean): void;
-  finish(): void;
-  cancel(): void;
-  /** A value that was carried over holds for this sheet as well. */
-  confirm(cell: string): void;
-  setBasis(cell: string, basis: Basis | null): void;
-  /** Basis and source that stood beside the number before the last one. */
-  formerProvenance(cell: string): Provenance | undefined;
-  restoreProvenance(cell: string): void;
-  undo(): void;
-  redo(): void;
-  saved(): void;
-}
+export type { Desk, Editing, InPlace, NewCell } from './desk-face.ts';
 
 export function createDesk(first: Sheet): Desk {
   const listeners = new Set<() => void>();
   let kept = first;
   let shown = first;
-  let calculation = calculate(first);
+  let calculation = calculate(first, solver);
   let drawn = makeRecord(calculation);
   let stale = false;
   let history: History = emptyHistory;
   let chosen: string | null = null;
   let reading = 0;
   let editing: Editing | null = null;
+  let inPlace: InPlace | null = null;
   let savedSheet = first;
   let announcement = '';
   const former = new Map<string, Provenance>();
@@ -124,25 +79,27 @@ export function createDesk(first: Sheet): Desk {
     const cell = sheet.cells.find((one) => one.id === id);
     return cell?.kind === 'given' ? cell : undefined;
   };
-  const keep = (cell: GivenCell, label?: string) => {
-    const done = perform(kept, history, { kind: 'set-cell', cell }, label === undefined ? {} : { label });
+  const keepEdit = (edit: Edit, label?: string) => {
+    const done = perform(kept, history, edit, label === undefined ? {} : { label });
     kept = done.sheet;
     history = done.history;
     show(kept);
+    return done.label;
   };
+  const keep = (cell: Cell, label?: string) => keepEdit({ kind: 'set-cell', cell }, label);
   const caseId = (index: number) => calculation.cases[index]?.id ?? 'base';
 
   const problemsOf = (cell: string, at: number): readonly CellProblem[] =>
     (calculation.state(cell)?.problems ?? []).filter((problem) => problem.case === undefined || problem.case === caseId(at));
 
   /** Errors that the sheet on the desk did not have before, told from the line that is typed in. */
-  const broughtIn = (before: ReadonlySet<string>, cell: string): readonly CellProblem[] => {
+  const broughtIn = (before: ReadonlySet<string>, cell: string, how: string): readonly CellProblem[] => {
     const brought = calculation
       .problems()
       .find((problem) => problem.severity === 'error' && !waits(problem) && !before.has(placeOf(problem)));
     if (brought === undefined) return [];
     const { at: _at, fixes: _fixes, ...rest } = brought;
-    return [{ ...rest, cell, message: `with this value, line ${calculation.numberOf(brought.cell)} fails: ${brought.message}` }];
+    return [{ ...rest, cell, message: `${how}, line ${calculation.numberOf(brought.cell)} fails: ${brought.message}` }];
   };
 
   const preview = (next: Editing) => {
@@ -160,7 +117,7 @@ export function createDesk(first: Sheet): Desk {
     const before = new Set(calculation.problems().map(placeOf));
     calculation.update(candidate);
     const own = problemsOf(next.cell, next.at);
-    const problems = own.some(isError) ? own : [...broughtIn(before, next.cell), ...own];
+    const problems = own.some(isError) ? own : [...broughtIn(before, next.cell, 'with this value'), ...own];
     editing = { ...next, problems };
     if (problems.some(isError)) {
       calculation.update(last);
@@ -168,6 +125,24 @@ export function createDesk(first: Sheet): Desk {
     }
     shown = candidate;
     stale = true;
+  };
+
+  const finishInPlace = (done: InPlace) => {
+    const before = kept.cells.find((one) => one.id === done.cell);
+    inPlace = null;
+    if (before === undefined || done.draft === null || alike(before, done.draft)) return show(kept);
+    const set: Edit = { kind: 'set-cell', cell: done.draft };
+    const { renamed } = done;
+    // A name that cannot stand, or stands already, is an error of its own line alone.
+    const renames = renamed !== undefined && renamed.from !== '' && nameFault(kept, renamed.to, done.cell) === undefined;
+    const label =
+      renames && renamed !== undefined
+        ? keepEdit(
+            { kind: 'batch', edits: [{ kind: 'rename-quantity', ...renamed }, set] },
+            `${renamed.from} renamed ${renamed.to}`,
+          )
+        : keepEdit(set);
+    announcement = `${label} kept; ${verdictWords()}`;
   };
 
   const verdictWords = () => {
@@ -183,6 +158,7 @@ export function createDesk(first: Sheet): Desk {
   const step = (done: ReturnType<typeof undo>, word: string) => {
     if (done === undefined) return;
     editing = null;
+    inPlace = null;
     kept = done.sheet;
     history = done.history;
     show(kept);
@@ -193,6 +169,9 @@ export function createDesk(first: Sheet): Desk {
   const desk: Desk = {
     get sheet() {
       return shown;
+    },
+    get kept() {
+      return kept;
     },
     get calculation() {
       return calculation;
@@ -211,6 +190,9 @@ export function createDesk(first: Sheet): Desk {
     },
     get editing() {
       return editing;
+    },
+    get inPlace() {
+      return inPlace;
     },
     get undoLabel() {
       return history.past.at(-1)?.label ?? null;
@@ -232,13 +214,14 @@ export function createDesk(first: Sheet): Desk {
       kept = sheet;
       shown = sheet;
       savedSheet = sheet;
-      calculation = calculate(sheet);
+      calculation = calculate(sheet, solver);
       drawn = makeRecord(calculation);
       stale = false;
       history = emptyHistory;
       chosen = null;
       reading = 0;
       editing = null;
+      inPlace = null;
       former.clear();
       announcement = `opened ${sheet.title}; ${verdictWords()}`;
       changed();
@@ -255,7 +238,7 @@ export function createDesk(first: Sheet): Desk {
       changed();
     },
     begin(id, field, caseIndex, text) {
-      if (editing !== null) desk.finish();
+      desk.finish();
       const cell = givenOf(id);
       if (cell === undefined) return false;
       const forAll = sharesValue(cell, caseId(caseIndex));
@@ -275,7 +258,69 @@ export function createDesk(first: Sheet): Desk {
       preview({ ...editing, forAll });
       changed();
     },
+    beginInPlace(id, what) {
+      desk.finish();
+      const cell = kept.cells.find((one) => one.id === id);
+      if (cell === undefined || (what === 'formula' && !hasFormula(cell))) return false;
+      chosen = id;
+      inPlace = { cell: id, what, draft: null, unreadable: false, renamed: undefined, problems: [] };
+      changed();
+      return true;
+    },
+    draftInPlace(cell, renamed) {
+      if (inPlace === null) return;
+      if (cell === null) {
+        inPlace = { ...inPlace, draft: null, unreadable: true, problems: [] };
+        changed();
+        return;
+      }
+      if (inPlace.cell !== cell.id) return;
+      const last = shown;
+      calculation.update(kept);
+      const before = new Set(calculation.problems().map(placeOf));
+      const candidate = replaceCell(kept, cell);
+      calculation.update(candidate);
+      const own = calculation.state(cell.id)?.problems.some(isError) === true;
+      // A new name is carried into the other lines when it is kept; until then they would only say that the old one is gone.
+      const problems = own || renamed !== undefined ? [] : broughtIn(before, cell.id, 'as typed here');
+      inPlace = { ...inPlace, draft: cell, unreadable: false, renamed, problems };
+      if (own || renamed !== undefined || problems.length > 0) calculation.update(last);
+      else {
+        shown = candidate;
+        stale = true;
+      }
+      changed();
+    },
+    insert(draft, after) {
+      desk.finish();
+      const cell = { ...draft, id: newCellId(kept, draft.kind) } as Cell;
+      const at = after === null ? 0 : kept.cells.findIndex((one) => one.id === after) + 1;
+      const label = keepEdit({ kind: 'insert-cell', cell, at });
+      announcement = `${label}; ${verdictWords()}`;
+      changed();
+      return cell.id;
+    },
+    remove(id) {
+      desk.finish();
+      const label = keepEdit({ kind: 'remove-cell', id });
+      if (chosen === id) chosen = null;
+      announcement = `${label}; ${verdictWords()}`;
+      changed();
+    },
+    move(id, by) {
+      desk.finish();
+      const to = kept.cells.findIndex((one) => one.id === id) + by;
+      if (to < 0 || to >= kept.cells.length) return false;
+      announcement = keepEdit({ kind: 'move-cell', id, to });
+      void fresh();
+      changed();
+      return true;
+    },
     finish() {
+      if (inPlace !== null) {
+        finishInPlace(inPlace);
+        changed();
+      }
       if (editing === null) return;
       const done = editing;
       const cell = givenOf(done.cell);
@@ -293,8 +338,9 @@ export function createDesk(first: Sheet): Desk {
       changed();
     },
     cancel() {
-      if (editing === null) return;
+      if (editing === null && inPlace === null) return;
       editing = null;
+      inPlace = null;
       show(kept);
       changed();
     },
@@ -341,7 +387,9 @@ const placeOf = ({ cell, code, case: id }: CellProblem) => `${cell} ${code} ${id
 const isChange = (cell: GivenCell, done: Editing, caseId: string) =>
   done.text !== done.before || done.forAll !== sharesValue(cell, caseId);
 
-const replaceCell = (sheet: Sheet, cell: GivenCell): Sheet => ({
+const hasFormula = ({ kind }: Cell) => kind === 'derived' || kind === 'criterion' || kind === 'sought';
+
+const replaceCell = (sheet: Sheet, cell: Cell): Sheet => ({
   ...sheet,
   cells: sheet.cells.map((one) => (one.id === cell.id ? cell : one)),
 });

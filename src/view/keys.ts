@@ -16,6 +16,11 @@ export type Command =
   | 'page-up'
   | 'page-down'
   | 'edit'
+  | 'edit-all'
+  | 'new-line'
+  | 'remove'
+  | 'move-up'
+  | 'move-down'
   | 'origin'
   | 'use'
   | 'back'
@@ -39,6 +44,11 @@ const bindings: readonly Binding[] = [
   { keys: ['PageUp'], command: 'page-up' },
   { keys: ['PageDown'], command: 'page-down' },
   { keys: ['Enter', 'F2'], command: 'edit' },
+  { keys: ['Shift+Enter'], command: 'edit-all' },
+  { keys: ['Mod+Enter'], command: 'new-line' },
+  { keys: ['Mod+Delete'], command: 'remove' },
+  { keys: ['Alt+ArrowUp'], command: 'move-up' },
+  { keys: ['Alt+ArrowDown'], command: 'move-down' },
   { keys: ['<'], command: 'origin' },
   { keys: ['>'], command: 'use' },
   { keys: ['Backspace'], command: 'back' },
@@ -49,8 +59,12 @@ const bindings: readonly Binding[] = [
 /** The list for the reader: keys, what they do. */
 export const keyList: readonly (readonly [keys: string, does: string])[] = [
   ['arrows, Home, End', 'move in the sheet'],
-  ['Enter or F2', 'type a value or a source; any character begins a new one'],
+  ['Enter or F2', 'type a value, a formula or a source; any character begins a new value'],
   ['Enter, Escape', 'while typing: keep it, take it back'],
+  ['Shift+Enter', 'everything of the line as a form'],
+  ['Ctrl+Enter', 'a new line at the foot of the section'],
+  ['Ctrl+Delete', 'remove the line'],
+  ['Alt+↑, Alt+↓', 'move the line up, down'],
   ['<', 'to the origin of the line'],
   ['>', 'to the use of the line'],
   ['Backspace', 'back to the line before'],
@@ -68,8 +82,7 @@ export interface KeyPress {
 const byKey = new Map(bindings.flatMap(({ keys, command }) => keys.map((key) => [key, command] as const)));
 
 export function commandOf(press: KeyPress): Command | undefined {
-  if (press.altKey) return undefined;
-  const mod = press.ctrlKey || press.metaKey ? 'Mod+' : '';
+  const mod = `${press.ctrlKey || press.metaKey ? 'Mod+' : ''}${press.altKey ? 'Alt+' : ''}`;
   const key = press.key.length === 1 ? press.key.toLowerCase() : press.key;
   // A sign needs no Shift of its own: where it stands on the keyboard is the keyboard's business.
   const shift = press.shiftKey && (mod !== '' || press.key.length > 1) ? 'Shift+' : '';

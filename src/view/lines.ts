@@ -10,20 +10,20 @@ import { prose, source } from './text.ts';
 type Other = Exclude<Line, { kind: 'step' }>;
 type Tab = (column: number) => 0 | -1;
 
-export function otherLine(line: Other, tab: Tab, problems: readonly CellProblem[]): TemplateResult {
+export function otherLine(line: Other, tab: Tab, problems: readonly CellProblem[], below: unknown): TemplateResult {
   const trouble = problems.map(
     (problem) =>
       html`<p class="problem ${problem.severity}"><b>${problem.severity === 'error' ? 'Error' : 'Warning'}</b>: ${problem.message}</p>`,
   );
   if (line.kind === 'heading') {
-    return html`<div role="gridcell" class="calculation whole" data-column="1" tabindex=${tab(1)}>${heading(line)}${trouble}</div>`;
+    return html`<div role="gridcell" class="calculation whole" data-column="1" tabindex=${tab(1)}>${heading(line)}${trouble}${below}</div>`;
   }
   const left =
     line.kind === 'note' && line.role !== undefined
       ? html`<span class="role">${roles[line.role]}</span> ${source(line.source)}`
       : source(line.source);
   return html`<div role="gridcell" class="source" data-column="0" tabindex=${tab(0)}>${left}</div>
-    <div role="gridcell" class="calculation across" data-column="1" tabindex=${tab(1)}>${body(line)}${notesOf(line).map((note) => html`<p class="remark">${note}</p>`)}${trouble}</div>`;
+    <div role="gridcell" class="calculation across" data-column="1" tabindex=${tab(1)}>${body(line)}${notesOf(line).map((note) => html`<p class="remark">${note}</p>`)}${trouble}${below}</div>`;
 }
 
 const roles = { assumption: 'Assumption', limit: 'Limit', caution: 'Caution' } as const;

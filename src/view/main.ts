@@ -3,11 +3,13 @@
 import '@fontsource-variable/atkinson-hyperlegible-next';
 import 'katex/dist/katex.min.css';
 import './page.css';
+import './edit/edit.css';
 import './sheet.css';
 import './print.css';
 import { readSheet } from '../sheet/index.ts';
 import { createDesk } from './desk.ts';
 import exampleText from './example.sheet.json?raw';
+import { loadEditing } from './in-place.ts';
 import { MathElement } from './math.ts';
 import { BarElement } from './outline.ts';
 import { PageElementRoot } from './page.ts';
@@ -27,3 +29,5 @@ const page = document.querySelector<PageElementRoot>('ts-page');
 if (page !== null) page.desk = createDesk(example.value);
 // All faces at once, so that nothing is asked of the network later, on the first formula that needs one.
 for (const face of document.fonts) void face.load();
+// The editing pieces come behind the first screen, before anybody can have reached a line.
+setTimeout(() => void loadEditing().catch(() => undefined));

@@ -18,6 +18,7 @@ import { outline } from './outline.ts';
 import type { PaperElement } from './paper.ts';
 import { preparePrint } from './print.ts';
 import type { RowElement } from './row.ts';
+import { alike, cellOf } from './share.ts';
 import { openPoints, originAndUse } from './side.ts';
 import { words } from './text.ts';
 import { countLines } from './waiting.ts';
@@ -45,6 +46,8 @@ export class PageElementRoot extends PageElement {
   #drawing = false;
   #leave: (() => void) | undefined;
   #watch: IntersectionObserver | undefined;
+  /** Sections under watch; one more or less begins it anew. */
+  #watched: readonly string[] = [];
   #width = matchMedia('(max-width: 70rem)');
 
   constructor() {
@@ -162,11 +165,14 @@ export class PageElementRoot extends PageElement {
     const { titleBlock, title, status } = desk.drawn;
     document.title = `${[titleBlock.documentNumber, title].filter(Boolean).join(' ')}, ${status}`;
     preparePrint(desk.drawn);
-    if (this.#watch === undefined) void this.#watchSections();
+    const sections = desk.drawn.lines.filter((line) => line.kind === 'heading' && line.level === 1).map(cellOf);
+    if (this.#watch === undefined || !alike(sections, this.#watched)) void this.#watchSections(sections);
   }
 
-  async #watchSections() {
+  async #watchSections(sections: readonly string[]) {
+    this.#watched = sections;
     await this.#paper?.updateComplete;
+    this.#watch?.disconnect();
     const seen = new Set<string>();
     this.#watch = new IntersectionObserver(
       (entries) => {

@@ -9,9 +9,10 @@ import { html, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
-import type { Desk } from './desk.ts';
+import type { Desk, InPlace, NewCell } from './desk.ts';
 import { PageElement } from './element.ts';
 import { foot, head, titleBlock } from './heads.ts';
+import { entryRow, hasFormula, loadEditing } from './in-place.ts';
 import { type Command, commandOf, isWriting } from './keys.ts';
 import { cellOf } from './share.ts';
 
@@ -50,6 +51,8 @@ export class PaperElement extends PageElement {
   declare foldable: boolean;
   #place: Place | null = null;
   #pressed: PlacedCell | null = null;
+  /** Sections whose new line is open, by key. */
+  readonly #entries = new Set<string>();
   #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
     all: noProblems,
     of: new Map(),
@@ -64,13 +67,14 @@ export class PaperElement extends PageElement {
     const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
     return html`${titleBlock(model)}${head(desk)}
       <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} @keydown=${this.#onKey} @focusin=${this.#onFocus}
-        @focusout=${this.#onLeave} @pointerdown=${this.#onPress} @click=${this.#onClick}>
+        @focusout=${this.#onLeave} @pointerdown=${this.#onPress} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel} @edit-all=${this.#onEditAll}>
         <div role="rowgroup" class="heads">${this.#columnHeads(heads)}</div>
         ${repeat(
           sections,
           (section) => section.key,
           (section) => html`<div role="rowgroup" class="section" id=${`section-${section.key}`} data-section=${section.key}>
             ${repeat(section.lines, cellOf, (line, index) => html`${this.#row(line, place)}${this.printing && index === 0 ? this.#columnHeads(heads) : nothing}`)}
+            ${this.printing ? nothing : this.#entryRow(section)}
           </div>`,
         )}
       </div>
@@ -102,12 +106,72 @@ export class PaperElement extends PageElement {
     const { desk } = this;
     const cell = cellOf(line);
     const editing = desk.editing?.cell === cell ? desk.editing : null;
+    const inPlace = desk.inPlace?.cell === cell ? desk.inPlace : null;
     const former = line.kind === 'step' && line.step.kind === 'given' ? formerText(desk, cell) : '';
     return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.drawn.cases}
       .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
-      .chosen=${desk.chosen === cell} .editing=${editing} .printing=${this.printing} .former=${former}
+      .chosen=${desk.chosen === cell} .editing=${editing} .inPlace=${inPlace} .printing=${this.printing} .former=${former}
       .beside=${desk.chosen === cell && !this.printing ? this.beside : null}
       .foldable=${this.foldable && desk.chosen === cell && !this.printing}></ts-row>`;
+  }
+
+  #entryRow({ key, lines }: Section) {
+    const [first] = lines;
+    const last = lines.at(-1);
+    return entryRow(this.desk, first?.kind === 'heading' ? first.text : '', this.#entries.has(key), {
+      begin: () => void this.#enter(key),
+      entry: ({ draft }) => void this.#insert(key, draft, last === undefined ? null : cellOf(last)),
+      leave: () => {
+        this.#entries.delete(key);
+        this.#focus(this.#place?.cell ?? (last === undefined ? '' : cellOf(last)), this.#place?.column ?? 1);
+        this.requestUpdate();
+      },
+    });
+  }
+
+  /** Opens the new line of a section and puts the focus into it. */
+  async #enter(key: string) {
+    await loadEditing();
+    this.#entries.add(key);
+    this.requestUpdate();
+    await this.updateComplete;
+    const line = this.#sectionOf(key)?.querySelector<HTMLElement & { updateComplete?: Promise<unknown> }>('ts-entry-line');
+    await line?.updateComplete;
+    line?.scrollIntoView({ block: 'nearest' });
+    line?.focus();
+  }
+
+  async #insert(key: string, draft: NewCell, after: string | null) {
+    const id = this.desk.insert(draft, after);
+    await this.#drawn();
+    // What follows a new section belongs to it.
+    if (this.#sectionOf(id) !== null) {
+      this.#entries.delete(key);
+      await this.#enter(id);
+    }
+    this.#rowOf(id)?.parentElement?.querySelector('ts-entry-line')?.scrollIntoView({ block: 'nearest' });
+  }
+
+  #sectionOf(key: string): HTMLElement | null {
+    return this.querySelector(`[data-section="${CSS.escape(key)}"]`);
+  }
+
+  /** What the desk has now stands on the paper. */
+  async #drawn() {
+    await (this.closest('ts-page') as PageElement | null)?.updateComplete;
+    await this.updateComplete;
+  }
+
+  #onEditAll = (event: Event) => {
+    const at = this.#cellAt(event.target);
+    if (at !== null) void this.#inPlace(at.cell, 'fields');
+  };
+
+  async #move(at: Place, step: -1 | 1) {
+    if (!this.desk.move(at.cell, step)) return;
+    await this.#drawn();
+    this.#focus(at.cell, at.column);
+    this.#rowOf(at.cell)?.scrollIntoView({ block: 'nearest' });
   }
 
   #sortProblems() {
@@ -169,7 +233,13 @@ export class PaperElement extends PageElement {
   };
 
   #onLeave = (event: FocusEvent) => {
-    const { editing } = this.desk;
+    const { editing, inPlace } = this.desk;
+    if (inPlace !== null) {
+      const to = event.relatedTarget;
+      // A click beside the fields of the line takes the focus nowhere, and ends nothing.
+      if (!inPlace.unreadable && to instanceof Node && !this.#rowOf(inPlace.cell)?.contains(to)) this.desk.finish();
+      return;
+    }
     if (editing === null) return;
     const row = this.#rowOf(editing.cell);
     const to = event.relatedTarget;
@@ -187,16 +257,47 @@ export class PaperElement extends PageElement {
     // A press makes its row the chosen one, and the row may grow before the pointer is lifted: what was pressed counts.
     const at = this.#pressed !== null && this.#pressed.row === hit?.row ? this.#pressed : hit;
     if (at === null || isField(event.target) || (event.target as Element).closest('a, button, label')) return;
-    if (!isWritable(at.element)) return;
+    const target = event.target as Element;
+    if (target.closest('.in-place')) return;
+    const onFormula = target.closest('.formula') !== null && this.#formulaAt(at.cell);
+    if (!onFormula && !isWritable(at.element)) return;
     // Text that is being selected is being read, not typed into.
     if (getSelection()?.isCollapsed === false) return;
-    this.#edit(at);
+    if (onFormula) void this.#inPlace(at.cell, 'formula');
+    else this.#edit(at);
   };
 
   #edit(at: Place & { readonly element: HTMLElement }, text?: string) {
     const field = at.column === 0 ? 'source' : 'value';
     const caseIndex = at.column >= 2 ? at.column - 2 : this.desk.reading;
     if (isWritable(at.element)) this.desk.begin(at.cell, field, caseIndex, text);
+  }
+
+  #formulaAt(cell: string) {
+    const found = this.desk.kept.cells.find((one) => one.id === cell);
+    return found !== undefined && hasFormula(found);
+  }
+
+  async #inPlace(cell: string, what: InPlace['what']) {
+    await loadEditing();
+    this.desk.beginInPlace(cell, what);
+  }
+
+  #onCommit = () => {
+    const place = this.desk.inPlace;
+    if (place === null || place.unreadable) return;
+    this.#backTo(place.cell);
+    this.desk.finish();
+  };
+  #onCancel = () => {
+    const place = this.desk.inPlace;
+    if (place === null) return;
+    this.desk.cancel();
+    this.#backTo(place.cell);
+  };
+  /** The cell takes the focus before the piece goes, so that it is never lost. */
+  #backTo(cell: string) {
+    this.#focus(cell, this.#place?.column ?? 1);
   }
 
   async #stop(keep: boolean) {
@@ -216,6 +317,7 @@ export class PaperElement extends PageElement {
   #onKey = (event: KeyboardEvent) => {
     const at = this.#cellAt(event.target);
     if (at === null || event.isComposing) return;
+    if (this.desk.inPlace !== null && event.target !== at.element) return;
     if (this.desk.editing !== null && event.target instanceof HTMLElement && event.target !== at.element) {
       if (event.key === 'Enter' && !(event.target instanceof HTMLTextAreaElement && event.shiftKey)) {
         if (event.target instanceof HTMLButtonElement) return;
@@ -289,7 +391,26 @@ export class PaperElement extends PageElement {
         toRow(index() + pageStep);
         return true;
       case 'edit':
-        this.#edit(at);
+        if (isWritable(at.element)) this.#edit(at);
+        else void this.#inPlace(at.cell, this.#formulaAt(at.cell) ? 'formula' : 'fields');
+        return true;
+      case 'edit-all':
+        void this.#inPlace(at.cell, 'fields');
+        return true;
+      case 'new-line':
+        void this.#enter(at.row.parentElement?.dataset['section'] ?? '');
+        return true;
+      case 'remove': {
+        const all = rows();
+        const next = all[index() + 1] ?? all[index() - 1];
+        // The neighbour takes the focus before the row goes, so that it is never lost.
+        if (next !== undefined) this.#focus(next.dataset['cell'] ?? '', at.column);
+        this.desk.remove(at.cell);
+        return true;
+      }
+      case 'move-up':
+      case 'move-down':
+        void this.#move(at, command === 'move-up' ? -1 : 1);
         return true;
       case 'origin':
       case 'use':
@@ -320,5 +441,6 @@ function sectionsOf(lines: readonly Line[]): readonly Section[] {
     if (last === undefined || (line.kind === 'heading' && line.level === 1)) sections.push({ key: cellOf(line), lines: [line] });
     else last.lines.push(line);
   }
-  return sections;
+  // A sheet without a line still has a place where the first one is typed.
+  return sections.length === 0 ? [{ key: '', lines: [] }] : sections;
 }

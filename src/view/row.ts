@@ -8,11 +8,12 @@
 import { html, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { Line, RecordCase, Step, StepCase } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
-import type { Desk, Editing } from './desk.ts';
+import type { Desk, Editing, InPlace } from './desk.ts';
 import { choicesOf, editorField, editorNotes, focusField, sourceEditor } from './editor.ts';
 import { PageElement } from './element.ts';
 import { equation } from './equation.ts';
 import { heldValue } from './given.ts';
+import { fieldsInPlace, focusInPlace, formulaInPlace } from './in-place.ts';
 import { otherLine } from './lines.ts';
 import { quantity, source } from './text.ts';
 import { waits } from './waiting.ts';
@@ -27,6 +28,7 @@ export class RowElement extends PageElement {
     column: { attribute: false },
     chosen: { attribute: false },
     editing: { attribute: false },
+    inPlace: { attribute: false },
     printing: { attribute: false },
     former: { attribute: false },
     beside: { attribute: false },
@@ -41,6 +43,7 @@ export class RowElement extends PageElement {
   declare column: number;
   declare chosen: boolean;
   declare editing: Editing | null;
+  declare inPlace: InPlace | null;
   declare printing: boolean;
   /** A source that stood beside the number before the last one, and could be kept. */
   declare former: string;
@@ -50,7 +53,8 @@ export class RowElement extends PageElement {
 
   protected override render() {
     const { line } = this;
-    if (line.kind !== 'step') return otherLine(line, (column) => (this.column === column ? 0 : -1), this.problems);
+    if (line.kind !== 'step')
+      return otherLine(line, (column) => (this.column === column ? 0 : -1), this.problems, html`${this.#toAll()}${this.#all()}`);
     return this.#step(line.step);
   }
 
@@ -60,6 +64,26 @@ export class RowElement extends PageElement {
     this.className = `row ${line.kind}${choices ? ' choices' : ''}${line.kind === 'step' ? ` ${line.step.kind}` : ''}${chosen ? ' chosen' : ''}`;
     if (line.kind === 'step') this.setAttribute('aria-selected', String(chosen));
     if (changed.has('editing') && this.editing !== null && changed.get('editing')?.field !== this.editing.field) focusField(this);
+    if (changed.has('inPlace') && this.inPlace !== null && changed.get('inPlace')?.what !== this.inPlace.what)
+      void focusInPlace(this);
+  }
+
+  /** All of the line as a form, where it is edited so. */
+  #all() {
+    const { inPlace } = this;
+    return inPlace?.what === 'fields'
+      ? html`<div class="below">${fieldsInPlace(this.desk, inPlace)}${this.#brought()}</div>`
+      : nothing;
+  }
+
+  #toAll() {
+    if (!this.chosen || this.printing || this.inPlace !== null || this.editing !== null) return nothing;
+    const open = () => this.dispatchEvent(new CustomEvent('edit-all', { bubbles: true }));
+    return html`<button type="button" class="word edit-all" title="Everything of the line as a form: Shift+Enter" @click=${open}>Edit all</button>`;
+  }
+
+  #brought() {
+    return this.inPlace?.problems.slice(0, 1).map((problem) => problemNote(problem, this.cases)) ?? nothing;
   }
 
   #tab(column: number) {
@@ -82,13 +106,14 @@ export class RowElement extends PageElement {
         ${state.filter((note) => !isLong(note)).map(tag)}
       </div>
       <div role="gridcell" class="calculation ${choices === undefined ? '' : 'across'}" data-column="1" tabindex=${this.#tab(1)}
-        aria-readonly=${choices === undefined ? 'true' : nothing}>
-        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}${this.foldable ? this.#fold() : nothing}</div>
+        aria-readonly=${choices === undefined && step.kind === 'given' ? 'true' : nothing}>
+        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}${this.foldable ? this.#fold() : nothing}${this.#toAll()}</div>
         <div class="formula">
-          ${equation(step, this.reading, this.cases, this.printing)}
+          ${this.inPlace?.what === 'formula' ? html`${formulaInPlace(this.desk, this.inPlace)}${this.#brought()}` : equation(step, this.reading, this.cases, this.printing)}
           ${choices === undefined ? nothing : this.#choice(step, editingValue, choices)}
         </div>
         ${this.#below(step, remarks, editingValue)}
+        ${this.#all()}
       </div>
       ${choices === undefined ? step.cases.map((each, index) => this.#result(step, each, index, editingValue)) : nothing}
     `;
@@ -125,7 +150,7 @@ export class RowElement extends PageElement {
   }
 
   #below(step: Step, remarks: readonly string[], editing: Editing | null) {
-    const problems = editing === null ? this.problems : [];
+    const problems = editing === null && this.inPlace === null ? this.problems : [];
     const texts = [
       ...remarks.map((note) => html`<p class="remark">${note}</p>`),
       ...(step.justification === undefined ? [] : [html`<p class="remark">Justification: ${step.justification}</p>`]),

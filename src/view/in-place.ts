@@ -1,0 +1,83 @@
+// What is edited where it stands on the paper: the formula of a line, all of a line as a form, the new line at the foot of a section.
+//
+// 1. The editing pieces arrive after the first screen stands; nothing is mounted before they are there.
+// 2. Every draft and every kept line goes through the desk.
+// Not here: the pieces themselves (edit/), values and sources (editor.ts), which line is edited (desk.ts).
+
+import { html, nothing, type TemplateResult } from 'lit';
+import type { Cell } from '../sheet/index.ts';
+import type { Desk, InPlace } from './desk.ts';
+import type { CellDetail, EntryDetail, FormulaDetail } from './edit/index.ts';
+
+let loading: Promise<void> | undefined;
+
+/** Resolves when the editing pieces are defined. */
+export function loadEditing(): Promise<void> {
+  // With the editor of formulas, so that nothing is asked of the network when typing begins.
+  loading ??= Promise.all([import('./edit/index.ts'), import('./edit/code-mirror.ts')]).then(
+    ([{ defineEditing }]) => defineEditing(),
+    (fault) => {
+      // Tried again with the next line that is edited.
+      loading = undefined;
+      throw fault;
+    },
+  );
+  return loading;
+}
+
+type FormulaCell = Extract<Cell, { kind: 'derived' | 'criterion' | 'sought' }>;
+const forms = { derived: 'formula', criterion: 'comparison', sought: 'equation' } as const;
+
+export const hasFormula = (cell: { readonly kind: string }): cell is FormulaCell =>
+  cell.kind === 'derived' || cell.kind === 'criterion' || cell.kind === 'sought';
+
+function textOf(cell: FormulaCell): string {
+  if (cell.kind === 'derived') return cell.formula;
+  return cell.kind === 'sought' ? cell.where : `${cell.left} ${cell.relation} ${cell.right}`;
+}
+
+/** The cell as last kept: the text of before, while the shown sheet has the draft. */
+const keptCell = (desk: Desk, id: string) => desk.kept.cells.find((one) => one.id === id);
+
+export function formulaInPlace(desk: Desk, place: InPlace): TemplateResult | typeof nothing {
+  const cell = keptCell(desk, place.cell);
+  if (cell === undefined || !hasFormula(cell)) return nothing;
+  const name = cell.kind === 'criterion' ? '' : cell.name;
+  const draft = ({ detail }: CustomEvent<FormulaDetail>) =>
+    desk.draftInPlace(detail.keys === undefined ? null : ({ ...cell, ...detail.keys } as Cell));
+  return html`<ts-formula-editor class="in-place" .calculation=${desk.calculation} .form=${forms[cell.kind]} .text=${textOf(cell)} .name=${name}
+    .unit=${cell.unit ?? ''} .cell=${cell.id} .reading=${desk.reading} .label=${`Formula of ${name === '' ? (cell.title ?? 'the criterion') : name}`}
+    @draft=${draft}></ts-formula-editor>`;
+}
+
+export function fieldsInPlace(desk: Desk, place: InPlace): TemplateResult | typeof nothing {
+  const cell = keptCell(desk, place.cell);
+  if (cell === undefined) return nothing;
+  const draft = ({ detail }: CustomEvent<CellDetail>) => desk.draftInPlace(detail.cell, detail.renamed);
+  return html`<ts-cell-fields class="in-place" .calculation=${desk.calculation} .cell=${cell} @draft=${draft}></ts-cell-fields>`;
+}
+
+/** The focus into what is edited in this row. */
+export async function focusInPlace(row: HTMLElement) {
+  const piece = row.querySelector<HTMLElement & { updateComplete?: Promise<unknown>; focusOn?(): void }>('.in-place');
+  await piece?.updateComplete;
+  if (piece?.focusOn !== undefined) piece.focusOn();
+  else piece?.focus();
+}
+
+/** The foot of a section: a word until somebody wants the line, then the line. */
+export function entryRow(
+  desk: Desk,
+  title: string,
+  open: boolean,
+  heard: { begin(): void; entry(detail: EntryDetail): void; leave(): void },
+): TemplateResult {
+  const label = title === '' ? 'New line' : `New line in ${title}`;
+  return html`<div role="row" class="row entry"><div role="gridcell" class="source"></div>
+    <div role="gridcell" class="calculation across">${
+      open
+        ? html`<ts-entry-line .calculation=${desk.calculation} .label=${label} @cancel=${heard.leave}
+            @entry=${(event: CustomEvent<EntryDetail>) => heard.entry(event.detail)}></ts-entry-line>`
+        : html`<button type="button" class="word" aria-label=${label} @click=${heard.begin}>New line</button>`
+    }</div></div>`;
+}
