@@ -15,7 +15,7 @@ import type { Problem } from '../quantity/index.ts';
 import { analyse } from './analyse.ts';
 import { analyseEquation } from './analyse-sought.ts';
 import { casesOf } from './cases.ts';
-import type { LoadCase, Sheet } from './document.ts';
+import type { Cell, LoadCase, Sheet } from './document.ts';
 import { type Node, typeKey } from './node.ts';
 import { type DecimalSign, readCell } from './reading.ts';
 import { Runner } from './runner.ts';
@@ -98,35 +98,28 @@ class Engine implements Calculation {
   }
 
   update(next: Sheet): Changed {
-    const { nodes } = this.shape;
     const decimalSign = next.settings?.decimalSign ?? '.';
     const cases = casesOf(next);
     const sameReading =
       decimalSign === this.style.decimalSign &&
       cases.length === this.cases.length &&
       cases.every((one, index) => one.id === this.cases[index]!.id);
-    const sameRows =
-      sameReading && next.cells.length === nodes.length && next.cells.every((cell, index) => cell.id === nodes[index]!.cell.id);
+    const changed = sameReading ? changedRows(this.sheet.cells, next.cells) : undefined;
+    const sameRows = changed !== undefined;
     this.sheet = next;
     this.cases = cases;
     this.style = { decimalSign };
     this.listed = undefined;
     this.runner.begin();
-    if (!(sameRows && this.updateNumbers(next))) this.updateShape(next, sameReading, sameRows);
+    if (!(sameRows && this.updateNumbers(next, changed))) this.updateShape(next, sameReading, sameRows);
     return this.changed();
   }
 
   /** True when every change was one of numbers, titles or sources; false leaves the rest to updateShape. */
-  private updateNumbers(next: Sheet): boolean {
+  private updateNumbers(next: Sheet, changed: readonly number[]): boolean {
     const { nodes, graph } = this.shape;
-    const touched: Node[] = [];
-    for (let index = 0; index < nodes.length; index += 1) {
-      const node = nodes[index]!;
-      const cell = next.cells[index]!;
-      if (cell === node.cell) continue;
-      if (!sameMeaningBesidesNumbers(node.cell, cell)) return false;
-      touched.push(node);
-    }
+    const touched = changed.map((index) => nodes[index]!);
+    if (!touched.every((node) => sameMeaningBesidesNumbers(node.cell, next.cells[node.index]!))) return false;
     const keys: string[] = [];
     for (const node of touched) {
       const cell = next.cells[node.index]!;
@@ -322,6 +315,18 @@ class Engine implements Calculation {
       lookup: (index) => this.lookups[index]!,
     };
   }
+}
+
+/** Rows whose cell is another object than before; undefined where rows came, went or moved. Looks at no cell that stayed. */
+function changedRows(before: readonly Cell[], after: readonly Cell[]): readonly number[] | undefined {
+  if (before.length !== after.length) return undefined;
+  const changed: number[] = [];
+  for (let index = 0; index < after.length; index += 1) {
+    if (after[index] === before[index]) continue;
+    if (after[index]!.id !== before[index]!.id) return undefined;
+    changed.push(index);
+  }
+  return changed;
 }
 
 const noSolver: Problem = {
