@@ -30,4 +30,9 @@ if (page !== null) page.desk = createDesk(example.value);
 // All faces at once, so that nothing is asked of the network later, on the first formula that needs one.
 for (const face of document.fonts) void face.load();
 // The editing pieces come behind the first screen, before anybody can have reached a line.
-setTimeout(() => void loadEditing().catch(() => undefined));
+requestAnimationFrame(() =>
+  setTimeout(() => {
+    performance.mark('first screen');
+    void loadEditing().catch(() => undefined);
+  }),
+);
