@@ -85,6 +85,8 @@ export default defineConfig(({ mode }) => ({
           fileParallelism: false,
           testTimeout: 60_000,
           hookTimeout: 120_000,
+          // A state is waited for as long as a busy machine may need; what is waited for is as strict as ever.
+          expect: { poll: { timeout: 15_000 } },
         },
       },
     ],
