@@ -43,6 +43,8 @@ export interface Shelf {
   list(search?: string): Promise<readonly SheetHead[]>;
   /** Puts a sheet on the shelf as it is. */
   add(sheet: Sheet): Promise<SheetHead>;
+  /** Puts down a sheet that comes with the page: nothing of the user's own is kept by that. Throws where the id is taken. */
+  place(id: string, sheet: Sheet): Promise<SheetHead>;
   newFromTemplate(template: Sheet, fingerprint?: string): Promise<SheetHead>;
   /** For a similar job: givens carried over, what belongs to the old job left behind. */
   newFromSheet(id: string, fingerprint?: string): Promise<SheetHead>;
@@ -161,6 +163,12 @@ export function openShelf(store: Store): Shelf {
       return found.sort((one, other) => other.changed - one.changed || (one.id < other.id ? -1 : 1));
     },
     add: (sheet) => put(sheet),
+    async place(id, sheet) {
+      const row = newRow(sheet, { id });
+      await backend.create(row);
+      tell();
+      return row.head;
+    },
     newFromTemplate: (template, fingerprint) => put(newFromTemplate(template, fingerprint)),
     newFromSheet: async (id, fingerprint) => put(newFromSheet(await sheetOf(id), fingerprint)),
     async copy(id) {

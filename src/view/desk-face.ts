@@ -3,7 +3,7 @@
 // Not here: how it does so (desk.ts).
 
 import type { RecordModel } from '../record/index.ts';
-import type { Basis, Calculation, Cell, CellProblem, Sheet } from '../sheet/index.ts';
+import type { Basis, Calculation, Cell, CellProblem, History, Sheet } from '../sheet/index.ts';
 import type { Provenance } from './given.ts';
 
 export type Field = 'value' | 'source';
@@ -30,6 +30,10 @@ type WithoutId<C> = C extends Cell ? Omit<C, 'id'> : never;
 export interface InPlace {
   readonly cell: string;
   readonly what: 'formula' | 'fields';
+  /** The formula as typed, readable or not; undefined until something is typed. */
+  readonly text: string | undefined;
+  /** What stood in the field when the page was left, taken up again: begins with this instead of the kept cell. */
+  readonly resumed: Typed | undefined;
   /** The cell as typed; null until something is typed. */
   readonly draft: Cell | null;
   /** True where what is typed is no cell yet: it cannot be kept. */
@@ -37,6 +41,26 @@ export interface InPlace {
   readonly renamed: Renamed | undefined;
   /** Errors that the draft would bring into other lines. */
   readonly problems: readonly CellProblem[];
+}
+
+/** What is being typed and is no part of the sheet yet: plain JSON, kept so that nothing typed is lost with the page. */
+export type Typed =
+  | {
+      readonly kind: 'value';
+      readonly cell: string;
+      readonly field: Field;
+      readonly at: number;
+      readonly forAll: boolean;
+      readonly text: string;
+    }
+  | { readonly kind: 'formula'; readonly cell: string; readonly text: string }
+  | { readonly kind: 'fields'; readonly cell: string; readonly draft: Cell }
+  | NewLine;
+/** The new line at the foot of a section, by the key of the section. */
+export interface NewLine {
+  readonly kind: 'new';
+  readonly section: string;
+  readonly text: string;
 }
 
 export interface Desk {
@@ -57,10 +81,25 @@ export interface Desk {
   readonly redoLabel: string | null;
   /** True where there are changes that no file has. */
   readonly unsaved: boolean;
+  readonly history: History;
+  /** What is being typed, to be kept beside the sheet; null when nothing is. */
+  readonly typed: Typed | null;
+  readonly newLine: NewLine | null;
+  /** Why nothing can be written here now; null where it can. */
+  readonly locked: string | null;
   /** What happened last, in words, for those who do not see it. */
   readonly announcement: string;
   subscribe(listener: () => void): () => void;
-  open(sheet: Sheet): void;
+  open(sheet: Sheet, history?: History): void;
+  /** Shows the sheet as another tab has made it; the chosen line stays. */
+  follow(sheet: Sheet, history?: History): void;
+  /** Nothing can be written, and every attempt says why; null: it can again. */
+  lock(why: string | null): void;
+  /** Goes on with what was being typed. False where its place is gone. */
+  resume(typed: Typed): boolean;
+  /** What stands in the new line of a section. */
+  typeNew(section: string, text: string): void;
+  tell(words: string): void;
   choose(cell: string | null): void;
   read(caseIndex: number): void;
   /** Begins typing. `text` replaces what stands there. False where the cell cannot be typed into. */
@@ -70,7 +109,7 @@ export interface Desk {
   /** Begins to edit a line in its place. False where it has nothing of the kind. */
   beginInPlace(cell: string, what: InPlace['what']): boolean;
   /** Null: what is typed is no cell yet. */
-  draftInPlace(cell: Cell | null, renamed?: Renamed): void;
+  draftInPlace(cell: Cell | null, renamed?: Renamed, text?: string): void;
   /** Puts a new cell behind another, null: at the beginning; its id. */
   insert(cell: NewCell, after: string | null): string;
   remove(cell: string): void;

@@ -27,7 +27,7 @@ import {
   undo,
 } from '../sheet/index.ts';
 import { solver } from '../study/index.ts';
-import type { Desk, Editing, InPlace } from './desk-face.ts';
+import type { Desk, Editing, InPlace, NewLine, Typed } from './desk-face.ts';
 import {
   heldValue,
   type Provenance,
@@ -41,26 +41,35 @@ import {
 import { alike, shareModel } from './share.ts';
 import { countLines, waits } from './waiting.ts';
 
-export type { Desk, Editing, InPlace, NewCell } from './desk-face.ts';
+export type { Desk, Editing, InPlace, NewCell, NewLine, Typed } from './desk-face.ts';
 
-export function createDesk(first: Sheet): Desk {
+export function createDesk(first: Sheet, firstHistory: History = emptyHistory): Desk {
   const listeners = new Set<() => void>();
   let kept = first;
   let shown = first;
   let calculation = calculate(first, solver);
   let drawn = makeRecord(calculation);
   let stale = false;
-  let history: History = emptyHistory;
+  let history: History = firstHistory;
   let chosen: string | null = null;
   let reading = 0;
   let editing: Editing | null = null;
   let inPlace: InPlace | null = null;
+  let newLine: NewLine | null = null;
+  let locked: string | null = null;
   let savedSheet = first;
   let announcement = '';
   const former = new Map<string, Provenance>();
 
   const changed = () => {
     for (const listener of listeners) listener();
+  };
+  /** True where nothing may be written, and says so. */
+  const refused = () => {
+    if (locked === null) return false;
+    announcement = locked;
+    changed();
+    return true;
   };
   const fresh = () => {
     if (!stale) return drawn;
@@ -80,6 +89,7 @@ export function createDesk(first: Sheet): Desk {
     return cell?.kind === 'given' ? cell : undefined;
   };
   const keepEdit = (edit: Edit, label?: string) => {
+    if (locked !== null) return locked;
     const done = perform(kept, history, edit, label === undefined ? {} : { label });
     kept = done.sheet;
     history = done.history;
@@ -156,7 +166,7 @@ export function createDesk(first: Sheet): Desk {
   };
 
   const step = (done: ReturnType<typeof undo>, word: string) => {
-    if (done === undefined) return;
+    if (done === undefined || refused()) return;
     editing = null;
     inPlace = null;
     kept = done.sheet;
@@ -203,6 +213,26 @@ export function createDesk(first: Sheet): Desk {
     get unsaved() {
       return kept !== savedSheet;
     },
+    get history() {
+      return history;
+    },
+    get typed(): Typed | null {
+      if (editing !== null && editing.text !== editing.before) {
+        const { cell, field, at, forAll, text } = editing;
+        return { kind: 'value', cell, field, at, forAll, text };
+      }
+      if (inPlace?.what === 'formula' && inPlace.text !== undefined)
+        return { kind: 'formula', cell: inPlace.cell, text: inPlace.text };
+      if (inPlace?.what === 'fields' && inPlace.draft !== null)
+        return { kind: 'fields', cell: inPlace.cell, draft: inPlace.draft };
+      return newLine === null || newLine.text === '' ? null : newLine;
+    },
+    get newLine() {
+      return newLine;
+    },
+    get locked() {
+      return locked;
+    },
     get announcement() {
       return announcement;
     },
@@ -210,20 +240,65 @@ export function createDesk(first: Sheet): Desk {
       listeners.add(listener);
       return () => listeners.delete(listener);
     },
-    open(sheet) {
+    open(sheet, itsHistory = emptyHistory) {
       kept = sheet;
       shown = sheet;
       savedSheet = sheet;
       calculation = calculate(sheet, solver);
       drawn = makeRecord(calculation);
       stale = false;
-      history = emptyHistory;
+      history = itsHistory;
       chosen = null;
       reading = 0;
       editing = null;
       inPlace = null;
+      newLine = null;
       former.clear();
       announcement = `opened ${sheet.title}; ${verdictWords()}`;
+      changed();
+    },
+    follow(sheet, itsHistory = emptyHistory) {
+      editing = null;
+      inPlace = null;
+      kept = sheet;
+      history = itsHistory;
+      show(sheet);
+      if (chosen !== null && !sheet.cells.some((cell) => cell.id === chosen)) chosen = null;
+      changed();
+    },
+    lock(why) {
+      locked = why;
+      if (why !== null) {
+        editing = null;
+        inPlace = null;
+        show(kept);
+      }
+      changed();
+    },
+    resume(typed) {
+      if (typed.kind === 'new') {
+        newLine = typed;
+        changed();
+        return true;
+      }
+      if (typed.kind === 'value') {
+        if (!desk.begin(typed.cell, typed.field, typed.at, typed.text)) return false;
+        desk.setForAll(typed.forAll);
+        return true;
+      }
+      if (!desk.beginInPlace(typed.cell, typed.kind) || inPlace === null) return false;
+      inPlace = { ...inPlace, resumed: typed };
+      if (typed.kind === 'fields') desk.draftInPlace(typed.draft);
+      else changed();
+      return true;
+    },
+    typeNew(section, text) {
+      if (newLine?.section === section && newLine.text === text) return;
+      newLine = { kind: 'new', section, text };
+      changed();
+    },
+    tell(words) {
+      announcement = words;
       changed();
     },
     choose(cell) {
@@ -238,6 +313,7 @@ export function createDesk(first: Sheet): Desk {
       changed();
     },
     begin(id, field, caseIndex, text) {
+      if (refused()) return false;
       desk.finish();
       const cell = givenOf(id);
       if (cell === undefined) return false;
@@ -259,16 +335,27 @@ export function createDesk(first: Sheet): Desk {
       changed();
     },
     beginInPlace(id, what) {
+      if (refused()) return false;
       desk.finish();
       const cell = kept.cells.find((one) => one.id === id);
       if (cell === undefined || (what === 'formula' && !hasFormula(cell))) return false;
       chosen = id;
-      inPlace = { cell: id, what, draft: null, unreadable: false, renamed: undefined, problems: [] };
+      inPlace = {
+        cell: id,
+        what,
+        text: undefined,
+        resumed: undefined,
+        draft: null,
+        unreadable: false,
+        renamed: undefined,
+        problems: [],
+      };
       changed();
       return true;
     },
-    draftInPlace(cell, renamed) {
+    draftInPlace(cell, renamed, text) {
       if (inPlace === null) return;
+      if (text !== undefined) inPlace = { ...inPlace, text };
       if (cell === null) {
         inPlace = { ...inPlace, draft: null, unreadable: true, problems: [] };
         changed();
@@ -292,6 +379,7 @@ export function createDesk(first: Sheet): Desk {
       changed();
     },
     insert(draft, after) {
+      if (refused()) return '';
       desk.finish();
       const cell = { ...draft, id: newCellId(kept, draft.kind) } as Cell;
       const at = after === null ? 0 : kept.cells.findIndex((one) => one.id === after) + 1;
@@ -301,6 +389,7 @@ export function createDesk(first: Sheet): Desk {
       return cell.id;
     },
     remove(id) {
+      if (refused()) return;
       desk.finish();
       const label = keepEdit({ kind: 'remove-cell', id });
       if (chosen === id) chosen = null;
@@ -308,6 +397,7 @@ export function createDesk(first: Sheet): Desk {
       changed();
     },
     move(id, by) {
+      if (refused()) return false;
       desk.finish();
       const to = kept.cells.findIndex((one) => one.id === id) + by;
       if (to < 0 || to >= kept.cells.length) return false;
@@ -346,7 +436,7 @@ export function createDesk(first: Sheet): Desk {
     },
     confirm(id) {
       const cell = givenOf(id);
-      if (cell?.carriedOver === undefined) return;
+      if (cell?.carriedOver === undefined || refused()) return;
       const { carriedOver: _, ...rest } = cell;
       keep(rest, `confirmation of ${cell.name}`);
       announcement = `${cell.name} is confirmed`;
@@ -354,7 +444,7 @@ export function createDesk(first: Sheet): Desk {
     },
     setBasis(id, basis) {
       const cell = givenOf(id);
-      if (cell === undefined) return;
+      if (cell === undefined || refused()) return;
       keep(withBasis(cell, basis));
       changed();
     },
@@ -365,7 +455,7 @@ export function createDesk(first: Sheet): Desk {
     restoreProvenance(id) {
       const cell = givenOf(id);
       const before = former.get(id);
-      if (cell === undefined || before === undefined) return;
+      if (cell === undefined || before === undefined || refused()) return;
       former.delete(id);
       keep({ ...cell, ...before }, `source of ${cell.name}`);
       announcement = `source of ${cell.name} kept`;

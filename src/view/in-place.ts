@@ -44,8 +44,8 @@ export function formulaInPlace(desk: Desk, place: InPlace): TemplateResult | typ
   if (cell === undefined || !hasFormula(cell)) return nothing;
   const name = cell.kind === 'criterion' ? '' : cell.name;
   const draft = ({ detail }: CustomEvent<FormulaDetail>) =>
-    desk.draftInPlace(detail.keys === undefined ? null : ({ ...cell, ...detail.keys } as Cell));
-  return html`<ts-formula-editor class="in-place" .calculation=${desk.calculation} .form=${forms[cell.kind]} .text=${textOf(cell)} .name=${name}
+    desk.draftInPlace(detail.keys === undefined ? null : ({ ...cell, ...detail.keys } as Cell), undefined, detail.text);
+  return html`<ts-formula-editor class="in-place" .calculation=${desk.calculation} .form=${forms[cell.kind]} .text=${place.resumed?.kind === 'formula' ? place.resumed.text : textOf(cell)} .name=${name}
     .unit=${cell.unit ?? ''} .cell=${cell.id} .reading=${desk.reading} .label=${`Formula of ${name === '' ? (cell.title ?? 'the criterion') : name}`}
     @draft=${draft}></ts-formula-editor>`;
 }
@@ -54,7 +54,8 @@ export function fieldsInPlace(desk: Desk, place: InPlace): TemplateResult | type
   const cell = keptCell(desk, place.cell);
   if (cell === undefined) return nothing;
   const draft = ({ detail }: CustomEvent<CellDetail>) => desk.draftInPlace(detail.cell, detail.renamed);
-  return html`<ts-cell-fields class="in-place" .calculation=${desk.calculation} .cell=${cell} @draft=${draft}></ts-cell-fields>`;
+  const begun = place.resumed?.kind === 'fields' ? place.resumed.draft : cell;
+  return html`<ts-cell-fields class="in-place" .calculation=${desk.calculation} .cell=${begun} @draft=${draft}></ts-cell-fields>`;
 }
 
 /** The focus into what is edited in this row. */
@@ -70,13 +71,15 @@ export function entryRow(
   desk: Desk,
   title: string,
   open: boolean,
+  section: string,
   heard: { begin(): void; entry(detail: EntryDetail): void; leave(): void },
 ): TemplateResult {
   const label = title === '' ? 'New line' : `New line in ${title}`;
   return html`<div role="row" class="row entry"><div role="gridcell" class="source"></div>
     <div role="gridcell" class="calculation across">${
       open
-        ? html`<ts-entry-line .calculation=${desk.calculation} .label=${label} @cancel=${heard.leave}
+        ? html`<ts-entry-line .calculation=${desk.calculation} .label=${label} .text=${desk.newLine?.section === section ? desk.newLine.text : ''} @cancel=${heard.leave}
+            @entry-draft=${(event: CustomEvent<string>) => desk.typeNew(section, event.detail)}
             @entry=${(event: CustomEvent<EntryDetail>) => heard.entry(event.detail)}></ts-entry-line>`
         : html`<button type="button" class="word" aria-label=${label} @click=${heard.begin}>New line</button>`
     }</div></div>`;

@@ -7,7 +7,6 @@ import './edit/edit.css';
 import './sheet.css';
 import './print.css';
 import { readSheet } from '../sheet/index.ts';
-import { createDesk } from './desk.ts';
 import exampleText from './example.sheet.json?raw';
 import { loadEditing } from './in-place.ts';
 import { MathElement } from './math.ts';
@@ -15,6 +14,8 @@ import { BarElement } from './outline.ts';
 import { PageElementRoot } from './page.ts';
 import { PaperElement } from './paper.ts';
 import { RowElement } from './row.ts';
+import { startSession } from './session.ts';
+import { loadShelf } from './shelf-load.ts';
 
 customElements.define('ts-math', MathElement);
 customElements.define('ts-bar', BarElement);
@@ -26,7 +27,7 @@ const example = readSheet(exampleText);
 // The example is part of the product and tested: one that cannot be read is a fault of ours.
 if (!example.ok) throw new Error(example.problems.map((problem) => problem.message).join('\n'));
 const page = document.querySelector<PageElementRoot>('ts-page');
-if (page !== null) page.desk = createDesk(example.value);
+if (page !== null) page.session = startSession(example.value);
 // All faces at once, so that nothing is asked of the network later, on the first formula that needs one.
 for (const face of document.fonts) void face.load();
 // The editing pieces come behind the first screen, before anybody can have reached a line.
@@ -34,5 +35,6 @@ requestAnimationFrame(() =>
   setTimeout(() => {
     performance.mark('first screen');
     void loadEditing().catch(() => undefined);
+    void loadShelf();
   }),
 );

@@ -2,49 +2,55 @@
 //
 // 1. It draws again whenever the desk has changed; rows and formulas decide for themselves whether they changed.
 // 2. One polite voice tells what a change did; nothing else speaks.
-// 3. Before print everything is typeset and every case has its numbers; after it the screen is as before.
+// 3. Which screen it shows, and what is told above it, is the session's.
+// 4. Before print everything is typeset and every case has its numbers; after it the screen is as before.
 // Not here: moving in the rows (paper.ts).
 
 import { html, nothing, type PropertyValues } from 'lit';
-import { writeSheet } from '../sheet/index.ts';
+import { keyed } from 'lit/directives/keyed.js';
 import type { Desk } from './desk.ts';
 import { PageElement } from './element.ts';
 import { fitAll } from './fit.ts';
 import { commandOf, keyList } from './keys.ts';
 import { mark } from './mark.ts';
 import { typesetAll } from './math.ts';
-import { type Opening, openingNote, readFile } from './opening.ts';
+import { keptWord, notices } from './notices.ts';
 import { outline } from './outline.ts';
 import type { PaperElement } from './paper.ts';
 import { preparePrint } from './print.ts';
 import type { RowElement } from './row.ts';
+import type { Session } from './session.ts';
 import { alike, cellOf } from './share.ts';
+import { droppedFiles, shelfScreen } from './shelf-load.ts';
 import { openPoints, originAndUse } from './side.ts';
 import { words } from './text.ts';
 import { countLines } from './waiting.ts';
 
 export class PageElementRoot extends PageElement {
   static override properties = {
-    desk: { attribute: false },
+    session: { attribute: false },
     version: { state: true },
     printing: { state: true },
     section: { state: true },
-    opening: { state: true },
+    dropping: { state: true },
     unfolded: { state: true },
     narrow: { state: true },
   };
-  declare desk: Desk | undefined;
+  declare session: Session | undefined;
   declare version: number;
   declare printing: boolean;
   declare section: string | null;
   declare narrow: boolean;
   /** In a narrow window: origin and use stand under the chosen row. */
   declare unfolded: boolean;
-  /** A file that was refused, or waits until changes of the sheet on the desk are dealt with. */
-  declare opening: Opening | null;
+  /** Files are held over the page. */
+  declare dropping: boolean;
+  /** The desk that is drawn. */
+  #desk: Desk | null = null;
   #trail: string[] = [];
   #drawing = false;
   #leave: (() => void) | undefined;
+  #leaveSession: (() => void) | undefined;
   #watch: IntersectionObserver | undefined;
   /** Sections under watch; one more or less begins it anew. */
   #watched: readonly string[] = [];
@@ -55,7 +61,7 @@ export class PageElementRoot extends PageElement {
     this.version = 0;
     this.printing = false;
     this.section = null;
-    this.opening = null;
+    this.dropping = false;
     this.unfolded = false;
     this.narrow = this.#width.matches;
   }
@@ -67,49 +73,95 @@ export class PageElementRoot extends PageElement {
     addEventListener('afterprint', this.#afterPrint);
     addEventListener('beforeunload', this.#beforeUnload);
     addEventListener('keydown', this.#onKey);
+    addEventListener('dragover', this.#onDrag);
+    addEventListener('dragleave', this.#onDrag);
+    addEventListener('drop', this.#onDrop);
     this.addEventListener('walk', (event) => void this.#onWalk(event as CustomEvent<Walk>));
   }
 
   override disconnectedCallback() {
     super.disconnectedCallback();
     this.#leave?.();
+    this.#leaveSession?.();
     this.#watch?.disconnect();
     this.#width.removeEventListener('change', this.#onWidth);
     removeEventListener('beforeprint', this.#beforePrint);
     removeEventListener('afterprint', this.#afterPrint);
     removeEventListener('beforeunload', this.#beforeUnload);
     removeEventListener('keydown', this.#onKey);
+    removeEventListener('dragover', this.#onDrag);
+    removeEventListener('dragleave', this.#onDrag);
+    removeEventListener('drop', this.#onDrop);
   }
 
   protected override willUpdate(changed: PropertyValues<this>) {
-    if (!changed.has('desk')) return;
+    if (changed.has('session')) {
+      this.#leaveSession?.();
+      this.#leaveSession = this.session?.subscribe(() => this.requestUpdate());
+    }
+    const desk = this.session?.desk ?? null;
+    if (desk === this.#desk) return;
+    this.#desk = desk;
+    this.#trail = [];
+    this.#watch?.disconnect();
+    this.#watch = undefined;
     this.#leave?.();
-    this.#leave = this.desk?.subscribe(() => {
+    this.#leave = desk?.subscribe(() => {
       this.version += 1;
       this.#drawLater();
     });
   }
 
+  get desk(): Desk | null {
+    return this.session?.desk ?? null;
+  }
+
   protected override render() {
-    const { desk } = this;
-    if (desk === undefined) return html`<p class="loading">Opening the sheet …</p>`;
+    const { session, desk } = this;
+    if (session === undefined) return nothing;
+    const told = notices(session);
+    if (session.route.screen !== 'sheet')
+      return html`${this.#shelfBar(session)}<main id="shelf" class="shelf-desk">${told}${this.#shelf(session)}</main>
+        <p class="unseen" role="status">${session.told?.trouble === false ? session.told.message : ''}</p>`;
+    if (desk === null)
+      return html`${this.#shelfBar(session)}<main class="shelf-desk">${told}${session.keeping.kind === 'opening' ? html`<p class="loading">Opening the sheet …</p>` : nothing}</main>`;
     const { drawn: model } = desk;
     const goTo = (cell: string) => this.#goTo(cell);
     const beside = originAndUse(desk, goTo, this.narrow ? 1 : 2);
     return html`
       <a class="skip" href="#paper" @click=${this.#skip}>To the sheet</a>
-      ${this.#bar(desk)}
-      <div class="desk">
+      ${this.#bar(session, desk)}
+      <div class="desk ${this.dropping ? 'dropping' : ''}">
         ${
           this.narrow
             ? html`<details class="outline"><summary>Sections and criteria</summary>${outline(model, this.section, goTo)}</details>`
             : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}${keys()}</aside>`
         }
-        <main id="paper">${this.opening === null ? nothing : openingNote(this.opening, { open: this.#openAnyway, dismiss: this.#dismiss })}<ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}
-            .foldable=${this.narrow} .beside=${this.narrow && this.unfolded ? beside : null}></ts-paper></main>
+        <main id="paper">${told}${keyed(
+          desk,
+          html`<ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}
+            .foldable=${this.narrow} .beside=${this.narrow && this.unfolded ? beside : null}></ts-paper>`,
+        )}</main>
         <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${this.narrow ? nothing : beside}${openPoints(desk, goTo)}</aside>
       </div>
       <p class="unseen" role="status">${desk.announcement}</p>`;
+  }
+
+  #shelf(session: Session) {
+    return session.house === null
+      ? html`<p class="loading">Opening the shelf …</p>`
+      : shelfScreen(session, () => this.requestUpdate());
+  }
+
+  #shelfBar(session: Session) {
+    return html`<header class="bar">
+      <p class="brand">${mark()}<span>Tightside</span></p>
+      <p class="document"></p>
+      <div class="tools" role="group" aria-label="Shelf">
+        ${session.id === null ? nothing : html`<button type="button" @click=${() => session.go({ screen: 'sheet', id: session.id })}>Back to the sheet</button>`}
+        <button type="button" title="Open a sheet file" @click=${() => void session.openFile()}>Open a file</button>
+      </div>
+    </header>`;
   }
 
   /** What was typed is painted first; then the lines that follow from it, once for all key strokes until then. */
@@ -120,12 +172,12 @@ export class PageElementRoot extends PageElement {
       setTimeout(() => {
         this.#drawing = false;
         const { desk } = this;
-        if (desk !== undefined && desk.drawn !== desk.model) this.version += 1;
+        if (desk !== null && desk.drawn !== desk.model) this.version += 1;
       }),
     );
   }
 
-  #bar(desk: Desk) {
+  #bar(session: Session, desk: Desk) {
     const { drawn: model } = desk;
     const { titleBlock: block } = model;
     const failed = model.summary.filter((one) => one.cases.some((each) => each.met === false));
@@ -148,20 +200,21 @@ export class PageElementRoot extends PageElement {
         }
         ${toConfirm === 0 ? nothing : html`<button type="button" class="word" @click=${this.#toOpenPoints}>${toConfirm} to confirm</button>`}
       </p>
+      ${keptWord(session)}
       <div class="tools" role="group" aria-label="Sheet">
+        <button type="button" title="All sheets and templates" @click=${() => session.go({ screen: 'shelf' })}>Shelf</button>
         <button type="button" ?disabled=${desk.undoLabel === null} title=${desk.undoLabel === null ? nothing : `Undo: ${desk.undoLabel}`} @click=${() => desk.undo()}>Undo</button>
         <button type="button" ?disabled=${desk.redoLabel === null} title=${desk.redoLabel === null ? nothing : `Redo: ${desk.redoLabel}`} @click=${() => desk.redo()}>Redo</button>
-        <button type="button" title="Open a sheet file" @click=${() => this.querySelector<HTMLInputElement>('#sheet-file')?.click()}>Open</button>
-        <input id="sheet-file" type="file" accept=".json,application/json" hidden @change=${this.#open} />
-        <button type="button" title="Save the sheet as a file" @click=${this.#save}>Save</button>
+        <button type="button" title=${session.fileName === null ? 'Save the sheet as a file' : `Save the sheet in ${session.fileName}`} @click=${() => void session.saveFile()}>Save as file</button>
         <button type="button" @click=${() => print()}>Print</button>
       </div>
     </header>`;
   }
 
   protected override updated() {
-    const { desk } = this;
-    if (desk === undefined) return;
+    const { session, desk } = this;
+    if (session?.route.screen !== 'sheet') document.title = 'Shelf, Tightside';
+    if (session?.route.screen !== 'sheet' || desk === null) return;
     const { titleBlock, title, status } = desk.drawn;
     document.title = `${[titleBlock.documentNumber, title].filter(Boolean).join(' ')}, ${status}`;
     preparePrint(desk.drawn);
@@ -256,42 +309,17 @@ export class PageElementRoot extends PageElement {
     else this.desk?.redo();
   };
 
-  #open = async (event: Event) => {
-    const field = event.target as HTMLInputElement;
-    const file = field.files?.[0];
-    if (file === undefined || this.desk === undefined) return;
-    this.desk.finish();
-    this.opening = await readFile(file);
-    field.value = '';
-    if (this.opening.sheet !== undefined && !this.desk.unsaved) this.#openAnyway();
+  #onDrag = (event: DragEvent) => {
+    if (event.dataTransfer?.types.includes('Files') !== true) return;
+    event.preventDefault();
+    this.dropping = event.type === 'dragover';
   };
-
-  #openAnyway = () => {
-    const { desk, opening } = this;
-    this.opening = null;
-    if (desk === undefined || opening?.sheet === undefined) return;
-    desk.open(opening.sheet);
-    this.#trail = [];
-    this.#watch?.disconnect();
-    this.#watch = undefined;
-    scrollTo(0, 0);
-  };
-
-  #dismiss = () => {
-    this.opening = null;
-  };
-
-  #save = () => {
-    const { desk } = this;
-    if (desk === undefined) return;
-    desk.finish();
-    const address = URL.createObjectURL(new Blob([writeSheet(desk.sheet)], { type: 'application/json' }));
-    const link = document.createElement('a');
-    link.href = address;
-    link.download = `${(desk.sheet.titleBlock?.documentNumber ?? desk.sheet.title).replace(/[^\p{L}\p{N}._-]+/gu, '-') || 'sheet'}.sheet.json`;
-    link.click();
-    setTimeout(() => URL.revokeObjectURL(address), 10_000);
-    desk.saved();
+  #onDrop = async (event: DragEvent) => {
+    this.dropping = false;
+    const { session } = this;
+    if (event.dataTransfer === null || event.dataTransfer.files.length === 0 || session === undefined) return;
+    event.preventDefault();
+    await session.takeFiles(await droppedFiles(event.dataTransfer));
   };
 
   #beforePrint = () => {
@@ -319,7 +347,12 @@ export class PageElementRoot extends PageElement {
   };
 
   #beforeUnload = (event: BeforeUnloadEvent) => {
-    if (this.desk?.unsaved) event.preventDefault();
+    const { session } = this;
+    if (session === undefined) return;
+    // Only what no other place has is asked about: the browser keeps everything else.
+    const lost =
+      session.keeping.kind === 'trouble' || (session.house?.store.backend.kind === 'memory' && this.desk?.unsaved === true);
+    if (lost) event.preventDefault();
   };
 }
 

@@ -118,7 +118,8 @@ export class PaperElement extends PageElement {
   #entryRow({ key, lines }: Section) {
     const [first] = lines;
     const last = lines.at(-1);
-    return entryRow(this.desk, first?.kind === 'heading' ? first.text : '', this.#entries.has(key), {
+    const open = this.#entries.has(key) || (this.desk.newLine?.section === key && this.desk.newLine.text !== '');
+    return entryRow(this.desk, first?.kind === 'heading' ? first.text : '', open, key, {
       begin: () => void this.#enter(key),
       entry: ({ draft }) => void this.#insert(key, draft, last === undefined ? null : cellOf(last)),
       leave: () => {

@@ -2,7 +2,8 @@
 //
 // 1. `entry` { draft, text, entry } on Enter, bubbling: the host inserts the cell and the line is empty again. A line with an error is
 //    kept all the same, as every line of a sheet; an empty one tells nothing.
-// 2. `cancel` on Escape in an empty line; Escape in a written one empties it.
+// 2. `entry-draft` (the text) on every change, so that the host can keep what is typed.
+// 3. `cancel` on Escape in an empty line; Escape in a written one empties it.
 // Not here: the forms of lines (entry.ts).
 
 import { html, type PropertyValues } from 'lit';
@@ -82,6 +83,7 @@ export class EntryLineElement extends PageElement {
     event.stopPropagation();
     this.text = event.detail.text;
     this.#help = undefined;
+    this.#tell();
   }
   #commit(event: Event) {
     event.stopPropagation();
@@ -89,12 +91,17 @@ export class EntryLineElement extends PageElement {
     if (entry.draft === undefined) return;
     const detail: EntryDetail = { draft: entry.draft, text: this.text, entry };
     this.text = '';
+    this.#tell();
     this.dispatchEvent(new CustomEvent('entry', { detail, bubbles: true }));
   }
   #cancel(event: Event) {
     event.stopPropagation();
     if (this.text === '') this.dispatchEvent(new CustomEvent('cancel', { bubbles: true }));
     this.text = '';
+    this.#tell();
+  }
+  #tell() {
+    this.dispatchEvent(new CustomEvent('entry-draft', { detail: this.text, bubbles: true }));
   }
   #below(event: Event) {
     event.stopPropagation();
