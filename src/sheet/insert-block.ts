@@ -230,7 +230,7 @@ function sameRows(one: TableCell, other: TableCell): boolean {
 const signOf = (sheet: Sheet): '.' | ',' => sheet.settings?.decimalSign ?? '.';
 
 /** What the block cites: in its cells, and in the method, which comes along as a note. */
-function citedReferences(template: Sheet) {
+export function citedReferences(template: Sheet) {
   const texts: string[] = [template.method ?? ''];
   for (const cell of template.cells) {
     withProse(cell, (text) => {
@@ -296,7 +296,7 @@ function marked(cell: Cell, suffix: string): Cell {
   return bare && cell.title !== undefined ? { ...cell, title: `${cell.title} (${suffix})` } : cell;
 }
 
-function onlyCases(cell: Cell, cases: ReadonlySet<string>): Cell {
+export function onlyCases(cell: Cell, cases: ReadonlySet<string>): Cell {
   if (cell.kind !== 'given' || cell.byCase === undefined) return cell;
   const { byCase, ...rest } = cell;
   const kept = Object.entries(byCase).filter(([id]) => cases.has(id));

@@ -3,7 +3,7 @@
 // Not here: how it does so (desk.ts).
 
 import type { RecordModel } from '../record/index.ts';
-import type { Basis, Calculation, Cell, CellProblem, History, Sheet } from '../sheet/index.ts';
+import type { Basis, Calculation, Cell, CellProblem, Edit, History, Sheet } from '../sheet/index.ts';
 import type { Provenance } from './given.ts';
 
 export type Field = 'value' | 'source';
@@ -29,7 +29,8 @@ type WithoutId<C> = C extends Cell ? Omit<C, 'id'> : never;
 /** A line whose formula, or all of it, is edited where it stands. */
 export interface InPlace {
   readonly cell: string;
-  readonly what: 'formula' | 'fields';
+  /** `text`: the words of a heading or a note. */
+  readonly what: 'formula' | 'fields' | 'text';
   /** The formula as typed, readable or not; undefined until something is typed. */
   readonly text: string | undefined;
   /** What stood in the field when the page was left, taken up again: begins with this instead of the kept cell. */
@@ -54,13 +55,28 @@ export type Typed =
       readonly text: string;
     }
   | { readonly kind: 'formula'; readonly cell: string; readonly text: string }
-  | { readonly kind: 'fields'; readonly cell: string; readonly draft: Cell }
+  | { readonly kind: 'fields' | 'text'; readonly cell: string; readonly draft: Cell }
   | NewLine;
 /** The new line at the foot of a section, by the key of the section. */
 export interface NewLine {
   readonly kind: 'new';
   readonly section: string;
   readonly text: string;
+}
+
+/** Words about what was done, that stay under a line until something else is done. */
+export interface Remark {
+  readonly cell: string;
+  readonly words: string;
+}
+
+/** How an act is called; each is made up from the edit where it is left out. */
+export interface ActWords {
+  /** What stands behind 'undo'. */
+  readonly label?: string;
+  /** What is said at once. */
+  readonly words?: string;
+  readonly beside?: Remark;
 }
 
 export interface Desk {
@@ -73,6 +89,9 @@ export interface Desk {
   /** The lines as last asked for: what stands on the screen while the next ones are made. */
   readonly drawn: RecordModel;
   readonly chosen: string | null;
+  /** The chosen lines in the order of the sheet: one, or a run of them. */
+  readonly run: readonly string[];
+  readonly told: Remark | null;
   /** Index of the case whose numbers stand in the equations. */
   readonly reading: number;
   readonly editing: Editing | null;
@@ -99,8 +118,10 @@ export interface Desk {
   resume(typed: Typed): boolean;
   /** What stands in the new line of a section. */
   typeNew(section: string, text: string): void;
-  tell(words: string): void;
-  choose(cell: string | null): void;
+  /** `from`: the other end of a run. */
+  choose(cell: string | null, from?: string): void;
+  /** The run that is chosen reaches to this line. */
+  extend(cell: string): void;
   read(caseIndex: number): void;
   /** Begins typing. `text` replaces what stands there. False where the cell cannot be typed into. */
   begin(cell: string, field: Field, caseIndex: number, text?: string): boolean;
@@ -112,9 +133,10 @@ export interface Desk {
   draftInPlace(cell: Cell | null, renamed?: Renamed, text?: string): void;
   /** Puts a new cell behind another, null: at the beginning; its id. */
   insert(cell: NewCell, after: string | null): string;
-  remove(cell: string): void;
-  /** One place up (-1) or down (1). False at the end. */
-  move(cell: string, step: -1 | 1): boolean;
+  /** One step of editing; what is being typed is kept first. False where nothing can be written. */
+  act(edit: Edit, how?: ActWords): boolean;
+  /** Says something that changes nothing; with a line it stays there to be read. */
+  tell(words: string, cell?: string): void;
   finish(): void;
   cancel(): void;
   /** A value that was carried over holds for this sheet as well. */

@@ -12,6 +12,7 @@
 
 import { makeRecord } from '../record/index.ts';
 import {
+  applyEdit,
   type Cell,
   type CellProblem,
   calculate,
@@ -19,7 +20,6 @@ import {
   emptyHistory,
   type GivenCell,
   type History,
-  nameFault,
   newCellId,
   perform,
   redo,
@@ -27,21 +27,14 @@ import {
   undo,
 } from '../sheet/index.ts';
 import { solver } from '../study/index.ts';
-import type { Desk, Editing, InPlace, NewLine, Typed } from './desk-face.ts';
-import {
-  heldValue,
-  type Provenance,
-  provenanceOf,
-  sharesValue,
-  withBasis,
-  withoutProvenance,
-  withSource,
-  withValue,
-} from './given.ts';
+import type { Desk, Editing, InPlace, NewLine, Remark, Typed } from './desk-face.ts';
+import { broughtIn, canRename, editOf, hasFormula, isError, keptDraft, placeOf, runBetween, typedOf } from './drafts.ts';
+import { heldValue, type Provenance, provenanceOf, sharesValue, withoutProvenance, withSource, withValue } from './given.ts';
+import { provenanceActs } from './provenance.ts';
 import { alike, shareModel } from './share.ts';
-import { countLines, waits } from './waiting.ts';
+import { verdict } from './verdict.ts';
 
-export type { Desk, Editing, InPlace, NewCell, NewLine, Typed } from './desk-face.ts';
+export type { Desk, Editing, InPlace, NewCell, NewLine, Remark, Typed } from './desk-face.ts';
 
 export function createDesk(first: Sheet, firstHistory: History = emptyHistory): Desk {
   const listeners = new Set<() => void>();
@@ -52,6 +45,9 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
   let stale = false;
   let history: History = firstHistory;
   let chosen: string | null = null;
+  /** The other end of the run of lines that is chosen. */
+  let anchor: string | null = null;
+  let told: Remark | null = null;
   let reading = 0;
   let editing: Editing | null = null;
   let inPlace: InPlace | null = null;
@@ -93,6 +89,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     const done = perform(kept, history, edit, label === undefined ? {} : { label });
     kept = done.sheet;
     history = done.history;
+    told = null;
     show(kept);
     return done.label;
   };
@@ -101,16 +98,6 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
 
   const problemsOf = (cell: string, at: number): readonly CellProblem[] =>
     (calculation.state(cell)?.problems ?? []).filter((problem) => problem.case === undefined || problem.case === caseId(at));
-
-  /** Errors that the sheet on the desk did not have before, told from the line that is typed in. */
-  const broughtIn = (before: ReadonlySet<string>, cell: string, how: string): readonly CellProblem[] => {
-    const brought = calculation
-      .problems()
-      .find((problem) => problem.severity === 'error' && !waits(problem) && !before.has(placeOf(problem)));
-    if (brought === undefined) return [];
-    const { at: _at, fixes: _fixes, ...rest } = brought;
-    return [{ ...rest, cell, message: `${how}, line ${calculation.numberOf(brought.cell)} fails: ${brought.message}` }];
-  };
 
   const preview = (next: Editing) => {
     editing = next;
@@ -127,7 +114,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     const before = new Set(calculation.problems().map(placeOf));
     calculation.update(candidate);
     const own = problemsOf(next.cell, next.at);
-    const problems = own.some(isError) ? own : [...broughtIn(before, next.cell, 'with this value'), ...own];
+    const problems = own.some(isError) ? own : [...broughtIn(calculation, before, next.cell, 'with this value'), ...own];
     editing = { ...next, problems };
     if (problems.some(isError)) {
       calculation.update(last);
@@ -140,35 +127,20 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
   const finishInPlace = (done: InPlace) => {
     const before = kept.cells.find((one) => one.id === done.cell);
     inPlace = null;
-    if (before === undefined || done.draft === null || alike(before, done.draft)) return show(kept);
-    const set: Edit = { kind: 'set-cell', cell: done.draft };
-    const { renamed } = done;
-    // A name that cannot stand, or stands already, is an error of its own line alone.
-    const renames = renamed !== undefined && renamed.from !== '' && nameFault(kept, renamed.to, done.cell) === undefined;
-    const label =
-      renames && renamed !== undefined
-        ? keepEdit(
-            { kind: 'batch', edits: [{ kind: 'rename-quantity', ...renamed }, set] },
-            `${renamed.from} renamed ${renamed.to}`,
-          )
-        : keepEdit(set);
-    announcement = `${label} kept; ${verdictWords()}`;
+    const draft = before === undefined ? null : keptDraft(done, before);
+    if (draft === null || alike(before, draft)) return show(kept);
+    const { edit, label } = editOf(kept, draft, done.renamed);
+    const name = keepEdit(edit, label);
+    announcement = `${name} kept${done.unreadable ? ' as typed, with an error' : ''}; ${verdictWords()}`;
   };
 
-  const verdictWords = () => {
-    const model = fresh();
-    const failed = model.summary.filter((one) => one.cases.some((each) => each.met === false)).length;
-    const { wrong, waiting } = countLines(model.problems);
-    const criteria = failed === 0 ? 'no criterion fails' : `${failed} ${failed === 1 ? 'criterion is' : 'criteria are'} not met`;
-    if (wrong.length === 0) return criteria;
-    const lines = `${wrong.length} ${wrong.length === 1 ? 'line has an error' : 'lines have errors'}`;
-    return waiting === 0 ? `${lines}; ${criteria}` : `${lines}, ${waiting} wait; ${criteria}`;
-  };
+  const verdictWords = () => verdict(fresh());
 
   const step = (done: ReturnType<typeof undo>, word: string) => {
     if (done === undefined || refused()) return;
     editing = null;
     inPlace = null;
+    told = null;
     kept = done.sheet;
     history = done.history;
     show(kept);
@@ -195,6 +167,12 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     get chosen() {
       return chosen;
     },
+    get run() {
+      return runBetween(kept.cells, anchor, chosen);
+    },
+    get told() {
+      return told;
+    },
     get reading() {
       return reading;
     },
@@ -217,15 +195,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       return history;
     },
     get typed(): Typed | null {
-      if (editing !== null && editing.text !== editing.before) {
-        const { cell, field, at, forAll, text } = editing;
-        return { kind: 'value', cell, field, at, forAll, text };
-      }
-      if (inPlace?.what === 'formula' && inPlace.text !== undefined)
-        return { kind: 'formula', cell: inPlace.cell, text: inPlace.text };
-      if (inPlace?.what === 'fields' && inPlace.draft !== null)
-        return { kind: 'fields', cell: inPlace.cell, draft: inPlace.draft };
-      return newLine === null || newLine.text === '' ? null : newLine;
+      return typedOf(editing, inPlace, newLine);
     },
     get newLine() {
       return newLine;
@@ -249,6 +219,8 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       stale = false;
       history = itsHistory;
       chosen = null;
+      anchor = null;
+      told = null;
       reading = 0;
       editing = null;
       inPlace = null;
@@ -288,7 +260,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       }
       if (!desk.beginInPlace(typed.cell, typed.kind) || inPlace === null) return false;
       inPlace = { ...inPlace, resumed: typed };
-      if (typed.kind === 'fields') desk.draftInPlace(typed.draft);
+      if (typed.kind !== 'formula') desk.draftInPlace(typed.draft);
       else changed();
       return true;
     },
@@ -297,14 +269,17 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       newLine = { kind: 'new', section, text };
       changed();
     },
-    tell(words) {
-      announcement = words;
+    choose(cell, from) {
+      if (cell === chosen && (from ?? cell) === anchor) return;
+      chosen = cell;
+      anchor = from ?? cell;
       changed();
     },
-    choose(cell) {
+    extend(cell) {
       if (cell === chosen) return;
-      chosen = cell;
-      changed();
+      const count = runBetween(kept.cells, anchor, cell).length;
+      announcement = count === 1 ? 'one line chosen' : `${count} lines chosen`;
+      desk.choose(cell, anchor ?? cell);
     },
     read(caseIndex) {
       if (caseIndex === reading || caseIndex < 0 || caseIndex >= calculation.cases.length) return;
@@ -338,7 +313,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       if (refused()) return false;
       desk.finish();
       const cell = kept.cells.find((one) => one.id === id);
-      if (cell === undefined || (what === 'formula' && !hasFormula(cell))) return false;
+      if (cell === undefined || !canBeEdited(cell, what)) return false;
       chosen = id;
       inPlace = {
         cell: id,
@@ -365,13 +340,15 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       const last = shown;
       calculation.update(kept);
       const before = new Set(calculation.problems().map(placeOf));
-      const candidate = replaceCell(kept, cell);
+      const candidate = applyEdit(kept, editOf(kept, cell, renamed).edit).sheet;
       calculation.update(candidate);
-      const own = calculation.state(cell.id)?.problems.some(isError) === true;
-      // A new name is carried into the other lines when it is kept; until then they would only say that the old one is gone.
-      const problems = own || renamed !== undefined ? [] : broughtIn(before, cell.id, 'as typed here');
+      // Words feed nothing: they show as typed whatever is wrong with them.
+      const isProse = cell.kind === 'note' || cell.kind === 'heading';
+      const own = !isProse && calculation.state(cell.id)?.problems.some(isError) === true;
+      const lost = renamed !== undefined && !canRename(kept, cell.id, renamed);
+      const problems = own || lost || isProse ? [] : broughtIn(calculation, before, cell.id, 'as typed here');
       inPlace = { ...inPlace, draft: cell, unreadable: false, renamed, problems };
-      if (own || renamed !== undefined || problems.length > 0) calculation.update(last);
+      if (own || lost || problems.length > 0) calculation.update(last);
       else {
         shown = candidate;
         stale = true;
@@ -388,23 +365,20 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       changed();
       return cell.id;
     },
-    remove(id) {
-      if (refused()) return;
-      desk.finish();
-      const label = keepEdit({ kind: 'remove-cell', id });
-      if (chosen === id) chosen = null;
-      announcement = `${label}; ${verdictWords()}`;
-      changed();
-    },
-    move(id, by) {
+    act(edit, { label, words, beside } = {}) {
       if (refused()) return false;
       desk.finish();
-      const to = kept.cells.findIndex((one) => one.id === id) + by;
-      if (to < 0 || to >= kept.cells.length) return false;
-      announcement = keepEdit({ kind: 'move-cell', id, to });
-      void fresh();
+      const done = keepEdit(edit, label);
+      if (beside !== undefined) told = beside;
+      if (chosen !== null && !kept.cells.some(({ id }) => id === chosen)) chosen = null;
+      announcement = `${[words ?? done, beside?.words].filter(Boolean).join('; ')}; ${verdictWords()}`;
       changed();
       return true;
+    },
+    tell(words, cell) {
+      announcement = words;
+      told = cell === undefined ? told : { cell, words };
+      changed();
     },
     finish() {
       if (inPlace !== null) {
@@ -434,35 +408,25 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       show(kept);
       changed();
     },
-    confirm(id) {
-      const cell = givenOf(id);
-      if (cell?.carriedOver === undefined || refused()) return;
-      const { carriedOver: _, ...rest } = cell;
-      keep(rest, `confirmation of ${cell.name}`);
-      announcement = `${cell.name} is confirmed`;
-      changed();
+    ...provenanceActs({
+      givenOf,
+      refused,
+      former,
+      keep(cell, label, words) {
+        keep(cell, label);
+        if (words !== undefined) announcement = words;
+        changed();
+      },
+    }),
+    // What is being typed is kept first: taken back, it is there to be done again.
+    undo() {
+      desk.finish();
+      step(undo(kept, history), 'took back');
     },
-    setBasis(id, basis) {
-      const cell = givenOf(id);
-      if (cell === undefined || refused()) return;
-      keep(withBasis(cell, basis));
-      changed();
+    redo() {
+      desk.finish();
+      step(redo(kept, history), 'did again');
     },
-    formerProvenance(id) {
-      const cell = givenOf(id);
-      return cell !== undefined && provenanceOf(cell) === undefined ? former.get(id) : undefined;
-    },
-    restoreProvenance(id) {
-      const cell = givenOf(id);
-      const before = former.get(id);
-      if (cell === undefined || before === undefined || refused()) return;
-      former.delete(id);
-      keep({ ...cell, ...before }, `source of ${cell.name}`);
-      announcement = `source of ${cell.name} kept`;
-      changed();
-    },
-    undo: () => step(undo(kept, history), 'took back'),
-    redo: () => step(redo(kept, history), 'did again'),
     saved() {
       savedSheet = kept;
       changed();
@@ -471,15 +435,13 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
   return desk;
 }
 
-const isError = (problem: CellProblem) => problem.severity === 'error';
-const placeOf = ({ cell, code, case: id }: CellProblem) => `${cell} ${code} ${id ?? ''}`;
-
 const isChange = (cell: GivenCell, done: Editing, caseId: string) =>
   done.text !== done.before || done.forAll !== sharesValue(cell, caseId);
-
-const hasFormula = ({ kind }: Cell) => kind === 'derived' || kind === 'criterion' || kind === 'sought';
 
 const replaceCell = (sheet: Sheet, cell: Cell): Sheet => ({
   ...sheet,
   cells: sheet.cells.map((one) => (one.id === cell.id ? cell : one)),
 });
+
+const canBeEdited = (cell: Cell, what: InPlace['what']) =>
+  what === 'fields' || (what === 'formula' ? hasFormula(cell) : cell.kind === 'heading' || cell.kind === 'note');

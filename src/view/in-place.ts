@@ -5,8 +5,10 @@
 // Not here: the pieces themselves (edit/), values and sources (editor.ts), which line is edited (desk.ts).
 
 import { html, nothing, type TemplateResult } from 'lit';
+import { live } from 'lit/directives/live.js';
 import type { Cell } from '../sheet/index.ts';
 import type { Desk, InPlace } from './desk.ts';
+import { formulaText, hasFormula } from './drafts.ts';
 import type { CellDetail, EntryDetail, FormulaDetail } from './edit/index.ts';
 
 let loading: Promise<void> | undefined;
@@ -25,16 +27,7 @@ export function loadEditing(): Promise<void> {
   return loading;
 }
 
-type FormulaCell = Extract<Cell, { kind: 'derived' | 'criterion' | 'sought' }>;
 const forms = { derived: 'formula', criterion: 'comparison', sought: 'equation' } as const;
-
-export const hasFormula = (cell: { readonly kind: string }): cell is FormulaCell =>
-  cell.kind === 'derived' || cell.kind === 'criterion' || cell.kind === 'sought';
-
-function textOf(cell: FormulaCell): string {
-  if (cell.kind === 'derived') return cell.formula;
-  return cell.kind === 'sought' ? cell.where : `${cell.left} ${cell.relation} ${cell.right}`;
-}
 
 /** The cell as last kept: the text of before, while the shown sheet has the draft. */
 const keptCell = (desk: Desk, id: string) => desk.kept.cells.find((one) => one.id === id);
@@ -45,7 +38,7 @@ export function formulaInPlace(desk: Desk, place: InPlace): TemplateResult | typ
   const name = cell.kind === 'criterion' ? '' : cell.name;
   const draft = ({ detail }: CustomEvent<FormulaDetail>) =>
     desk.draftInPlace(detail.keys === undefined ? null : ({ ...cell, ...detail.keys } as Cell), undefined, detail.text);
-  return html`<ts-formula-editor class="in-place" .calculation=${desk.calculation} .form=${forms[cell.kind]} .text=${place.resumed?.kind === 'formula' ? place.resumed.text : textOf(cell)} .name=${name}
+  return html`<ts-formula-editor class="in-place" .calculation=${desk.calculation} .form=${forms[cell.kind]} .text=${place.resumed?.kind === 'formula' ? place.resumed.text : formulaText(cell)} .name=${name}
     .unit=${cell.unit ?? ''} .cell=${cell.id} .reading=${desk.reading} .label=${`Formula of ${name === '' ? (cell.title ?? 'the criterion') : name}`}
     @draft=${draft}></ts-formula-editor>`;
 }
@@ -66,21 +59,20 @@ export async function focusInPlace(row: HTMLElement) {
   else piece?.focus();
 }
 
-/** The foot of a section: a word until somebody wants the line, then the line. */
+/** A place where a new line is typed: a word until somebody wants it, then the line. `text`: what is typed so far; undefined: closed. */
 export function entryRow(
   desk: Desk,
-  title: string,
-  open: boolean,
-  section: string,
-  heard: { begin(): void; entry(detail: EntryDetail): void; leave(): void },
+  key: string,
+  label: string,
+  text: string | undefined,
+  heard: { begin(): void; draft(text: string): void; entry(detail: EntryDetail): void; leave(): void },
 ): TemplateResult {
-  const label = title === '' ? 'New line' : `New line in ${title}`;
-  return html`<div role="row" class="row entry"><div role="gridcell" class="source"></div>
+  return html`<div role="row" class="row entry" data-entry=${key}><div role="gridcell" class="source"></div>
     <div role="gridcell" class="calculation across">${
-      open
-        ? html`<ts-entry-line .calculation=${desk.calculation} .label=${label} .text=${desk.newLine?.section === section ? desk.newLine.text : ''} @cancel=${heard.leave}
-            @entry-draft=${(event: CustomEvent<string>) => desk.typeNew(section, event.detail)}
+      text === undefined
+        ? html`<button type="button" class="word" aria-label=${label} @click=${heard.begin}>New line</button>`
+        : html`<ts-entry-line .calculation=${desk.calculation} .label=${label} .text=${live(text)} @cancel=${heard.leave}
+            @entry-draft=${(event: CustomEvent<string>) => heard.draft(event.detail)}
             @entry=${(event: CustomEvent<EntryDetail>) => heard.entry(event.detail)}></ts-entry-line>`
-        : html`<button type="button" class="word" aria-label=${label} @click=${heard.begin}>New line</button>`
     }</div></div>`;
 }

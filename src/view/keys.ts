@@ -2,7 +2,8 @@
 //
 // 1. In the rows the keys of an ARIA grid hold; while something is typed, only Enter and Escape mean anything of ours.
 // 2. `Mod` is Control, and Command where the keyboard has it.
-// Not here: what a command does (paper.ts, page.ts).
+// 3. Copy, cut and paste come as events of the clipboard, whatever keys the system has for them: listed here, bound by the browser.
+// Not here: what a command does (paper.ts, page.ts), the list on the page (key-list.ts).
 
 export type Command =
   | 'left'
@@ -15,61 +16,88 @@ export type Command =
   | 'sheet-end'
   | 'page-up'
   | 'page-down'
+  | 'extend-up'
+  | 'extend-down'
   | 'edit'
   | 'edit-all'
   | 'new-line'
+  | 'line-below'
+  | 'duplicate'
   | 'remove'
   | 'move-up'
   | 'move-down'
   | 'origin'
   | 'use'
   | 'back'
+  | 'line-menu'
+  | 'keys'
   | 'undo'
   | 'redo';
 
-interface Binding {
-  readonly keys: readonly string[];
-  readonly command: Command;
+export type KeyGroup = 'Moving' | 'Writing' | 'Lines' | 'Reading' | 'Sheet';
+
+export interface KeyLine {
+  readonly group: KeyGroup;
+  /** How the keys are written for the reader. */
+  readonly shown: string;
+  readonly does: string;
+  /** What is bound; empty where the browser or the field binds it. */
+  readonly binds: readonly (readonly [command: Command, ...keys: string[]])[];
 }
 
-const bindings: readonly Binding[] = [
-  { keys: ['ArrowLeft'], command: 'left' },
-  { keys: ['ArrowRight'], command: 'right' },
-  { keys: ['ArrowUp'], command: 'up' },
-  { keys: ['ArrowDown'], command: 'down' },
-  { keys: ['Home'], command: 'row-start' },
-  { keys: ['End'], command: 'row-end' },
-  { keys: ['Mod+Home'], command: 'sheet-start' },
-  { keys: ['Mod+End'], command: 'sheet-end' },
-  { keys: ['PageUp'], command: 'page-up' },
-  { keys: ['PageDown'], command: 'page-down' },
-  { keys: ['Enter', 'F2'], command: 'edit' },
-  { keys: ['Shift+Enter'], command: 'edit-all' },
-  { keys: ['Mod+Enter'], command: 'new-line' },
-  { keys: ['Mod+Delete'], command: 'remove' },
-  { keys: ['Alt+ArrowUp'], command: 'move-up' },
-  { keys: ['Alt+ArrowDown'], command: 'move-down' },
-  { keys: ['<'], command: 'origin' },
-  { keys: ['>'], command: 'use' },
-  { keys: ['Backspace'], command: 'back' },
-  { keys: ['Mod+z'], command: 'undo' },
-  { keys: ['Mod+y', 'Mod+Shift+z'], command: 'redo' },
+const line = (group: KeyGroup, shown: string, does: string, ...binds: KeyLine['binds'][number][]): KeyLine => ({
+  group,
+  shown,
+  does,
+  binds,
+});
+
+export const keyTable: readonly KeyLine[] = [
+  line(
+    'Moving',
+    '← → ↑ ↓',
+    'from cell to cell',
+    ['left', 'ArrowLeft'],
+    ['right', 'ArrowRight'],
+    ['up', 'ArrowUp'],
+    ['down', 'ArrowDown'],
+  ),
+  line('Moving', 'Home, End', 'to the beginning, the end of the line', ['row-start', 'Home'], ['row-end', 'End']),
+  line('Moving', 'Page ↑, Page ↓', 'eight lines up, down', ['page-up', 'PageUp'], ['page-down', 'PageDown']),
+  line('Moving', 'Ctrl+Home, Ctrl+End', 'to the first, the last line', ['sheet-start', 'Mod+Home'], ['sheet-end', 'Mod+End']),
+  line('Writing', 'Enter or F2', 'type a value, a source, a formula, a heading, a note', ['edit', 'Enter', 'F2']),
+  line('Writing', 'any character', 'a new value in the place of the old one'),
+  line('Writing', 'Enter, Escape', 'while typing: keep it, take it back'),
+  line('Writing', 'Shift+Enter', 'all fields of the line', ['edit-all', 'Shift+Enter']),
+  line('Writing', 'Alt+Enter', 'a new line directly below; while typing: the first correction', [
+    'line-below',
+    'Alt+Enter',
+    'Insert',
+  ]),
+  line('Writing', 'Ctrl+Enter', 'a new line at the foot of the section', ['new-line', 'Mod+Enter']),
+  line(
+    'Lines',
+    'Shift+↑, Shift+↓',
+    'choose more lines, or fewer',
+    ['extend-up', 'Shift+ArrowUp'],
+    ['extend-down', 'Shift+ArrowDown'],
+  ),
+  line('Lines', 'Ctrl+C, Ctrl+X, Ctrl+V', 'copy, cut, paste below'),
+  line('Lines', 'Ctrl+Shift+Enter', 'once more below, under free names', ['duplicate', 'Mod+Shift+Enter']),
+  line('Lines', 'Alt+↑, Alt+↓', 'move up, down', ['move-up', 'Alt+ArrowUp'], ['move-down', 'Alt+ArrowDown']),
+  line('Lines', 'Ctrl+Delete', 'remove', ['remove', 'Mod+Delete', 'Mod+Backspace']),
+  line('Lines', 'Shift+F10', 'the commands of the line', ['line-menu', 'Shift+F10', 'ContextMenu']),
+  line('Reading', '<', 'to the origin of the line', ['origin', '<']),
+  line('Reading', '>', 'to the use of the line', ['use', '>']),
+  line('Reading', 'Backspace', 'back to the line before', ['back', 'Backspace']),
+  line('Sheet', 'Ctrl+Z', 'undo', ['undo', 'Mod+z']),
+  line('Sheet', 'Ctrl+Y', 'do again', ['redo', 'Mod+y', 'Mod+Shift+z']),
+  line('Sheet', '?', 'this list', ['keys', '?']),
 ];
 
-/** The list for the reader: keys, what they do. */
-export const keyList: readonly (readonly [keys: string, does: string])[] = [
-  ['arrows, Home, End', 'move in the sheet'],
-  ['Enter or F2', 'type a value, a formula or a source; any character begins a new value'],
-  ['Enter, Escape', 'while typing: keep it, take it back'],
-  ['Shift+Enter', 'everything of the line as a form'],
-  ['Ctrl+Enter', 'a new line at the foot of the section'],
-  ['Ctrl+Delete', 'remove the line'],
-  ['Alt+↑, Alt+↓', 'move the line up, down'],
-  ['<', 'to the origin of the line'],
-  ['>', 'to the use of the line'],
-  ['Backspace', 'back to the line before'],
-  ['Ctrl+Z, Ctrl+Y', 'undo, redo'],
-];
+const byKey: ReadonlyMap<string, Command> = new Map(
+  keyTable.flatMap(({ binds }) => binds.flatMap(([command, ...keys]) => keys.map((key) => [key, command] as const))),
+);
 
 export interface KeyPress {
   readonly key: string;
@@ -78,8 +106,6 @@ export interface KeyPress {
   readonly altKey: boolean;
   readonly shiftKey: boolean;
 }
-
-const byKey = new Map(bindings.flatMap(({ keys, command }) => keys.map((key) => [key, command] as const)));
 
 export function commandOf(press: KeyPress): Command | undefined {
   const mod = `${press.ctrlKey || press.metaKey ? 'Mod+' : ''}${press.altKey ? 'Alt+' : ''}`;

@@ -5,6 +5,7 @@ import 'katex/dist/katex.min.css';
 import './page.css';
 import './edit/edit.css';
 import './sheet.css';
+import './lines.css';
 import './print.css';
 import { readSheet } from '../sheet/index.ts';
 import exampleText from './example.sheet.json?raw';

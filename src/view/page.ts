@@ -11,7 +11,8 @@ import { keyed } from 'lit/directives/keyed.js';
 import type { Desk } from './desk.ts';
 import { PageElement } from './element.ts';
 import { fitAll } from './fit.ts';
-import { commandOf, keyList } from './keys.ts';
+import { keyDialog, showKeys } from './key-list.ts';
+import { commandOf } from './keys.ts';
 import { mark } from './mark.ts';
 import { typesetAll } from './math.ts';
 import { keptWord, notices } from './notices.ts';
@@ -76,6 +77,7 @@ export class PageElementRoot extends PageElement {
     addEventListener('dragover', this.#onDrag);
     addEventListener('dragleave', this.#onDrag);
     addEventListener('drop', this.#onDrop);
+    this.addEventListener('show-keys', () => showKeys(this));
     this.addEventListener('walk', (event) => void this.#onWalk(event as CustomEvent<Walk>));
   }
 
@@ -135,7 +137,7 @@ export class PageElementRoot extends PageElement {
         ${
           this.narrow
             ? html`<details class="outline"><summary>Sections and criteria</summary>${outline(model, this.section, goTo)}</details>`
-            : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}${keys()}</aside>`
+            : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}</aside>`
         }
         <main id="paper">${told}${keyed(
           desk,
@@ -144,6 +146,7 @@ export class PageElementRoot extends PageElement {
         )}</main>
         <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${this.narrow ? nothing : beside}${openPoints(desk, goTo)}</aside>
       </div>
+      ${keyDialog()}
       <p class="unseen" role="status">${desk.announcement}</p>`;
   }
 
@@ -207,6 +210,7 @@ export class PageElementRoot extends PageElement {
         <button type="button" ?disabled=${desk.redoLabel === null} title=${desk.redoLabel === null ? nothing : `Redo: ${desk.redoLabel}`} @click=${() => desk.redo()}>Redo</button>
         <button type="button" title=${session.fileName === null ? 'Save the sheet as a file' : `Save the sheet in ${session.fileName}`} @click=${() => void session.saveFile()}>Save as file</button>
         <button type="button" @click=${() => print()}>Print</button>
+        <button type="button" title="The keys of the page: ?" @click=${() => showKeys(this)}>Keys</button>
       </div>
     </header>`;
   }
@@ -358,6 +362,3 @@ export class PageElementRoot extends PageElement {
 
 /** Where a row asks to go, or that what is unfolded under it be folded. */
 type Walk = 'origin' | 'use' | 'back' | 'fold' | 'leave';
-
-const keys = () =>
-  html`<details class="keys"><summary>Keys</summary><dl>${keyList.map(([key, does]) => html`<div><dt>${key}</dt><dd>${does}</dd></div>`)}</dl></details>`;

@@ -9,11 +9,16 @@ import { html, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
-import type { Desk, InPlace, NewCell } from './desk.ts';
+import type { Desk, InPlace } from './desk.ts';
+import { hasFormula } from './drafts.ts';
 import { PageElement } from './element.ts';
 import { foot, head, titleBlock } from './heads.ts';
-import { entryRow, hasFormula, loadEditing } from './in-place.ts';
-import { type Command, commandOf, isWriting } from './keys.ts';
+import { loadEditing } from './in-place.ts';
+import { commandOf, isWriting } from './keys.ts';
+import { type LineCommand, LineCommands } from './line-commands.ts';
+import { NewLines } from './new-lines.ts';
+import type { PaperHost } from './paper-host.ts';
+import { type Section, sectionsOf, titleOf } from './sections.ts';
 import { cellOf } from './share.ts';
 
 interface Place {
@@ -26,11 +31,6 @@ interface PlacedCell extends Place {
   readonly row: HTMLElement;
 }
 
-interface Section {
-  readonly key: string;
-  readonly lines: readonly Line[];
-}
-
 const noProblems: readonly CellProblem[] = [];
 const pageStep = 8;
 
@@ -41,6 +41,7 @@ export class PaperElement extends PageElement {
     printing: { attribute: false },
     beside: { attribute: false },
     foldable: { attribute: false },
+    menu: { state: true },
   };
   declare desk: Desk;
   /** Raised by the page whenever the desk has changed. */
@@ -49,10 +50,21 @@ export class PaperElement extends PageElement {
   /** Origin and use of the chosen row, where the window has no room for them at the side. */
   declare beside: TemplateResult | null;
   declare foldable: boolean;
+  /** The commands of the chosen line are unfolded. */
+  declare menu: boolean;
   #place: Place | null = null;
   #pressed: PlacedCell | null = null;
-  /** Sections whose new line is open, by key. */
-  readonly #entries = new Set<string>();
+  readonly #host: PaperHost = {
+    element: this,
+    desk: () => this.desk,
+    place: () => this.#place,
+    focus: (cell, column) => this.#focus(cell, column),
+    redraw: () => this.requestUpdate(),
+    drawn: () => this.#drawn(),
+  };
+  readonly #newLines = new NewLines(this.#host);
+  readonly #lines = new LineCommands(this.#host);
+  #run: ReadonlySet<string> = new Set();
   #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
     all: noProblems,
     of: new Map(),
@@ -64,16 +76,22 @@ export class PaperElement extends PageElement {
     const sections = sectionsOf(model.lines);
     const heads = model.cases.length === 1 && model.cases[0]?.title === '' ? ['Result'] : model.cases.map((one) => one.title);
     this.#sortProblems();
+    this.#run = new Set(desk.run);
+    this.#newLines.settle(
+      sections.map(({ key }) => key),
+      new Set(model.lines.map(cellOf)),
+    );
     const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
     return html`${titleBlock(model)}${head(desk)}
-      <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} @keydown=${this.#onKey} @focusin=${this.#onFocus}
-        @focusout=${this.#onLeave} @pointerdown=${this.#onPress} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel} @edit-all=${this.#onEditAll}>
+      <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} aria-multiselectable="true" @keydown=${this.#onKey} @focusin=${this.#onFocus}
+        @focusout=${this.#onLeave} @pointerdown=${this.#onPress} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel} @line-command=${this.#onLineCommand}
+        @copy=${this.#onClipboard} @cut=${this.#onClipboard} @paste=${this.#onClipboard} @mousedown=${this.#onMouse}>
         <div role="rowgroup" class="heads">${this.#columnHeads(heads)}</div>
         ${repeat(
           sections,
           (section) => section.key,
           (section) => html`<div role="rowgroup" class="section" id=${`section-${section.key}`} data-section=${section.key}>
-            ${repeat(section.lines, cellOf, (line, index) => html`${this.#row(line, place)}${this.printing && index === 0 ? this.#columnHeads(heads) : nothing}`)}
+            ${repeat(section.lines, cellOf, (line, index) => html`${this.#row(line, place)}${this.#below(line)}${this.printing && index === 0 ? this.#columnHeads(heads) : nothing}`)}
             ${this.printing ? nothing : this.#entryRow(section)}
           </div>`,
         )}
@@ -110,7 +128,7 @@ export class PaperElement extends PageElement {
     const former = line.kind === 'step' && line.step.kind === 'given' ? formerText(desk, cell) : '';
     return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.drawn.cases}
       .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
-      .chosen=${desk.chosen === cell} .editing=${editing} .inPlace=${inPlace} .printing=${this.printing} .former=${former}
+      .chosen=${desk.chosen === cell} .inRun=${this.#run.has(cell)} .menu=${this.menu && desk.chosen === cell} .editing=${editing} .inPlace=${inPlace} .printing=${this.printing} .former=${former}
       .beside=${desk.chosen === cell && !this.printing ? this.beside : null}
       .foldable=${this.foldable && desk.chosen === cell && !this.printing}></ts-row>`;
   }
@@ -118,43 +136,19 @@ export class PaperElement extends PageElement {
   #entryRow({ key, lines }: Section) {
     const [first] = lines;
     const last = lines.at(-1);
-    const open = this.#entries.has(key) || (this.desk.newLine?.section === key && this.desk.newLine.text !== '');
-    return entryRow(this.desk, first?.kind === 'heading' ? first.text : '', open, key, {
-      begin: () => void this.#enter(key),
-      entry: ({ draft }) => void this.#insert(key, draft, last === undefined ? null : cellOf(last)),
-      leave: () => {
-        this.#entries.delete(key);
-        this.#focus(this.#place?.cell ?? (last === undefined ? '' : cellOf(last)), this.#place?.column ?? 1);
-        this.requestUpdate();
-      },
-    });
+    return this.#newLines.foot(key, first?.kind === 'heading' ? first.text : '', last === undefined ? null : cellOf(last));
   }
 
-  /** Opens the new line of a section and puts the focus into it. */
-  async #enter(key: string) {
-    await loadEditing();
-    this.#entries.add(key);
-    this.requestUpdate();
-    await this.updateComplete;
-    const line = this.#sectionOf(key)?.querySelector<HTMLElement & { updateComplete?: Promise<unknown> }>('ts-entry-line');
-    await line?.updateComplete;
-    line?.scrollIntoView({ block: 'nearest' });
-    line?.focus();
-  }
-
-  async #insert(key: string, draft: NewCell, after: string | null) {
-    const id = this.desk.insert(draft, after);
-    await this.#drawn();
-    // What follows a new section belongs to it.
-    if (this.#sectionOf(id) !== null) {
-      this.#entries.delete(key);
-      await this.#enter(id);
-    }
-    this.#rowOf(id)?.parentElement?.querySelector('ts-entry-line')?.scrollIntoView({ block: 'nearest' });
-  }
-
-  #sectionOf(key: string): HTMLElement | null {
-    return this.querySelector(`[data-section="${CSS.escape(key)}"]`);
+  /** What stands under a row for a while: a new line, words about what was done. */
+  #below(line: Line) {
+    const cell = cellOf(line);
+    if (this.printing) return nothing;
+    const { told } = this.desk;
+    const words =
+      told?.cell === cell
+        ? html`<div role="row" class="row told"><div role="gridcell" class="source"></div><div role="gridcell" class="calculation across"><p class="remark">${told.words}</p></div></div>`
+        : nothing;
+    return html`${words}${this.#newLines.isOpenBelow(cell) ? this.#newLines.below(cell, titleOf(line)) : nothing}`;
   }
 
   /** What the desk has now stands on the paper. */
@@ -163,17 +157,23 @@ export class PaperElement extends PageElement {
     await this.updateComplete;
   }
 
-  #onEditAll = (event: Event) => {
+  #onLineCommand = (event: CustomEvent<LineCommand>) => {
     const at = this.#cellAt(event.target);
-    if (at !== null) void this.#inPlace(at.cell, 'fields');
+    if (at === null) return;
+    // The button of a given means its number.
+    if (event.detail === 'edit' && at.row.classList.contains('given')) this.desk.begin(at.cell, 'value', this.desk.reading);
+    else this.#does(event.detail, at);
   };
+  #onClipboard = (event: ClipboardEvent) => this.#lines.onClipboard(event);
 
-  async #move(at: Place, step: -1 | 1) {
-    if (!this.desk.move(at.cell, step)) return;
-    await this.#drawn();
+  /** With Shift a press makes the run of chosen lines reach to its row. */
+  #onMouse = (event: MouseEvent) => {
+    const at = event.shiftKey ? this.#cellAt(event.target) : null;
+    if (at === null || this.desk.editing !== null || this.desk.inPlace !== null || isField(event.target)) return;
+    event.preventDefault();
+    this.desk.extend(at.cell);
     this.#focus(at.cell, at.column);
-    this.#rowOf(at.cell)?.scrollIntoView({ block: 'nearest' });
-  }
+  };
 
   #sortProblems() {
     const all = this.desk.drawn.problems;
@@ -203,11 +203,11 @@ export class PaperElement extends PageElement {
     return this.querySelector(`ts-row[data-cell="${CSS.escape(cell)}"]`);
   }
 
-  #focus(cell: string, column: number) {
+  #focus(cell: string, column: number): boolean {
     const cells = [...(this.#rowOf(cell)?.querySelectorAll<HTMLElement>('[data-column]') ?? [])];
-    if (cells.length === 0) return;
     const target = cells.find((one) => Number(one.dataset['column']) === column) ?? cells[cells.length - 1];
     target?.focus();
+    return target !== undefined;
   }
 
   #cellAt(target: EventTarget | null): PlacedCell | null {
@@ -226,6 +226,7 @@ export class PaperElement extends PageElement {
       this.requestUpdate();
     }
     if (this.desk.chosen === at.cell) return;
+    this.menu = false;
     const top = at.row.getBoundingClientRect().top;
     if (this.beside !== null) this.dispatchEvent(new CustomEvent('walk', { detail: 'leave', bubbles: true }));
     this.desk.choose(at.cell);
@@ -257,7 +258,8 @@ export class PaperElement extends PageElement {
     const hit = this.#cellAt(event.target);
     // A press makes its row the chosen one, and the row may grow before the pointer is lifted: what was pressed counts.
     const at = this.#pressed !== null && this.#pressed.row === hit?.row ? this.#pressed : hit;
-    if (at === null || isField(event.target) || (event.target as Element).closest('a, button, label')) return;
+    if (at === null || event.shiftKey || isField(event.target) || (event.target as Element).closest('a, button, label')) return;
+    if (this.desk.run.length > 1) this.desk.choose(at.cell);
     const target = event.target as Element;
     if (target.closest('.in-place')) return;
     const onFormula = target.closest('.formula') !== null && this.#formulaAt(at.cell);
@@ -334,6 +336,12 @@ export class PaperElement extends PageElement {
     if (event.target instanceof HTMLButtonElement || event.target instanceof HTMLAnchorElement) {
       if (event.key === 'Enter' || event.key === ' ') return;
     }
+    if (event.key === 'Escape' && (this.menu || this.desk.run.length > 1)) {
+      this.menu = false;
+      this.desk.choose(at.cell);
+      this.#focus(at.cell, at.column);
+      return;
+    }
     const command = commandOf(event);
     if (command !== undefined && this.#does(command, at)) {
       event.preventDefault();
@@ -345,7 +353,8 @@ export class PaperElement extends PageElement {
     }
   };
 
-  #does(command: Command, at: PlacedCell): boolean {
+  #does(command: LineCommand, at: PlacedCell): boolean {
+    if (this.#lines.do(command, at.column)) return true;
     const rows = () => [...this.querySelectorAll<HTMLElement>('ts-row')];
     const columns = [...at.row.querySelectorAll<HTMLElement>('[data-column]')].map((one) => Number(one.dataset['column']));
     const toRow = (index: number) => {
@@ -399,19 +408,19 @@ export class PaperElement extends PageElement {
         void this.#inPlace(at.cell, 'fields');
         return true;
       case 'new-line':
-        void this.#enter(at.row.parentElement?.dataset['section'] ?? '');
+        void this.#newLines.enter(at.row.parentElement?.dataset['section'] ?? '');
         return true;
-      case 'remove': {
-        const all = rows();
-        const next = all[index() + 1] ?? all[index() - 1];
-        // The neighbour takes the focus before the row goes, so that it is never lost.
-        if (next !== undefined) this.#focus(next.dataset['cell'] ?? '', at.column);
-        this.desk.remove(at.cell);
+      case 'line-below':
+        void this.#newLines.enterBelow(at.cell);
         return true;
-      }
-      case 'move-up':
-      case 'move-down':
-        void this.#move(at, command === 'move-up' ? -1 : 1);
+      case 'line-menu':
+        this.menu = !this.menu;
+        void this.#drawn().then(() =>
+          this.menu ? at.row.querySelector<HTMLElement>('.line-actions button')?.focus() : this.#focus(at.cell, at.column),
+        );
+        return true;
+      case 'keys':
+        this.dispatchEvent(new CustomEvent('show-keys', { bubbles: true }));
         return true;
       case 'origin':
       case 'use':
@@ -432,16 +441,4 @@ function formerText(desk: Desk, cell: string): string {
   const former = desk.formerProvenance(cell);
   if (former === undefined) return '';
   return [former.source ?? '', former.basis ?? ''].filter((part) => part !== '').join(', ');
-}
-
-/** Lines from one first-level heading to the next. */
-function sectionsOf(lines: readonly Line[]): readonly Section[] {
-  const sections: { key: string; lines: Line[] }[] = [];
-  for (const line of lines) {
-    const last = sections[sections.length - 1];
-    if (last === undefined || (line.kind === 'heading' && line.level === 1)) sections.push({ key: cellOf(line), lines: [line] });
-    else last.lines.push(line);
-  }
-  // A sheet without a line still has a place where the first one is typed.
-  return sections.length === 0 ? [{ key: '', lines: [] }] : sections;
 }

@@ -14,6 +14,7 @@ import { PageElement } from './element.ts';
 import { equation } from './equation.ts';
 import { heldValue } from './given.ts';
 import { fieldsInPlace, focusInPlace, formulaInPlace } from './in-place.ts';
+import { lineActions, lineWords } from './line-actions.ts';
 import { otherLine } from './lines.ts';
 import { quantity, source } from './text.ts';
 import { waits } from './waiting.ts';
@@ -27,6 +28,8 @@ export class RowElement extends PageElement {
     reading: { attribute: false },
     column: { attribute: false },
     chosen: { attribute: false },
+    inRun: { attribute: false },
+    menu: { attribute: false },
     editing: { attribute: false },
     inPlace: { attribute: false },
     printing: { attribute: false },
@@ -42,6 +45,10 @@ export class RowElement extends PageElement {
   /** The cell of this row that is in the tab order; -1: none. */
   declare column: number;
   declare chosen: boolean;
+  /** One of the chosen lines. */
+  declare inRun: boolean;
+  /** The commands of the line are unfolded. */
+  declare menu: boolean;
   declare editing: Editing | null;
   declare inPlace: InPlace | null;
   declare printing: boolean;
@@ -54,15 +61,20 @@ export class RowElement extends PageElement {
   protected override render() {
     const { line } = this;
     if (line.kind !== 'step')
-      return otherLine(line, (column) => (this.column === column ? 0 : -1), this.problems, html`${this.#toAll()}${this.#all()}`);
+      return otherLine(
+        line,
+        (column) => (this.column === column ? 0 : -1),
+        this.problems,
+        html`${this.#words()}${this.#actions()}${this.#all()}`,
+      );
     return this.#step(line.step);
   }
 
   protected override updated(changed: PropertyValues<this>) {
     const { line, chosen } = this;
     const choices = line.kind === 'step' && this.querySelector('.across') !== null;
-    this.className = `row ${line.kind}${choices ? ' choices' : ''}${line.kind === 'step' ? ` ${line.step.kind}` : ''}${chosen ? ' chosen' : ''}`;
-    if (line.kind === 'step') this.setAttribute('aria-selected', String(chosen));
+    this.className = `row ${line.kind}${choices ? ' choices' : ''}${line.kind === 'step' ? ` ${line.step.kind}` : ''}${chosen ? ' chosen' : ''}${this.inRun ? ' in-run' : ''}`;
+    this.setAttribute('aria-selected', String(this.inRun));
     if (changed.has('editing') && this.editing !== null && changed.get('editing')?.field !== this.editing.field) focusField(this);
     if (changed.has('inPlace') && this.inPlace !== null && changed.get('inPlace')?.what !== this.inPlace.what)
       void focusInPlace(this);
@@ -76,10 +88,15 @@ export class RowElement extends PageElement {
       : nothing;
   }
 
-  #toAll() {
-    if (!this.chosen || this.printing || this.inPlace !== null || this.editing !== null) return nothing;
-    const open = () => this.dispatchEvent(new CustomEvent('edit-all', { bubbles: true }));
-    return html`<button type="button" class="word edit-all" title="Everything of the line as a form: Shift+Enter" @click=${open}>Edit all</button>`;
+  /** What can be done with the line, in words at the line. */
+  get #isQuiet() {
+    return this.chosen && !this.printing && this.inPlace === null && this.editing === null;
+  }
+  #words() {
+    return this.#isQuiet ? lineWords(this.menu) : nothing;
+  }
+  #actions() {
+    return this.#isQuiet && this.menu ? lineActions(this.desk.run.length) : nothing;
   }
 
   #brought() {
@@ -107,12 +124,13 @@ export class RowElement extends PageElement {
       </div>
       <div role="gridcell" class="calculation ${choices === undefined ? '' : 'across'}" data-column="1" tabindex=${this.#tab(1)}
         aria-readonly=${choices === undefined && step.kind === 'given' ? 'true' : nothing}>
-        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}${this.foldable ? this.#fold() : nothing}${this.#toAll()}</div>
+        <div class="label"><span class="number">${step.number}</span> <span class="title">${step.title}</span>${state.filter(isLong).map(tag)}${this.foldable ? this.#fold() : nothing}${this.#words()}</div>
         <div class="formula">
           ${this.inPlace?.what === 'formula' ? html`${formulaInPlace(this.desk, this.inPlace)}${this.#brought()}` : equation(step, this.reading, this.cases, this.printing)}
           ${choices === undefined ? nothing : this.#choice(step, editingValue, choices)}
         </div>
         ${this.#below(step, remarks, editingValue)}
+        ${this.#actions()}
         ${this.#all()}
       </div>
       ${choices === undefined ? step.cases.map((each, index) => this.#result(step, each, index, editingValue)) : nothing}
