@@ -6,6 +6,7 @@
 // 4. The script of the first screen has a limit, and the build fails beyond it.
 // Not here: the linter (.biome.jsonc) and the order of the steps of a full test (test/run.mjs).
 
+import { readFileSync } from 'node:fs';
 import { gzipSync } from 'node:zlib';
 import type { Plugin } from 'vite';
 import { defineConfig } from 'vitest/config';
@@ -24,6 +25,23 @@ const woff2Only: Plugin = {
   transform(code, id) {
     if (!/\.css($|\?)/.test(id) || !code.includes('woff')) return null;
     return { code: code.replace(unusedFaces, '').replace(olderFormats, ''), map: null };
+  },
+};
+
+/** The same faces in the typesetter's table of sizes, and the example without its white space. */
+const unusedSizes = /"(?:AMS|Caligraphic|Fraktur|SansSerif|Script|Typewriter|(?:Main|Math)-Bold)\w*(?:-\w+)?": \{[^}]*\}/g;
+const lessText: Plugin = {
+  name: 'less-text',
+  enforce: 'pre',
+  transform(code, id) {
+    if (/katex\.mjs$/.test(id)) return { code: code.replace(unusedSizes, (face) => face.replace(/\{[^}]*\}/, '{}')), map: null };
+    return null;
+  },
+  load(id) {
+    const file = id.replace(/\?raw$/, '');
+    if (!id.endsWith('.sheet.json?raw')) return null;
+    this.addWatchFile(file);
+    return `export default ${JSON.stringify(JSON.stringify(JSON.parse(readFileSync(file, 'utf8'))))};`;
   },
 };
 
@@ -50,7 +68,7 @@ const firstScreenSize: Plugin = {
 export default defineConfig(({ mode }) => ({
   base: './',
   resolve: { tsconfigPaths: false },
-  plugins: [woff2Only, ...(mode === 'cli' ? [] : [firstScreenSize, offlineFiles()])],
+  plugins: [woff2Only, ...(mode === 'cli' ? [] : [lessText, firstScreenSize, offlineFiles()])],
   build:
     mode === 'cli'
       ? {
@@ -66,8 +84,14 @@ export default defineConfig(({ mode }) => ({
           target: 'es2022',
           emptyOutDir: true,
           assetsInlineLimit: 0,
-          modulePreload: { polyfill: false },
+          modulePreload: false,
           chunkSizeWarningLimit: 1000,
+          // No file of ours does anything when it is merely imported, but for the beginnings of the page and of its worker.
+          rolldownOptions: {
+            treeshake: {
+              moduleSideEffects: [{ test: /\/src\/(?!view\/main\.ts|store\/offline-worker).*\.ts$/u, sideEffects: false }],
+            },
+          },
         },
   ssr: { noExternal: true as const },
   test: {

@@ -4,35 +4,20 @@
 //    (a typed angle, which has no digits in rad, gets them from the closing).
 // 2. A line is evaluated with the doubles of the printed numerals, along the branches and rows that the true values take.
 // 3. It closes when that comes within one unit of the last digit of the printed result, in the declared unit and in SI.
-// Not here: raising digits (closing.ts), TeX (steps.ts), the criterion's own numbers (verdict.ts).
+// 4. What stayed as it was in the print of before is taken over (memory.ts).
+// Not here: raising digits (closing.ts), TeX (steps.ts), the criterion's own numbers (criterion-numbers.ts).
 
 import { canonicalName, type Formula, type Taken } from '../formula/index.ts';
-import { isAngleUnit, type Numeral, one, type Unit, unitOf } from '../quantity/index.ts';
+import { isAngleUnit, type Numeral, one, unitOf } from '../quantity/index.ts';
 import type { Calculation, CriterionState, DerivedState } from '../sheet/index.ts';
 import { type ClosingItem, type ClosingStep, closeSteps, type OpenReason, type Verdict } from './closing.ts';
 import { comesOut, lastUnit } from './comes-out.ts';
+import { type CriterionNumbers, criterionNumbers, type OwnSide, type PrintedVerdict } from './criterion-numbers.ts';
 import { type Line, type Operand, readLine } from './line.ts';
-import { calculatorNumeral, computedNumber, type PrintedNumber, typedNumber } from './numerals.ts';
+import { type CaseMemory, remembered, takeOver } from './memory.ts';
+import { calculatorNumeral, computedNumber, type Printed, type PrintedNumber, typedNumber } from './numerals.ts';
 import { type ComputedState, stepOrder } from './step-order.ts';
-import { demandIsLeft, holds, room, utilisationNumeral } from './verdict.ts';
-
-export interface Printed {
-  readonly numeral: Numeral;
-  readonly unit: Unit;
-  /** Coherent SI of the numeral, as it enters a line. */
-  readonly si: number;
-}
-
-/** What a criterion prints: its sides, and its utilisation or the room that is left. */
-export interface PrintedVerdict {
-  readonly sides: readonly [Printed, Printed];
-  readonly result: Printed;
-  readonly calculator: Numeral;
-  readonly isUtilisation: boolean;
-  readonly met: boolean;
-  /** True where no printed digits can show which side is greater. */
-  readonly tooClose: boolean;
-}
+import { holds } from './verdict.ts';
 
 export interface CasePrint {
   readonly index: number;
@@ -43,9 +28,10 @@ export interface CasePrint {
   verdict(cell: string): PrintedVerdict | undefined;
 }
 
-export function printCases(calculation: Calculation): readonly CasePrint[] {
+/** Each case of `memories` holds what the print of before may leave to this one. */
+export function printCases(calculation: Calculation, memories: readonly CaseMemory[]): readonly CasePrint[] {
   const order = stepOrder(calculation);
-  return calculation.cases.map((_, index) => printCase(calculation, index, order));
+  return memories.map((memory, index) => printCase(calculation, index, order, memory));
 }
 
 /** A number on a line; typed ones have no item (-1), their digits are fixed. */
@@ -55,9 +41,8 @@ interface Slot {
 }
 
 const radian = unitOf('rad');
-const kelvin = unitOf('K');
 
-function printCase(calculation: Calculation, index: number, order: readonly ComputedState[]): CasePrint {
+function printCase(calculation: Calculation, index: number, order: readonly ComputedState[], memory: CaseMemory): CasePrint {
   const items: ClosingItem[] = [];
   /** The numerals that share a counter of digits: the one in the unit and, for an angle in an exponent, the one in rad. */
   const allForms: PrintedNumber[][] = [];
@@ -66,7 +51,7 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
   const lines = new Map<Formula, Line>();
   const slots = new Map<string, Slot | undefined>();
   const exponents = new Map<string, Slot | undefined>();
-  const verdicts = new Map<string, (digits: ArrayLike<number>) => Omit<PrintedVerdict, 'tooClose'>>();
+  const verdicts = new Map<string, (digits: ArrayLike<number>, tooClose: boolean) => PrintedVerdict>();
   const lookup = calculation.lookup(index);
   const start = calculation.digits;
 
@@ -79,7 +64,11 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
   const line = (formula: Formula): Line | undefined => {
     const known = lines.get(formula);
     if (known) return known;
-    const read = readLine(formula.expr, lookup, calculation.style.decimalSign);
+    const reasons = [
+      ...formula.names.map((name) => calculation.named(name)),
+      ...formula.tables.map((name) => calculation.table(name)),
+    ];
+    const read = takeOver(memory.lines, formula, reasons, () => readLine(formula.expr, lookup, calculation.style.decimalSign));
     if (read) lines.set(formula, read);
     return read;
   };
@@ -96,10 +85,12 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     if (state === undefined || si === undefined || !Number.isFinite(si)) return undefined;
     if (state.kind === 'given') {
       const value = state.values[index];
-      return value && { number: typedNumber(value.numeral, value.unit), item: -1 };
+      const number = takeOver(memory.numbers, name, [state], () => value && typedNumber(value.numeral, value.unit));
+      return number && { number, item: -1 };
     }
     const whole = state.kind === 'derived' && state.formula !== undefined && line(state.formula)?.whole === true;
-    return newSlot(computedNumber(si, state.unit ?? one, whole));
+    const number = takeOver(memory.numbers, name, [state, whole], () => computedNumber(si, state.unit ?? one, whole));
+    return number && newSlot(number);
   };
   /** The form inside exponents: angles in rad. A derived angle keeps its counter of digits, a typed one gets its own. */
   const exponentSlot = (name: string): Slot | undefined => {
@@ -107,7 +98,7 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     let slot = slotOf(name);
     const si = calculation.named(name)?.si[index];
     if (slot !== undefined && si !== undefined && isAngleUnit(slot.number.unit) && slot.number.unit.text !== radian.text) {
-      const number = computedNumber(si, radian);
+      const number = takeOver(memory.radians, name, [slot.number], () => computedNumber(si, radian));
       allForms[slot.item]?.push(number);
       slot = slot.item >= 0 ? { number, item: slot.item } : newSlot(number);
     }
@@ -119,10 +110,7 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     const slot = inExponent ? exponentSlot(name) : slotOf(name);
     return slot === undefined ? Number.NaN : slot.number.si(at(slot, digits));
   };
-  const printedAt = (slot: Slot, digits: ArrayLike<number>): Printed => {
-    const d = at(slot, digits);
-    return { numeral: slot.number.numeral(d), unit: slot.number.unit, si: slot.number.si(d) };
-  };
+  const printedAt = (slot: Slot, digits: ArrayLike<number>): Printed => slot.number.printed(at(slot, digits));
   const itemsOf = (operands: readonly Operand[]): readonly number[] => {
     const found = new Set<number>();
     for (const { name, inExponent } of operands) {
@@ -131,29 +119,50 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     }
     return [...found];
   };
-  const addStep = (cell: string, about: 'line' | 'decisions' | 'relation', step: ClosingStep) => {
+  /** `reasons`: all that the verdict depends on beside the numbers that the line looks at and their digits. */
+  const addStep = (
+    cell: string,
+    about: 'line' | 'decisions' | 'relation',
+    step: ClosingStep,
+    reasons: readonly unknown[],
+    looks: readonly Slot[],
+  ) => {
+    const key = `${about} ${owners.at(-1)?.about === about && owners.at(-1)?.cell === cell ? 'again ' : ''}${cell}`;
+    const judged = takeOver(memory.judged, key, [...reasons, ...looks.map((slot) => slot.number)], () => ({
+      verdicts: new Map(),
+      scaled: new Map(),
+    }));
     owners.push({ cell, about });
-    steps.push(step);
+    steps.push(remembered(step, [...new Set(looks.map((slot) => slot.item).filter((item) => item >= 0))], judged));
   };
+  const slotsOf = (operands: readonly Operand[]): readonly Slot[] =>
+    operands.flatMap(({ name, inExponent }) => (inExponent ? exponentSlot(name) : slotOf(name)) ?? []);
   /** A reader with the printed numbers must take the same branches and come to the same whole numbers. */
   const addDecisions = (cell: string, own: Line) => {
     if (own.decisive.length === 0) return;
-    addStep(cell, 'decisions', {
-      operands: itemsOf(own.decisive),
-      result: -1,
-      judge: (digits) => (own.sameWay(numbers(digits)) ? 'closed' : 'jump'),
-    });
+    addStep(
+      cell,
+      'decisions',
+      {
+        operands: itemsOf(own.decisive),
+        result: -1,
+        judge: (digits) => (own.sameWay(numbers(digits)) ? 'closed' : 'jump'),
+      },
+      [own],
+      slotsOf(own.decisive),
+    );
   };
 
   const addDerived = (state: DerivedState) => {
     const si = state.si[index];
     const slot = slotOf(canonicalName(state.cell.name));
-    if (state.formula === undefined || si === undefined || slot === undefined) return;
+    // A second line of the same name has no value, though the name has one.
+    if (state.formula === undefined || si === undefined || !Number.isFinite(si) || slot === undefined) return;
     const own = line(state.formula);
     if (own === undefined) return;
     const calculators: (Numeral | undefined)[] = [];
     const calculatorAt = (d: number) => (calculators[d] ??= calculatorNumeral(si, slot.number.numeral(d), slot.number.unit));
-    addStep(state.cell.id, 'line', {
+    const step: ClosingStep = {
       operands: itemsOf(own.operands),
       result: slot.item,
       judge: (digits): Verdict => {
@@ -165,48 +174,32 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
         return own.sameWay(values) ? 'cancellation' : 'jump';
       },
       scaled: (digits) => own.value(numbers(digits)) / lastUnit(calculatorAt(at(slot, digits))),
-    });
+    };
+    addStep(state.cell.id, 'line', step, [state, own], [slot, ...slotsOf(own.operands), ...slotsOf(own.decisive)]);
     addDecisions(state.cell.id, own);
   };
 
-  const sideSlot = (own: Line, si: number, unit: Unit, declared: boolean): Slot => {
-    if (own.alone?.kind === 'name') {
-      const slot = slotOf(own.alone.name);
+  const sideSlot = (own: OwnSide, { declared, unit }: CriterionNumbers): Slot => {
+    if (own.name !== undefined) {
+      const slot = slotOf(own.name);
       if (slot !== undefined && (!declared || slot.number.unit.text === unit.text)) return slot;
     }
-    // The literal 0 fits every unit: 0 N is printed beside newtons.
-    if (own.alone?.kind === 'number' && own.alone.unit.text === unit.text) {
-      return { number: typedNumber(own.alone.numeral, own.alone.unit), item: -1 };
-    }
-    const alone = own.alone?.kind === 'number' && !declared && si !== 0 ? own.alone : undefined;
-    if (alone) return { number: typedNumber(alone.numeral, alone.unit), item: -1 };
-    return newSlot(computedNumber(si, unit));
+    return own.typed ? { number: own.number, item: -1 } : newSlot(own.number);
   };
 
   const addCriterion = (state: CriterionState) => {
     const { left, right, cell } = state;
-    const leftSi = state.leftSi[index] ?? Number.NaN;
-    const rightSi = state.rightSi[index] ?? Number.NaN;
-    const met = state.met[index] ?? null;
     const leftLine = left && line(left);
     const rightLine = right && line(right);
-    if (left === undefined || right === undefined || leftLine === undefined || rightLine === undefined || met === null) return;
-    const unit = state.unit ?? one;
-    const declared = cell.unit !== undefined;
-    const sides = [sideSlot(leftLine, leftSi, unit, declared), sideSlot(rightLine, rightSi, unit, declared)] as const;
-    const utilisation = unit.reading === undefined ? (state.utilisation[index] ?? null) : null;
-    const resultUnit = utilisation !== null ? one : unit.reading === undefined ? unit : kelvin;
-    const trueResult = utilisation ?? room(leftSi, cell.relation, rightSi);
-    const result =
-      utilisation !== null
-        ? typedNumber(utilisationNumeral(utilisation, cell.relation, met), one)
-        : computedNumber(trueResult, resultUnit, false, 'down');
-    const calculator =
-      utilisation !== null ? result.numeral(start) : calculatorNumeral(trueResult, result.numeral(start), resultUnit, 'down');
-    const lineResult = (a: number, b: number) =>
-      utilisation === null ? room(a, cell.relation, b) : demandIsLeft(cell.relation) ? a / b : b / a;
+    if (leftLine === undefined || rightLine === undefined || state.met[index] == null) return;
+    const own = takeOver(memory.criteria, cell.id, [state, leftLine, rightLine], () =>
+      criterionNumbers(state, index, [leftLine, rightLine], start),
+    );
+    const { result, calculator, resultUnit, met, lineResult } = own;
+    const sides = [sideSlot(own.sides[0], own), sideSlot(own.sides[1], own)] as const;
     const operands = itemsOf([...leftLine.operands, ...rightLine.operands]);
-    addStep(cell.id, 'line', {
+    const looks = [leftLine, rightLine].flatMap((each) => [...slotsOf(each.operands), ...slotsOf(each.decisive)]);
+    const comes: ClosingStep = {
       operands,
       result: -1,
       judge: (digits): Verdict => {
@@ -219,8 +212,8 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
         const values = numbers(digits);
         return lineResult(leftLine.value(values), rightLine.value(values)) / lastUnit(calculator);
       },
-    });
-    addStep(cell.id, 'relation', {
+    };
+    const relation: ClosingStep = {
       operands: [...new Set([...operands, ...sides.flatMap((side) => (side.item < 0 ? [] : [side.item]))])],
       result: -1,
       judge: (digits): Verdict => {
@@ -230,16 +223,22 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
           holds(a, cell.relation, b) === met && holds(leftLine.value(values), cell.relation, rightLine.value(values)) === met;
         return shown ? 'closed' : 'cancellation';
       },
-    });
+    };
+    addStep(cell.id, 'line', comes, [own], looks);
+    addStep(cell.id, 'relation', relation, [own], [...looks, ...sides]);
     addDecisions(cell.id, leftLine);
     addDecisions(cell.id, rightLine);
-    verdicts.set(cell.id, (digits) => ({
-      sides: [printedAt(sides[0], digits), printedAt(sides[1], digits)],
-      result: { numeral: result.numeral(start), unit: resultUnit, si: result.si(start) },
-      calculator,
-      isUtilisation: utilisation !== null,
-      met,
-    }));
+    verdicts.set(cell.id, (digits, tooClose) => {
+      const shown = [printedAt(sides[0], digits), printedAt(sides[1], digits)] as const;
+      return takeOver(memory.verdicts, cell.id, [own, ...shown, tooClose], () => ({
+        sides: shown,
+        result: result.printed(start),
+        calculator,
+        isUtilisation: own.isUtilisation,
+        met,
+        tooClose,
+      }));
+    });
   };
 
   for (const state of order) {
@@ -263,9 +262,6 @@ function printCase(calculation: Calculation, index: number, order: readonly Comp
     },
     taken: (formula) => line(formula)?.taken,
     open: (cell) => open.get(cell),
-    verdict: (cell) => {
-      const verdict = verdicts.get(cell)?.(closing.digits);
-      return verdict && { ...verdict, tooClose: tooClose.has(cell) };
-    },
+    verdict: (cell) => verdicts.get(cell)?.(closing.digits, tooClose.has(cell)),
   };
 }

@@ -6,7 +6,7 @@ export { criteriaWords, footerCaution, recordHtml } from './html.ts';
 export type { Face, RecordAssets } from './html-style.ts';
 export { type JsonRecord, type JsonStep, type JsonStepCase, recordJson } from './json.ts';
 export { loadRecordAssets } from './load-assets.ts';
-export { makeRecord, printedValues, type RecordOptions } from './make.ts';
+export { type MakeRecord, makeRecord, printedValues, type RecordOptions, recordMaker } from './make.ts';
 export type {
   Assumption,
   CriterionSummary,

@@ -9,6 +9,7 @@ import type { Calculation, CellState, LoadCase, NoteState, TableState, TemplateC
 import { type CasePrint, printCases } from './case-print.ts';
 import { comparisonWords, templateWords, withTemplate } from './from-template.ts';
 import { assumptionsOf, openPointsOf, referencesOf, summaryOf } from './heads.ts';
+import { type Heard, type LineReasons, type Memory, newMemory, same } from './memory.ts';
 import type { Line, RecordModel } from './model.ts';
 import { readProse } from './prose.ts';
 import { makeStep, printedValue } from './steps.ts';
@@ -21,7 +22,7 @@ export interface RecordOptions {
 
 /** Printed values of every quantity, by cell id, one entry a case: the numerals of the record without its typesetting. */
 export function printedValues(calculation: Calculation): ReadonlyMap<string, readonly (string | null)[]> {
-  const prints = printCases(calculation);
+  const prints = printCases(calculation, newMemory()(calculation).cases);
   const printed = new Map<string, readonly (string | null)[]>();
   for (const cell of calculation.sheet.cells) {
     const state = calculation.state(cell.id);
@@ -34,14 +35,24 @@ export function printedValues(calculation: Calculation): ReadonlyMap<string, rea
   return printed;
 }
 
-export function makeRecord(calculation: Calculation, options: RecordOptions = {}): RecordModel {
+export type MakeRecord = (calculation: Calculation, options?: RecordOptions) => RecordModel;
+
+/** Makes one record of a sheet after the other, each from what changed since the last; equal to what `makeRecord` gives. */
+export function recordMaker(): MakeRecord {
+  const remember = newMemory();
+  return (calculation, options = {}) => make(calculation, options, remember(calculation));
+}
+
+export const makeRecord: MakeRecord = (calculation, options) => recordMaker()(calculation, options);
+
+function make(calculation: Calculation, options: RecordOptions, memory: Memory): RecordModel {
   const { sheet } = calculation;
-  const prints = printCases(calculation);
+  const prints = printCases(calculation, memory.cases);
   const titles = calculation.cases.map(caseTitle);
   const plain: Line[] = [];
   for (const cell of sheet.cells) {
     const state = calculation.state(cell.id);
-    if (state !== undefined) plain.push(lineOf(calculation, state, prints, titles));
+    if (state !== undefined) plain.push(keptLine(calculation, state, prints, titles, memory));
   }
   const lines = withTemplate(plain, options.template);
   const steps = lines.flatMap((line) => (line.kind === 'step' ? [line.step] : []));
@@ -91,6 +102,60 @@ function originOf(calculation: Calculation, comparison: TemplateComparison | und
     parts.push(`${same ? '' : `beside ${templateWords(comparison)}: `}${comparisonWords(comparison)}`);
   }
   return parts.join('; ');
+}
+
+/** The line of the record before, where nothing that it says or prints has moved. */
+function keptLine(
+  calculation: Calculation,
+  state: CellState,
+  prints: readonly CasePrint[],
+  titles: readonly string[],
+  { lines }: Memory,
+): Line {
+  const grounds = groundsOf(calculation, state, prints);
+  const holds = ({ reasons, heard }: LineReasons) =>
+    same(reasons, grounds) &&
+    heard.every(({ index, name, inExponent, answer }) => prints[index]?.printed(name, inExponent) === answer);
+  return lines.take(state.cell.id, holds, () => {
+    const heard: Heard[] = [];
+    const listening = prints.map(
+      (print): CasePrint => ({
+        ...print,
+        printed: (name, inExponent = false) => {
+          const answer = print.printed(name, inExponent);
+          heard.push({ index: print.index, name, inExponent, answer });
+          return answer;
+        },
+      }),
+    );
+    return { reasons: { reasons: grounds, heard }, value: lineOf(calculation, state, listening, titles) };
+  });
+}
+
+/** All that a line is made from, but for the printed numbers. */
+function groundsOf(calculation: Calculation, state: CellState, prints: readonly CasePrint[]): readonly unknown[] {
+  const { cell } = state;
+  const grounds: unknown[] = [state, calculation.numberOf(cell.id)];
+  const use = (name: string) => {
+    const used = calculation.named(name);
+    grounds.push(used, used === undefined ? '' : calculation.numberOf(used.cell.id));
+  };
+  if (state.kind === 'note') for (const { name } of state.live) use(name);
+  const formulas =
+    state.kind === 'derived'
+      ? [state.formula]
+      : state.kind === 'criterion' || state.kind === 'sought'
+        ? [state.left, state.right]
+        : [];
+  for (const formula of formulas) {
+    if (formula === undefined) continue;
+    for (const name of formula.names) use(name);
+    for (const name of formula.tables) grounds.push(calculation.table(name));
+    if (state.kind !== 'sought') for (const print of prints) grounds.push(print.taken(formula));
+  }
+  if (state.kind === 'derived' || state.kind === 'criterion')
+    for (const print of prints) grounds.push(print.open(cell.id), print.verdict(cell.id));
+  return grounds;
 }
 
 function lineOf(calculation: Calculation, state: CellState, prints: readonly CasePrint[], titles: readonly string[]): Line {

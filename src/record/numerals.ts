@@ -21,16 +21,26 @@ import {
 } from '../quantity/index.ts';
 import type { ClosingItem } from './closing.ts';
 
+export interface Printed {
+  readonly numeral: Numeral;
+  readonly unit: Unit;
+  /** Coherent SI of the numeral, as it enters a line. */
+  readonly si: number;
+}
+
 export interface PrintedNumber extends ClosingItem {
   readonly unit: Unit;
   readonly numeral: (digits: number) => Numeral;
   /** Coherent SI of the printed numeral. */
   readonly si: (digits: number) => number;
+  /** Both, the same object for the same digits. */
+  readonly printed: (digits: number) => Printed;
 }
 
 export function typedNumber(numeral: Numeral, unit: Unit): PrintedNumber {
   const si = siOfNumeral(numeral, unit);
-  return { unit, numeral: () => numeral, si: () => si, exactAt: () => true };
+  const printed = { numeral, unit, si };
+  return { unit, numeral: () => numeral, si: () => si, printed: () => printed, exactAt: () => true };
 }
 
 /** `value` in coherent SI, finite. */
@@ -44,7 +54,9 @@ export function computedNumber(value: number, unit: Unit, whole = false, roundin
   const doubles: (number | undefined)[] = [];
   const numeral = (digits: number) => (numerals[digits] ??= roundSignificant(full, digits, rounding));
   const si = (digits: number) => (doubles[digits] ??= siOfNumeral(numeral(digits), unit));
-  return { unit, numeral, si, exactAt: (digits) => digits >= fullDigits };
+  const all: (Printed | undefined)[] = [];
+  const printed = (digits: number) => (all[digits] ??= { numeral: numeral(digits), unit, si: si(digits) });
+  return { unit, numeral, si, printed, exactAt: (digits) => digits >= fullDigits };
 }
 
 /**

@@ -19,9 +19,10 @@ import {
 } from '../formula/index.ts';
 import { one, plainNumeral, printQuantity, printValue, texQuantity, texValue } from '../quantity/index.ts';
 import type { Calculation, CriterionState, DerivedState, GivenState, QuantityState } from '../sheet/index.ts';
-import type { CasePrint, Printed, PrintedVerdict } from './case-print.ts';
+import type { CasePrint } from './case-print.ts';
+import type { PrintedVerdict } from './criterion-numbers.ts';
 import type { Step, StepCase } from './model.ts';
-import { calculatorNumeral } from './numerals.ts';
+import { calculatorNumeral, type Printed } from './numerals.ts';
 import { soughtStep } from './sought-step.ts';
 import { failed, head, nameOf, problemIn, resultOf, symbolsOf, warnings } from './step-parts.ts';
 import { demandIsLeft, texRelation, texUnmet } from './verdict.ts';

@@ -143,6 +143,8 @@ class Engine implements Calculation {
     const { shape, runner } = this;
     const retyped = new Set(this.pending);
     this.pending.clear();
+    // The marks are laid anew with the rows; what they said of states that nobody has looked at since is kept.
+    if (!sameRows) for (const node of shape.nodes) if (runner.outdated[node.index] === 1) node.snapshot = undefined;
     const taken = shape.takeCells(next, this.style.decimalSign, sameReading, retyped);
     const stale = taken.fresh;
     const retold = !sameRows || taken.headings ? shape.renumber(next, stale) : [];

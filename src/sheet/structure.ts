@@ -54,6 +54,7 @@ export class Structure {
         if (definedName(node) !== oldName) named = true;
       }
       if (cell.kind === 'table' && fresh.has(node)) node.table = readTable(cell, decimalSign).data;
+      if (node.index !== index) node.snapshot = undefined;
       node.index = index;
       nodes.push(node);
       byId.set(cell.id, node);

@@ -10,7 +10,7 @@
 // 6. A line that is edited in its place is a draft beside the kept cell under the same rules; leaving it keeps the draft as one step.
 // Not here: elements of the page; computing (src/sheet) and printing (src/record).
 
-import { makeRecord } from '../record/index.ts';
+import { recordMaker } from '../record/index.ts';
 import {
   applyEdit,
   type Cell,
@@ -41,6 +41,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
   let kept = first;
   let shown = first;
   let calculation = calculate(first, solver);
+  const makeRecord = recordMaker();
   let drawn = makeRecord(calculation);
   let stale = false;
   let history: History = firstHistory;

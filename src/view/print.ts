@@ -5,12 +5,15 @@
 import type { RecordModel } from '../record/index.ts';
 
 let size: CSSStyleSheet | undefined;
-let last: RecordModel | undefined;
+let last = '';
 
 export function preparePrint(model: RecordModel) {
-  if (model === last) return;
-  last = model;
-  const { documentNumber, revision, organisation } = model.titleBlock;
+  const { titleBlock, title, status, settings } = model;
+  // A style of the document that is set anew, even to what it was, has every element styled anew.
+  const now = JSON.stringify([titleBlock, title, status, settings.paper]);
+  if (now === last) return;
+  last = now;
+  const { documentNumber, revision, organisation } = titleBlock;
   const set = (name: string, text: string) => document.documentElement.style.setProperty(name, cssString(text));
   set('--print-document', [documentNumber, revision ? `rev ${revision}` : ''].filter(Boolean).join(' '));
   set('--print-title', model.title);

@@ -24,9 +24,10 @@ export function shareModel(before: RecordModel, after: RecordModel): RecordModel
     const old = known.get(cellOf(line));
     return old !== undefined && alike(old, line) ? old : line;
   });
-  const parts = { ...after, lines } as Record<keyof RecordModel, unknown>;
+  const steps = lines.flatMap((line) => (line.kind === 'step' ? [line.step] : []));
+  const parts = { ...after, lines, steps } as Record<keyof RecordModel, unknown>;
   for (const key of Object.keys(after) as (keyof RecordModel)[]) {
-    if (key !== 'lines' && alike(before[key], after[key])) parts[key] = before[key];
+    if (key !== 'lines' && key !== 'steps' && alike(before[key], after[key])) parts[key] = before[key];
   }
   return parts as unknown as RecordModel;
 }

@@ -172,6 +172,14 @@ describe('what fails', () => {
     expect(criteriaWords(record.summary)).toContain('without a verdict: 6');
   });
 
+  test('of two lines with one name the second has no value, and the record stands', () => {
+    const twice = recordOf(['a = 1', 'b := 2*a', { kind: 'derived', name: 'b', formula: '3*a', source: 'x' }, 'c := 4*b']);
+    const results = twice.steps.map((step) => step.cases[0]?.result);
+    expect(results[0]).toBe('1');
+    expect(results[2]).toBeNull();
+    expect(twice.steps[2]?.cases[0]?.problem?.message).toBeTruthy();
+  });
+
   test('fails in one case only', () => {
     const two = recordOf([{ kind: 'given', name: 'a', value: '1', byCase: { y: '3' }, source: 'x' }, 'b := 1/(a - 1)'], {
       cases: [{ id: 'x' }, { id: 'y' }],

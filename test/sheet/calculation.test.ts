@@ -171,6 +171,31 @@ describe('trouble', () => {
   });
 });
 
+describe('a state that was looked at', () => {
+  const sheet = sheetOf(['a = 1 m', 'b := 2*a', 'c := 3*a']);
+  const withA = (value: string) => ({
+    ...sheet,
+    cells: sheet.cells.map((cell) => (cell.kind === 'given' ? { ...cell, value } : cell)),
+  });
+  const note = { id: 'note', kind: 'note', text: 'words' } as const;
+
+  it('is not told again after its value moved unseen and a row came', () => {
+    const calculation = calculate(sheet);
+    expect(si(calculation, 'b')).toEqual([2]);
+    const moved = withA('5 m');
+    calculation.update(moved);
+    calculation.update({ ...moved, cells: [...moved.cells, note] });
+    expect(si(calculation, 'b')).toEqual([10]);
+  });
+
+  it('tells its new place after a row came that has no number', () => {
+    const calculation = calculate(sheet);
+    expect(calculation.state('c')?.index).toBe(2);
+    calculation.update({ ...sheet, cells: [note, ...sheet.cells] });
+    expect(calculation.state('c')?.index).toBe(3);
+  });
+});
+
 describe('size', () => {
   it('of a chain of 50 000 definitions, written upside down, is no trouble', () => {
     const lines = Array.from({ length: 50_000 }, (_, i) => (i === 49_999 ? 'q_49999 = 1 m' : `q_${i} := q_${i + 1} + "1 m"`));
