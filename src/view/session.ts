@@ -333,7 +333,11 @@ export function startSession(example: Sheet): Session {
       const whole = files.length === 1 && only !== undefined ? await house.files.take(only) : null;
       if (whole !== null && whole.kind !== 'refused') return opened(whole);
       try {
-        tell(toldOf(await house.shelf.importFiles(files)));
+        const came = await house.shelf.importFiles(files);
+        // A single file that is no sheet may be a bundle; where it is neither, the sheet's own words say more.
+        const nothing = came.sheets.length + came.templates.length + came.same === 0;
+        if (whole !== null && nothing && came.refused.length === 1) return opened(whole);
+        tell(toldOf(came));
       } catch (cause) {
         tellTrouble(cause);
       }

@@ -7,7 +7,7 @@ import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
 import { type Cell, calculate, writeSheet } from '../../src/sheet/index.ts';
-import { connect, example, idOf, type Opened, open, resultsOf, resultsOn } from './open.ts';
+import { connect, drop, example, idOf, type Opened, open, resultsOf, resultsOn } from './open.ts';
 
 let browser: Browser;
 let opened: Opened;
@@ -31,7 +31,7 @@ afterEach(async () => {
 
 const rowOf = (name: string) => page.locator(`ts-row[data-cell="${idOf(name)}"]`);
 const focusedRow = () => page.evaluate(() => document.activeElement?.closest('ts-row')?.getAttribute('data-cell'));
-const undoable = () => page.locator('.tools button').first().isEnabled();
+const undoable = () => page.getByRole('button', { name: 'Undo' }).isEnabled();
 const recordOf = (cells: readonly Cell[]) => makeRecord(calculate({ ...example, cells }));
 const derived = (name: string) => {
   const cell = example.cells.find((one) => one.id === idOf(name));
@@ -184,7 +184,7 @@ describe('lines of the sheet', () => {
     await expect.poll(() => resultsOn(page)).toEqual(before);
     expect(await focusedRow()).toBe(idOf('F_u'));
     expect(await page.locator('ts-row .problem.error').count()).toBe(0);
-    expect(await page.locator('.tools button').first().getAttribute('title')).toContain('F_u renamed F_pull');
+    expect(await page.getByRole('button', { name: 'Undo' }).getAttribute('title')).toContain('F_u renamed F_pull');
     await page.keyboard.press('Control+z');
     await expect.poll(undoable).toBe(false);
     expect(await resultsOn(page)).toEqual(before);
@@ -194,9 +194,7 @@ describe('lines of the sheet', () => {
 describe('a sheet without a line', () => {
   it('is begun from its one new line: a heading opens a section, and what follows stands in it', async () => {
     const text = writeSheet({ format: 'tightside-sheet/1', title: 'Empty', cells: [] });
-    await page
-      .locator('#sheet-file')
-      .setInputFiles({ name: 'empty.sheet.json', mimeType: 'application/json', buffer: Buffer.from(text) });
+    await drop(page, 'empty.sheet.json', text);
     await expect.poll(() => page.locator('h1').textContent()).toBe('Empty');
     await page.getByRole('button', { name: 'New line' }).click();
     await page.locator('ts-entry-line .cm-content').waitFor();

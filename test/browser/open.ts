@@ -31,6 +31,9 @@ export async function open(browser: Browser, options: BrowserContextOptions = {}
   });
   await page.exposeFunction('tellViolation', (text: string) => violations.push(text));
   await page.addInitScript(() => {
+    // The dialogs of the system cannot be worked from here: files are saved as downloads, as in browsers without them.
+    Reflect.deleteProperty(globalThis, 'showSaveFilePicker');
+    Reflect.deleteProperty(globalThis, 'showOpenFilePicker');
     addEventListener('securitypolicyviolation', (event) => {
       const tell = (globalThis as unknown as { tellViolation(text: string): void }).tellViolation;
       tell(`${event.effectiveDirective} ${event.blockedURI} ${event.sample}`);
@@ -43,6 +46,17 @@ export async function open(browser: Browser, options: BrowserContextOptions = {}
   page.on('request', (request) => requests.push(request.url()));
   return { page, requests, violations, faults, close: () => context.close() };
 }
+
+/** Drops a file on the page, as a user does who has no dialog. */
+export const drop = (page: Page, name: string, text: string): Promise<void> =>
+  page.evaluate(
+    ([which, what]) => {
+      const data = new DataTransfer();
+      data.items.add(new File([what], which, { type: 'application/json' }));
+      dispatchEvent(new DragEvent('drop', { dataTransfer: data, bubbles: true, cancelable: true }));
+    },
+    [name, text] as const,
+  );
 
 const read = readSheet(readFileSync(new URL('../../src/view/example.sheet.json', import.meta.url), 'utf8'));
 if (!read.ok) throw new Error('the example cannot be read');

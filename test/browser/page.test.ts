@@ -6,7 +6,8 @@ import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
 import { calculate, readSheet } from '../../src/sheet/index.ts';
-import { connect, example, idOf, type Opened, open, recordWith, resultsOf, resultsOn } from './open.ts';
+import { sheetFileName } from '../../src/store/index.ts';
+import { connect, drop, example, idOf, type Opened, open, recordWith, resultsOf, resultsOn } from './open.ts';
 
 let browser: Browser;
 let opened: Opened;
@@ -113,7 +114,7 @@ describe('a given changed in place', () => {
     await expect.poll(() => rowOf('theta_1').locator('.result').first().textContent()).toContain('166');
     await page.keyboard.press('Escape');
     await expect.poll(() => resultsOn(page)).toEqual(before);
-    expect(await page.locator('.tools button').first().isDisabled()).toBe(true);
+    expect(await page.getByRole('button', { name: 'Undo' }).isDisabled()).toBe(true);
     expect(await page.evaluate(() => document.activeElement?.closest('ts-row')?.getAttribute('data-cell'))).toBe(idOf('C'));
   });
 
@@ -283,18 +284,14 @@ describe('a narrow window', () => {
 describe('the file', () => {
   it('that is opened takes the place of the sheet; one that cannot be read changes nothing and says why', async () => {
     const template = readFileSync(new URL('../../templates/capstan.sheet.json', import.meta.url), 'utf8');
-    const choose = (name: string, text: string) =>
-      page.locator('#sheet-file').setInputFiles({ name, mimeType: 'application/json', buffer: Buffer.from(text) });
-    await choose('damaged.sheet.json', template.slice(0, 200));
-    await expect.poll(() => page.locator('.opening').textContent()).toContain('damaged.sheet.json was not opened');
+    await drop(page, 'damaged.sheet.json', template.slice(0, 200));
+    await expect.poll(() => page.locator('.notice').textContent()).toContain('damaged.sheet.json was not opened');
     expect(await page.locator('h1').textContent()).toBe(example.title);
-    await choose('newer.sheet.json', template.replace('tightside-sheet/1', 'tightside-sheet/99'));
-    await expect.poll(() => page.locator('.opening').textContent()).toContain('99');
+    await drop(page, 'newer.sheet.json', template.replace('tightside-sheet/1', 'tightside-sheet/99'));
+    await expect.poll(() => page.locator('.notice').textContent()).toContain('99');
     await edit('F_0', '1400 N');
     await page.keyboard.press('Enter');
-    await choose('capstan.sheet.json', template);
-    await expect.poll(() => page.locator('.opening').textContent()).toContain('changes that are in no file');
-    await page.getByRole('button', { name: 'give the changes up' }).click();
+    await drop(page, 'capstan.sheet.json', template);
     const read = readSheet(template);
     if (!read.ok) throw new Error('the template cannot be read');
     await expect.poll(() => page.locator('h1').textContent()).toBe(read.value.title);
@@ -314,7 +311,7 @@ describe('the file', () => {
       const text = readFileSync(new URL(name, folder), 'utf8');
       const read = readSheet(text);
       if (!read.ok) throw new Error(`${name} cannot be read`);
-      await page.locator('#sheet-file').setInputFiles({ name, mimeType: 'application/json', buffer: Buffer.from(text) });
+      await drop(page, name, text);
       await expect.poll(() => page.locator('h1').textContent()).toBe(read.value.title);
       // Nothing waits to be typeset any more, and nothing fell back to its text.
       await expect
@@ -350,9 +347,7 @@ describe('the file', () => {
         { id: 'd1', kind: 'derived', name: 'b', title: '$\\href{javascript:alert(1)}{x}$', formula: 'a*2' },
       ],
     };
-    await page
-      .locator('#sheet-file')
-      .setInputFiles({ name: 'hostile.sheet.json', mimeType: 'application/json', buffer: Buffer.from(JSON.stringify(sheet)) });
+    await drop(page, 'hostile.sheet.json', JSON.stringify(sheet));
     await expect.poll(() => page.locator('h1').textContent()).toBe(hostile);
     expect(await page.locator('.paper script, .paper img[src="x"], .paper a[href^="javascript"]').count()).toBe(0);
     expect(await page.title()).toContain('<img');
@@ -364,8 +359,11 @@ describe('the file', () => {
   it('that is saved holds the sheet as it stands', async () => {
     await edit('F_0', '1400 N');
     await page.keyboard.press('Enter');
-    const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('button', { name: 'Save' }).click()]);
-    expect(download.suggestedFilename()).toBe('CS-014.sheet.json');
+    const [download] = await Promise.all([
+      page.waitForEvent('download'),
+      page.getByRole('button', { name: 'Save as file' }).click(),
+    ]);
+    expect(download.suggestedFilename()).toBe(sheetFileName(example));
     const stream = await download.createReadStream();
     let text = '';
     for await (const part of stream) text += String(part);

@@ -7,7 +7,7 @@ import { gzipSync } from 'node:zlib';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
 import { type Sheet, writeSheet } from '../../src/sheet/index.ts';
-import { connect, open, recordWith } from './open.ts';
+import { connect, drop, open, recordWith } from './open.ts';
 import { readPdf } from './pdf.ts';
 
 let browser: Browser;
@@ -137,9 +137,7 @@ describe('accessibility rules', () => {
     { timeout: 240_000 },
     async (colorScheme, width) => {
       const { page, close } = await open(browser, { colorScheme, viewport: { width, height: 900 } });
-      await page
-        .locator('#sheet-file')
-        .setInputFiles({ name: 'every.sheet.json', mimeType: 'application/json', buffer: Buffer.from(writeSheet(everyKind)) });
+      await drop(page, 'every.sheet.json', writeSheet(everyKind));
       await page.waitForSelector('ts-row[data-cell="k3"]', { state: 'attached' });
       const row = (cell: string) => page.locator(`ts-row[data-cell="${cell}"]`);
       await row('d1').locator('.label').click();
