@@ -133,7 +133,7 @@ export async function openSheet(store: Store, id: string, options: KeeperOptions
       backend,
       sheet,
       row: kept,
-      delay: options.delay ?? 200,
+      delay: options.delay ?? 100,
       onChange: () => emit({ kind: 'state' }),
       onKept(rev) {
         lastKept = Date.now();

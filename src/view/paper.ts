@@ -92,7 +92,7 @@ export class PaperElement extends PageElement {
           (section) => section.key,
           (section) => html`<div role="rowgroup" class="section" id=${`section-${section.key}`} data-section=${section.key}>
             ${repeat(section.lines, cellOf, (line, index) => html`${this.#row(line, place)}${this.#below(line)}${this.printing && index === 0 ? this.#columnHeads(heads) : nothing}`)}
-            ${this.printing ? nothing : this.#entryRow(section)}
+            ${this.printing || this.desk.locked !== null ? nothing : this.#entryRow(section)}
           </div>`,
         )}
       </div>

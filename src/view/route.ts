@@ -37,7 +37,6 @@ export function createRoute(heard: (route: Route) => void) {
   });
   return {
     route: () => now,
-    hashOf,
     go(route: Route, instead = false) {
       if (hashOf(route) === hashOf(now)) return;
       now = route;

@@ -90,7 +90,7 @@ export class RowElement extends PageElement {
 
   /** What can be done with the line, in words at the line. */
   get #isQuiet() {
-    return this.chosen && !this.printing && this.inPlace === null && this.editing === null;
+    return this.chosen && !this.printing && this.desk.locked === null && this.inPlace === null && this.editing === null;
   }
   #words() {
     return this.#isQuiet ? lineWords(this.menu) : nothing;

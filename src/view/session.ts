@@ -164,16 +164,21 @@ export function startSession(example: Sheet): Session {
   };
 
   /** Puts a sheet of the shelf on the desk; the one before it is kept first. */
-  const openKept = async (id: string): Promise<void> => {
+  const openKept = async (id: string, anyway = false): Promise<void> => {
     if (house === null || keeper?.id === id) return changed();
     opening += 1;
     const mine = opening;
     try {
       if (keeper !== null) {
         desk?.finish();
-        if (!(await keeper.close())) {
-          history.replaceState(null, '', hashOf({ screen: 'sheet', id: keeper.id }));
-          return changed();
+        const elsewhere = anyway || desk?.unsaved === false;
+        if (!(await keeper.close({ anyway: elsewhere }))) {
+          tell({
+            message: 'The other sheet was not opened: changes of this one are neither kept nor in a file yet.',
+            wayOut: ['save as a file', 'try again'],
+            trouble: true,
+          });
+          return go({ screen: 'sheet', id: keeper.id }, true);
         }
       }
       if (mine !== opening) return;
@@ -207,7 +212,7 @@ export function startSession(example: Sheet): Session {
     }
   };
 
-  const { route, go, hashOf } = createRoute((now) => {
+  const { route, go } = createRoute((now) => {
     if (now.screen === 'sheet' && house !== null) void (now.id === null ? openFirst() : openKept(now.id));
     else desk?.finish();
     changed();
@@ -271,12 +276,15 @@ export function startSession(example: Sheet): Session {
     if (file.kind === 'cancelled') return;
     if (file.kind === 'trouble') return tell({ message: file.problem.message, wayOut: file.problem.wayOut, trouble: true });
     tell({ message: file.message });
-    void readFileName();
   };
   const saveFile = async (options: SaveOptions = {}) => {
     if (house === null || keeper === null || desk === null) return;
     desk.finish();
-    saved(await house.files.save(keeper.id, desk.kept, options));
+    const { kept } = desk;
+    const file = await house.files.save(keeper.id, kept, options);
+    if ((file.kind === 'saved' || file.kind === 'downloaded') && desk.kept === kept) desk.saved();
+    saved(file);
+    void readFileName();
   };
   const exportAll = async () => {
     if (house === null) return;
@@ -351,7 +359,9 @@ export function startSession(example: Sheet): Session {
         'close the other tabs': () => undefined,
         'keep as a new sheet': async () => {
           const head = await keeper?.keepAsNew();
-          if (head !== undefined) go({ screen: 'sheet', id: head.id });
+          if (head === undefined) return;
+          await openKept(head.id, true);
+          go({ screen: 'sheet', id: head.id }, true);
         },
         'download the text': async () => {
           if (house !== null && unopened?.text !== undefined)

@@ -1,89 +1,32 @@
-// The browser process killed (SIGKILL, all of its processes) at random moments of typing, and started again with the same profile.
-// Five times in `npm test`, fifty times with PROVE=1. The seed is printed; SEED=… repeats a run.
+// The browser process killed (SIGKILL, all of its processes) at random moments of fast writing by the store alone, and started again with
+// the same profile. Twice in `npm test`, fifty times with PROVE=1. The seed is printed; SEED=… repeats a run.
 
-import { type ChildProcess, spawn } from 'node:child_process';
-import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
-import { type Browser, chromium, type Page } from 'playwright-core';
+import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-// @ts-expect-error plain JavaScript, run by the test step without a compiler
-import { findChromium } from './chromium.mjs';
+import { killable, random } from './killable.ts';
 import { type StorePage, serveStorePage } from './store-kit.ts';
 import type {} from './store-page/main.ts';
 
-const kills = process.env['PROVE'] === '1' ? 50 : 5;
+const kills = process.env['PROVE'] === '1' ? 50 : 2;
 const seed = Number(process.env['SEED'] ?? Date.now() % 1_000_000);
-
-/** Numbers from 0 to 1 that follow from the seed (mulberry32). */
-function random(start: number): () => number {
-  let state = start;
-  return () => {
-    state = (state + 0x6d2b79f5) | 0;
-    let mixed = Math.imul(state ^ (state >>> 15), 1 | state);
-    mixed = (mixed + Math.imul(mixed ^ (mixed >>> 7), 61 | mixed)) ^ mixed;
-    return ((mixed ^ (mixed >>> 14)) >>> 0) / 4_294_967_296;
-  };
-}
-
-const found = findChromium() as { path: string; env: Record<string, string> };
-let served: StorePage;
-let profile: string;
-let running: ChildProcess | null = null;
 const next = random(seed);
+const own = killable();
+let served: StorePage;
 
 beforeAll(async () => {
   served = await serveStorePage();
-  profile = mkdtempSync(join(tmpdir(), 'store-profile-'));
   console.log(`kills: ${kills}, SEED=${seed}`);
 });
 afterAll(async () => {
-  await kill();
+  await own.end();
   await served.close();
-  rmSync(profile, { recursive: true, force: true, maxRetries: 5 });
 });
 
-/** A browser of our own, in a group of processes that ends together. */
-async function start(): Promise<{ browser: Browser; page: Page }> {
-  rmSync(join(profile, 'DevToolsActivePort'), { force: true });
-  running = spawn(
-    found.path,
-    [
-      '--headless=new',
-      '--no-sandbox',
-      '--disable-gpu',
-      '--no-first-run',
-      '--remote-debugging-port=0',
-      `--user-data-dir=${profile}`,
-      'about:blank',
-    ],
-    { env: { ...process.env, ...found.env }, stdio: 'ignore', detached: true },
-  );
-  const until = Date.now() + 60_000;
-  let port = '';
-  while (port === '') {
-    if (Date.now() > until) throw new Error('the browser does not start');
-    await new Promise((done) => setTimeout(done, 50));
-    try {
-      port = readFileSync(join(profile, 'DevToolsActivePort'), 'utf8').split('\n')[0] ?? '';
-    } catch {
-      // not written yet
-    }
-  }
-  const browser = await chromium.connectOverCDP(`http://127.0.0.1:${port}`);
-  const page = await browser.contexts()[0]!.newPage();
-  await page.goto(served.url);
-  await page.waitForFunction(() => 'kit' in globalThis);
-  return { browser, page };
-}
-
-async function kill(): Promise<void> {
-  const child = running;
-  running = null;
-  if (child === null || child.pid === undefined || child.exitCode !== null) return;
-  const ended = new Promise((done) => child.once('exit', done));
-  process.kill(-child.pid, 'SIGKILL');
-  await ended;
+async function start(): Promise<Awaited<ReturnType<typeof own.start>> & { page: Page }> {
+  const started = await own.start();
+  await started.page.goto(served.url);
+  await started.page.waitForFunction(() => 'kit' in globalThis);
+  return started;
 }
 
 interface Typed {
@@ -124,7 +67,7 @@ describe('a browser that is killed while somebody types', () => {
       );
       await new Promise((done) => setTimeout(done, 800 + next() * 2500));
       const killed = Date.now();
-      await kill();
+      await own.kill();
       await before.browser.close().catch(() => undefined);
 
       const after = await start();
@@ -132,7 +75,7 @@ describe('a browser that is killed while somebody types', () => {
       await after.page.evaluate((which) => globalThis.kit.begin(which), id);
       const values = await after.page.evaluate(() => globalThis.kit.undone('F_0'));
       const length = await after.page.evaluate(() => globalThis.kit.value('d')?.length);
-      await kill();
+      await own.kill();
       await after.browser.close().catch(() => undefined);
 
       const last = Number(values[0]?.replace(' N', ''));
