@@ -96,10 +96,13 @@ function foundNotes(calculation: Calculation, state: SoughtState): readonly stri
         ? 'one root'
         : `${printNumeral(numeralOfDouble(solution.roots.length), calculation.style)} roots, the lowest taken`;
     return [
-      `${which}${roots} seen between ${cell.between}, ${solution.iterations} iterations after ${solution.method}, residual ${residual}`,
+      `${which}${roots} seen from ${rangeText(cell.between)}, ${solution.iterations} iterations after ${solution.method}, residual ${residual}`,
     ];
   });
   return found.length === 0 ? [] : [`${varied}${found.join('; ')}`];
 }
+
+/** The range as typed, a hyphen before a number set as the minus that it stands for. */
+const rangeText = (between: string): string => between.trim().replace(/(^|\s)-(?=[\d.,])/gu, '$1\u2212');
 
 const coherent = (unit: Unit): Unit => coherentUnit(unit.dimension, unit.counts.r);

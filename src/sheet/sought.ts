@@ -16,6 +16,8 @@ export interface FoundRoot {
   readonly root: number;
   readonly residual: number;
   readonly iterations: number;
+  /** First and last of the trials in a row at which both sides are equal: no single value is the root. */
+  readonly stretch?: readonly [number, number];
 }
 
 export interface Search {
@@ -111,16 +113,23 @@ export function solveSought(node: Node, caseIndex: number, sheet: Surface, solve
   if (first === undefined) return { ok: false, problem: noRoot(search, unknown, where, between.text) };
   const [a, b] = trial.run([Float64Array.of(first.root)], 1).map((column) => column[0]!);
   const roots = search.roots.map((found) => found.root);
-  const warnings: Problem[] =
-    roots.length < 2
-      ? []
-      : [
-          {
-            code: 'several-roots',
-            severity: 'warning',
-            message: `${roots.length} values between ${between.text} fulfil ${where}: ${roots.slice(0, 5).map(shown).join('; ')}${roots.length > 5 ? ' …' : ''}; the lowest is taken, narrow the range to take another`,
-          },
-        ];
+  const warnings: Problem[] = [];
+  if (roots.length > 1) {
+    const list = `${roots.slice(0, 5).map(shown).join('; ')}${roots.length > 5 ? ' …' : ''}`;
+    warnings.push({
+      code: 'several-roots',
+      severity: 'warning',
+      message: `${roots.length} values from ${between.text} fulfil ${where}: ${list}; the lowest is taken, narrow the range to take another`,
+    });
+  }
+  if (first.stretch !== undefined) {
+    const [from, to] = first.stretch.map(shown);
+    warnings.push({
+      code: 'equal-throughout',
+      severity: 'warning',
+      message: `every value tried from ${from} to ${to} fulfils ${where} within the precision of numbers; the middle is taken, and no value there is better than another`,
+    });
+  }
   return {
     ok: true,
     solution: {
@@ -141,19 +150,19 @@ function noRoot(search: Search, unknown: string, where: string, range: string): 
   if (search.poles.length > 0) {
     return error(
       'pole',
-      `between ${range} the two sides of ${where} jump past each other without meeting (a pole or a gap); choose a range on one side of the jump`,
+      `from ${range} the two sides of ${where} jump past each other without meeting (a pole or a gap); choose a range on one side of the jump`,
     );
   }
   if (Number.isNaN(search.atLow) && Number.isNaN(search.atHigh) && search.undefinedTrials > 0) {
     return error(
       'not-bracketed',
-      `no value of ${unknown} between ${range} gives both sides of ${where} a value at its ends; choose a range in which the formulas have one`,
+      `no value of ${unknown} from ${range} gives both sides of ${where} a value at its ends; choose a range in which the formulas have one`,
     );
   }
   const side = search.atLow > 0 || search.atHigh > 0 ? 'greater' : 'less';
   return error(
     'not-bracketed',
-    `no value of ${unknown} between ${range} fulfils ${where}: the left side stays ${side} than the right side throughout; widen the range, or check the equation`,
+    `no value of ${unknown} from ${range} fulfils ${where}: the left side stays ${side} than the right side throughout; widen the range, or check the equation`,
   );
 }
 

@@ -2,7 +2,8 @@
 //
 // 1. The bracket is sampled at evenly spaced points, and at points of even ratio where both ends have one sign and lie far apart;
 //    two roots between neighbouring samples, and roots where the function touches zero without crossing it, can be missed.
-// 2. Each change of sign is closed in by `findRoot`; what turns out to be a pole, or a gap without a value, is no root.
+// 2. Samples in a row at which the two sides are equal are one root, the middle of the stretch; the stretch is told.
+// 3. Each change of sign is closed in by `findRoot`; what turns out to be a pole, or a gap without a value, is no root.
 // Not here: what is evaluated (src/sheet).
 
 import type { FoundRoot, Search, Solver } from '../sheet/index.ts';
@@ -25,7 +26,14 @@ export const solver: Solver = (evaluate, low, high): Search => {
   for (let i = 0; i < points.length; i += 1) {
     const value = values[i]!;
     if (Number.isNaN(value)) undefinedTrials += 1;
-    if (value === 0) roots.push({ root: points[i]!, residual: 0, iterations: 0 });
+    if (value === 0) {
+      let last = i;
+      while (values[last + 1] === 0) last += 1;
+      const [from, to] = [points[i]!, points[last]!];
+      roots.push({ root: from + (to - from) / 2, residual: 0, iterations: 0, ...(last > i ? { stretch: [from, to] } : {}) });
+      i = last;
+      continue;
+    }
     const next = values[i + 1];
     if (next === undefined || Math.sign(value) * Math.sign(next) !== -1) continue;
     const found = findRoot(f, points[i]!, points[i + 1]!);

@@ -25,7 +25,7 @@ describe('a sought quantity in the record', () => {
     expect(step.cases[0]).toMatchObject({ result: '275.0\u00a0N', calculatorResult: '275.0', closes: true });
     expect(step.cases[0]!.substituted).toBe('300.0\\,\\mathrm{N} = 300.0\\,\\mathrm{N}');
     expect(step.notes.join(' ')).toMatch(
-      /^F_0 varied, the sheet itself keeps its value; one root seen between 10 N to 20 kN, \d+ iterations after Brent 1973, residual /u,
+      /^F_0 varied, the sheet itself keeps its value; one root seen from 10 N to 20 kN, \d+ iterations after Brent 1973, residual /u,
     );
   });
 
@@ -43,7 +43,7 @@ describe('a sought quantity in the record', () => {
     );
     expect(json.unsolved).toMatchObject([{ cell: 's', name: 'F_0x' }]);
     expect(json.problems.find((problem) => problem.cell === 's')?.message).toContain(
-      'no value of F_0 between 10 N to 20 N fulfils F_1 = F_1lim',
+      'no value of F_0 from 10 N to 20 N fulfils F_1 = F_1lim',
     );
   });
 });

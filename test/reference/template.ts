@@ -10,6 +10,7 @@ import { readFileSync } from 'node:fs';
 import { expect, test } from 'vitest';
 import { readUnit } from '../../src/quantity/index.ts';
 import { type Calculation, calculate, readSheet, type Sheet } from '../../src/sheet/index.ts';
+import { solver } from '../../src/study/index.ts';
 
 /** How an example is known: with its printed result, with givens and method only, from memory, or derived from first principles. */
 export type Tag = 'print seen' | 'givens seen' | 'from memory' | 'derived';
@@ -57,7 +58,7 @@ export function withGivens(sheet: Sheet, values: Readonly<Record<string, string>
 }
 
 export function solve(template: string, givens: Readonly<Record<string, string>>): Calculation {
-  return calculate(withGivens(templateSheet(template), givens));
+  return calculate(withGivens(templateSheet(template), givens), solver);
 }
 
 /** The value of a quantity in a unit. Throws where the sheet has none. */

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { solver } from '../../src/study/index.ts';
 import { findRoot } from '../../src/study/root.ts';
 
 const { sin, cos, exp, log, PI } = Math;
@@ -61,15 +62,31 @@ describe('roots of the published test problems', () => {
     if (result.ok) expect(Math.abs(result.root - Number(root))).toBeLessThanOrEqual(4e-15 * Math.max(1, Math.abs(Number(root))));
   });
 
-  it('the flat cubic (x − 3)³ is found to the cube root of the precision', () => {
+  // f from the Colebrook–White equation 1/√f = −2 lg(ε/(3.7 D) + 2.51/(Re √f)), recomputed with 40 digits.
+  it.each([
+    [1e5, 1e-4, 0.018513866077472],
+    [1e6, 1e-3, 0.019943465840477],
+    [4000, 0, 0.039907014055635],
+  ])('Colebrook–White at Re = %d, ε/D = %d', (re, rough, expected) => {
+    const result = findRoot((f) => 1 / Math.sqrt(f) + 2 * Math.log10(rough / 3.7 + 2.51 / (re * Math.sqrt(f))), 0.001, 0.1);
+    expect(result.ok && Math.abs(result.root - expected)).toBeLessThan(5.1e-16);
+  });
+
+  // Published as hard: below 0.0366 the value is 0 in double precision, so that no program can tell the root 0 from its neighbours.
+  it('x e^(−1/x²) on [−1, 4] is found to the stretch on which it cannot be told from 0', () => {
+    const result = findRoot((x) => x * exp(-1 / (x * x)), -1, 4);
+    expect(result).toMatchObject({ ok: true, residual: 0 });
+    expect(result.ok && Math.abs(result.root)).toBeLessThan(0.0367);
+  });
+
+  it('the flat cubic (x − 3)³ is found to its digits', () => {
     const result = findRoot((x) => (x - 3) ** 3, 0, 5);
-    expect(result.ok && Math.abs(result.root - 3)).toBeLessThan(1e-5);
+    expect(result.ok && Math.abs(result.root - 3)).toBeLessThan(1e-15);
   });
 
   it.each([9, 19])('x^%i on [−1, 4] is found though flat at its root', (power) => {
     const result = findRoot((x) => x ** power, -1, 4);
-    expect(result.ok && Math.abs(result.root)).toBeLessThan(0.1);
-    expect(result.ok && Math.abs(result.residual)).toBeLessThan(1e-15);
+    expect(result.ok && Math.abs(result.root)).toBeLessThan(1e-15);
   });
 });
 
@@ -77,10 +94,40 @@ describe('what is no root', () => {
   it.each<[string, (x: number) => number, number, number, string]>([
     ['no change of sign: x² + 1', (x) => x * x + 1, -1, 1, 'no-sign-change'],
     ['a pole: 1/x', (x) => 1 / x, -1, 1.5, 'pole'],
+    ['a pole met at once: 1/x', (x) => 1 / x, -1, 1, 'pole'],
     ['a pole: tan x on [1, 2]', (x) => Math.tan(x), 1, 2, 'pole'],
     ['not a number at an end', (x) => Math.sqrt(x), -1, 1, 'not-finite'],
     ['not a number inside', (x) => (Math.abs(x) < 0.5 ? Number.NaN : x), -1, 1, 'not-finite'],
   ])('%s', (_, f, low, high, failure) => {
     expect(findRoot(f, low, high)).toMatchObject({ ok: false, failure });
+  });
+});
+
+describe('the search of a whole bracket', () => {
+  const search = (f: (x: number) => number, low: number, high: number) =>
+    solver((samples, count) => Float64Array.from({ length: count }, (_, i) => f(samples[i]!)), low, high);
+
+  it.each(published)('%s: its published root is among those found', (_, f, low, high, root) => {
+    const found = search(f, low, high).roots.map(
+      (one) => Math.abs(one.root - Number(root)) / Math.max(1, Math.abs(Number(root))),
+    );
+    expect(Math.min(...found)).toBeLessThanOrEqual(4e-15);
+  });
+
+  it('a stretch of equal sides is one root, its middle, and is told', () => {
+    const { roots } = search((x) => x * exp(-1 / (x * x)), -1, 4);
+    expect(roots).toHaveLength(1);
+    expect(Math.abs(roots[0]!.root)).toBeLessThan(0.01);
+    // e^(−1/x²) is 0 in double precision where 1/x² > 745.13, that is |x| < 0.03663.
+    expect(roots[0]!.stretch?.[0]).toBeCloseTo(-0.0366, 2);
+    expect(roots[0]!.stretch?.[1]).toBeCloseTo(0.0366, 2);
+  });
+
+  it.each<[string, (x: number) => number, number, number]>([
+    ['x² + 1', (x) => x * x + 1, -1, 1],
+    ['1/x', (x) => 1 / x, -1, 1],
+    ['tan x', Math.tan, 1, 2],
+  ])('%s has none', (_, f, low, high) => {
+    expect(search(f, low, high).roots).toEqual([]);
   });
 });

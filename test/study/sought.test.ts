@@ -122,8 +122,17 @@ describe('several roots, or none', () => {
     expect(root(calculation)).toBeCloseTo(1, 14);
     expect(problem(calculation)).toMatchObject({ code: 'several-roots', severity: 'warning' });
     expect(problem(calculation)?.message).toBe(
-      '2 values between 0 to 10 fulfil x^2 - 3*x + 2 = 0: 1.000; 2.000; the lowest is taken, narrow the range to take another',
+      '2 values from 0 to 10 fulfil x^2 - 3*x + 2 = 0: 1.000; 2.000; the lowest is taken, narrow the range to take another',
     );
+  });
+
+  it('says where every value will do', () => {
+    const calculation = solve(sheetWith([], { name: 'x', where: 'max(x, 2) = 2', between: '0 to 4' }));
+    expect(problem(calculation)).toMatchObject({ code: 'equal-throughout', severity: 'warning' });
+    expect(problem(calculation)?.message).toBe(
+      'every value tried from 0 to 2.000 fulfils max(x, 2) = 2 within the precision of numbers; the middle is taken, and no value there is better than another',
+    );
+    expect(root(calculation)).toBe(1);
   });
 
   it.each([
@@ -131,13 +140,13 @@ describe('several roots, or none', () => {
       'x^2 + 1 = 0',
       '-1 to 1',
       'not-bracketed',
-      'no value of x between -1 to 1 fulfils x^2 + 1 = 0: the left side stays greater than the right side throughout; widen the range, or check the equation',
+      'no value of x from -1 to 1 fulfils x^2 + 1 = 0: the left side stays greater than the right side throughout; widen the range, or check the equation',
     ],
     [
       '1/x = 0',
       '-1 to 1.5',
       'pole',
-      'between -1 to 1.5 the two sides of 1/x = 0 jump past each other without meeting (a pole or a gap); choose a range on one side of the jump',
+      'from -1 to 1.5 the two sides of 1/x = 0 jump past each other without meeting (a pole or a gap); choose a range on one side of the jump',
     ],
     ['x + 1', '0 to 1', 'no-equation', '“x + 1” must hold exactly one = between two formulas, as in S_slip = S_req'],
     ['x = 1 = x', '0 to 1', 'no-equation', '“x = 1 = x” must hold exactly one = between two formulas, as in S_slip = S_req'],

@@ -40,6 +40,7 @@ export const publishedNames: ReadonlyMap<string, Names> = new Map<string, Names>
     {
       givens: 'D theta mu F l a w w_b t p_allow sigma_allow M_req',
       results: 'k F_slack F_tight M F_req F_tight_rev F_slack_rev M_rev F_req_rev p_max sigma',
+      further: 'w_req',
     },
   ],
   [
@@ -47,16 +48,25 @@ export const publishedNames: ReadonlyMap<string, Names> = new Map<string, Names>
     {
       givens: 'D theta mu F l a_slack a_tight w w_b t p_allow sigma_allow M_req',
       results: 'k F_slack F_tight M F_tight_rev F_slack_rev M_rev mu_lock F_req F_req_rev p_max sigma',
+      further: 'w_req',
     },
   ],
   [
     'band-brake-two-way',
-    { givens: 'D theta mu F l a w w_b t p_allow sigma_allow M_req', results: 'k F_tight F_slack M p_max sigma F_req' },
+    {
+      givens: 'D theta mu F l a w w_b t p_allow sigma_allow M_req',
+      results: 'k F_tight F_slack M p_max sigma F_req',
+      further: 'w_req',
+    },
   ],
-  ['band-and-block', { givens: 'D N_b delta mu F_slack', results: 'k F_tight M', further: 'k_band F_slack_req' }],
+  ['band-and-block', { givens: 'D N_b delta mu F_slack', results: 'k F_tight M', further: 'k_band F_slack_req mu_M' }],
   [
     'brake-stop-heat',
-    { givens: 'J n_start n_end m_load h_drop m_rim c_rim t_stop N_h A_l g', results: 'E dT P_mean P_peak q_peak' },
+    {
+      givens: 'J n_start n_end m_load h_drop m_rim c_rim t_stop N_h A_l g',
+      results: 'E dT P_mean P_peak q_peak',
+      further: 'N_P',
+    },
   ],
   ['capstan', { givens: 'F_load F_hand mu N alpha', results: 'theta k F_hold F_haul N_req mu_req' }],
   ['drum-dead-turns', { givens: 'S mu N f', results: 'F_fix', further: 'k N_req' }],
@@ -65,7 +75,7 @@ export const publishedNames: ReadonlyMap<string, Names> = new Map<string, Names>
     {
       givens: 'F_U xi mu theta q_B q_G a_0 a_U s H F_r g',
       results: 'F_Umax k F_2slip F_sag_carry F_sag_return F_2 F_1 F_W',
-      further: 'i_gov',
+      further: 'i_gov mu_T',
     },
   ],
   [
@@ -73,6 +83,7 @@ export const publishedNames: ReadonlyMap<string, Names> = new Map<string, Names>
     {
       givens: 'Q K G r q_R H_t v a_b groove beta gamma theta g',
       results: 'f_load f_brake f_stall ratio_load ratio_brake_down ratio_brake_up ratio_stall k_load k_brake k_stall',
+      further: 'mu_Lreq mu_Smax',
     },
   ],
   [

@@ -4,6 +4,7 @@ import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
 import { type Cell, calculate, checkFormula, readSheet } from '../../src/sheet/index.ts';
+import { solver } from '../../src/study/index.ts';
 import { type Proposals, proposeInEntry, proposeInFormula, proposeUnits } from '../../src/view/edit/assist.ts';
 import { fieldsOf, fieldText, withFieldText } from '../../src/view/edit/cell-forms.ts';
 import { readEntry } from '../../src/view/edit/entry.ts';
@@ -171,7 +172,7 @@ describe('the line as it will print', () => {
       .slice(0, 12)) {
       const read = readSheet(readFileSync(new URL(file, folder), 'utf8'));
       if (!read.ok) throw new Error(file);
-      const sheet = calculate(read.value);
+      const sheet = calculate(read.value, solver);
       for (const step of makeRecord(sheet).steps) {
         const state = sheet.state(step.cell);
         const [each] = step.cases;
@@ -241,7 +242,7 @@ describe('the fields of a cell', () => {
     for (const file of readdirSync(folder).filter((name) => name.endsWith('.sheet.json'))) {
       const read = readSheet(readFileSync(new URL(file, folder), 'utf8'));
       if (!read.ok) throw new Error(file);
-      const sheet = calculate(read.value);
+      const sheet = calculate(read.value, solver);
       for (const cell of read.value.cells) {
         const keys = new Set(fieldsOf(cell, sheet).map((field) => field.key.split('.')[0] ?? ''));
         for (const key of Object.keys(cell))
