@@ -208,7 +208,7 @@ export class PageElementRoot extends PageElement {
         <button type="button" title="All sheets and templates" @click=${() => session.go({ screen: 'shelf' })}>Shelf</button>
         <button type="button" ?disabled=${desk.undoLabel === null} title=${desk.undoLabel === null ? nothing : `Undo: ${desk.undoLabel}`} @click=${() => desk.undo()}>Undo</button>
         <button type="button" ?disabled=${desk.redoLabel === null} title=${desk.redoLabel === null ? nothing : `Redo: ${desk.redoLabel}`} @click=${() => desk.redo()}>Redo</button>
-        <button type="button" title=${session.fileName === null ? 'Save the sheet as a file' : `Save the sheet in ${session.fileName}`} @click=${() => void session.saveFile()}>Save as file</button>
+        <button type="button" title=${session.fileName === null ? 'Save the sheet as a file' : `Save the sheet in ${session.fileName}`} @click=${() => void session.saveFile()}>Save file</button>
         <button type="button" @click=${() => print()}>Print</button>
         <button type="button" title="The keys of the page: ?" @click=${() => showKeys(this)}>Keys</button>
       </div>

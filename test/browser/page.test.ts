@@ -361,7 +361,7 @@ describe('the file', () => {
     await page.keyboard.press('Enter');
     const [download] = await Promise.all([
       page.waitForEvent('download'),
-      page.getByRole('button', { name: 'Save as file' }).click(),
+      page.getByRole('button', { name: 'Save file' }).click(),
     ]);
     expect(download.suggestedFilename()).toBe(sheetFileName(example));
     const stream = await download.createReadStream();

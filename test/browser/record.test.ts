@@ -49,7 +49,7 @@ async function changedAndSaved({ page }: Opened): Promise<JsonRecord> {
   await page.keyboard.press('Enter');
   const [download] = await Promise.all([
     page.waitForEvent('download'),
-    page.getByRole('button', { name: 'Save as file' }).click(),
+    page.getByRole('button', { name: 'Save file' }).click(),
   ]);
   let text = '';
   for await (const part of await download.createReadStream()) text += String(part);
