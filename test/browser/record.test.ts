@@ -47,10 +47,7 @@ async function changedAndSaved({ page }: Opened): Promise<JsonRecord> {
     .click();
   await page.locator('.typing').fill('1.31 kN');
   await page.keyboard.press('Enter');
-  const [download] = await Promise.all([
-    page.waitForEvent('download'),
-    page.getByRole('button', { name: 'Save file' }).click(),
-  ]);
+  const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('button', { name: 'Save file' }).click()]);
   let text = '';
   for await (const part of await download.createReadStream()) text += String(part);
   const file = join(folder, 'saved.sheet.json');
