@@ -9,7 +9,6 @@ export { loadRecordAssets } from './load-assets.ts';
 export { type MakeRecord, makeRecord, printedValues, type RecordOptions, recordMaker } from './make.ts';
 export type {
   Assumption,
-  BesideTemplate,
   CriterionSummary,
   Line,
   OpenPoint,
@@ -20,8 +19,5 @@ export type {
   StepCase,
   StepKind,
   TableColumnHead,
-  TableMark,
-  TemplateDifference,
 } from './model.ts';
 export { type ProseBlock, type ProseSpan, readProse } from './prose.ts';
-export { marksByRow, markWords } from './table-marks.ts';

@@ -18,6 +18,8 @@ import type { Store } from './store.ts';
 export type OpenedFile =
   /** On the shelf now; `again`: it was there already, from this very file and unchanged. */
   | { readonly kind: 'opened'; readonly head: SheetHead; readonly again: boolean; readonly message: string }
+  /** A template is no sheet to be filled in: it is for the shelf to take in (importFiles). */
+  | { readonly kind: 'template'; readonly name: string; readonly text: string }
   | { readonly kind: 'refused'; readonly name: string; readonly message: string; readonly problems: readonly FileProblem[] }
   | { readonly kind: 'cancelled' }
   | { readonly kind: 'trouble'; readonly problem: StoreProblem };
@@ -84,6 +86,7 @@ export function openFiles(store: Store): Files {
           problems: read.problems,
         };
       }
+      if (read.value.templateInfo !== undefined) return { kind: 'template', name: file.name, text };
       const { handle } = file;
       const row = handle === undefined ? undefined : await known(handle);
       const there = row === undefined || row.text !== text ? undefined : await backend.read(row.id);

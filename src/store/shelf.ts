@@ -9,11 +9,12 @@
 
 import {
   type FileProblem,
+  type KeepInfo,
   newFromSheet,
   newFromTemplate,
   readSheet,
   type Sheet,
-  type TemplateInfo,
+  templateOf,
   writeSheet,
 } from '../sheet/index.ts';
 import { type BundledSheet, looksLikeBundle, readBundle, writeBundle } from './bundle.ts';
@@ -36,7 +37,6 @@ export interface Imported {
   readonly same: number;
   readonly refused: readonly Refused[];
 }
-export type TemplateAbout = Pick<TemplateInfo, 'id' | 'job' | 'limits' | 'caution'>;
 
 export interface Shelf {
   /** Newest first. `search`: every word must occur in title, number, project, client, template or status. */
@@ -58,7 +58,7 @@ export interface Shelf {
   textOf(id: string): Promise<{ readonly name: string; readonly text: string }>;
   templates(): Promise<readonly TemplateRow[]>;
   /** An own template from a sheet; the same id again is its next version. */
-  keepTemplate(sheet: Sheet, about: TemplateAbout): Promise<TemplateRow>;
+  keepTemplate(sheet: Sheet, info: KeepInfo): Promise<TemplateRow>;
   removeTemplate(id: string): Promise<TemplateRow | undefined>;
   putTemplate(row: TemplateRow): Promise<void>;
   /** Sheet files and bundles, told apart by their content. */
@@ -201,9 +201,9 @@ export function openShelf(store: Store): Shelf {
       return { name, text: fileText(kept.text) };
     },
     templates: async () => [...(await backend.templates())].sort((one, other) => one.title.localeCompare(other.title)),
-    async keepTemplate(sheet, about) {
-      const before = (await backend.templates()).find((row) => row.id === about.id);
-      const row = templateRow(templateOf(sheet, about, (before?.version ?? 0) + 1), Date.now());
+    async keepTemplate(sheet, info) {
+      const before = (await backend.templates()).find((row) => row.id === info.id);
+      const row = templateRow(templateOf(sheet, { ...info, version: (before?.version ?? 0) + 1 }), Date.now());
       await putTemplate(row);
       return row;
     },
@@ -266,17 +266,6 @@ function refusal(name: string, problems: readonly FileProblem[], otherwise = 'it
   const [first] = problems;
   const more = problems.length > 1 ? ` (and ${problems.length - 1} more)` : '';
   return { name, message: `${name}: ${first?.message ?? otherwise}${more}`, problems };
-}
-
-/** What is general in a sheet: nothing of its job, and no value marked as carried over. */
-function templateOf(sheet: Sheet, about: TemplateAbout, version: number): Sheet {
-  const { template: _, carriedFrom: _1, status: _2, marks: _3, revisions: _4, log: _5, ...rest } = newFromSheet(sheet);
-  const cells = rest.cells.map((cell) => {
-    if (cell.kind !== 'given') return cell;
-    const { carriedOver: _6, ...given } = cell;
-    return given;
-  });
-  return { ...rest, templateInfo: { ...about, version }, cells };
 }
 
 const fileWords = (text: string): string => {

@@ -55,6 +55,9 @@ export class PageElementRoot extends PageElement {
   #watch: IntersectionObserver | undefined;
   /** Sections under watch; one more or less begins it anew. */
   #watched: readonly string[] = [];
+  /** Another screen stands where the sheet was. */
+  #away = false;
+  #jumpTo: string | null = null;
   #width = matchMedia('(max-width: 70rem)');
 
   constructor() {
@@ -79,6 +82,7 @@ export class PageElementRoot extends PageElement {
     addEventListener('drop', this.#onDrop);
     this.addEventListener('show-keys', () => showKeys(this));
     this.addEventListener('walk', (event) => void this.#onWalk(event as CustomEvent<Walk>));
+    this.addEventListener('jump', this.#onJump);
   }
 
   override disconnectedCallback() {
@@ -209,6 +213,7 @@ export class PageElementRoot extends PageElement {
         <button type="button" ?disabled=${desk.undoLabel === null} title=${desk.undoLabel === null ? nothing : `Undo: ${desk.undoLabel}`} @click=${() => desk.undo()}>Undo</button>
         <button type="button" ?disabled=${desk.redoLabel === null} title=${desk.redoLabel === null ? nothing : `Redo: ${desk.redoLabel}`} @click=${() => desk.redo()}>Redo</button>
         <button type="button" title=${session.fileName === null ? 'Save the sheet as a file' : `Save the sheet in ${session.fileName}`} @click=${() => void session.saveFile()}>Save file</button>
+        ${session.id === null ? nothing : html`<button type="button" title="Keep this sheet as a template for similar jobs" @click=${() => session.go({ screen: 'keep', id: session.id! })}>Keep as template</button>`}
         <button type="button" @click=${() => print()}>Print</button>
         <button type="button" title="The keys of the page: ?" @click=${() => showKeys(this)}>Keys</button>
       </div>
@@ -217,8 +222,11 @@ export class PageElementRoot extends PageElement {
 
   protected override updated() {
     const { session, desk } = this;
-    if (session?.route.screen !== 'sheet') document.title = 'Shelf, Tightside';
+    if (session !== undefined && session.route.screen !== 'sheet')
+      document.title = `${screenNames[session.route.screen]}, Tightside`;
+    if (session?.route.screen !== 'sheet') this.#away = true;
     if (session?.route.screen !== 'sheet' || desk === null) return;
+    if (this.#away || this.#jumpTo !== null) void this.#arrive();
     const { titleBlock, title, status } = desk.drawn;
     document.title = `${[titleBlock.documentNumber, title].filter(Boolean).join(' ')}, ${status}`;
     preparePrint(desk.drawn);
@@ -249,6 +257,22 @@ export class PageElementRoot extends PageElement {
   get #paper(): PaperElement | null {
     return this.querySelector('ts-paper');
   }
+
+  /** From another screen: to the line that was asked for, or where the focus would be lost, to the sheet. */
+  async #arrive() {
+    const cell = this.#jumpTo;
+    this.#away = false;
+    this.#jumpTo = null;
+    await this.#complete();
+    if (cell !== null) return this.#goTo(cell);
+    if (document.activeElement === document.body)
+      this.querySelector<HTMLElement>('.grid [tabindex="0"]')?.focus({ preventScroll: true });
+  }
+  #onJump = (event: Event) => {
+    const { sheet, cell } = (event as CustomEvent<Jump>).detail;
+    this.#jumpTo = cell;
+    this.session?.go({ screen: 'sheet', id: sheet });
+  };
 
   #goTo(cell: string) {
     const from = this.desk?.chosen;
@@ -359,6 +383,13 @@ export class PageElementRoot extends PageElement {
     if (lost) event.preventDefault();
   };
 }
+
+/** A line of a sheet that another screen leads to: the detail of its `jump` event. */
+export interface Jump {
+  readonly sheet: string;
+  readonly cell: string;
+}
+const screenNames = { shelf: 'Shelf', template: 'New sheet from a template', keep: 'Keep as a template' } as const;
 
 /** Where a row asks to go, or that what is unfolded under it be folded. */
 type Walk = 'origin' | 'use' | 'back' | 'fold' | 'leave';

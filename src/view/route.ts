@@ -1,11 +1,13 @@
-// The address of a screen: `#/sheet/ID`, `#/shelf`, `#/template/ID`; no hash at all is the sheet of last time.
+// The address of a screen: `#/sheet/ID`, `#/shelf`, `#/template/ID`, `#/keep/ID`; no hash at all is the sheet of last time.
 
 export type Route =
   /** `id` null: whichever sheet comes first. */
   | { readonly screen: 'sheet'; readonly id: string | null }
   | { readonly screen: 'shelf' }
   /** A new sheet from a template, before it is made. */
-  | { readonly screen: 'template'; readonly id: string };
+  | { readonly screen: 'template'; readonly id: string }
+  /** A sheet that is to be kept as a template. */
+  | { readonly screen: 'keep'; readonly id: string };
 
 export function hashOf(route: Route): string {
   if (route.screen === 'shelf') return '#/shelf';
@@ -14,9 +16,9 @@ export function hashOf(route: Route): string {
 
 /** Anything that is no address of ours is the sheet of last time. */
 export function readHash(hash: string): Route {
-  const [, screen, id] = /^#\/(sheet|template|shelf)(?:\/([^/]+))?$/u.exec(hash) ?? [];
+  const [, screen, id] = /^#\/(sheet|template|keep|shelf)(?:\/([^/]+))?$/u.exec(hash) ?? [];
   if (screen === 'shelf') return { screen };
-  if ((screen === 'sheet' || screen === 'template') && id !== undefined) {
+  if ((screen === 'sheet' || screen === 'template' || screen === 'keep') && id !== undefined) {
     try {
       return { screen, id: decodeURIComponent(id) };
     } catch {

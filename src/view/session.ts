@@ -1,11 +1,11 @@
 // What this tab works with: the store, the sheet on its desk and how far it is kept, the screen that is shown, and what is to be told.
 //
-// 1. The address names the screen: `#/sheet/ID`, `#/shelf`, `#/template/ID`; the back button of the browser walks through them.
+// 1. The address names the screen (route.ts); the back button of the browser walks through them.
 // 2. Every change of the desk goes to the keeper at once, and so does what is being typed; a sheet that another tab writes is shown as it
 //    is kept there, and the desk is locked.
 // 3. Trouble never takes the sheet off the screen: it is told with its ways out.
 // 4. The example is put on the shelf once in a browser; removed, it stays removed.
-// Not here: how things are kept (src/store), how they look (page.ts, notices.ts, shelf-screen/).
+// Not here: how things are kept (src/store), how they look (page.ts, notices.ts, shelf/).
 
 import type { Sheet } from '../sheet/index.ts';
 import {
@@ -70,6 +70,8 @@ export interface Session {
   act(way: WayOut): void;
   /** Everything typed is handed in and kept as far as it can be. */
   settle(): Promise<void>;
+  /** Takes the sheet off the desk where it lies there, kept first. False where it could not be kept, and stays. */
+  putAway(id: string): Promise<boolean>;
   subscribe(listener: () => void): () => void;
 }
 /** What a kept browser has. */
@@ -260,9 +262,21 @@ export function startSession(example: Sheet): Session {
     await begin(store);
   });
 
+  const takeIn = async (files: readonly Pick<DroppedFile, 'name' | 'text'>[], whole: OpenedFile | null) => {
+    try {
+      const came = await house!.shelf.importFiles(files);
+      // A single file that is no sheet may be a bundle; where it is neither, the sheet's own words say more.
+      const nothing = came.sheets.length + came.templates.length + came.same === 0;
+      if (whole?.kind === 'refused' && nothing && came.refused.length === 1) return opened(whole);
+      tell(toldOf(came));
+    } catch (cause) {
+      tellTrouble(cause);
+    }
+  };
   const opened = (file: OpenedFile) => {
     if (file.kind === 'cancelled') return;
     if (file.kind === 'trouble') return tell({ message: file.problem.message, wayOut: file.problem.wayOut, trouble: true });
+    if (file.kind === 'template') return void takeIn([{ name: file.name, text: async () => file.text }], null);
     if (file.kind === 'refused')
       return tell({
         message: `${file.name} was not opened; nothing here was changed by it.`,
@@ -340,15 +354,7 @@ export function startSession(example: Sheet): Session {
       const [only] = files;
       const whole = files.length === 1 && only !== undefined ? await house.files.take(only) : null;
       if (whole !== null && whole.kind !== 'refused') return opened(whole);
-      try {
-        const came = await house.shelf.importFiles(files);
-        // A single file that is no sheet may be a bundle; where it is neither, the sheet's own words say more.
-        const nothing = came.sheets.length + came.templates.length + came.same === 0;
-        if (whole !== null && nothing && came.refused.length === 1) return opened(whole);
-        tell(toldOf(came));
-      } catch (cause) {
-        tellTrouble(cause);
-      }
+      await takeIn(files, whole);
     },
     saveFile,
     act(way) {
@@ -380,6 +386,17 @@ export function startSession(example: Sheet): Session {
     async settle() {
       desk?.finish();
       await keeper?.kept();
+    },
+    async putAway(id) {
+      if (keeper?.id !== id) return true;
+      desk?.finish();
+      if (!(await keeper.close())) return false;
+      leaveDesk?.();
+      keeper = null;
+      desk = null;
+      fileName = null;
+      changed();
+      return true;
     },
     subscribe(listener) {
       listeners.add(listener);

@@ -80,7 +80,11 @@ describe.each([
     const read = readSheet(first.text);
     if (!read.ok) throw new Error(read.problems[0]?.message);
     expect(read.value).toMatchObject({ templateInfo: { ...about, version: 1 } });
-    expect(read.value.cells).toEqual([given('F_0', '9 N')]);
+    // The caution of the template stands in its sheets as a note; the value is carried over into them.
+    expect(read.value.cells).toEqual([
+      { id: 'n1', kind: 'note', text: about.caution, role: 'caution' },
+      { ...given('F_0', '9 N'), carriedOver: true },
+    ]);
     expect(read.value.titleBlock?.preparedBy).toBeUndefined();
     const made = await opened(store, (await shelf.newFromTemplate(read.value)).id);
     expect(made.sheet.template).toEqual({ id: 'mixer', version: 1 });
