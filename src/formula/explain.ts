@@ -295,6 +295,7 @@ function lookUp(walk: Walk, expr: Extract<Expr, { kind: 'table' }>): TakenRow | 
   if (x === x0) return entryOf(column, row);
   return {
     kind: 'interpolate',
+    row,
     x0,
     x1: keys.numbers[row + 1]!,
     y0: column.numbers[row]!,
@@ -305,7 +306,7 @@ function lookUp(walk: Walk, expr: Extract<Expr, { kind: 'table' }>): TakenRow | 
 }
 
 function entryOf(column: TableColumnData, row: number): TakenRow {
-  return { kind: 'entry', value: column.numbers?.[row] ?? none, ...(column.unit && { unit: column.unit }) };
+  return { kind: 'entry', value: column.numbers?.[row] ?? none, ...(column.unit && { unit: column.unit }), row };
 }
 
 function valueOfRow(walk: Walk, expr: Extract<Expr, { kind: 'table' }>, row: TakenRow): number {

@@ -7,9 +7,17 @@ import type { Unit } from '../quantity/index.ts';
 import type { Expr } from './expr.ts';
 
 export type TakenRow =
-  | { readonly kind: 'entry'; readonly value: number; readonly unit?: Unit }
+  | {
+      readonly kind: 'entry';
+      readonly value: number;
+      readonly unit?: Unit;
+      /** Index of the row that was read. */
+      readonly row?: number;
+    }
   | {
       readonly kind: 'interpolate';
+      /** Index of the first of the two rows that were read. */
+      readonly row?: number;
       readonly x0: number;
       readonly x1: number;
       readonly y0: number;

@@ -4,6 +4,7 @@
 
 import { escapeHtml, safeImage } from './escape.ts';
 import { mostColumns, stepBody } from './html-step.ts';
+import { dataTable } from './html-table.ts';
 import { caseHead, inlineText, noteLines, prose, type Symbols } from './html-text.ts';
 import type { Line, RecordModel } from './model.ts';
 
@@ -40,7 +41,7 @@ function body(line: Line, model: RecordModel, span: number, symbols: Symbols): s
       );
     }
     case 'table':
-      return beside(line.source, dataTable(line, symbols), span, symbols, line.rows.length > longTable ? ' long' : '');
+      return beside(line.source, dataTable(line, model, symbols), span, symbols, line.rows.length > longTable ? ' long' : '');
     case 'other':
       return beside(line.source, picture(line, symbols), span, symbols);
   }
@@ -51,19 +52,6 @@ const longTable = 12;
 
 function beside(source: string, markup: string, span: number, symbols: Symbols, more = ''): string {
   return `<tbody class="text${more}"><tr><td class="src">${inlineText(source, symbols)}</td><td class="wide" colspan="${span - 1}">${markup}</td></tr></tbody>`;
-}
-
-function dataTable(line: Extract<Line, { kind: 'table' }>, symbols: Symbols): string {
-  const numeric = (k: number) => (line.heads[k]?.numeric ? ' class="num"' : '');
-  const heads = line.heads.map((head, k) => {
-    const unit = head.unit === '' ? '' : ` / ${escapeHtml(head.unit)}`;
-    return `<th scope="col"${numeric(k)}>${inlineText(head.title, symbols)}${unit}</th>`;
-  });
-  const rows = line.rows.map(
-    (cells) => `<tr>${cells.map((cell, k) => `<td${numeric(k)}>${escapeHtml(cell)}</td>`).join('')}</tr>`,
-  );
-  const title = `<p class="t">${line.title === '' ? 'Table' : inlineText(line.title, symbols)} <code>${escapeHtml(line.name)}</code></p>`;
-  return `${title}<div class="scroll" tabindex="0"><table class="data"><thead><tr>${heads.join('')}</tr></thead><tbody>${rows.join('')}</tbody></table></div>${noteLines(line.notes, symbols)}`;
 }
 
 function picture(line: Extract<Line, { kind: 'other' }>, symbols: Symbols): string {

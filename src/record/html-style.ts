@@ -129,6 +129,12 @@ thead{display:table-header-group}
 .data td,.data th{padding:.15rem .7rem;border-bottom:1px solid var(--rule)}
 .data .num{text-align:right}
 .data{width:auto;min-width:50%}
+.data .used td{font-weight:600}
+.data .used td:first-child{border-left:2px solid var(--author)}
+.data td.use{color:var(--second);white-space:nowrap}
+.data td.use::before{content:"◂ ";color:var(--author)}
+.beside td:first-child{white-space:nowrap}
+.beside code{overflow-wrap:anywhere}
 figure{margin:.4rem 0}
 figure img{max-width:100%;max-height:14cm}
 .absent{border:1px dashed var(--second);padding:.5rem .7rem;color:var(--second)}

@@ -44,6 +44,7 @@ ${section('Method', prose(model.method, symbols))}
 ${criteria(model, symbols)}
 ${openPoints(model, symbols)}
 ${assumptions(model, symbols)}
+${besideTemplate(model, symbols)}
 ${section('Limits of validity', model.limits.length === 0 ? '' : `<ul>${model.limits.map((limit) => `<li>${inlineText(limit, symbols)}</li>`).join('')}</ul>`)}
 </div>
 <section aria-label="Calculation">
@@ -189,6 +190,22 @@ function assumptions(model: RecordModel, symbols: Symbols): string {
     return `<tr><td>${stepLink(each.number)}</td><td>${inlineText(each.text, symbols)}${confirm}</td><td>${value}</td><td>${inlineText(each.source, symbols)}</td></tr>`;
   });
   return `<section><h2>Assumptions</h2>${scroll}<table class="list"><colgroup><col style="width:7%"><col><col style="width:22%"><col style="width:25%"></colgroup><thead><tr><th scope="col">Step</th><th scope="col">Assumption</th><th scope="col">Value</th><th scope="col">Source</th></tr></thead><tbody>${rows.join('')}</tbody></table></div></section>`;
+}
+
+/** What is not the template's, so that a checker reads what is new. */
+function besideTemplate({ beside }: RecordModel, symbols: Symbols): string {
+  if (beside === null) return '';
+  const words = `<p>${escapeHtml(beside.words)}</p>`;
+  if (beside.differences.length === 0) return section('Formulas beside the template', words);
+  const code = (text: string) => (text === '' ? '—' : `<code>${escapeHtml(text)}</code>`);
+  const rows = beside.differences.map(
+    ({ what, number, name, title, was, now }) =>
+      `<tr><td>${what}</td><td>${stepLink(number)}</td><td>${inlineText(title === '' ? name : title, symbols)}</td><td>${code(was)}</td><td>${code(now)}</td></tr>`,
+  );
+  return section(
+    'Formulas beside the template',
+    `${words}${scroll}<table class="list beside"><thead><tr><th scope="col">What</th><th scope="col">Step</th><th scope="col">Line</th><th scope="col">In the template</th><th scope="col">Here</th></tr></thead><tbody>${rows.join('')}</tbody></table></div>`,
+  );
 }
 
 function references(model: RecordModel): string {

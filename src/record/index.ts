@@ -9,6 +9,7 @@ export { loadRecordAssets } from './load-assets.ts';
 export { type MakeRecord, makeRecord, printedValues, type RecordOptions, recordMaker } from './make.ts';
 export type {
   Assumption,
+  BesideTemplate,
   CriterionSummary,
   Line,
   OpenPoint,
@@ -19,5 +20,8 @@ export type {
   StepCase,
   StepKind,
   TableColumnHead,
+  TableMark,
+  TemplateDifference,
 } from './model.ts';
 export { type ProseBlock, type ProseSpan, readProse } from './prose.ts';
+export { marksByRow, markWords } from './table-marks.ts';

@@ -6,6 +6,7 @@
 
 import { printNumeral, readNumeral } from '../quantity/index.ts';
 import type { Calculation, CellState, LoadCase, NoteState, TableState, TemplateComparison } from '../sheet/index.ts';
+import { besideTemplate } from './beside-template.ts';
 import { type CasePrint, printCases } from './case-print.ts';
 import { comparisonWords, templateWords, withTemplate } from './from-template.ts';
 import { assumptionsOf, openPointsOf, referencesOf, summaryOf } from './heads.ts';
@@ -13,6 +14,7 @@ import { type Heard, type LineReasons, type Memory, newMemory, same } from './me
 import type { Line, RecordModel } from './model.ts';
 import { readProse } from './prose.ts';
 import { makeStep, printedValue } from './steps.ts';
+import { withMarks } from './table-marks.ts';
 import { citationNotes, inCases, isBlank, noSource, replaceLive } from './words.ts';
 
 export interface RecordOptions {
@@ -54,7 +56,7 @@ function make(calculation: Calculation, options: RecordOptions, memory: Memory):
     const state = calculation.state(cell.id);
     if (state !== undefined) plain.push(keptLine(calculation, state, prints, titles, memory));
   }
-  const lines = withTemplate(plain, options.template);
+  const lines = withTemplate(withMarks(plain, calculation, prints), options.template);
   const steps = lines.flatMap((line) => (line.kind === 'step' ? [line.step] : []));
   const problems = calculation.problems();
   const assumptions = assumptionsOf(calculation, steps, lines, titles);
@@ -68,6 +70,7 @@ function make(calculation: Calculation, options: RecordOptions, memory: Memory):
     method: live(sheet.method),
     conclusion: live(sheet.conclusion),
     origin: originOf(calculation, options.template),
+    beside: besideTemplate(calculation, lines, options.template),
     limits: sheet.templateInfo?.limits ?? [],
     caution: sheet.templateInfo?.caution ?? '',
     cases: calculation.cases.map((each, k) => ({ id: each.id, title: titles[k] ?? each.id })),
@@ -220,6 +223,7 @@ function tableLine(calculation: Calculation, state: TableState): Line {
     source: cell.source ?? '',
     heads,
     rows,
+    marks: [],
     notes,
   };
 }

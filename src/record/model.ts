@@ -69,6 +69,16 @@ export interface TableColumnHead {
   readonly numeric: boolean;
 }
 
+/** A row of a table that the calculation uses, and which lines use it how. */
+export interface TableMark {
+  readonly row: number;
+  /** By a choice, by a lookup, or as one of the two rows that a value lies between. */
+  readonly how: 'chosen' | 'read' | 'between';
+  readonly by: readonly { readonly cell: string; readonly number: string }[];
+  /** Ids of the cases in which it holds; none: in every case. */
+  readonly cases: readonly string[];
+}
+
 export type Line =
   | { readonly kind: 'heading'; readonly cell: string; readonly number: string; readonly level: 1 | 2 | 3; readonly text: string }
   | { readonly kind: 'step'; readonly step: Step }
@@ -89,6 +99,8 @@ export type Line =
       readonly source: string;
       readonly heads: readonly TableColumnHead[];
       readonly rows: readonly (readonly string[])[];
+      /** In the order of the rows. */
+      readonly marks: readonly TableMark[];
       readonly notes: readonly string[];
     }
   | {
@@ -148,6 +160,25 @@ export interface OpenPoint {
   readonly text: string;
 }
 
+/** The formulas of a sheet beside those of the template that it came from. */
+export interface BesideTemplate {
+  /** 'Formulas as in template flat-belt-open, version 1, except:' */
+  readonly words: string;
+  /** In the order of the sheet, what was left out at the end. */
+  readonly differences: readonly TemplateDifference[];
+}
+export interface TemplateDifference {
+  readonly what: 'changed' | 'added' | 'left out';
+  /** '' for what the sheet does not have. */
+  readonly number: string;
+  readonly cell: string;
+  readonly name: string;
+  readonly title: string;
+  /** As typed in the template, and here; '' where there is none. */
+  readonly was: string;
+  readonly now: string;
+}
+
 export interface RecordModel {
   readonly title: string;
   readonly titleBlock: TitleBlock;
@@ -158,6 +189,8 @@ export interface RecordModel {
   readonly conclusion: readonly ProseBlock[];
   /** 'template flat-belt-open, version 1'; '' for a sheet begun from nothing. */
   readonly origin: string;
+  /** Null for a sheet that was not made from a template. */
+  readonly beside: BesideTemplate | null;
   /** Limits of validity and caution that a template states of itself. */
   readonly limits: readonly string[];
   readonly caution: string;

@@ -1,16 +1,23 @@
 // Lines of the sheet that are no steps: headings, notes, tables, and the places of drawings, charts and figures.
 //
-// Not here: steps (row.ts), prose as markup (text.ts).
+// Not here: steps (row.ts), tables (table/), prose as markup (text.ts).
 
 import { html, nothing, type TemplateResult } from 'lit';
-import type { Line } from '../record/index.ts';
+import type { Line, RecordCase } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
+import { tableOf } from './table/shown.ts';
 import { prose, source } from './text.ts';
 
 type Other = Exclude<Line, { kind: 'step' }>;
 type Tab = (column: number) => 0 | -1;
 
-export function otherLine(line: Other, tab: Tab, problems: readonly CellProblem[], below: unknown): TemplateResult {
+export function otherLine(
+  line: Other,
+  tab: Tab,
+  problems: readonly CellProblem[],
+  cases: readonly RecordCase[],
+  below: unknown,
+): TemplateResult {
   const trouble = problems.map(
     (problem) =>
       html`<p class="problem ${problem.severity}"><b>${problem.severity === 'error' ? 'Error' : 'Warning'}</b>: ${problem.message}</p>`,
@@ -23,7 +30,7 @@ export function otherLine(line: Other, tab: Tab, problems: readonly CellProblem[
       ? html`<span class="role">${roles[line.role]}</span> ${source(line.source)}`
       : source(line.source);
   return html`<div role="gridcell" class="source" data-column="0" tabindex=${tab(0)}>${left}</div>
-    <div role="gridcell" class="calculation across" data-column="1" tabindex=${tab(1)}>${body(line)}${notesOf(line).map((note) => html`<p class="remark">${note}</p>`)}${trouble}${below}</div>`;
+    <div role="gridcell" class="calculation across" data-column="1" tabindex=${tab(1)}>${body(line, problems, cases)}${notesOf(line).map((note) => html`<p class="remark">${note}</p>`)}${trouble}${below}</div>`;
 }
 
 const roles = { assumption: 'Assumption', limit: 'Limit', caution: 'Caution' } as const;
@@ -34,27 +41,14 @@ function heading({ number, level, text }: Extract<Line, { kind: 'heading' }>) {
   return level === 2 ? html`<h3>${words}</h3>` : html`<h4>${words}</h4>`;
 }
 
-function body(line: Exclude<Other, { kind: 'heading' }>) {
+function body(line: Exclude<Other, { kind: 'heading' }>, problems: readonly CellProblem[], cases: readonly RecordCase[]) {
   if (line.kind === 'note') return html`<div class="prose">${prose(line.blocks)}</div>`;
-  if (line.kind === 'table') return table(line);
+  if (line.kind === 'table') return tableOf(line, problems, cases);
   const picture =
     line.image !== undefined && /^data:image\/(png|jpeg);base64,/u.test(line.image)
       ? html`<img src=${line.image} alt=${line.title === '' ? 'figure without a title' : line.title} />`
       : html`<p class="absent">${line.text}</p>`;
   return html`<figure>${line.title === '' ? nothing : html`<figcaption>${line.title}</figcaption>`}${picture}</figure>`;
-}
-
-/** Rows of a table that stand open on the screen; a taller one scrolls in its place. */
-const tallest = 14;
-
-function table(line: Extract<Line, { kind: 'table' }>) {
-  const kind = (index: number) => (line.heads[index]?.numeric ? 'number' : '');
-  return html`<div class="scroll ${line.rows.length > tallest ? 'tall' : ''}" tabindex=${line.rows.length > tallest ? '0' : nothing}
-    role=${line.rows.length > tallest ? 'region' : nothing} aria-label=${line.rows.length > tallest ? line.title : nothing}><table>
-    <caption>${line.title} <code>${line.name}</code></caption>
-    <thead><tr>${line.heads.map((head, index) => html`<th scope="col" class=${kind(index)}>${head.title}${head.unit === '' ? nothing : html` / ${head.unit}`}</th>`)}</tr></thead>
-    <tbody>${line.rows.map((cells) => html`<tr>${cells.map((cell, index) => (index === 0 ? html`<th scope="row">${cell}</th>` : html`<td class=${kind(index)}>${cell}</td>`))}</tr>`)}</tbody>
-  </table></div>`;
 }
 
 const notesOf = (line: Exclude<Other, { kind: 'heading' }>) => (line.kind === 'other' ? [] : line.notes);

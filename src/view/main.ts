@@ -6,6 +6,7 @@ import './page.css';
 import './edit/edit.css';
 import './sheet.css';
 import './lines.css';
+import './table/table.css';
 import './print.css';
 import { readSheet } from '../sheet/index.ts';
 import exampleText from './example.sheet.json?raw';

@@ -65,6 +65,7 @@ export class RowElement extends PageElement {
         line,
         (column) => (this.column === column ? 0 : -1),
         this.problems,
+        this.cases,
         html`${this.#words()}${this.#actions()}${this.#all()}`,
       );
     return this.#step(line.step);

@@ -208,6 +208,7 @@ describe('tables', () => {
     const walked = explain(between, lookup);
     expect(walked.ok && walked.taken.table(between)).toEqual({
       kind: 'interpolate',
+      row: 0,
       x0: 0.1,
       x1: 1,
       y0: 1,
@@ -216,7 +217,7 @@ describe('tables', () => {
       yUnit: unitOf('kg/m'),
     });
     const row = explain(at, lookup);
-    expect(row.ok && row.taken.table(at)).toEqual({ kind: 'entry', value: 2, unit: unitOf('kg/m') });
+    expect(row.ok && row.taken.table(at)).toEqual({ kind: 'entry', value: 2, unit: unitOf('kg/m'), row: 1 });
   });
 });
 

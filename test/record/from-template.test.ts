@@ -2,7 +2,7 @@
 
 import { readFileSync } from 'node:fs';
 import { expect, it } from 'vitest';
-import { makeRecord, recordJson } from '../../src/record/index.ts';
+import { makeRecord, recordHtml, recordJson } from '../../src/record/index.ts';
 import { type Cell, calculate, compareWithTemplate, newFromTemplate, readSheet, type Sheet } from '../../src/sheet/index.ts';
 
 function template(id: string): Sheet {
@@ -54,4 +54,38 @@ it('says when the template is of another version than the sheet was made from', 
   expect(record.origin).toBe(
     `template capstan, version 1; beside template capstan, version 3, the sheet was made from version 1: ${computed} formulas and criteria untouched`,
   );
+});
+
+it('lists at the head what is not the template’s, with was and now, and says when nothing could be compared', () => {
+  const cells = made.cells.flatMap((cell): Cell[] => {
+    if (cell.kind === 'derived' && cell.name === 'k') return [{ ...cell, formula: 'exp(mu*theta)*1' }];
+    if (cell.kind === 'derived' && cell.name === 'N_req') return [];
+    return [cell];
+  });
+  const own: Cell = { id: 'own', kind: 'derived', name: 'F_own', title: 'Own', formula: '2*F_load', unit: 'N', source: 's' };
+  const was = capstan.cells.find((cell) => cell.kind === 'derived' && cell.name === 'k');
+  const record = recordOf({ ...made, cells: [...cells, own] });
+  expect(record.beside?.words).toBe('Formulas as in template capstan, version 1, except:');
+  const number = (name: string) => record.steps.find((step) => step.name === name)?.number;
+  expect(
+    record.beside?.differences.map(({ what, number, name, was, now }) => [
+      what,
+      number,
+      name,
+      was.split(',')[0],
+      now.split(',')[0],
+    ]),
+  ).toEqual([
+    ['changed', number('k'), 'k', was?.kind === 'derived' ? was.formula : '', 'exp(mu*theta)*1'],
+    ['added', number('F_own'), 'F_own', '', '2*F_load'],
+    ['left out', '', 'N_req', expect.any(String), ''],
+  ]);
+  const page = recordHtml(record, { faces: [], formulaStyle: '' });
+  expect(page).toContain('<h2>Formulas beside the template</h2><p>Formulas as in template capstan, version 1, except:</p>');
+  expect(page).toContain('<code>exp(mu*theta)*1</code>');
+  expect(recordOf(made).beside).toEqual({ words: 'Formulas as in template capstan, version 1.', differences: [] });
+  const alone = makeRecord(calculate(made));
+  expect(alone.beside?.words).toBe('The formulas were not compared: template capstan, version 1, is not at hand.');
+  const { template: _, ...free } = made;
+  expect(makeRecord(calculate(free)).beside).toBeNull();
 });
