@@ -186,6 +186,7 @@ export class Runner {
     }
     if (node.broken) {
       this.columns.clear(node);
+      node.solutions = [];
       return;
     }
     if (node.cell.kind === 'sought') {

@@ -105,6 +105,9 @@ describe('a sought quantity', () => {
       ['F_1lim', '1 N'],
       ['F_1lim', '2 m'],
       ['F_1lim', '400 N'],
+      ['F_u', 'fifty'],
+      ['F_u', '60 N'],
+      ['F_0', ''],
       ['F_0', '7 N'],
     ] as const) {
       const cells = kept.sheet.cells.map((cell) => (cell.kind === 'given' && cell.name === name ? { ...cell, value } : cell));
@@ -112,6 +115,7 @@ describe('a sought quantity', () => {
       const fresh = solve({ ...sheet, cells });
       expect([...kept.named('q')!.si]).toEqual([...fresh.named('q')!.si]);
       expect(kept.problems()).toEqual(fresh.problems());
+      expect(kept.state('s')).toEqual(fresh.state('s'));
     }
   });
 });
