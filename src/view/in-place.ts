@@ -15,8 +15,8 @@ let loading: Promise<void> | undefined;
 
 /** Resolves when the editing pieces are defined. */
 export function loadEditing(): Promise<void> {
-  // With the editor of formulas, so that nothing is asked of the network when typing begins.
-  loading ??= Promise.all([import('./edit/index.ts'), import('./edit/code-mirror.ts')]).then(
+  // With the editor of formulas and the reader of tables, so that nothing is asked of the network when typing begins.
+  loading ??= Promise.all([import('./edit/index.ts'), import('./edit/code-mirror.ts'), import('papaparse')]).then(
     ([{ defineEditing }]) => defineEditing(),
     (fault) => {
       // Tried again with the next line that is edited.

@@ -13,7 +13,6 @@ import { checkField } from '../../src/view/edit/field-checks.ts';
 import { live, splitComparison } from '../../src/view/edit/live.ts';
 import { marksOfFormula } from '../../src/view/edit/marks.ts';
 import { liveLine } from '../../src/view/edit/print-live.ts';
-import { withBlock, withColumn, withEntry, withoutColumn } from '../../src/view/edit/table-fields.ts';
 import { sheetOf } from '../sheet/build.ts';
 
 const table: Cell = {
@@ -297,27 +296,6 @@ describe('the fields of a cell', () => {
     const criterion: Cell = { id: 'k', kind: 'criterion', left: 'F_1', relation: '<=', right: 'F_1 - F_22' };
     expect(check(criterion, 'left')).toBeUndefined();
     expect(check(criterion, 'right')?.at).toEqual([6, 10]);
-  });
-
-  it('of a table stay one entry a column', () => {
-    const cell = table as Extract<Cell, { kind: 'table' }>;
-    expect(withColumn(cell)).toMatchObject({
-      columns: [{}, {}, {}, { name: 'column_4' }],
-      rows: [
-        ['leather on iron', '0.30', '0.20', ''],
-        ['rubber on steel', '0.50', '0.25', ''],
-      ],
-    });
-    expect(withoutColumn(cell, 1).rows).toEqual([
-      ['leather on iron', '0.20'],
-      ['rubber on steel', '0.25'],
-    ]);
-    expect(withEntry(cell, 1, 2, '0.3').rows[1]).toEqual(['rubber on steel', '0.50', '0.3']);
-    expect(withBlock(cell, 1, 1, '1\t2\t3\r\n4\t5\n').rows).toEqual([
-      ['leather on iron', '0.30', '0.20'],
-      ['rubber on steel', '1', '2'],
-      ['', '4', '5'],
-    ]);
   });
 });
 

@@ -4,7 +4,7 @@
 //    { cell } on Escape with the cell of before. All bubble.
 // 2. `renamed` { from, to } says that the quantity got another name, so that the host can rename it wherever it is used.
 // 3. A field says what is wrong with its own text; a cell with an error can be kept, as every line of a sheet.
-// Not here: which fields a kind has (cell-forms.ts), tables row by row (table-fields.ts).
+// Not here: which fields a kind has (cell-forms.ts), tables row by row (../table/).
 
 import { html, nothing, type TemplateResult } from 'lit';
 import { live } from 'lit/directives/live.js';
@@ -17,7 +17,6 @@ import { describeValues } from './assist.ts';
 import { type CellField, fieldsOf, fieldText, withFieldText } from './cell-forms.ts';
 import { checkField, proposeInField } from './field-checks.ts';
 import { keepKeys } from './keep-keys.ts';
-import { tableFields } from './table-fields.ts';
 
 export interface CellDetail {
   readonly cell: Cell;
@@ -74,7 +73,7 @@ export class CellFieldsElement extends PageElement {
     const fields = fieldsOf(this.draft, this.calculation);
     return html`<form class="cell-fields" aria-label="${kindWords[this.draft.kind]}: all fields" @submit=${this.#submit} @keydown=${this.#key}>
       ${fields.map((field) => html`<div class="cell-field ${field.input}">${this.#field(field)}</div>`)}
-      ${this.draft.kind === 'table' ? tableFields(this.draft, (cell) => this.#change(cell)) : nothing}
+      ${this.draft.kind === 'table' ? html`<ts-table-editor .cell=${this.draft} .calculation=${this.calculation} @table-change=${(event: CustomEvent<{ cell: Cell }>) => this.#change(event.detail.cell)}></ts-table-editor>` : nothing}
       <div class="cell-actions"><button type="submit">Keep</button> <button type="button" @click=${this.#cancel}>Take back</button></div>
     </form>`;
   }

@@ -3,7 +3,7 @@
 // 1. Taking a text out and putting the same text back gives an equal cell; an optional field that is emptied leaves no key behind.
 // 2. Keys are those of the file; `byCase.start` is the value of one case, `uses.driver` a part of a drawing, `show` names with commas.
 // 3. A value that is changed here keeps its basis and source: both stand beside it and can be changed in the same go.
-// Not here: tables (table-fields.ts), what is wrong with a field (field-checks.ts).
+// Not here: tables (../table/), what is wrong with a field (field-checks.ts).
 
 import { canonicalName } from '../../formula/index.ts';
 import type { Calculation, Cell } from '../../sheet/index.ts';

@@ -3,6 +3,8 @@
 // <ts-formula-editor>, <ts-entry-line>, <ts-value-field>, <ts-cell-fields>; <ts-line-editor> is a part of the first two. <ts-math> has
 // to be defined beside them. The editor of formulas itself is loaded when the first line is typed into.
 
+import { TableEditorElement } from '../table/editor.ts';
+import { TableImportElement } from '../table/import.ts';
 import { CellFieldsElement } from './cell-fields.ts';
 import { EntryLineElement } from './entry-line.ts';
 import { FormulaEditorElement } from './formula-editor.ts';
@@ -23,5 +25,7 @@ export function defineEditing() {
   customElements.define('ts-formula-editor', FormulaEditorElement);
   customElements.define('ts-entry-line', EntryLineElement);
   customElements.define('ts-value-field', ValueFieldElement);
+  customElements.define('ts-table-editor', TableEditorElement);
+  customElements.define('ts-table-import', TableImportElement);
   customElements.define('ts-cell-fields', CellFieldsElement);
 }
