@@ -20,6 +20,11 @@ import { citationNotes, inCases, isBlank, noSource, replaceLive } from './words.
 export interface RecordOptions {
   /** The sheet beside its template (compareWithTemplate): said at the head and on the steps that are not the template's. */
   readonly template?: TemplateComparison;
+  /**
+   * Lines that somebody looks at. The steps of all others, but for criteria and givens, may still be those of the record before: made for
+   * a screen that is completed in the next pause, never for a record that is kept or given away.
+   */
+  readonly first?: (cell: string) => boolean;
 }
 
 /** Printed values of every quantity, by cell id, one entry a case: the numerals of the record without its typesetting. */
@@ -49,12 +54,13 @@ export const makeRecord: MakeRecord = (calculation, options) => recordMaker()(ca
 
 function make(calculation: Calculation, options: RecordOptions, memory: Memory): RecordModel {
   const { sheet } = calculation;
-  const prints = printCases(calculation, memory.cases);
+  memory.prints ??= { of: sheet, cases: printCases(calculation, memory.cases) };
+  const prints = memory.prints.cases;
   const titles = calculation.cases.map(caseTitle);
   const plain: Line[] = [];
   for (const cell of sheet.cells) {
     const state = calculation.state(cell.id);
-    if (state !== undefined) plain.push(keptLine(calculation, state, prints, titles, memory));
+    if (state !== undefined) plain.push(keptLine(calculation, state, prints, titles, memory, options.first));
   }
   const lines = withTemplate(withMarks(plain, calculation, prints), options.template);
   const steps = lines.flatMap((line) => (line.kind === 'step' ? [line.step] : []));
@@ -114,7 +120,12 @@ function keptLine(
   prints: readonly CasePrint[],
   titles: readonly string[],
   { lines }: Memory,
+  first: RecordOptions['first'],
 ): Line {
+  if (first !== undefined && state.kind === 'derived' && !first(state.cell.id)) {
+    const before = lines.leave(state.cell.id);
+    if (before !== undefined) return before;
+  }
   const grounds = groundsOf(calculation, state, prints);
   const holds = ({ reasons, heard }: LineReasons) =>
     same(reasons, grounds) &&

@@ -5,7 +5,8 @@
 // 2. What the last record did not use is forgotten: a memory never holds more than one sheet.
 // Not here: the parts (case-print.ts, make.ts).
 
-import type { Calculation } from '../sheet/index.ts';
+import type { Calculation, Sheet } from '../sheet/index.ts';
+import type { CasePrint } from './case-print.ts';
 import type { ClosingStep, Verdict } from './closing.ts';
 import type { CriterionNumbers, PrintedVerdict } from './criterion-numbers.ts';
 import type { Line } from './line.ts';
@@ -36,6 +37,13 @@ export class Kept<V, R = readonly unknown[]> {
     const part = last !== undefined && holds(last.reasons) ? last : make();
     this.#next.set(key, part);
     return part.value;
+  }
+
+  /** The part of before whatever has become of its reasons, which are looked at again next time; undefined where there is none. */
+  leave(key: unknown): V | undefined {
+    const part = this.#next.get(key) ?? this.#last.get(key);
+    if (part !== undefined) this.#next.set(key, part);
+    return part?.value;
   }
 }
 
@@ -72,6 +80,8 @@ export interface CaseMemory {
 export interface Memory {
   readonly cases: readonly CaseMemory[];
   readonly lines: Kept<RecordLine, LineReasons>;
+  /** The printed numbers, and the sheet that they are those of. */
+  prints: { readonly of: Sheet; readonly cases: readonly CasePrint[] } | undefined;
 }
 
 const newCase = (): CaseMemory => ({
@@ -99,9 +109,11 @@ export function newMemory(): (calculation: Calculation) => Memory {
       sheet.carriedFrom,
       sheet.template,
     ];
-    if (memory === undefined || !same(grounds, now)) memory = { cases: cases.map(newCase), lines: new Kept() };
+    if (memory === undefined || !same(grounds, now)) memory = { cases: cases.map(newCase), lines: new Kept(), prints: undefined };
     grounds = now;
     memory.lines.turn();
+    if (memory.prints?.of === sheet) return memory;
+    memory.prints = undefined;
     for (const each of memory.cases) for (const kept of Object.values(each) as { turn(): void }[]) kept.turn();
     return memory;
   };

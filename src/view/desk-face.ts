@@ -88,6 +88,11 @@ export interface Desk {
   readonly model: RecordModel;
   /** The lines as last asked for: what stands on the screen while the next ones are made. */
   readonly drawn: RecordModel;
+  /**
+   * While something is typed: the lines of `first` as the sheet now stands, the others perhaps as they were; `model` completes it.
+   * At all other times the same as `model`.
+   */
+  sketch(first: (cell: string) => boolean): RecordModel;
   readonly chosen: string | null;
   /** The chosen lines in the order of the sheet: one, or a run of them. */
   readonly run: readonly string[];

@@ -28,10 +28,10 @@ import {
 } from '../sheet/index.ts';
 import { solver } from '../study/index.ts';
 import type { Desk, Editing, InPlace, NewLine, Remark, Typed } from './desk-face.ts';
-import { broughtIn, canRename, editOf, hasFormula, isError, keptDraft, placeOf, runBetween, typedOf } from './drafts.ts';
+import { broughtIn, canRename, editOf, hasFormula, isError, keptDraft, problemPlaces, runBetween, typedOf } from './drafts.ts';
 import { heldValue, type Provenance, provenanceOf, sharesValue, withoutProvenance, withSource, withValue } from './given.ts';
 import { provenanceActs } from './provenance.ts';
-import { alike, shareModel } from './share.ts';
+import { alike, cellsById, shareModel } from './share.ts';
 import { verdict } from './verdict.ts';
 
 export type { Desk, Editing, InPlace, NewCell, NewLine, Remark, Typed } from './desk-face.ts';
@@ -42,6 +42,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
   let shown = first;
   let calculation = calculate(first, solver);
   const makeRecord = recordMaker();
+  const placesIn = problemPlaces();
   let drawn = makeRecord(calculation);
   let stale = false;
   let history: History = firstHistory;
@@ -68,10 +69,10 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     changed();
     return true;
   };
-  const fresh = () => {
+  const fresh = (first?: (cell: string) => boolean) => {
     if (!stale) return drawn;
-    drawn = shareModel(drawn, makeRecord(calculation));
-    stale = false;
+    drawn = shareModel(drawn, makeRecord(calculation, first === undefined ? {} : { first }));
+    stale = first !== undefined;
     return drawn;
   };
   const show = (sheet: Sheet) => {
@@ -82,7 +83,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     if (reading >= calculation.cases.length) reading = 0;
   };
   const givenOf = (id: string, sheet: Sheet = kept): GivenCell | undefined => {
-    const cell = sheet.cells.find((one) => one.id === id);
+    const cell = cellsById(sheet).get(id);
     return cell?.kind === 'given' ? cell : undefined;
   };
   const keepEdit = (edit: Edit, label?: string) => {
@@ -111,8 +112,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     }
     const candidate = replaceCell(kept, withValue(cell, caseId(next.at), next.text, next.forAll));
     const last = shown;
-    calculation.update(kept);
-    const before = new Set(calculation.problems().map(placeOf));
+    const before = placesIn(calculation, kept);
     calculation.update(candidate);
     const own = problemsOf(next.cell, next.at);
     const problems = own.some(isError) ? own : [...broughtIn(calculation, before, next.cell, 'with this value'), ...own];
@@ -165,6 +165,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     get drawn() {
       return drawn;
     },
+    sketch: (first) => fresh(editing === null && inPlace === null ? undefined : first),
     get chosen() {
       return chosen;
     },
@@ -339,8 +340,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       }
       if (inPlace.cell !== cell.id) return;
       const last = shown;
-      calculation.update(kept);
-      const before = new Set(calculation.problems().map(placeOf));
+      const before = placesIn(calculation, kept);
       const candidate = applyEdit(kept, editOf(kept, cell, renamed).edit).sheet;
       calculation.update(candidate);
       // Words feed nothing: they show as typed whatever is wrong with them.

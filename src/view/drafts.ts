@@ -17,7 +17,21 @@ import type { Editing, InPlace, NewLine, Renamed, Typed } from './desk-face.ts';
 import { waits } from './waiting.ts';
 
 export const isError = (problem: CellProblem) => problem.severity === 'error';
-export const placeOf = ({ cell, code, case: id }: CellProblem) => `${cell} ${code} ${id ?? ''}`;
+const placeOf = ({ cell, code, case: id }: CellProblem) => `${cell} ${code} ${id ?? ''}`;
+
+/** Places of the problems that the kept sheet has by itself: found once, however many key strokes follow. */
+export function problemPlaces(): (calculation: Calculation, kept: Sheet) => ReadonlySet<string> {
+  let of: Sheet | undefined;
+  let places: ReadonlySet<string> = new Set();
+  return (calculation, kept) => {
+    if (of !== kept) {
+      calculation.update(kept);
+      places = new Set(calculation.problems().map(placeOf));
+      of = kept;
+    }
+    return places;
+  };
+}
 
 /** Errors that were not there before, told from the line that is typed in. */
 export function broughtIn(

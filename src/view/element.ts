@@ -7,3 +7,6 @@ export class PageElement extends LitElement {
     return this;
   }
 }
+
+export const isField = (target: EventTarget | null) =>
+  target instanceof HTMLInputElement || target instanceof HTMLSelectElement || target instanceof HTMLTextAreaElement;

@@ -47,6 +47,9 @@ export function provenanceOf({ basis, source, distribution, toConfirm }: GivenCe
   return Object.keys(all).length === 0 ? undefined : all;
 }
 
+export const provenanceText = (of: Provenance | undefined) =>
+  of === undefined ? '' : [of.source ?? '', of.basis ?? ''].filter((part) => part !== '').join(', ');
+
 export function withSource(cell: GivenCell, text: string): GivenCell {
   const { source: _, ...rest } = cell;
   return text.trim() === '' ? rest : { ...rest, source: text.trim() };

@@ -79,3 +79,20 @@ export function foot(model: RecordModel) {
     }
   </footer>`;
 }
+
+/** The heads of the columns: source, calculation, one a case. */
+export function columnHeads(desk: Desk, heads: readonly string[]) {
+  return html`<div role="row" class="row columns">
+      <div role="columnheader" class="source">Source</div>
+      <div role="columnheader" class="calculation">Calculation</div>
+      ${heads.map((title, index) => columnHead(desk, title, index, heads.length))}
+    </div>`;
+}
+
+function columnHead(desk: Desk, title: string, index: number, count: number) {
+  if (count === 1) return html`<div role="columnheader" class="result">${title}</div>`;
+  const read = desk.reading === index;
+  return html`<div role="columnheader" class="result">
+      <button type="button" class="case-head" aria-pressed=${read} title="Show the numbers of this case in the equations" @click=${() => desk.read(index)}>${title}</button>
+    </div>`;
+}

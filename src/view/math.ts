@@ -1,12 +1,13 @@
-// <ts-math>: one formula, typeset when it comes near the window, or all at once for print.
+// <ts-math>: one formula, typeset when its part of the page comes near the window, or all at once for print.
 //
 // 1. A formula is typeset once; every further place gets a copy of what was drawn.
 // 2. Set through the document's own interface, never as a text of markup: the policy of the page forbids styles in markup.
 // 3. Nothing in a formula can link, load or grow beyond a line. A formula that cannot be set shows its text.
-// Not here: what stands in a formula (src/formula).
+// Not here: what stands in a formula (src/formula), which part is near (stretches.ts).
 
 import katex from 'katex';
 import { unwatchFit, watchFit } from './fit.ts';
+import { inPause } from './pause.ts';
 import { allowTallSigns } from './tall-signs.ts';
 
 allowTallSigns();
@@ -41,31 +42,56 @@ function draw(tex: string): DocumentFragment {
   return fragment;
 }
 
-/** Elements that wait for the window to come near. */
+/** Elements that wait: those near the window for the next frames, the others for a pause. */
 const waiting = new Set<MathElement>();
-const near = new IntersectionObserver(
-  (entries) => {
-    for (const entry of entries) if (entry.isIntersecting) (entry.target as MathElement).typeset();
-  },
-  { rootMargin: '800px 0px' },
-);
+const soon = new Set<MathElement>();
+/** Elements with a formula in them. */
+let standing = 0;
+/** So many are typeset without being near the window; a larger sheet would only be slower for it. */
+const mostStanding = 600;
+const sliceInFrame = 8;
+/** Formulas that changed far from the window wait for the end of typing. */
+const restBeforePause = 700;
 
-let idle = false;
-// What is not in view is typeset in the pauses, a little at a time, so that find and print meet a complete sheet.
-function typesetInPauses() {
-  if (idle || waiting.size === 0 || waiting.size > 1500) return;
-  idle = true;
-  const later =
-    globalThis.requestIdleCallback ??
-    ((work: (until: { timeRemaining(): number }) => void) => setTimeout(() => work({ timeRemaining: () => 5 }), 50));
-  later((until) => {
-    idle = false;
-    for (const element of waiting) {
-      if (until.timeRemaining() < 2) break;
+let framed = false;
+function typesetInFrames() {
+  if (framed || soon.size === 0) return;
+  framed = true;
+  requestAnimationFrame(() => {
+    framed = false;
+    const end = performance.now() + sliceInFrame;
+    for (const element of soon) {
       element.typeset();
+      if (performance.now() > end) break;
     }
-    typesetInPauses();
+    typesetInFrames();
   });
+}
+
+let rest: ReturnType<typeof setTimeout> | undefined;
+/** What is far from the window is typeset in the pauses, a little at a time, so that find and print meet a complete sheet. */
+function typesetInPauses() {
+  clearTimeout(rest);
+  if (waiting.size === 0 || standing >= mostStanding) return;
+  rest = setTimeout(() => inPause(typesetSome), restBeforePause);
+}
+function typesetSome(remaining: number) {
+  const end = performance.now() + Math.min(remaining, 20) - 2;
+  for (const element of waiting) {
+    if (standing >= mostStanding || performance.now() > end) break;
+    element.typeset();
+  }
+  if (waiting.size > 0 && standing < mostStanding) inPause(typesetSome);
+}
+
+/** The window comes near: what waits in this part of the page is typeset, at once or within the next frames. */
+export function typesetIn(part: Element, atOnce: boolean) {
+  for (const element of part.querySelectorAll<MathElement>('ts-math')) {
+    if (!waiting.has(element)) continue;
+    if (atOnce) element.typeset();
+    else soon.add(element);
+  }
+  typesetInFrames();
 }
 
 /** Typesets everything that still waits: before print. */
@@ -75,41 +101,57 @@ export function typesetAll() {
 
 export class MathElement extends HTMLElement {
   #tex = '';
+  /** What stands in the element is its formula. */
+  #stands = false;
 
   get tex(): string {
     return this.#tex;
   }
   set tex(tex: string) {
     if (tex === this.#tex) return;
-    const was = this.#tex;
+    const first = this.#tex === '';
     this.#tex = tex;
-    // What is on the screen changes at once; what is not yet there waits for its turn.
-    if (was !== '' && !waiting.has(this)) this.#put();
-    else if (this.isConnected) this.#wait();
+    if (this.isConnected) this.#change(first);
+    else this.#stands = false;
   }
 
   connectedCallback() {
-    if (this.#tex !== '' && this.firstChild === null) this.#wait();
+    if (this.#stands) {
+      standing += 1;
+      this.#fit();
+    } else if (this.#tex !== '') this.#change(true);
   }
   disconnectedCallback() {
     waiting.delete(this);
-    near.unobserve(this);
+    soon.delete(this);
     unwatchFit(this);
+    if (this.#stands) standing -= 1;
   }
 
   typeset() {
     waiting.delete(this);
-    near.unobserve(this);
-    this.#put();
+    soon.delete(this);
+    this.replaceChildren(draw(this.#tex).cloneNode(true));
+    if (!this.#stands) standing += 1;
+    this.#stands = true;
+    this.#fit();
   }
 
-  #wait() {
+  /** What is read changes at once; elsewhere a formula goes, and waits for its turn: no number of before is ever met. */
+  #change(first: boolean) {
+    const far = this.closest('[data-far]') !== null;
+    if (!far && !first) return this.typeset();
+    if (this.#stands) standing -= 1;
+    this.#stands = false;
+    this.replaceChildren();
     waiting.add(this);
-    near.observe(this);
-    typesetInPauses();
+    if (far) typesetInPauses();
+    else {
+      soon.add(this);
+      typesetInFrames();
+    }
   }
-  #put() {
-    this.replaceChildren(draw(this.#tex).cloneNode(true));
+  #fit() {
     if (this.parentElement?.classList.contains('relation')) watchFit(this);
   }
 }

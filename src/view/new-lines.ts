@@ -40,6 +40,8 @@ export class NewLines {
   }
 
   isOpenBelow(cell: string): boolean {
+    // Asked for every row of a large sheet: most of the time nothing is open at all.
+    if (this.#open.size === 0 && this.#host.desk().newLine === null) return false;
     return this.#textOf(below(cell)) !== undefined;
   }
 
@@ -107,7 +109,7 @@ export class NewLines {
       await this.enter(id);
     }
     const row = this.#host.element.querySelector(`ts-row[data-cell="${CSS.escape(id)}"]`);
-    row?.parentElement?.querySelector('ts-entry-line')?.scrollIntoView({ block: 'nearest' });
+    row?.closest('.section')?.querySelector('ts-entry-line')?.scrollIntoView({ block: 'nearest' });
   }
 
   #behind(key: string, id: string) {

@@ -7,6 +7,7 @@
 // Not here: moving in the rows (paper.ts).
 
 import { html, nothing, type PropertyValues } from 'lit';
+import { guard } from 'lit/directives/guard.js';
 import { keyed } from 'lit/directives/keyed.js';
 import type { Desk } from './desk.ts';
 import { PageElement } from './element.ts';
@@ -18,6 +19,7 @@ import { typesetAll } from './math.ts';
 import { keptWord, notices } from './notices.ts';
 import { outline } from './outline.ts';
 import type { PaperElement } from './paper.ts';
+import { inPause } from './pause.ts';
 import { preparePrint } from './print.ts';
 import type { RowElement } from './row.ts';
 import type { Session } from './session.ts';
@@ -26,6 +28,9 @@ import { droppedFiles, shelfScreen } from './shelf-load.ts';
 import { openPoints, originAndUse } from './side.ts';
 import { words } from './text.ts';
 import { countLines } from './waiting.ts';
+
+/** Milliseconds without a key stroke after which the lines that nobody looks at follow. */
+const restBeforeRest = 150;
 
 export class PageElementRoot extends PageElement {
   static override properties = {
@@ -50,6 +55,7 @@ export class PageElementRoot extends PageElement {
   #desk: Desk | null = null;
   #trail: string[] = [];
   #drawing = false;
+  #completing: ReturnType<typeof setTimeout> | undefined;
   #leave: (() => void) | undefined;
   #leaveSession: (() => void) | undefined;
   #watch: IntersectionObserver | undefined;
@@ -133,22 +139,25 @@ export class PageElementRoot extends PageElement {
       return html`${this.#shelfBar(session)}<main class="shelf-desk">${told}${session.keeping.kind === 'opening' ? html`<p class="loading">Opening the sheet …</p>` : nothing}</main>`;
     const { drawn: model } = desk;
     const goTo = (cell: string) => this.#goTo(cell);
-    const beside = originAndUse(desk, goTo, this.narrow ? 1 : 2);
+    // These change with the lines or with what is chosen, not with every sign that is typed.
+    const beside = () => originAndUse(desk, goTo, this.narrow ? 1 : 2);
+    const sections = guard([desk, model, this.section], () => outline(model, this.section, goTo));
+    const points = guard([desk, model], () => openPoints(desk, goTo));
     return html`
       <a class="skip" href="#paper" @click=${this.#skip}>To the sheet</a>
       ${this.#bar(session, desk)}
       <div class="desk ${this.dropping ? 'dropping' : ''}">
         ${
           this.narrow
-            ? html`<details class="outline"><summary>Sections and criteria</summary>${outline(model, this.section, goTo)}</details>`
-            : html`<aside class="outline" aria-label="Outline">${outline(model, this.section, goTo)}</aside>`
+            ? html`<details class="outline"><summary>Sections and criteria</summary>${sections}</details>`
+            : html`<aside class="outline" aria-label="Outline">${sections}</aside>`
         }
         <main id="paper">${told}${keyed(
           desk,
           html`<ts-paper class="paper" .desk=${desk} .version=${this.version} .printing=${this.printing}
-            .foldable=${this.narrow} .beside=${this.narrow && this.unfolded ? beside : null}></ts-paper>`,
+            .foldable=${this.narrow} .beside=${this.narrow && this.unfolded ? beside() : null}></ts-paper>`,
         )}</main>
-        <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${this.narrow ? nothing : beside}${openPoints(desk, goTo)}</aside>
+        <aside class="side" aria-label="Origin, use and open points" @keydown=${this.#sideKey}>${this.narrow ? nothing : guard([desk, model, desk.chosen, desk.reading], beside)}${points}</aside>
       </div>
       ${keyDialog()}
       <p class="unseen" role="status">${desk.announcement}</p>`;
@@ -171,7 +180,7 @@ export class PageElementRoot extends PageElement {
     </header>`;
   }
 
-  /** What was typed is painted first; then the lines that follow from it, once for all key strokes until then. */
+  /** What was typed is painted first; then what is looked at, once for all key strokes until then; the rest of a large sheet in a pause. */
   #drawLater() {
     if (this.#drawing) return;
     this.#drawing = true;
@@ -179,9 +188,19 @@ export class PageElementRoot extends PageElement {
       setTimeout(() => {
         this.#drawing = false;
         const { desk } = this;
-        if (desk !== null && desk.drawn !== desk.model) this.version += 1;
+        const stretches = this.#paper?.stretches;
+        if (desk === null) return;
+        const before = desk.drawn;
+        if (before !== (stretches === undefined ? desk.model : desk.sketch((cell) => stretches.isLookedAt(cell))))
+          this.version += 1;
+        clearTimeout(this.#completing);
+        this.#completing = setTimeout(() => inPause(() => this.#drawRest(desk)), restBeforeRest);
       }),
     );
+  }
+
+  #drawRest(desk: Desk) {
+    if (desk === this.desk && desk.drawn !== desk.model) this.version += 1;
   }
 
   #bar(session: Session, desk: Desk) {

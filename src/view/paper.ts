@@ -11,8 +11,9 @@ import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
 import type { Desk, InPlace } from './desk.ts';
 import { hasFormula } from './drafts.ts';
-import { PageElement } from './element.ts';
-import { foot, head, titleBlock } from './heads.ts';
+import { isField, PageElement } from './element.ts';
+import { provenanceText } from './given.ts';
+import { columnHeads, foot, head, titleBlock } from './heads.ts';
 import { loadEditing } from './in-place.ts';
 import { commandOf, isWriting } from './keys.ts';
 import { type LineCommand, LineCommands } from './line-commands.ts';
@@ -20,6 +21,8 @@ import { NewLines } from './new-lines.ts';
 import type { PaperHost } from './paper-host.ts';
 import { type Section, sectionsOf, titleOf } from './sections.ts';
 import { cellOf } from './share.ts';
+import { type Stretch, Stretches } from './stretches.ts';
+import { noLineProblems, problemsByLine } from './waiting.ts';
 
 interface Place {
   readonly cell: string;
@@ -64,35 +67,39 @@ export class PaperElement extends PageElement {
   };
   readonly #newLines = new NewLines(this.#host);
   readonly #lines = new LineCommands(this.#host);
+  readonly stretches = new Stretches(() => this.requestUpdate());
   #run: ReadonlySet<string> = new Set();
-  #problems: { readonly all: readonly CellProblem[]; readonly of: Map<string, CellProblem[]> } = {
-    all: noProblems,
-    of: new Map(),
-  };
+  #problems = noLineProblems;
 
   protected override render() {
     const { desk } = this;
     const { drawn: model } = desk;
     const sections = sectionsOf(model.lines);
     const heads = model.cases.length === 1 && model.cases[0]?.title === '' ? ['Result'] : model.cases.map((one) => one.title);
-    this.#sortProblems();
+    this.#problems = problemsByLine(model.problems, this.#problems);
     this.#run = new Set(desk.run);
     this.#newLines.settle(
       sections.map(({ key }) => key),
       new Set(model.lines.map(cellOf)),
     );
+    this.stretches.begin(model.lines.length, this.printing);
     const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
     return html`${titleBlock(model)}${head(desk)}
       <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} aria-multiselectable="true" @keydown=${this.#onKey} @focusin=${this.#onFocus}
         @focusout=${this.#onLeave} @pointerdown=${this.#onPress} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel} @line-command=${this.#onLineCommand}
         @copy=${this.#onClipboard} @cut=${this.#onClipboard} @paste=${this.#onClipboard} @mousedown=${this.#onMouse}>
-        <div role="rowgroup" class="heads">${this.#columnHeads(heads)}</div>
+        <div role="rowgroup" class="heads">${columnHeads(desk, heads)}</div>
         ${repeat(
           sections,
           (section) => section.key,
           (section) => html`<div role="rowgroup" class="section" id=${`section-${section.key}`} data-section=${section.key}>
-            ${repeat(section.lines, cellOf, (line, index) => html`${this.#row(line, place)}${this.#below(line)}${this.printing && index === 0 ? this.#columnHeads(heads) : nothing}`)}
-            ${this.printing || this.desk.locked !== null ? nothing : this.#entryRow(section)}
+            ${repeat(
+              this.stretches.split(section.lines),
+              ({ key }) => key,
+              (stretch, index) =>
+                html`<div class="stretch" data-far data-stretch=${stretch.key}>${this.#stretch(stretch, place, this.printing && index === 0 ? heads : null)}</div>`,
+            )}
+            ${this.printing || desk.locked !== null ? nothing : this.#entryRow(section)}
           </div>`,
         )}
       </div>
@@ -101,23 +108,36 @@ export class PaperElement extends PageElement {
 
   protected override updated() {
     this.style.setProperty('--results', String(Math.max(1, this.desk.drawn.cases.length)));
+    this.stretches.settle(this);
   }
 
-  #columnHeads(heads: readonly string[]) {
-    return html`<div role="row" class="row columns">
-      <div role="columnheader" class="source">Source</div>
-      <div role="columnheader" class="calculation">Calculation</div>
-      ${heads.map((title, index) => this.#columnHead(title, index, heads.length))}
-    </div>`;
+  override disconnectedCallback() {
+    super.disconnectedCallback();
+    this.stretches.stop();
   }
 
-  #columnHead(title: string, index: number, count: number) {
+  /** `heads`: titles of the columns, where they stand in the section. */
+  #stretch(stretch: Stretch, place: Place, heads: readonly string[] | null) {
     const { desk } = this;
-    if (count === 1) return html`<div role="columnheader" class="result">${title}</div>`;
-    const read = desk.reading === index;
-    return html`<div role="columnheader" class="result">
-      <button type="button" class="case-head" aria-pressed=${read} title="Show the numbers of this case in the equations" @click=${() => desk.read(index)}>${title}</button>
-    </div>`;
+    const { lines } = stretch;
+    const cells = lines.map(cellOf);
+    const holds = (cell: string | null | undefined) => this.stretches.holds(stretch, cell);
+    const problems = cells.map((cell) => this.#problems.of.get(cell));
+    const from = [...lines, ...problems, desk.drawn.cases, desk.reading, desk.locked, this.printing];
+    const here: unknown[] = cells.filter((cell) => this.#run.has(cell));
+    if (holds(place.cell)) here.push(place.cell, place.column);
+    if (holds(desk.chosen)) here.push(desk.chosen, this.menu, this.beside, this.foldable);
+    for (const one of [desk.editing, desk.inPlace, desk.told]) if (holds(one?.cell)) here.push(one);
+    // What is typed in a new line is not in the desk's lines: drawn every time.
+    if (cells.some((cell) => this.#newLines.isOpenBelow(cell))) here.push({});
+    return this.stretches.draw(stretch, from, here, () =>
+      repeat(
+        lines,
+        cellOf,
+        (line, index) =>
+          html`${this.#row(line, place)}${this.#below(line)}${heads !== null && index === 0 ? columnHeads(desk, heads) : nothing}`,
+      ),
+    );
   }
 
   #row(line: Line, place: Place) {
@@ -125,7 +145,7 @@ export class PaperElement extends PageElement {
     const cell = cellOf(line);
     const editing = desk.editing?.cell === cell ? desk.editing : null;
     const inPlace = desk.inPlace?.cell === cell ? desk.inPlace : null;
-    const former = line.kind === 'step' && line.step.kind === 'given' ? formerText(desk, cell) : '';
+    const former = line.kind === 'step' && line.step.kind === 'given' ? provenanceText(desk.formerProvenance(cell)) : '';
     return html`<ts-row role="row" id=${`row-${cell}`} data-cell=${cell} .desk=${desk} .line=${line} .cases=${desk.drawn.cases}
       .problems=${this.#problems.of.get(cell) ?? noProblems} .reading=${desk.reading} .column=${place.cell === cell ? place.column : -1}
       .chosen=${desk.chosen === cell} .inRun=${this.#run.has(cell)} .menu=${this.menu && desk.chosen === cell} .editing=${editing} .inPlace=${inPlace} .printing=${this.printing} .former=${former}
@@ -175,20 +195,6 @@ export class PaperElement extends PageElement {
     this.#focus(at.cell, at.column);
   };
 
-  #sortProblems() {
-    const all = this.desk.drawn.problems;
-    if (all === this.#problems.all) return;
-    const before = this.#problems.of;
-    const of = new Map<string, CellProblem[]>();
-    for (const problem of all) of.set(problem.cell, [...(of.get(problem.cell) ?? []), problem]);
-    // A row whose problems stay alike keeps its list, and is not drawn again.
-    for (const [cell, list] of of) {
-      const old = before.get(cell);
-      if (old !== undefined && JSON.stringify(old) === JSON.stringify(list)) of.set(cell, old);
-    }
-    this.#problems = { all, of };
-  }
-
   /** Puts the focus on a row, in the middle of the window. */
   async goTo(cell: string, column = 1) {
     this.#place = { cell, column };
@@ -199,8 +205,14 @@ export class PaperElement extends PageElement {
     this.#focus(cell, column);
   }
 
+  /** The row with what the desk has now, whether or not it was drawn before. */
   #rowOf(cell: string): HTMLElement | null {
-    return this.querySelector(`ts-row[data-cell="${CSS.escape(cell)}"]`);
+    const find = () => this.querySelector<HTMLElement>(`ts-row[data-cell="${CSS.escape(cell)}"]`);
+    if (!this.stretches.want(cell)) return find();
+    this.requestUpdate();
+    this.performUpdate();
+    this.stretches.complete(find());
+    return find();
   }
 
   #focus(cell: string, column: number): boolean {
@@ -355,20 +367,20 @@ export class PaperElement extends PageElement {
 
   #does(command: LineCommand, at: PlacedCell): boolean {
     if (this.#lines.do(command, at.column)) return true;
-    const rows = () => [...this.querySelectorAll<HTMLElement>('ts-row')];
+    const cells = () => this.desk.drawn.lines.map(cellOf);
     const columns = [...at.row.querySelectorAll<HTMLElement>('[data-column]')].map((one) => Number(one.dataset['column']));
     const toRow = (index: number) => {
-      const all = rows();
-      const row = all[Math.min(Math.max(index, 0), all.length - 1)];
-      if (row === undefined) return;
-      this.#focus(row.dataset['cell'] ?? '', at.column);
-      row.scrollIntoView({ block: 'nearest' });
+      const all = cells();
+      const cell = all[Math.min(Math.max(index, 0), all.length - 1)];
+      if (cell === undefined) return;
+      this.#focus(cell, at.column);
+      this.#rowOf(cell)?.scrollIntoView({ block: 'nearest' });
     };
     const toColumn = (step: number) => {
       const next = columns[columns.indexOf(at.column) + step];
       if (next !== undefined) this.#focus(at.cell, next);
     };
-    const index = () => rows().indexOf(at.row);
+    const index = () => cells().indexOf(at.cell);
     switch (command) {
       case 'left':
         toColumn(-1);
@@ -408,7 +420,7 @@ export class PaperElement extends PageElement {
         void this.#inPlace(at.cell, 'fields');
         return true;
       case 'new-line':
-        void this.#newLines.enter(at.row.parentElement?.dataset['section'] ?? '');
+        void this.#newLines.enter(at.row.closest<HTMLElement>('[data-section]')?.dataset['section'] ?? '');
         return true;
       case 'line-below':
         void this.#newLines.enterBelow(at.cell);
@@ -433,12 +445,4 @@ export class PaperElement extends PageElement {
   }
 }
 
-const isField = (target: EventTarget | null) =>
-  target instanceof HTMLInputElement || target instanceof HTMLSelectElement || target instanceof HTMLTextAreaElement;
 const isWritable = (cell: HTMLElement) => cell.getAttribute('aria-readonly') !== 'true' && cell.closest('ts-row.given') !== null;
-
-function formerText(desk: Desk, cell: string): string {
-  const former = desk.formerProvenance(cell);
-  if (former === undefined) return '';
-  return [former.source ?? '', former.basis ?? ''].filter((part) => part !== '').join(', ');
-}

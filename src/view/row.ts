@@ -58,6 +58,11 @@ export class RowElement extends PageElement {
   declare beside: TemplateResult | null;
   declare foldable: boolean;
 
+  /** What is due is drawn before this returns. */
+  drawNow() {
+    if (this.isUpdatePending) this.performUpdate();
+  }
+
   protected override render() {
     const { line } = this;
     if (line.kind !== 'step')

@@ -3,6 +3,7 @@
 // Not here: what a line holds (src/record).
 
 import type { Line, RecordModel } from '../record/index.ts';
+import type { Cell, Sheet } from '../sheet/index.ts';
 
 /** Deep equality of plain data. */
 export function alike(one: unknown, other: unknown): boolean {
@@ -14,6 +15,13 @@ export function alike(one: unknown, other: unknown): boolean {
   const left = one as Record<string, unknown>;
   const right = other as Record<string, unknown>;
   return keys.every((key) => Object.hasOwn(right, key) && alike(left[key], right[key]));
+}
+
+/** The same things in the same order. */
+export function alikeList(one: readonly unknown[], other: readonly unknown[]): boolean {
+  if (one.length !== other.length) return false;
+  for (let at = 0; at < one.length; at += 1) if (!Object.is(one[at], other[at])) return false;
+  return true;
 }
 
 export const cellOf = (line: Line): string => (line.kind === 'step' ? line.step.cell : line.cell);
@@ -30,4 +38,12 @@ export function shareModel(before: RecordModel, after: RecordModel): RecordModel
     if (key !== 'lines' && key !== 'steps' && alike(before[key], after[key])) parts[key] = before[key];
   }
   return parts as unknown as RecordModel;
+}
+
+const byId = new WeakMap<readonly Cell[], ReadonlyMap<string, Cell>>();
+
+export function cellsById({ cells }: Sheet): ReadonlyMap<string, Cell> {
+  const known = byId.get(cells) ?? new Map(cells.map((cell) => [cell.id, cell]));
+  byId.set(cells, known);
+  return known;
 }
