@@ -108,20 +108,20 @@ export class ProgramBuilder {
     const start = this.#code.length;
     this.#stacked = 0;
     this.#emit(expr, names, dest);
-    return { start, end: this.#code.length, dest, watched: 0 };
+    return { start, end: this.#code.length, dest };
   }
 
   /** The program so far. More may be added afterwards and built again: slots of keys and constants stay, ranges too. */
   build(): Program {
-    const watchBase = this.#slotCount;
-    const stackBase = watchBase + this.#mostKept;
+    const columns = this.#slotCount;
+    const stackBase = columns + this.#mostKept;
     const code = new Int32Array(this.#code.length);
     for (let at = 0; at < code.length; at++) {
       const word = this.#code[at]!;
       if (word >= 0) code[at] = word;
-      else code[at] = word % 2 === 0 ? stackBase + (-2 - word) / 2 : watchBase + (-1 - word) / 2;
+      else code[at] = word % 2 === 0 ? stackBase + (-2 - word) / 2 : columns + (-1 - word) / 2;
     }
-    return { code, slots: stackBase + this.#mostStacked, watchBase, constants: [...this.#constants], tables: [...this.#tables] };
+    return { code, slots: stackBase + this.#mostStacked, columns, constants: [...this.#constants], tables: [...this.#tables] };
   }
 
   #constant(value: number): Operand {

@@ -1,7 +1,7 @@
 // A compiled program: instructions over columns of one memory.
 //
 // 1. Slot s is the column memory[s*width .. s*width + width). Slots are given out once and stay: first come quantities and
-//    constants in the order of need, from watchBase on what each range uses for itself.
+//    constants in the order of need, from `columns` on what each range uses for itself.
 // 2. Constants are columns filled once (fillConstants); their first entry is what the K-operations read.
 // 3. A range has no value in an entry exactly where its destination is not finite: the operations let no trouble vanish.
 // Not here: compiling (compile.ts), running (run.ts).
@@ -18,15 +18,13 @@ export interface Range {
   readonly start: number;
   readonly end: number;
   readonly dest: number;
-  /** Always 0: nothing has to be watched beside the result. */
-  readonly watched: 0;
 }
 
 export interface Program {
   readonly code: Int32Array;
   readonly slots: number;
-  /** All slots before it are columns of keys and constants. */
-  readonly watchBase: number;
+  /** How many of the slots, the first ones, are columns of keys and constants. */
+  readonly columns: number;
   readonly constants: readonly { readonly slot: number; readonly value: number }[];
   readonly tables: readonly ProgramTable[];
 }
@@ -75,19 +73,12 @@ export function finiteFrom(memory: Float64Array, starts: Int32Array, count: numb
 }
 
 /** Whether a range that has just run has a value in each of the first `count` entries. */
-export function inOrder(_program: Program, memory: Float64Array, width: number, count: number, range: Range): boolean {
+export function inOrder(memory: Float64Array, width: number, count: number, range: Range): boolean {
   return allFinite(memory, width, count, range.dest, range.dest + 1);
 }
 
 /** Marks with 1 the entries in which a range that has just run has no value; entries already marked stay. */
-export function markTrouble(
-  _program: Program,
-  memory: Float64Array,
-  width: number,
-  count: number,
-  range: Range,
-  flags: Uint8Array,
-): void {
+export function markTrouble(memory: Float64Array, width: number, count: number, range: Range, flags: Uint8Array): void {
   const from = range.dest * width;
   for (let i = 0; i < count; i++) if (memory[from + i]! * 0 !== 0) flags[i] = 1;
 }

@@ -10,7 +10,7 @@ import { inOrder, makeMemory, type Program, ProgramBuilder, type Range, run } fr
 import type { Names } from './names.ts';
 import { computedFormulas, type Node } from './node.ts';
 
-const empty: Program = { code: new Int32Array(0), slots: 0, watchBase: 0, constants: [], tables: [] };
+const empty: Program = { code: new Int32Array(0), slots: 0, columns: 0, constants: [], tables: [] };
 
 export class Columns {
   readonly width: number;
@@ -93,12 +93,12 @@ export class Columns {
     const memory = makeMemory(this.program, this.width);
     const kept = this.filled * this.width;
     const constants = new Set(this.program.constants.map((constant) => constant.slot));
-    for (let slot = this.filled; slot < this.program.watchBase; slot += 1) {
+    for (let slot = this.filled; slot < this.program.columns; slot += 1) {
       if (!constants.has(slot)) memory.fill(Number.NaN, slot * this.width, (slot + 1) * this.width);
     }
     memory.set(this.memory.subarray(0, kept));
     this.memory = memory;
-    this.filled = this.program.watchBase;
+    this.filled = this.program.columns;
   }
 
   /** Runs the formulas of the node; true when every entry is in order. */
@@ -108,7 +108,7 @@ export class Columns {
     let clean = true;
     for (const range of ranges) {
       run(this.program, this.memory, this.width, this.width, range.start, range.end);
-      if (!inOrder(this.program, this.memory, this.width, this.width, range)) clean = false;
+      if (!inOrder(this.memory, this.width, this.width, range)) clean = false;
     }
     return clean;
   }

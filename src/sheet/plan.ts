@@ -2,7 +2,7 @@
 //
 // 1. Entry p speaks of the node at place p of the graph's order; the plan is made anew whenever code, slots or order move.
 // 2. `formula` marks a derived cell whose run is judged by its numbers alone; everything else takes the careful way.
-// 3. Cells that stand side by side in order and in code, with nothing watched, may be run as one stretch.
+// 3. Cells that stand side by side in order and in code may be run as one stretch.
 // Not here: what is stale, what failed (calculation.ts).
 
 import type { Columns } from './columns.ts';
@@ -16,7 +16,6 @@ export interface Plan {
   readonly slot: Int32Array;
   readonly start: Int32Array;
   readonly end: Int32Array;
-  readonly watched: Int32Array;
 }
 
 export function makePlan(nodes: readonly Node[], graph: Graph, columns: Columns): Plan {
@@ -26,7 +25,6 @@ export function makePlan(nodes: readonly Node[], graph: Graph, columns: Columns)
     slot: new Int32Array(count),
     start: new Int32Array(count),
     end: new Int32Array(count),
-    watched: new Int32Array(count),
   };
   for (let place = 0; place < count; place += 1) {
     const node = nodes[graph.order[place]!]!;
@@ -43,7 +41,6 @@ export function makePlan(nodes: readonly Node[], graph: Graph, columns: Columns)
       plan.mode[place] = mode.formula;
       plan.start[place] = range.start;
       plan.end[place] = range.end;
-      plan.watched[place] = range.watched;
     } else {
       plan.mode[place] = columns.slotsOf(node) > 0 ? mode.careful : mode.nothing;
     }

@@ -96,17 +96,14 @@ export class Runner {
     const width = columns.width;
     const { memory, program } = columns;
     let last = at;
-    if (plan.watched[at] === 0) {
-      const most = Math.min(stale.length, at + stretch);
-      while (
-        last + 1 < most &&
-        stale[last + 1] === 1 &&
-        plan.mode[last + 1] === mode.formula &&
-        plan.watched[last + 1] === 0 &&
-        plan.start[last + 1] === plan.end[last]
-      ) {
-        last += 1;
-      }
+    const most = Math.min(stale.length, at + stretch);
+    while (
+      last + 1 < most &&
+      stale[last + 1] === 1 &&
+      plan.mode[last + 1] === mode.formula &&
+      plan.start[last + 1] === plan.end[last]
+    ) {
+      last += 1;
     }
     for (let place = at; place <= last; place += 1) {
       const from = plan.slot[place]! * width;
@@ -115,7 +112,6 @@ export class Runner {
     }
     run(program, memory, width, width, plan.start[at], plan.end[last]);
     let trouble = 0;
-    for (let k = 0; k < plan.watched[at]! * width; k += 1) trouble += memory[program.watchBase * width + k]! * 0;
     for (let place = at; place <= last; place += 1) {
       stale[place] = 0;
       const from = plan.slot[place]! * width;

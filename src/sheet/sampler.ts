@@ -65,7 +65,7 @@ export function makeSampler(sampling: Sampling): Sampler {
   const runCarefully = (count: number): void => {
     for (const [at, range] of ranges.entries()) {
       run(program, memory, width, count, range.start, range.end);
-      if (!inOrder(program, memory, width, count, range)) sampling.settle(memory, width, at, count);
+      if (!inOrder(memory, width, count, range)) sampling.settle(memory, width, at, count);
     }
   };
 

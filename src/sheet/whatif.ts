@@ -94,7 +94,7 @@ export function prepareWhatIf(request: WhatIfRequest, sheet: Surface): WhatIf {
   /** Entries of a cell that are not in order: told apart one by one, as explain finds trouble that an infinity would hide. */
   const settle = (memory: Float64Array, width: number, at: number, count: number): void => {
     const flags = new Uint8Array(count);
-    markTrouble(program, memory, width, count, ranges[at]!, flags);
+    markTrouble(memory, width, count, ranges[at]!, flags);
     const base = sheet.lookup(request.caseIndex);
     for (let entry = 0; entry < count; entry += 1) {
       if (flags[entry] === 0) continue;

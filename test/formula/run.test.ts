@@ -31,7 +31,7 @@ const entries = fc.array(
 /** One instruction: column 3 from columns 0, 1 and 2; a lookup has its table instead of column 1. */
 function single(operation: number): Program {
   const code = Int32Array.of(operation, 3, 0, lookups.has(operation) ? 0 : 1, 2);
-  return { code, slots: 4, watchBase: 4, constants: [], tables };
+  return { code, slots: 4, columns: 4, constants: [], tables };
 }
 
 function memoryOf(operation: number, columns: readonly (readonly number[])[]): Float64Array {
