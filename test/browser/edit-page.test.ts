@@ -144,7 +144,7 @@ describe('lines of the sheet', () => {
     const wanted = recordOf([...example.cells, cell]).steps.find((step) => step.cell === added);
     await expect.poll(async () => (await resultsOn(page))[added]).toEqual(wanted?.cases.map((each) => each.result));
     // At the end of the section of F_u, with the focus still in the line, which is empty again.
-    expect(await page.locator(`ts-row[data-cell="${added}"] + .entry ts-entry-line`).count()).toBe(1);
+    expect(await page.locator(`.stretch:has(> ts-row[data-cell="${added}"]:last-child) + .entry ts-entry-line`).count()).toBe(1);
     expect(await page.evaluate(() => document.activeElement?.closest('ts-entry-line') !== null)).toBe(true);
     expect(await line.locator('.cm-content').textContent()).not.toContain('F_trial');
     await page.keyboard.press('Escape');
