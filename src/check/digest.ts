@@ -17,6 +17,25 @@ export function canonicalJson(value: unknown): string {
   return text;
 }
 
+/**
+ * The same text, several times as fast, for what a sheet holds: texts, whole and decimal numbers, lists and plain objects. Half a surrogate
+ * pair does not throw; it shows as an escape.
+ */
+export function plainJson(value: unknown): string {
+  if (typeof value === 'string') return JSON.stringify(value);
+  if (Array.isArray(value)) return `[${value.map((item) => (item === undefined ? 'null' : plainJson(item))).join(',')}]`;
+  if (typeof value === 'object' && value !== null) {
+    let text = '{';
+    for (const key of Object.keys(value).sort()) {
+      const entry = (value as Record<string, unknown>)[key];
+      if (entry !== undefined) text += `${text === '{' ? '' : ','}${JSON.stringify(key)}:${plainJson(entry)}`;
+    }
+    return `${text}}`;
+  }
+  if (typeof value === 'number' && !Number.isFinite(value)) throw new TypeError('nothing that JSON can hold');
+  return JSON.stringify(value);
+}
+
 export function digestOfText(text: string): string {
   return bytesToHex(sha256(utf8ToBytes(text)));
 }

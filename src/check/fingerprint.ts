@@ -11,7 +11,7 @@
 
 import { canonicalName, tokenize } from '../formula/index.ts';
 import { badCharacters, buildGraph, type Calculation, type Cell, type Reference } from '../sheet/index.ts';
-import { canonicalJson, digestOfText } from './digest.ts';
+import { canonicalJson, digestOfText, plainJson } from './digest.ts';
 
 /** The version of the rules of reading and computing. */
 export const rules = 'tightside-rules/1';
@@ -247,14 +247,9 @@ function cited(cell: Cell, references: ReadonlyMap<string, Reference>): readonly
  * as U+FFFD, count as that, so that a sheet has one fingerprint before it is written and after it is read.
  */
 function asWritten(value: unknown): string {
-  let text: string | undefined;
-  try {
-    text = canonicalJson(value);
-  } catch {
-    text = undefined;
-  }
-  // Control characters show as escapes; those of a tab and of the ends of lines are others.
-  return digestOfText(text === undefined || /\\[ubf]/.test(text) ? canonicalJson(clean(value)) : text);
+  const text = plainJson(value);
+  // Half a pair and control characters show as escapes; those of a tab and of the ends of lines are others.
+  return digestOfText(/\\[ubf]/.test(text) ? canonicalJson(clean(value)) : text);
 }
 
 function clean(value: unknown): unknown {

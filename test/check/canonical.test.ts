@@ -3,8 +3,9 @@
 import { sha256 } from '@noble/hashes/sha2.js';
 import { bytesToHex, hexToBytes, utf8ToBytes } from '@noble/hashes/utils.js';
 import serialize from 'canonicalize';
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { digest } from '../../src/check/digest.ts';
+import { digest, plainJson } from '../../src/check/digest.ts';
 import published from './rfc8785.json';
 
 function doubleOf(ieee: string): number {
@@ -27,8 +28,19 @@ describe('canonical JSON (RFC 8785)', () => {
       const value: unknown = JSON.parse(inputText);
       expect(bytesToHex(utf8ToBytes(serialize(value)!))).toBe(outputHex);
       expect(digest(value)).toBe(hash);
+      expect(bytesToHex(utf8ToBytes(plainJson(value)))).toBe(outputHex);
     },
   );
+
+  it('is written alike by the fast writer, for any value that JSON holds and for keys that are left out', () => {
+    fc.assert(
+      fc.property(fc.jsonValue({ stringUnit: 'grapheme' }), fc.string({ unit: 'grapheme' }), (value, key) => {
+        expect(plainJson(value)).toBe(serialize(value));
+        expect(plainJson({ [key]: value, 10: 1, 9: undefined, b: [value] })).toBe(serialize({ [key]: value, 10: 1, b: [value] }));
+      }),
+      { numRuns: 500, seed: 20_261_201 },
+    );
+  });
 
   it.each([
     ['NaN', Number.NaN],
