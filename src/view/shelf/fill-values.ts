@@ -6,7 +6,7 @@
 // Not here: how the form looks (fill.ts).
 
 import { canonicalName } from '../../formula/index.ts';
-import { type Fix, type Problem, readUnit, readValue } from '../../quantity/index.ts';
+import { type Fix, isAngleUnit, type Problem, readUnit, readValue } from '../../quantity/index.ts';
 import { type Assignment, calculate, type GivenCell, type LoadCase, type Sheet, setValues } from '../../sheet/index.ts';
 
 /** One field of the form. */
@@ -56,9 +56,22 @@ export function checkPlace(begun: Sheet, place: Place, text: string): readonly P
   if (!assigned.ok) return assigned.problems.map((problem) => withUnit(begun, place, text, plain(problem)));
   const field = place.case === null ? 'value' : `byCase.${place.case.id}`;
   const problems = calculate(assigned.value).state(place.cell.id)?.problems ?? [];
-  return problems
+  const warnings = problems
     .filter((problem) => problem.severity === 'warning' && (problem.field === field || problem.field === 'value'))
     .map(plain);
+  return [...bareNumber(begun, place, text), ...warnings];
+}
+
+/** A bare number is an angle in radians, or a whole where the template has per cent: right as it stands, and seldom meant. */
+function bareNumber(sheet: Sheet, { cell, carried }: Place, text: string): readonly Problem[] {
+  const decimalSign = sheet.settings?.decimalSign ?? '.';
+  const [read, held] = [readValue(text, { decimalSign }), readValue(carried, { decimalSign })];
+  if (cell.choices !== undefined || !read.ok || read.value.unit.parts.length > 0) return [];
+  if (!held.ok || held.value.unit.parts.length === 0 || read.value.si === 0) return [];
+  const { unit } = held.value;
+  const is = isAngleUnit(unit) ? 'is an angle in rad' : 'is a plain number';
+  const message = `${text.trim()} without a unit ${is}; the value carried over is in ${unit.text}`;
+  return [{ code: 'bare-number', severity: 'warning', message, fixes: unitFixes(text, [unit.text]) }];
 }
 
 /** A bare number where a unit is due: the unit of the given is offered. */
@@ -70,14 +83,16 @@ function withUnit(sheet: Sheet, { cell, carried }: Place, text: string, problem:
   const units = [held.ok ? held.value.unit.text : '', cell.unit ?? ''].filter(
     (unit) => unit !== '' && unit !== '1' && readUnit(unit).ok,
   );
-  const at = text.trimEnd().length;
-  const fixes = [...new Set(units)].map(
-    (unit): Fix => ({
-      from: at,
-      to: text.length,
-      text: /^[°%′″]/u.test(unit) ? unit : ` ${unit}`,
-      label: `write ${text.trim()} ${unit}`,
-    }),
-  );
+  const fixes = unitFixes(text, units);
   return fixes.length === 0 ? problem : { ...problem, fixes };
+}
+
+/** The text with each of the units behind it. */
+function unitFixes(text: string, units: readonly string[]): readonly Fix[] {
+  const from = text.trimEnd().length;
+  const signs = /^[°′″]$/u;
+  return [...new Set(units)].map((unit): Fix => {
+    const written = signs.test(unit) ? unit : ` ${unit}`;
+    return { from, to: text.length, text: written, label: `write ${text.trim()}${written}` };
+  });
 }

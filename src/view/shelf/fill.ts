@@ -194,7 +194,7 @@ export class FillElement extends PageElement {
       <div class="paper">
         <header class="fill-head"><p>New sheet from template <code>${info.id}</code>, version ${info.version}</p><h1 tabindex="-1">${from.title}</h1></header>
         <div class="part"><h2>Job</h2><div class="prose"><p>${info.job}.</p></div></div>
-        <div class="part"><h2>Use</h2><div class="prose">${limitsAndCaution(info)}</div></div>
+        <div class="part"><h2>Limits</h2><div class="prose">${limitsAndCaution(info)}</div></div>
         ${
           this.found === null
             ? nothing
