@@ -156,6 +156,8 @@ describe('a new sheet from a template', () => {
     const { page, faults, violations, requests, close } = await atShelf();
     await page.locator('[data-template="capstan"] a.do').click();
     await page.waitForSelector('.given-line');
+    // It begins at its head, though the list was far down.
+    await expect.poll(() => page.evaluate(() => [scrollY, document.activeElement?.tagName])).toEqual([0, 'H1']);
     expect(await page.locator('.caution').textContent()).toContain('licensed or appointed persons');
     const field = (key: string) => page.locator(`[data-key="${key}"]`);
     await page.locator('#name-title').fill('Winch head, bow');
@@ -377,6 +379,7 @@ describe('every screen of the shelf', () => {
       await page.locator('[data-id="example"] [data-act="remove"]').click();
       await page.waitForSelector('.trash');
       await page.locator('[data-act="similar"]').click();
+      const address = await page.locator('.register [data-act="open"]').first().getAttribute('href');
       await page.locator('[data-template="capstan"] summary').click();
       await page.locator('[data-begin="blank"] [data-field="number"]').fill('CS-014');
       await look('the register with a line begun, one removed, a template unfolded');
@@ -385,8 +388,12 @@ describe('every screen of the shelf', () => {
       await page.locator('[data-key="P"]').fill('11');
       await page.waitForSelector('.edit-fixes button');
       await look('a form with a wrong value');
+      const copy = (address ?? '').replace('#/sheet/', '');
+      await page.goto(`${inject('url')}#/keep/${copy}`);
+      await page.waitForSelector('.missing li');
+      await look('a sheet to be kept as a template');
       await page.goto(`${inject('url')}#/keep/example`);
-      await page.waitForSelector('.fill.one');
+      await page.waitForSelector('.fill.one [role="alert"]');
       await look('a sheet that is not here');
       await close();
     },

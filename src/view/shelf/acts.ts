@@ -42,7 +42,13 @@ export const nameOf = ({ documentNumber, title }: { readonly documentNumber?: st
 /** The focus on what the selector finds once it stands there; otherwise on the heading of the screen. */
 export async function focusOn(owner: HTMLElement & { readonly updateComplete: Promise<unknown> }, selector: string) {
   await owner.updateComplete;
-  const found = owner.querySelector<HTMLElement>(selector) ?? owner.querySelector<HTMLElement>('h1');
-  found?.focus();
-  found?.scrollIntoView({ block: 'nearest' });
+  const found = owner.querySelector<HTMLElement>(selector);
+  if (found !== null && selector !== 'h1') {
+    found.focus();
+    found.scrollIntoView({ block: 'nearest' });
+    return;
+  }
+  // A screen begins at its head, wherever the one before it stood.
+  scrollTo(0, 0);
+  owner.querySelector<HTMLElement>('h1')?.focus({ preventScroll: true });
 }
