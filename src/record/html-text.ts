@@ -7,7 +7,7 @@ import { canonicalName } from '../formula/index.ts';
 import { escapeHtml } from './escape.ts';
 import { renderTex } from './html-math.ts';
 import type { RecordModel } from './model.ts';
-import type { ProseBlock, ProseSpan } from './prose.ts';
+import { type ProseBlock, type ProseSpan, rankedItems } from './prose.ts';
 
 /** TeX of the symbol by canonical name. */
 export type Symbols = ReadonlyMap<string, string>;
@@ -39,18 +39,32 @@ export function prose(blocks: readonly ProseBlock[], symbols: Symbols): string {
   return blocks
     .map((block) => {
       if (block.kind === 'paragraph') return `<p>${spans(block.spans, symbols)}</p>`;
-      const tag = block.ordered ? 'ol' : 'ul';
-      return `<${tag}>${block.items.map((item) => `<li>${spans(item, symbols)}</li>`).join('')}</${tag}>`;
+      const items = rankedItems(block).map(({ spans: own, below }) => {
+        const lists = below.map((one) =>
+          list(
+            one.ordered,
+            one.items.map((item) => spans(item, symbols)),
+          ),
+        );
+        return `${spans(own, symbols)}${lists.join('')}`;
+      });
+      return list(block.ordered, items);
     })
     .join('');
 }
 
+function list(ordered: boolean, items: readonly string[]): string {
+  const tag = ordered ? 'ol' : 'ul';
+  return `<${tag}>${items.map((item) => `<li>${item}</li>`).join('')}</${tag}>`;
+}
+
 const spanTag = { strong: 'strong', emphasis: 'em', code: 'code' } as const;
 
-function spans(list: readonly ProseSpan[], symbols: Symbols): string {
-  return list
+function spans(all: readonly ProseSpan[], symbols: Symbols): string {
+  return all
     .map((span) => {
       if (span.style === 'text') return inlineText(span.text, symbols);
+      if (span.style === 'break') return '<br>';
       const inner = span.style === 'code' ? escapeHtml(span.text) : inlineText(span.text, symbols);
       return `<${spanTag[span.style]}>${inner}</${spanTag[span.style]}>`;
     })

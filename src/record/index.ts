@@ -23,5 +23,5 @@ export type {
   TableMark,
   TemplateDifference,
 } from './model.ts';
-export { type ProseBlock, type ProseSpan, readProse } from './prose.ts';
+export { type ProseBlock, type ProseSpan, rankedItems, readProse } from './prose.ts';
 export { marksByRow, markWords } from './table-marks.ts';

@@ -9,7 +9,7 @@ import { live } from 'lit/directives/live.js';
 import type { Cell } from '../sheet/index.ts';
 import type { Desk, InPlace } from './desk.ts';
 import { formulaText, hasFormula } from './drafts.ts';
-import type { CellDetail, EntryDetail, FormulaDetail } from './edit/index.ts';
+import type { CellDetail, EntryDetail, FormulaDetail, TextDetail } from './edit/index.ts';
 
 let loading: Promise<void> | undefined;
 
@@ -49,6 +49,15 @@ export function fieldsInPlace(desk: Desk, place: InPlace): TemplateResult | type
   const draft = ({ detail }: CustomEvent<CellDetail>) => desk.draftInPlace(detail.cell, detail.renamed);
   const begun = place.resumed?.kind === 'fields' ? place.resumed.draft : cell;
   return html`<ts-cell-fields class="in-place" .calculation=${desk.calculation} .cell=${begun} @draft=${draft}></ts-cell-fields>`;
+}
+
+/** The words of a heading or a note. */
+export function textInPlace(desk: Desk, place: InPlace): TemplateResult | typeof nothing {
+  const cell = keptCell(desk, place.cell);
+  if (cell === undefined) return nothing;
+  const begun = place.resumed?.kind === 'text' ? place.resumed.draft : cell;
+  return html`<ts-text-editor class="in-place" .calculation=${desk.calculation} .cell=${begun}
+    @draft=${({ detail }: CustomEvent<TextDetail>) => desk.draftInPlace(detail.cell)}></ts-text-editor>`;
 }
 
 /** The focus into what is edited in this row. */

@@ -11,26 +11,28 @@ import { prose, source } from './text.ts';
 type Other = Exclude<Line, { kind: 'step' }>;
 type Tab = (column: number) => 0 | -1;
 
+/** `editor`: what its words are typed in; nothing where they are not. */
 export function otherLine(
   line: Other,
   tab: Tab,
   problems: readonly CellProblem[],
   cases: readonly RecordCase[],
   below: unknown,
+  editor: unknown,
 ): TemplateResult {
   const trouble = problems.map(
     (problem) =>
       html`<p class="problem ${problem.severity}"><b>${problem.severity === 'error' ? 'Error' : 'Warning'}</b>: ${problem.message}</p>`,
   );
   if (line.kind === 'heading') {
-    return html`<div role="gridcell" class="calculation whole" data-column="1" tabindex=${tab(1)}>${heading(line)}${trouble}${below}</div>`;
+    return html`<div role="gridcell" class="calculation whole" data-column="1" tabindex=${tab(1)}>${editor === nothing ? heading(line) : editor}${trouble}${below}</div>`;
   }
   const left =
     line.kind === 'note' && line.role !== undefined
       ? html`<span class="role">${roles[line.role]}</span> ${source(line.source)}`
       : source(line.source);
   return html`<div role="gridcell" class="source" data-column="0" tabindex=${tab(0)}>${left}</div>
-    <div role="gridcell" class="calculation across" data-column="1" tabindex=${tab(1)}>${body(line, problems, cases)}${notesOf(line).map((note) => html`<p class="remark">${note}</p>`)}${trouble}${below}</div>`;
+    <div role="gridcell" class="calculation across" data-column="1" tabindex=${tab(1)}>${editor === nothing ? body(line, problems, cases) : html`${editor}<div class="preview" role="group" aria-label="As it will print">${body(line, problems, cases)}</div>`}${notesOf(line).map((note) => html`<p class="remark">${note}</p>`)}${trouble}${below}</div>`;
 }
 
 const roles = { assumption: 'Assumption', limit: 'Limit', caution: 'Caution' } as const;

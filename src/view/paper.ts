@@ -57,6 +57,8 @@ export class PaperElement extends PageElement {
   declare menu: boolean;
   #place: Place | null = null;
   #pressed: PlacedCell | null = null;
+  /** The press was on the row that was the chosen one already. */
+  #pressedAgain = false;
   readonly #host: PaperHost = {
     element: this,
     desk: () => this.desk,
@@ -264,6 +266,7 @@ export class PaperElement extends PageElement {
 
   #onPress = (event: PointerEvent) => {
     this.#pressed = this.#cellAt(event.target);
+    this.#pressedAgain = this.#pressed !== null && this.#pressed.cell === this.desk.chosen;
   };
 
   #onClick = (event: MouseEvent) => {
@@ -274,11 +277,13 @@ export class PaperElement extends PageElement {
     if (this.desk.run.length > 1) this.desk.choose(at.cell);
     const target = event.target as Element;
     if (target.closest('.in-place')) return;
-    const onFormula = target.closest('.formula') !== null && this.#formulaAt(at.cell);
-    if (!onFormula && !isWritable(at.element)) return;
+    const onFormula = target.closest('.formula') !== null && this.#editedAs(at.cell) === 'formula';
+    // Words are read more often than changed: the first press only chooses them.
+    const onWords = this.#pressedAgain && this.#editedAs(at.cell) === 'text';
+    if (!onFormula && !onWords && !isWritable(at.element)) return;
     // Text that is being selected is being read, not typed into.
     if (getSelection()?.isCollapsed === false) return;
-    if (onFormula) void this.#inPlace(at.cell, 'formula');
+    if (onFormula || onWords) void this.#inPlace(at.cell, this.#editedAs(at.cell));
     else this.#edit(at);
   };
 
@@ -288,9 +293,11 @@ export class PaperElement extends PageElement {
     if (isWritable(at.element)) this.desk.begin(at.cell, field, caseIndex, text);
   }
 
-  #formulaAt(cell: string) {
+  /** What of a line is edited where it stands. */
+  #editedAs(cell: string): InPlace['what'] {
     const found = this.desk.kept.cells.find((one) => one.id === cell);
-    return found !== undefined && hasFormula(found);
+    if (found?.kind === 'heading' || found?.kind === 'note') return 'text';
+    return found !== undefined && hasFormula(found) ? 'formula' : 'fields';
   }
 
   async #inPlace(cell: string, what: InPlace['what']) {
@@ -414,7 +421,7 @@ export class PaperElement extends PageElement {
         return true;
       case 'edit':
         if (isWritable(at.element)) this.#edit(at);
-        else void this.#inPlace(at.cell, this.#formulaAt(at.cell) ? 'formula' : 'fields');
+        else void this.#inPlace(at.cell, this.#editedAs(at.cell));
         return true;
       case 'edit-all':
         void this.#inPlace(at.cell, 'fields');

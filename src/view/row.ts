@@ -13,7 +13,7 @@ import { choicesOf, editorField, editorNotes, focusField, sourceEditor } from '.
 import { PageElement } from './element.ts';
 import { equation } from './equation.ts';
 import { heldValue } from './given.ts';
-import { fieldsInPlace, focusInPlace, formulaInPlace } from './in-place.ts';
+import { fieldsInPlace, focusInPlace, formulaInPlace, textInPlace } from './in-place.ts';
 import { lineActions, lineWords } from './line-actions.ts';
 import { otherLine } from './lines.ts';
 import { quantity, source } from './text.ts';
@@ -72,6 +72,7 @@ export class RowElement extends PageElement {
         this.problems,
         this.cases,
         html`${this.#words()}${this.#actions()}${this.#all()}`,
+        this.inPlace?.what === 'text' ? textInPlace(this.desk, this.inPlace) : nothing,
       );
     return this.#step(line.step);
   }

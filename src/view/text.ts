@@ -4,7 +4,7 @@
 // Not here: reading of prose (src/record), formulas (math.ts).
 
 import { html, type TemplateResult } from 'lit';
-import type { ProseBlock, ProseSpan } from '../record/index.ts';
+import { type ProseBlock, type ProseSpan, rankedItems } from '../record/index.ts';
 
 const raised = new Map([...'⁰¹²³⁴⁵⁶⁷⁸⁹⁻⁺'].map((sign, index) => [sign, [...'0123456789−+'][index] ?? '']));
 
@@ -17,16 +17,28 @@ export function quantity(text: string): TemplateResult {
 function span({ style, text }: ProseSpan): TemplateResult | string {
   if (style === 'strong') return html`<strong>${text}</strong>`;
   if (style === 'emphasis') return html`<em>${text}</em>`;
+  if (style === 'break') return html`<br />`;
   return style === 'code' ? html`<code>${text}</code>` : text;
 }
 
 export function prose(blocks: readonly ProseBlock[]): TemplateResult[] {
   return blocks.map((block) => {
     if (block.kind === 'paragraph') return html`<p>${block.spans.map((one) => withReferences(one))}</p>`;
-    const items = block.items.map((item) => html`<li>${item.map((one) => withReferences(one))}</li>`);
-    return block.ordered ? html`<ol>${items}</ol>` : html`<ul>${items}</ul>`;
+    const items = rankedItems(block).map(({ spans, below }) => {
+      const lists = below.map(({ ordered, items: inner }) =>
+        list(
+          ordered,
+          inner.map((item) => html`<li>${item.map(withReferences)}</li>`),
+        ),
+      );
+      return html`<li>${spans.map(withReferences)}${lists}</li>`;
+    });
+    return list(block.ordered, items);
   });
 }
+
+const list = (ordered: boolean, items: readonly TemplateResult[]) =>
+  ordered ? html`<ol>${items}</ol>` : html`<ul>${items}</ul>`;
 
 const withReferences = (one: ProseSpan) => (one.style === 'text' ? source(one.text) : span(one));
 
