@@ -18,6 +18,7 @@ export {
 export * from './edit.ts';
 export { type FileProblem, type ReadSheet, readSheet, writeSheet } from './file.ts';
 export { buildGraph, type Graph } from './graph.ts';
+export * from './head-edits.ts';
 export * from './history.ts';
 export { type BlockOptions, type Connection, freeSuffix, type InsertedBlock, insertBlock } from './insert-block.ts';
 export { badCharacters } from './json-text.ts';

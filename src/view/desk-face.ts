@@ -77,6 +77,8 @@ export interface ActWords {
   /** What is said at once. */
   readonly words?: string;
   readonly beside?: Remark;
+  /** The place that is typed in: what follows there without a pause is one step. */
+  readonly typing?: string;
 }
 
 export interface Desk {

@@ -86,9 +86,10 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     const cell = cellsById(sheet).get(id);
     return cell?.kind === 'given' ? cell : undefined;
   };
-  const keepEdit = (edit: Edit, label?: string) => {
+  const keepEdit = (edit: Edit, label?: string, typing?: string) => {
     if (locked !== null) return locked;
-    const done = perform(kept, history, edit, label === undefined ? {} : { label });
+    const run = typing === undefined ? {} : { key: typing, time: Date.now() };
+    const done = perform(kept, history, edit, label === undefined ? run : { label, ...run });
     kept = done.sheet;
     history = done.history;
     told = null;
@@ -366,10 +367,10 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       changed();
       return cell.id;
     },
-    act(edit, { label, words, beside } = {}) {
+    act(edit, { label, words, beside, typing } = {}) {
       if (refused()) return false;
       desk.finish();
-      const done = keepEdit(edit, label);
+      const done = keepEdit(edit, label, typing);
       if (beside !== undefined) told = beside;
       if (chosen !== null && !kept.cells.some(({ id }) => id === chosen)) chosen = null;
       announcement = `${[words ?? done, beside?.words].filter(Boolean).join('; ')}; ${verdictWords()}`;

@@ -1,43 +1,49 @@
-// What frames the rows on the paper: the title block as on a drawing, purpose and method, the criteria at a glance; at the foot the
-// conclusion and the references.
+// What frames the rows on the paper: purpose and method, cases and settings, the criteria at a glance; at the foot the conclusion and
+// the references. Passages are typed where they stand.
 //
-// Not here: the rows (row.ts), the outline on the desk (outline.ts).
+// Not here: the title block (title-block.ts), the rows (row.ts), the outline on the desk (outline.ts).
 
 import { html, nothing } from 'lit';
 import type { CriterionSummary, RecordModel } from '../record/index.ts';
+import { casesPart } from './cases-part.ts';
 import type { Desk } from './desk.ts';
+import { hereField } from './here-field.ts';
+import { referencesPart } from './references-part.ts';
 import { prose, quantity } from './text.ts';
-
-const field = (name: string, value: string | undefined, kind = '') =>
-  html`<div class="field ${kind}"><dt>${name}</dt><dd>${value === undefined || value === '' ? html`<span class="blank">–</span>` : value}</dd></div>`;
-
-/** The data fields of ISO 7200. */
-export function titleBlock({ title, titleBlock: block, status }: RecordModel) {
-  return html`<header class="title-block">
-    <div class="name">
-      <p>${block.documentType ?? 'Calculation sheet'}</p>
-      <h1>${title.split(/(?<=\s)/u).map((word) => (word.length < 24 && word.includes('-') ? html`<span>${word}</span>` : word))}</h1>
-      ${block.supplementaryTitle ? html`<p>${block.supplementaryTitle}</p>` : nothing}
-    </div>
-    <dl>
-      ${field('Document', block.documentNumber, 'strong')}${field('Revision', block.revision, 'strong')}${field('Date', block.date)}${field('Status', status)}
-      ${field('Organisation', [block.organisation, block.department].filter(Boolean).join(', '), 'wide')}${field('Project', block.project, 'wide')}
-      ${field('Prepared', block.preparedBy)}${field('Checked', block.checkedBy)}${field('Approved', block.approvedBy, 'wide')}
-    </dl>
-  </header>`;
-}
+import { moreFields } from './title-block.ts';
 
 const part = (name: string, content: unknown) =>
   html`<div class="part"><h2>${name}</h2><div class="prose">${content}</div></div>`;
 
-export function head(desk: Desk) {
+/** A passage of the head or the foot; on the screen it is typed where it stands. */
+function passage(desk: Desk, printing: boolean, key: 'purpose' | 'method' | 'conclusion', label: string, hint: string) {
+  const blocks = desk.drawn[key];
+  if (blocks.length === 0 && printing) return nothing;
+  if (printing) return part(label, prose(blocks));
+  return part(
+    label,
+    hereField({
+      desk,
+      label,
+      value: desk.kept[key] ?? '',
+      shown: prose(blocks),
+      step: key,
+      lines: 4,
+      hint,
+      edit: (text) => ({ kind: 'set-head', key, value: text.trim() === '' ? null : text }),
+    }),
+  );
+}
+
+export function head(desk: Desk, printing: boolean) {
   const { drawn: model } = desk;
   return html`<section class="head" aria-label="Head of the sheet">
-    ${model.purpose.length === 0 ? nothing : part('Purpose', prose(model.purpose))}
-    ${model.method.length === 0 ? nothing : part('Method', prose(model.method))}
+    ${passage(desk, printing, 'purpose', 'Purpose', 'what is calculated, and what the result is used for')}
+    ${passage(desk, printing, 'method', 'Method', 'how it is calculated, and after which rules')}
     ${model.origin === '' ? nothing : part('Made from', html`<p>${model.origin}</p>`)}
     ${model.limits.length === 0 ? nothing : part('Limits', html`<ul>${model.limits.map((one) => html`<li>${one}</li>`)}</ul>`)}
     ${model.caution === '' ? nothing : part('Caution', html`<p>${model.caution}</p>`)}
+    ${printing ? nothing : html`${casesPart(desk)}${part('Settings', moreFields(desk))}`}
     ${model.summary.length === 0 ? nothing : part('Criteria', criteria(model))}
   </section>`;
 }
@@ -61,22 +67,10 @@ function verdict(one: CriterionSummary, each: CriterionSummary['cases'][number],
     <span class=${each.met ? 'met' : 'not-met'}>${each.met ? 'met' : 'not met'}</span></td>`;
 }
 
-export function foot(model: RecordModel) {
+export function foot(desk: Desk, printing: boolean) {
   return html`<footer class="foot">
-    ${model.conclusion.length === 0 ? nothing : part('Conclusion', prose(model.conclusion))}
-    ${
-      model.references.length === 0
-        ? nothing
-        : part(
-            'References',
-            html`<dl class="references">${model.references.map(
-              (one) =>
-                html`<div id=${`ref-${one.id}`} tabindex="-1"><dt>[${one.id}]</dt><dd>${one.document}${one.edition === '' ? nothing : `, ${one.edition}`}${one.title === '' ? nothing : `. ${one.title}`}${
-                  one.citedBy.length === 0 ? nothing : html` <span class="cited">cited in ${one.citedBy.join(', ')}</span>`
-                }</dd></div>`,
-            )}</dl>`,
-          )
-    }
+    ${passage(desk, printing, 'conclusion', 'Conclusion', 'what follows from the results')}
+    ${referencesPart(desk, printing)}
   </footer>`;
 }
 

@@ -13,7 +13,7 @@ import type { Desk, InPlace } from './desk.ts';
 import { hasFormula } from './drafts.ts';
 import { isField, PageElement } from './element.ts';
 import { provenanceText } from './given.ts';
-import { columnHeads, foot, head, titleBlock } from './heads.ts';
+import { columnHeads, foot, head } from './heads.ts';
 import { loadEditing } from './in-place.ts';
 import { commandOf, isWriting } from './keys.ts';
 import { type LineCommand, LineCommands } from './line-commands.ts';
@@ -22,6 +22,7 @@ import type { PaperHost } from './paper-host.ts';
 import { type Section, sectionsOf, titleOf } from './sections.ts';
 import { cellOf } from './share.ts';
 import { type Stretch, Stretches } from './stretches.ts';
+import { titleBlock } from './title-block.ts';
 import { noLineProblems, problemsByLine } from './waiting.ts';
 
 interface Place {
@@ -86,7 +87,7 @@ export class PaperElement extends PageElement {
     );
     this.stretches.begin(model.lines.length, this.printing);
     const place = this.#place ?? { cell: model.lines[0] ? cellOf(model.lines[0]) : '', column: 1 };
-    return html`${titleBlock(model)}${head(desk)}
+    return html`${titleBlock(desk, this.printing)}${head(desk, this.printing)}
       <div role="grid" class="grid" aria-label="Calculation" aria-colcount=${2 + heads.length} aria-multiselectable="true" @keydown=${this.#onKey} @focusin=${this.#onFocus}
         @focusout=${this.#onLeave} @pointerdown=${this.#onPress} @click=${this.#onClick} @commit=${this.#onCommit} @cancel=${this.#onCancel} @line-command=${this.#onLineCommand}
         @copy=${this.#onClipboard} @cut=${this.#onClipboard} @paste=${this.#onClipboard} @mousedown=${this.#onMouse}>
@@ -105,7 +106,7 @@ export class PaperElement extends PageElement {
           </div>`,
         )}
       </div>
-      ${foot(model)}`;
+      ${foot(desk, this.printing)}`;
   }
 
   protected override updated() {
