@@ -112,7 +112,9 @@ export class HereElement extends PageElement {
     const edit = () => void this.edit();
     if (this.lines > 1)
       return html`${this.shown ?? this.value}<p class="here-edit"><button type="button" class="word" aria-label=${`${empty ? 'Write' : 'Edit'}: ${this.label}`} @click=${edit}>${empty ? `Write ${this.label.toLowerCase()}` : 'Edit'}</button></p>`;
-    return html`<button type="button" class="here ${empty ? 'blank' : ''}" title="Edit" aria-label=${`${this.label}: ${empty ? 'empty' : this.value}, edit`} @click=${edit}>${empty ? (this.hint === '' ? '–' : this.hint) : (this.shown ?? this.#optionLabel(this.value))}</button>`;
+    // What is seen is part of what is said.
+    const seen = empty ? (this.hint === '' ? '–' : this.hint) : this.#optionLabel(this.value);
+    return html`<button type="button" class="here ${empty ? 'blank' : ''}" title="Edit" aria-label=${`${this.label}: ${seen}, ${empty ? 'empty' : 'edit'}`} @click=${edit}>${empty ? seen : (this.shown ?? seen)}</button>`;
   }
 
   #optionLabel(value: string) {

@@ -61,11 +61,10 @@ export function referencesPart(desk: Desk, printing: boolean) {
         label: `removal of ${one.id}`,
         words: by.length === 0 ? `${one.id} removed` : `${one.id} removed; it is still cited in ${by.join(', ')}`,
       });
-    return html`<div id=${`ref-${one.id}`} tabindex="-1"><dt>${hereField({
+    return html`<div id=${`ref-${one.id}`} tabindex="-1"><dt class="reference-id">${hereField({
       desk,
       label: `Id of reference ${at + 1}`,
       value: one.id,
-      shown: html`[${one.id}]`,
       step: `id of ${one.id}`,
       late: true,
       check: (text) => referenceIdFault(desk.kept, text.trim(), one.id),
