@@ -50,6 +50,12 @@ type FormulaCell = Extract<Cell, { kind: 'derived' | 'criterion' | 'sought' }>;
 export const hasFormula = (cell: { readonly kind: string }): cell is FormulaCell =>
   cell.kind === 'derived' || cell.kind === 'criterion' || cell.kind === 'sought';
 
+/** What of a line is edited where it stands. */
+export function editedAs(cell: Cell | undefined): InPlace['what'] {
+  if (cell?.kind === 'heading' || cell?.kind === 'note') return 'text';
+  return cell !== undefined && hasFormula(cell) ? 'formula' : 'fields';
+}
+
 const relations: ReadonlyMap<string, Relation> = new Map([
   ['<', '<'],
   ['<=', '<='],

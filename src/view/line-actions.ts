@@ -63,3 +63,7 @@ export function lineActions(count: number): TemplateResult {
         html`<span class="group">${group.map(({ command, word, keys }) => html`<button type="button" class="word" title=${keys} data-command=${command} @click=${(event: Event) => ask(event, command)}>${word}</button>`)}</span>`,
     )}</div>`;
 }
+
+/** Words about what was done, under the line where it was done. */
+export const toldRow = (words: string) =>
+  html`<div role="row" class="row told"><div role="gridcell" class="source"></div><div role="gridcell" class="calculation across"><p class="remark">${words}</p></div></div>`;

@@ -10,12 +10,13 @@ import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
 import type { Desk, InPlace } from './desk.ts';
-import { hasFormula } from './drafts.ts';
+import { editedAs } from './drafts.ts';
 import { isField, PageElement } from './element.ts';
 import { provenanceText } from './given.ts';
 import { columnHeads, foot, head } from './heads.ts';
 import { loadEditing } from './in-place.ts';
 import { commandOf, isWriting } from './keys.ts';
+import { toldRow } from './line-actions.ts';
 import { type LineCommand, LineCommands } from './line-commands.ts';
 import { NewLines } from './new-lines.ts';
 import type { PaperHost } from './paper-host.ts';
@@ -167,11 +168,7 @@ export class PaperElement extends PageElement {
     const cell = cellOf(line);
     if (this.printing) return nothing;
     const { told } = this.desk;
-    const words =
-      told?.cell === cell
-        ? html`<div role="row" class="row told"><div role="gridcell" class="source"></div><div role="gridcell" class="calculation across"><p class="remark">${told.words}</p></div></div>`
-        : nothing;
-    return html`${words}${this.#newLines.isOpenBelow(cell) ? this.#newLines.below(cell, titleOf(line)) : nothing}`;
+    return html`${told?.cell === cell ? toldRow(told.words) : nothing}${this.#newLines.isOpenBelow(cell) ? this.#newLines.below(cell, titleOf(line)) : nothing}`;
   }
 
   /** What the desk has now stands on the paper. */
@@ -294,11 +291,8 @@ export class PaperElement extends PageElement {
     if (isWritable(at.element)) this.desk.begin(at.cell, field, caseIndex, text);
   }
 
-  /** What of a line is edited where it stands. */
   #editedAs(cell: string): InPlace['what'] {
-    const found = this.desk.kept.cells.find((one) => one.id === cell);
-    if (found?.kind === 'heading' || found?.kind === 'note') return 'text';
-    return found !== undefined && hasFormula(found) ? 'formula' : 'fields';
+    return editedAs(this.desk.kept.cells.find((one) => one.id === cell));
   }
 
   async #inPlace(cell: string, what: InPlace['what']) {
