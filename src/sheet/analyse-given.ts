@@ -3,7 +3,7 @@
 // Not here: reading of the values (reading.ts).
 
 import { nearestNames, typeOfUnit } from '../formula/index.ts';
-import { equalD, type Problem, type Unit, type Value, withArticle } from '../quantity/index.ts';
+import { equalD, isAngleUnit, type Problem, type Unit, type Value, withArticle } from '../quantity/index.ts';
 import type { GivenCell } from './document.ts';
 import type { Node } from './node.ts';
 import { type Report, type Surroundings, waitsFor } from './surroundings.ts';
@@ -56,7 +56,37 @@ export function analyseGiven(node: Node, cell: GivenCell, around: Surroundings, 
       cell.unit === undefined ? 'value' : 'unit',
     );
   }
+  checkBareAngle(node, cell, around, report);
   checkRange(node, cell, around, report);
+}
+
+/** A bare number is an angle in radians: right as it stands, and seldom meant where the unit or the range speaks of degrees. */
+function checkBareAngle(node: Node, cell: GivenCell, around: Surroundings, report: Report): void {
+  const unit = [node.reading.unit, node.reading.range?.from.unit, node.reading.range?.to.unit].find(
+    (one) => one !== undefined && one.parts.length > 0 && isAngleUnit(one),
+  );
+  if (unit === undefined || unit.text === 'rad') return;
+  const told = new Set<string>();
+  for (const [index, value] of node.values.entries()) {
+    if (value === undefined || value.unit.parts.length > 0 || value.si === 0 || told.has(value.text)) continue;
+    told.add(value.text);
+    const id = around.cases[index]!.id;
+    const own = cell.byCase !== undefined && Object.hasOwn(cell.byCase, id);
+    const written = /^[°′″]$/u.test(unit.text) ? `${value.text}${unit.text}` : `${value.text} ${unit.text}`;
+    report(
+      {
+        code: 'bare-angle',
+        severity: 'warning',
+        message: `${value.text} without a unit is an angle in rad; write ${written} or ${value.text} rad`,
+        fixes: [
+          { from: 0, to: value.text.length, text: written, label: `write ${written}` },
+          { from: 0, to: value.text.length, text: `${value.text} rad`, label: `write ${value.text} rad` },
+        ],
+      },
+      own ? `byCase.${id}` : 'value',
+      own ? id : undefined,
+    );
+  }
 }
 
 /** 1/s, 1/min and the like, without r, rad or Hz. */

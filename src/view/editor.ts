@@ -8,7 +8,7 @@ import { html, nothing } from 'lit';
 import { live } from 'lit/directives/live.js';
 import type { Fix } from '../quantity/index.ts';
 import type { RecordCase, Step } from '../record/index.ts';
-import type { Basis } from '../sheet/index.ts';
+import type { Basis, CellProblem } from '../sheet/index.ts';
 import type { Desk, Editing } from './desk.ts';
 import { sharesValue } from './given.ts';
 
@@ -51,16 +51,17 @@ export function editorField(desk: Desk, editing: Editing, step: Step, cases: rea
 export function editorNotes(desk: Desk, editing: Editing, step: Step, cases: readonly RecordCase[]) {
   const errors = editing.problems.filter((problem) => problem.severity === 'error');
   const warnings = editing.problems.filter((problem) => problem.severity === 'warning');
+  const fixes = (problem: CellProblem) =>
+    (problem.fixes ?? []).map(
+      (fix) =>
+        html`<button type="button" class="word" @click=${(event: Event) => applyFix(desk, editing, fix, event)}>${fix.label}</button> `,
+    );
   return html`<div class="editor-notes">
     <div id=${noteId(step.cell)} class="editor-problems" aria-live="polite">
-      ${errors.slice(0, 1).map(
-        (problem) => html`<p class="problem error"><b>Error</b>: ${problem.message}
-          ${(problem.fixes ?? []).map(
-            (fix) =>
-              html`<button type="button" class="word" @click=${(event: Event) => applyFix(desk, editing, fix, event)}>${fix.label}</button>`,
-          )}</p>`,
-      )}
-      ${errors.length > 0 ? nothing : warnings.map((problem) => html`<p class="problem warning"><b>Warning</b>: ${problem.message}</p>`)}
+      ${errors
+        .slice(0, 1)
+        .map((problem) => html`<p class="problem error"><b>Error</b>: ${problem.message} ${fixes(problem)}</p>`)}
+      ${errors.length > 0 ? nothing : warnings.map((problem) => html`<p class="problem warning"><b>Warning</b>: ${problem.message} ${fixes(problem)}</p>`)}
     </div>
     ${cases.length < 2 ? nothing : scope(desk, editing, step, cases)}
     <p class="remark">Enter keeps it, Escape restores ${editing.before === '' ? 'the empty field' : editing.before}</p>

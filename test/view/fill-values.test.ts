@@ -77,8 +77,8 @@ describe('what is wrong', () => {
   });
   it('a bare number in the place of an angle or of per cent warns with the unit that may be meant', () => {
     const [told] = checkPlace(capstan, first('alpha'), '40');
-    expect(told).toMatchObject({ code: 'bare-number', severity: 'warning', message: expect.stringContaining('an angle in rad') });
-    expect(apply('alpha', '40')).toEqual(['40°']);
+    expect(told).toMatchObject({ code: 'bare-angle', severity: 'warning', message: expect.stringContaining('an angle in rad') });
+    expect(apply('alpha', '40')).toEqual(['40°', '40 rad']);
     const creep = template('belt-creep');
     const [share] = placesOf(given(creep, 's_max'), casesOf(creep), none);
     expect(checkPlace(creep, share!, '2')[0]?.fixes).toMatchObject([{ text: ' %' }]);

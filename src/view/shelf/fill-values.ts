@@ -59,6 +59,7 @@ export function checkPlace(begun: Sheet, place: Place, text: string): readonly P
   const warnings = problems
     .filter((problem) => problem.severity === 'warning' && (problem.field === field || problem.field === 'value'))
     .map(plain);
+  if (warnings.some((problem) => problem.code === 'bare-angle')) return warnings;
   return [...bareNumber(begun, place, text), ...warnings];
 }
 
