@@ -34,8 +34,10 @@ const lessText: Plugin = {
   name: 'less-text',
   enforce: 'pre',
   transform(code, id) {
-    if (/katex\.mjs$/.test(id)) return { code: code.replace(unusedSizes, (face) => face.replace(/\{[^}]*\}/, '{}')), map: null };
-    return null;
+    if (!/katex\.mjs$/.test(id)) return null;
+    // The sign of a diameter, the one of these faces that a name can hold, keeps its size.
+    const used = (face: string) => /"8709": \[[^\]]*\]/.exec(face)?.[0] ?? '';
+    return { code: code.replace(unusedSizes, (face) => face.replace(/\{[^}]*\}/, () => `{${used(face)}}`)), map: null };
   },
   load(id) {
     const file = id.replace(/\?raw$/, '');

@@ -96,7 +96,7 @@ await plain.evaluate(() => {
 await plain.evaluate(listen);
 
 async function openPage() {
-  const context = await browser.newContext({ viewport: { width: 1440, height: 1200 } });
+  const context = await browser.newContext({ viewport: { width: 1440, height: 1400 } });
   const page = await context.newPage();
   await page.goto(server.url, { waitUntil: 'networkidle' });
   await page.waitForSelector('ts-row .result', { state: 'attached' });
@@ -147,7 +147,11 @@ async function typing(count, signs) {
   await page.waitForTimeout(3000);
   await page.click('ts-row[data-cell="P"] .result[data-column="2"]');
   await page.waitForSelector('ts-row[data-cell="P"] input');
-  await page.evaluate(() => document.querySelector('ts-row[data-cell="P"]').scrollIntoView({ block: 'center' }));
+  // Below the bar and the heads of the columns, with the rows that follow from it under it.
+  await page.evaluate(() => {
+    document.querySelector('ts-row[data-cell="P"]').scrollIntoView({ block: 'start' });
+    scrollBy(0, -150);
+  });
   await plain.focus('input');
   for (const each of [page, plain]) await each.evaluate(() => void globalThis.signs.splice(0));
   const keys = ['1', '2', 'Backspace', '3', 'Backspace', 'Backspace', '9', '8', 'Backspace', 'Backspace'];

@@ -1,4 +1,4 @@
-// `npm run bench`: bundles test/bench/main.ts for Node and runs it. Needs no build of the product.
+// `npm run bench`: bundles test/bench/main.ts for Node and runs it, then the page in a real browser (page.mjs). Builds what it needs.
 import { spawnSync } from 'node:child_process';
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
@@ -24,4 +24,5 @@ await build({
 });
 const ran = spawnSync(process.execPath, [join(out, 'bench.mjs')], { stdio: 'inherit' });
 rmSync(out, { recursive: true, force: true });
-process.exitCode = ran.status ?? 1;
+if (ran.status === 0) await import('./page.mjs');
+else process.exitCode = ran.status ?? 1;
