@@ -151,7 +151,7 @@ function sidesOf(each: StepCase, before: string): readonly Part[] {
 /** The equal sign is no place to break: what follows may be a fraction that stays whole. */
 function numbersOf(each: StepCase, step: Step): Part {
   if (step.kind === 'sought')
-    return { markup: renderTex(`{:}\\quad ${each.substituted}`), length: lengthOf(each.substituted) + 2 };
+    return { markup: renderTex(`\\quad\\text{put back:}\\;${each.substituted}`), length: lengthOf(each.substituted) + 10 };
   const word = step.kind !== 'criterion' ? '' : `\\text{${each.utilisation == null ? 'room' : 'utilisation'}}\\,`;
   return { markup: renderTex(`${word}{=}\\;${each.substituted}`), length: lengthOf(each.substituted) + (word === '' ? 2 : 10) };
 }

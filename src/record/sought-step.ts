@@ -82,24 +82,25 @@ function sideUnit(calculation: Calculation, state: SoughtState): Unit {
 function foundNotes(calculation: Calculation, state: SoughtState): readonly string[] {
   const { cell } = state;
   const varied = cell.instead === undefined ? '' : `${cell.instead} varied, the sheet itself keeps its value; `;
-  const found = state.solutions.flatMap((solution, index) => {
-    if (solution === undefined) return [];
-    const unit = sideUnit(calculation, state);
-    const residual = printQuantity(
-      roundSignificant(numeralOfDouble(solution.residual), 2),
-      unit.text === one.text ? one : coherent(unit),
-      calculation.style,
-    );
-    const which = calculation.cases.length > 1 ? `${calculation.cases[index]?.title ?? calculation.cases[index]?.id}: ` : '';
-    const roots =
-      solution.roots.length === 1
-        ? 'one root'
-        : `${printNumeral(numeralOfDouble(solution.roots.length), calculation.style)} roots, the lowest taken`;
-    return [
-      `${which}${roots} seen from ${rangeText(cell.between)}, ${solution.iterations} iterations after ${solution.method}, residual ${residual}`,
-    ];
+  const solved = state.solutions.flatMap((solution, index) => (solution === undefined ? [] : [{ solution, index }]));
+  const [first] = solved;
+  if (first === undefined) return [];
+  const unit = sideUnit(calculation, state);
+  const shown = unit.text === one.text ? one : coherent(unit);
+  const counts = new Set(solved.map(({ solution }) => solution.roots.length));
+  const common = counts.size === 1 ? `${rootsText(first.solution, calculation)}, ` : '';
+  const each = solved.map(({ solution, index }) => {
+    const residual = printQuantity(roundSignificant(numeralOfDouble(solution.residual), 2), shown, calculation.style);
+    const own = counts.size === 1 ? '' : `${rootsText(solution, calculation)}, `;
+    const which = calculation.cases.length > 1 ? ` (${calculation.cases[index]?.title ?? calculation.cases[index]?.id})` : '';
+    return `${own}${solution.iterations} iterations, residual ${residual}${which}`;
   });
-  return found.length === 0 ? [] : [`${varied}${found.join('; ')}`];
+  return [`${varied}${common}sought from ${rangeText(cell.between)} after ${first.solution.method}: ${each.join('; ')}`];
+}
+
+function rootsText(solution: Solution, calculation: Calculation): string {
+  const count = solution.roots.length;
+  return count === 1 ? 'one root' : `${printNumeral(numeralOfDouble(count), calculation.style)} roots, the lowest taken`;
 }
 
 /** The range as typed, a hyphen before a number set as the minus that it stands for. */

@@ -52,11 +52,11 @@ export function citationNotes(source: string | undefined, sheet: Sheet): readonl
     .map((id) => `[${id}] is not in the list of sources`);
 }
 
-/** One text where all cases agree, otherwise 'Steady running 15.2 m/s; Start-up 3 m/s'; null stands for no value. */
+/** One text where all cases agree, otherwise '15.2 m/s (Steady running), 3 m/s (Start-up)'; null stands for no value. */
 export function inCases(texts: readonly (string | null)[], titles: readonly string[]): string {
   const shown = texts.map((text) => text ?? 'no value');
   if (shown.every((text) => text === shown[0])) return shown[0] ?? '';
-  return shown.map((text, k) => `${titles[k] ?? ''} ${text}`.trim()).join('; ');
+  return shown.map((text, k) => (titles[k] ? `${text} (${titles[k]})` : text)).join(', ');
 }
 
 /** `value` gives undefined for a name that no quantity answers to: its braces stay. */

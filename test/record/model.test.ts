@@ -42,7 +42,7 @@ describe('lines', () => {
     );
     const note = record.lines.find((line) => line.kind === 'note');
     expect(plain(note?.kind === 'note' ? note.text : '')).toBe(
-      'It runs at Steady running 15.2 m/s; Start-up 3 m/s, twice that is Steady running 30.40 m/s; Start-up 6.000 m/s, g is 9.81 m/s²; {nobody} and {a b} stay.',
+      'It runs at 15.2 m/s (Steady running), 3 m/s (Start-up), twice that is 30.40 m/s (Steady running), 6.000 m/s (Start-up), g is 9.81 m/s²; {nobody} and {a b} stay.',
     );
   });
 

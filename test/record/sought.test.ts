@@ -25,7 +25,7 @@ describe('a sought quantity in the record', () => {
     expect(step.cases[0]).toMatchObject({ result: '275.0\u00a0N', calculatorResult: '275.0', closes: true });
     expect(step.cases[0]!.substituted).toBe('300.0\\,\\mathrm{N} = 300.0\\,\\mathrm{N}');
     expect(step.notes.join(' ')).toMatch(
-      /^F_0 varied, the sheet itself keeps its value; one root seen from 10 N to 20 kN, \d+ iterations after Brent 1973, residual /u,
+      /^F_0 varied, the sheet itself keeps its value; one root, sought from 10 N to 20 kN after Brent 1973: \d+ iterations, residual /u,
     );
   });
 
