@@ -4,6 +4,7 @@
 // 2. Every cell has its line, failed ones with their problem; nothing is left out and nothing throws for what a sheet says.
 // Not here: the steps (steps.ts), their digits (case-print.ts), the lists at the head (heads.ts), forms (html.ts, json.ts).
 
+import { canonicalName, plainName } from '../formula/index.ts';
 import { printNumeral, readNumeral } from '../quantity/index.ts';
 import type { Calculation, CellState, LoadCase, NoteState, TableState, TemplateComparison } from '../sheet/index.ts';
 import { besideTemplate } from './beside-template.ts';
@@ -276,7 +277,7 @@ function plainLine(calculation: Calculation, state: Extract<CellState, { kind: '
         what: 'chart',
         title: cell.title ?? '',
         source: '',
-        text: `Chart of ${cell.show.join(', ')} over ${cell.vary} from ${cell.from} to ${cell.to}: not drawn in this version.`,
+        text: `Chart of ${cell.show.join(', ')} over ${plainName(canonicalName(cell.vary))} from ${cell.from} to ${cell.to}: not drawn in this version.`,
       };
   }
 }

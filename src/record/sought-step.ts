@@ -4,7 +4,7 @@
 // 2. The check is the equation: both sides are printed as they come out with the unrounded value.
 // Not here: the search (src/study), the digits (case-print.ts).
 
-import { texName } from '../formula/index.ts';
+import { canonicalName, plainName, texName } from '../formula/index.ts';
 import {
   coherentUnit,
   lastPlace,
@@ -81,7 +81,8 @@ function sideUnit(calculation: Calculation, state: SoughtState): Unit {
 
 function foundNotes(calculation: Calculation, state: SoughtState): readonly string[] {
   const { cell } = state;
-  const varied = cell.instead === undefined ? '' : `${cell.instead} varied, the sheet itself keeps its value; `;
+  const varied =
+    cell.instead === undefined ? '' : `${plainName(canonicalName(cell.instead))} varied, the sheet itself keeps its value; `;
   const solved = state.solutions.flatMap((solution, index) => (solution === undefined ? [] : [{ solution, index }]));
   const [first] = solved;
   if (first === undefined) return [];
