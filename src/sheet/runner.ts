@@ -239,7 +239,14 @@ export class Runner {
       node.solutions[index] = solved?.ok ? solved.solution : undefined;
       const place = { cell: node.cell.id, case: this.world.caseId(index) };
       if (solved?.ok) for (const warning of solved.warnings) node.warned.push({ ...warning, ...place });
-      else if (solved) node.failed[index] = { ...solved.problem, ...place, field: 'where' };
+      else if (solved) {
+        const missing = node.uses.find((used) => !node.between.includes(used) && !isTable(used) && !this.hasValue(used, index));
+        node.failed[index] = {
+          ...(missing === undefined ? solved.problem : waitsFor(missing, this.world)),
+          ...place,
+          field: 'where',
+        };
+      }
     }
     node.snapshot = undefined;
     this.moved[node.index] = 1;
@@ -249,13 +256,15 @@ export class Runner {
   private missingAt(node: Node, formula: Formula, problem: Problem, caseIndex: number): Node | undefined {
     if (problem.code !== 'no-value' || problem.at === undefined) return undefined;
     const name = canonicalName(formula.text.slice(problem.at[0], problem.at[1]));
-    return node.uses.find((used) => used.name === name && used.cell.kind !== 'table' && !this.hasValue(used, caseIndex));
+    return node.uses.find((used) => used.name === name && !isTable(used) && !this.hasValue(used, caseIndex));
   }
 
   private hasValue(node: Node, caseIndex: number): boolean {
     return node.texts !== undefined ? node.texts[caseIndex] !== undefined : !Number.isNaN(this.columns.read(node, 0, caseIndex));
   }
 }
+
+const isTable = (node: Node): boolean => node.cell.kind === 'table';
 
 /** A choice without a text compares as a number would: only the exact walk tells. */
 function lacksText(node: Node): boolean {

@@ -54,7 +54,7 @@ function readAnew(cell: TableCell, decimalSign: DecimalSign): ReadTable {
       problems.push({
         code: 'ragged-table',
         severity: 'error',
-        message: `row ${index + 1} has ${row.length} entries, the table has ${cell.columns.length} columns; fill or remove the difference`,
+        message: `row ${index + 1} has ${row.length} ${row.length === 1 ? 'entry' : 'entries'}, the table has ${cell.columns.length} ${cell.columns.length === 1 ? 'column' : 'columns'}; fill or remove the difference`,
         field: `rows.${index}`,
       });
     }
