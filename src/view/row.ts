@@ -165,7 +165,14 @@ export class RowElement extends PageElement {
     return html`<div role="gridcell" class="result" data-column=${2 + index} data-case=${title} tabindex=${this.#tab(2 + index)}
       aria-readonly=${step.kind === 'given' ? nothing : 'true'}>
       <div class="value">${typed === null ? result(step, each, this.#typedText(step, index)) : editorField(this.desk, typed, step, this.cases)}</div>
+      ${this.#governs(step, each) ? html`<div class="governs">governs</div>` : nothing}
     </div>`;
+  }
+
+  /** True for the case that a criterion is decided in, where the cases differ. */
+  #governs(step: Step, each: StepCase) {
+    if (step.kind !== 'criterion' || step.cases.every((other) => other.result === each.result)) return false;
+    return this.desk.drawn.summary.find((one) => one.cell === step.cell)?.governing === each.case;
   }
 
   /** What stands in the sheet where it could not be read. */
