@@ -5,7 +5,7 @@ import { readdirSync, readFileSync } from 'node:fs';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
-import { calculate, readSheet } from '../../src/sheet/index.ts';
+import { calculate, readSheet, writeSheet } from '../../src/sheet/index.ts';
 import { sheetFileName } from '../../src/store/index.ts';
 import { connect, drop, example, idOf, type Opened, open, recordWith, resultsOf, resultsOn } from './open.ts';
 
@@ -281,6 +281,14 @@ describe('a narrow window', () => {
   });
 });
 
+/** The cells of a template as a plain sheet: a template that is dropped goes among the templates. */
+function asSheet(template: string): string {
+  const read = readSheet(template);
+  if (!read.ok) throw new Error('the template cannot be read');
+  const { templateInfo: _, ...sheet } = read.value;
+  return writeSheet(sheet);
+}
+
 describe('the file', () => {
   it('that is opened takes the place of the sheet; one that cannot be read changes nothing and says why', async () => {
     const template = readFileSync(new URL('../../templates/capstan.sheet.json', import.meta.url), 'utf8');
@@ -291,9 +299,10 @@ describe('the file', () => {
     await expect.poll(() => page.locator('.notice').textContent()).toContain('99');
     await edit('F_0', '1400 N');
     await page.keyboard.press('Enter');
-    await drop(page, 'capstan.sheet.json', template);
-    const read = readSheet(template);
+    const text = asSheet(template);
+    const read = readSheet(text);
     if (!read.ok) throw new Error('the template cannot be read');
+    await drop(page, 'capstan.sheet.json', text);
     await expect.poll(() => page.locator('h1').textContent()).toBe(read.value.title);
     const record = makeRecord(calculate(read.value));
     await expect.poll(() => page.locator('ts-row.step').count()).toBe(record.steps.length);
@@ -308,7 +317,7 @@ describe('the file', () => {
     const files = readdirSync(folder).filter((name) => name.endsWith('.sheet.json'));
     expect(files.length).toBeGreaterThanOrEqual(3);
     for (const name of files) {
-      const text = readFileSync(new URL(name, folder), 'utf8');
+      const text = asSheet(readFileSync(new URL(name, folder), 'utf8'));
       const read = readSheet(text);
       if (!read.ok) throw new Error(`${name} cannot be read`);
       await drop(page, name, text);
