@@ -74,12 +74,13 @@ export function entryRow(
   key: string,
   label: string,
   text: string | undefined,
-  heard: { begin(): void; draft(text: string): void; entry(detail: EntryDetail): void; leave(): void },
+  heard: { begin(): void; draft(text: string): void; entry(detail: EntryDetail): void; leave(): void; putIn(): void },
 ): TemplateResult {
   return html`<div role="row" class="row entry" data-entry=${key}><div role="gridcell" class="source"></div>
     <div role="gridcell" class="calculation across">${
       text === undefined
-        ? html`<button type="button" class="word" aria-label=${label} @click=${heard.begin}>New line</button>`
+        ? html`<button type="button" class="word" aria-label=${label} @click=${heard.begin}>New line</button>
+            <button type="button" class="word put-in" @click=${heard.putIn}>Put in a template …</button>`
         : html`<ts-entry-line .calculation=${desk.calculation} .label=${label} .text=${live(text)} @cancel=${heard.leave}
             @entry-draft=${(event: CustomEvent<string>) => heard.draft(event.detail)}
             @entry=${(event: CustomEvent<EntryDetail>) => heard.entry(event.detail)}></ts-entry-line>`

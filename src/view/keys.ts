@@ -26,6 +26,7 @@ export type Command =
   | 'remove'
   | 'move-up'
   | 'move-down'
+  | 'put-in'
   | 'origin'
   | 'use'
   | 'back'

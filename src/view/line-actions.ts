@@ -18,6 +18,7 @@ const actions: readonly (readonly Action[])[] = [
     { command: 'edit', word: 'Edit', keys: 'Enter' },
     { command: 'edit-all', word: 'All fields', keys: 'Shift+Enter' },
     { command: 'line-below', word: 'New line below', keys: 'Alt+Enter' },
+    { command: 'put-in', word: 'Put in a template …', keys: 'A block behind this section' },
   ],
   [
     { command: 'extend-up', word: 'Choose the line above too', keys: 'Shift+↑' },

@@ -20,6 +20,7 @@ import { PaperElement } from './paper.ts';
 import { RowElement } from './row.ts';
 import { startSession } from './session.ts';
 import { loadShelf } from './shelf-load.ts';
+import { loadTemplates } from './template-load.ts';
 
 customElements.define('ts-math', MathElement);
 customElements.define('ts-bar', BarElement);
@@ -41,5 +42,6 @@ requestAnimationFrame(() =>
     performance.mark('first screen');
     void loadEditing().catch(() => undefined);
     void loadShelf();
+    void loadTemplates();
   }),
 );

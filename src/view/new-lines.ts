@@ -67,6 +67,7 @@ export class NewLines {
         desk.typeNew(key, '');
         void goOn(id);
       },
+      putIn: () => this.#host.element.dispatchEvent(new CustomEvent('put-in', { detail: after, bubbles: true })),
       leave: () => {
         this.#open.delete(key);
         const place = key.startsWith('below ') ? null : this.#host.place();

@@ -26,6 +26,7 @@ import type { Session } from './session.ts';
 import { alike, cellOf } from './share.ts';
 import { droppedFiles, shelfScreen } from './shelf-load.ts';
 import { openPoints, originAndUse } from './side.ts';
+import { askForBlock } from './template-load.ts';
 import { words } from './text.ts';
 import { countLines } from './waiting.ts';
 
@@ -87,6 +88,7 @@ export class PageElementRoot extends PageElement {
     addEventListener('dragleave', this.#onDrag);
     addEventListener('drop', this.#onDrop);
     this.addEventListener('show-keys', () => showKeys(this));
+    this.addEventListener('put-in', (event) => this.#putIn((event as CustomEvent<string | null>).detail));
     this.addEventListener('walk', (event) => void this.#onWalk(event as CustomEvent<Walk>));
     this.addEventListener('jump', this.#onJump);
   }
@@ -297,6 +299,11 @@ export class PageElementRoot extends PageElement {
     const from = this.desk?.chosen;
     if (from != null && from !== cell) this.#trail.push(from);
     void this.#paper?.goTo(cell);
+  }
+
+  #putIn(behind: string | null) {
+    const { session, desk } = this;
+    if (session !== undefined && desk !== null) void askForBlock(session, desk, behind, (cell) => this.#goTo(cell));
   }
 
   #onWidth = () => {
