@@ -152,6 +152,8 @@ export interface Desk {
   /** Basis and source that stood beside the number before the last one. */
   formerProvenance(cell: string): Provenance | undefined;
   restoreProvenance(cell: string): void;
+  /** The sheet is read beside this template from now on. */
+  compareWith(template: Sheet): void;
   undo(): void;
   redo(): void;
   saved(): void;

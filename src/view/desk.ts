@@ -10,7 +10,6 @@
 // 6. A line that is edited in its place is a draft beside the kept cell under the same rules; leaving it keeps the draft as one step.
 // Not here: elements of the page; computing (src/sheet) and printing (src/record).
 
-import { recordMaker } from '../record/index.ts';
 import {
   applyEdit,
   type Cell,
@@ -27,6 +26,7 @@ import {
   undo,
 } from '../sheet/index.ts';
 import { solver } from '../study/index.ts';
+import { comparedRecord } from './compared-record.ts';
 import type { Desk, Editing, InPlace, NewLine, Remark, Typed } from './desk-face.ts';
 import { broughtIn, canRename, editOf, hasFormula, isError, keptDraft, problemPlaces, runBetween, typedOf } from './drafts.ts';
 import { heldValue, type Provenance, provenanceOf, sharesValue, withoutProvenance, withSource, withValue } from './given.ts';
@@ -41,7 +41,10 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
   let kept = first;
   let shown = first;
   let calculation = calculate(first, solver);
-  const makeRecord = recordMaker();
+  const { makeRecord, ...comparing } = comparedRecord(() => {
+    stale = true;
+    changed();
+  });
   const placesIn = problemPlaces();
   let drawn = makeRecord(calculation);
   let stale = false;
@@ -111,7 +114,10 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       editing = { ...next, problems: problemsOf(next.cell, next.at) };
       return;
     }
-    const candidate = replaceCell(kept, withValue(cell, caseId(next.at), next.text, next.forAll));
+    const candidate = applyEdit(kept, {
+      kind: 'set-cell',
+      cell: withValue(cell, caseId(next.at), next.text, next.forAll),
+    }).sheet;
     const last = shown;
     const before = placesIn(calculation, kept);
     calculation.update(candidate);
@@ -410,6 +416,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       show(kept);
       changed();
     },
+    ...comparing,
     ...provenanceActs({
       givenOf,
       refused,
@@ -439,11 +446,6 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
 
 const isChange = (cell: GivenCell, done: Editing, caseId: string) =>
   done.text !== done.before || done.forAll !== sharesValue(cell, caseId);
-
-const replaceCell = (sheet: Sheet, cell: Cell): Sheet => ({
-  ...sheet,
-  cells: sheet.cells.map((one) => (one.id === cell.id ? cell : one)),
-});
 
 const canBeEdited = (cell: Cell, what: InPlace['what']) =>
   what === 'fields' || (what === 'formula' ? hasFormula(cell) : cell.kind === 'heading' || cell.kind === 'note');

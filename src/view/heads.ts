@@ -5,6 +5,7 @@
 
 import { html, nothing } from 'lit';
 import type { CriterionSummary, RecordModel } from '../record/index.ts';
+import { differences } from './beside-template.ts';
 import { casesPart } from './cases-part.ts';
 import type { Desk } from './desk.ts';
 import { hereField } from './here-field.ts';
@@ -40,7 +41,7 @@ export function head(desk: Desk, printing: boolean) {
   return html`<section class="head" aria-label="Head of the sheet">
     ${passage(desk, printing, 'purpose', 'Purpose', 'what is calculated, and what the result is used for')}
     ${passage(desk, printing, 'method', 'Method', 'how it is calculated, and after which rules')}
-    ${model.origin === '' ? nothing : part('Made from', html`<p>${model.origin}</p>`)}
+    ${model.origin === '' ? nothing : part('Made from', html`<p>${model.origin}</p>${differences(model)}`)}
     ${model.limits.length === 0 ? nothing : part('Limits', html`<ul>${model.limits.map((one) => html`<li>${one}</li>`)}</ul>`)}
     ${model.caution === '' ? nothing : part('Caution', html`<p>${model.caution}</p>`)}
     ${printing ? nothing : html`${casesPart(desk)}${part('Settings', moreFields(desk))}`}

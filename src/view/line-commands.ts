@@ -45,6 +45,9 @@ export class LineCommands {
       case 'cut':
         void this.#write(copyRun(desk), () => this.#takeOut(column, 'cut'));
         return true;
+      case 'put-in':
+        this.#host.element.dispatchEvent(new CustomEvent('put-in', { detail: desk.chosen, bubbles: true }));
+        return true;
       case 'paste':
         void this.#read(column);
         return true;

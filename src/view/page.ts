@@ -9,6 +9,7 @@
 import { html, nothing, type PropertyValues } from 'lit';
 import { guard } from 'lit/directives/guard.js';
 import { keyed } from 'lit/directives/keyed.js';
+import { besideTemplate } from './beside-template.ts';
 import type { Desk } from './desk.ts';
 import { PageElement } from './element.ts';
 import { fitAll } from './fit.ts';
@@ -26,7 +27,7 @@ import type { Session } from './session.ts';
 import { alike, cellOf } from './share.ts';
 import { droppedFiles, shelfScreen } from './shelf-load.ts';
 import { openPoints, originAndUse } from './side.ts';
-import { askForBlock } from './template-load.ts';
+import { askForBlock, compareWithOrigin } from './template-load.ts';
 import { words } from './text.ts';
 import { countLines } from './waiting.ts';
 
@@ -116,6 +117,7 @@ export class PageElementRoot extends PageElement {
     const desk = this.session?.desk ?? null;
     if (desk === this.#desk) return;
     this.#desk = desk;
+    if (desk !== null && this.session !== undefined) void compareWithOrigin(this.session, desk);
     this.#trail = [];
     this.#watch?.disconnect();
     this.#watch = undefined;
@@ -144,7 +146,7 @@ export class PageElementRoot extends PageElement {
     // These change with the lines or with what is chosen, not with every sign that is typed.
     const beside = () => originAndUse(desk, goTo, this.narrow ? 1 : 2);
     const sections = guard([desk, model, this.section], () => outline(model, this.section, goTo));
-    const points = guard([desk, model], () => openPoints(desk, goTo));
+    const points = guard([desk, model], () => html`${besideTemplate(model, goTo)}${openPoints(desk, goTo)}`);
     return html`
       <a class="skip" href="#paper" @click=${this.#skip}>To the sheet</a>
       ${this.#bar(session, desk)}

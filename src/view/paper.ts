@@ -433,9 +433,6 @@ export class PaperElement extends PageElement {
           this.menu ? at.row.querySelector<HTMLElement>('.line-actions button')?.focus() : this.#focus(at.cell, at.column),
         );
         return true;
-      case 'put-in':
-        this.dispatchEvent(new CustomEvent('put-in', { detail: at.cell, bubbles: true }));
-        return true;
       case 'keys':
         this.dispatchEvent(new CustomEvent('show-keys', { bubbles: true }));
         return true;

@@ -20,3 +20,14 @@ export async function askForBlock(session: Session, desk: Desk, behind: string |
     desk.tell('the templates could not be loaded; load the page anew, the sheet is kept', behind ?? undefined);
   }
 }
+
+/** Reads the sheet beside the template that it came from, where that is at hand. */
+export async function compareWithOrigin(session: Session, desk: Desk) {
+  const { template } = desk.kept;
+  if (template === undefined) return;
+  // The sheet stands without it: what could not be compared is said in its head.
+  const found = await load()
+    .then(({ templateOf }) => templateOf(template, session.house))
+    .catch(() => null);
+  if (found !== null) desk.compareWith(found);
+}

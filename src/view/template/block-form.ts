@@ -97,8 +97,8 @@ export class BlockElement extends PageElement {
     const givens = template.cells.filter((cell): cell is GivenCell => cell.kind === 'given');
     return html`<section aria-labelledby="block-givens"><h3 id="block-givens">Givens of the block</h3>
       <p class="quiet">Each comes with the template’s value, carried over until it is confirmed; or it is taken from this sheet by a name or a formula, as in n_2.</p>
-      <div class="scroll" tabindex="0" role="region" aria-label="Givens of the block"><table>
-        <thead><tr><th scope="col">Name</th><th scope="col">Given</th><th scope="col">Template</th><th scope="col">Taken from this sheet</th></tr></thead>
+      <div class="scroll" tabindex="0" role="region" aria-label="Givens of the block"><table class="givens">
+        <thead><tr><th scope="col">Name</th><th scope="col">Given</th><th scope="col" class="number">Template</th><th scope="col">Taken from this sheet</th></tr></thead>
         <tbody>${givens.map((given) => {
           const name = canonicalName(given.name);
           const list = `offers-${name}`;
@@ -146,7 +146,7 @@ export class BlockElement extends PageElement {
           (step) =>
             html`<tr><td>${step.number}</td><th scope="row">${step.title}</th><td><code>${step.name === undefined ? '' : plainName(step.name)}</code></td>${step.cases.map(
               ({ result, met }) =>
-                html`<td class="number">${result === null ? html`<span class="quiet">no value</span>` : quantity(result)}${met === undefined || met === null ? nothing : html` <b class=${met ? 'met' : 'not-met'}>${met ? 'met' : 'not met'}</b>`}</td>`,
+                html`<td class="number">${result === null ? html`<span class="quiet">no value</span>` : step.numeric ? quantity(result) : result}${met === undefined || met === null ? nothing : html` <b class=${met ? 'met' : 'not-met'}>${met ? 'met' : 'not met'}</b>`}</td>`,
             )}</tr>`,
         )}</tbody></table></div></section>`;
   }
