@@ -107,8 +107,18 @@ function compared(cell: Compared, partner: Compared | undefined, sign: '.' | ','
   return { ...label, state: 'changed', was: shown(partner), now: shown(cell) };
 }
 
-/** Equal texts: the two compute alike. */
+const known = { '.': new WeakMap<Compared, string>(), ',': new WeakMap<Compared, string>() } as const;
+
+/** Equal texts: the two compute alike. Cells never change: what was read of one holds. */
 function meaning(cell: Compared, sign: '.' | ','): string {
+  const before = known[sign].get(cell);
+  if (before !== undefined) return before;
+  const text = meaningAnew(cell, sign);
+  known[sign].set(cell, text);
+  return text;
+}
+
+function meaningAnew(cell: Compared, sign: '.' | ','): string {
   switch (cell.kind) {
     case 'given':
       return JSON.stringify(['given', cell.choices ?? dimensionOf(cell, sign)]);

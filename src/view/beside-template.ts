@@ -30,13 +30,14 @@ function difference({ what, number, cell, name, title, was, now }: TemplateDiffe
   const label = html`${number === '' ? nothing : html`<span class="number">${number}</span> `}${title === '' ? html`<code>${name}</code>` : title}`;
   return html`<div><dt><b>${what}</b> ${cell === '' ? label : html`<button type="button" class="word" @click=${go}>${label}</button>`}</dt>
     ${was === '' ? nothing : html`<dd><span class="quiet">was</span> <code>${was}</code></dd>`}
-    ${now === '' ? nothing : html`<dd><span class="quiet">${was === '' ? 'is' : 'now'}</span> <code>${now}</code></dd>`}</div>`;
+    ${now === '' ? nothing : html`<dd>${was === '' ? nothing : html`<span class="quiet">now</span> `}<code>${now}</code></dd>`}</div>`;
 }
 
 /** At the side: the count, and the lines that are not the template's. */
 export function besideTemplate({ beside }: RecordModel, goTo: GoTo) {
   if (beside === null) return nothing;
   const here = beside.differences.filter(({ cell }) => cell !== '');
+  const gone = beside.differences.length - here.length;
   return html`<section id="beside-template" aria-labelledby="beside-title"><h2 id="beside-title">Beside the template</h2>
     <p class="quiet">${beside.words}</p>
     ${
@@ -48,5 +49,5 @@ export function besideTemplate({ beside }: RecordModel, goTo: GoTo) {
               ({ what, number, cell, name, title }) =>
                 html`<li><button type="button" class="plain" @click=${() => goTo(cell)}><span class="kind">${number} ${what}</span> <span class="name">${title === '' ? name : title}</span></button></li>`,
             )}</ul>${here.length > mostAtSide ? html`<p class="quiet">${here.length - mostAtSide} more at the head of the sheet</p>` : nothing}`
-    }</section>`;
+    }${gone === 0 ? nothing : html`<p class="quiet">left out: ${words(gone, 'line', 'lines')}, named at the head of the sheet</p>`}</section>`;
 }

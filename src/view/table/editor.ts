@@ -175,7 +175,7 @@ export class TableEditorElement extends PageElement {
           ${
             fault.row === undefined && fault.column === undefined
               ? nothing
-              : html`<button type="button" class="word" aria-label=${`to the entry: ${fault.message}`} @click=${() =>
+              : html`<button type="button" class="word" aria-label=${`to it: ${fault.message}`} @click=${() =>
                   this.#goTo({
                     line: fault.row === undefined ? 0 : fault.row + heads.length,
                     column: fault.column ?? 0,

@@ -165,7 +165,7 @@ export class TableImportElement extends PageElement {
       .filter((index) => index < shownRows || wrongRows.has(index))
       .slice(0, shownRows + mostWrong);
     return html`<div class="scroll" tabindex="0" role="region" aria-label="The rows as they would come"><table class="data">
-      <thead><tr><th></th>${columns.map(({ name, title }) => html`<th scope="col">${title ?? name}${title === undefined ? nothing : html` <code>${name}</code>`}</th>`)}</tr>
+      <thead><tr><td></td>${columns.map(({ name, title }) => html`<th scope="col">${title ?? name}${title === undefined ? nothing : html` <code>${name}</code>`}</th>`)}</tr>
         <tr><th scope="row">unit</th>${columns.map(
           (
             { name, unit },

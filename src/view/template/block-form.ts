@@ -95,7 +95,7 @@ export class BlockElement extends PageElement {
 
   #givens({ template, suffix, taken }: BlockChoice) {
     const givens = template.cells.filter((cell): cell is GivenCell => cell.kind === 'given');
-    return html`<section aria-labelledby="block-givens"><h3 id="block-givens">Givens of the block</h3>
+    return html`<div class="part"><h3 id="block-givens">Givens of the block</h3>
       <p class="quiet">Each comes with the template’s value, carried over until it is confirmed; or it is taken from this sheet by a name or a formula, as in n_2.</p>
       <div class="scroll" tabindex="0" role="region" aria-label="Givens of the block"><table class="givens">
         <thead><tr><th scope="col">Name</th><th scope="col">Given</th><th scope="col" class="number">Template</th><th scope="col">Taken from this sheet</th></tr></thead>
@@ -111,7 +111,7 @@ export class BlockElement extends PageElement {
                 <datalist id=${list}>${offers.slice(0, 40).map((offer) => html`<option value=${offer.name}>${offer.title}</option>`)}</datalist>`
               : html`<span class="quiet">a choice</span>`
           }</td></tr>`;
-        })}</tbody></table></div></section>`;
+        })}</tbody></table></div></div>`;
   }
 
   #offers(template: Sheet, given: GivenCell) {
@@ -125,18 +125,18 @@ export class BlockElement extends PageElement {
     if (preview === null) return nothing;
     const { done, model, cells } = preview;
     if (!done.ok || model === null)
-      return html`<section aria-labelledby="block-lines"><h3 id="block-lines">It cannot come yet</h3><ul class="table-faults" role="alert">${
+      return html`<div class="part"><h3 id="block-lines">It cannot come yet</h3><div role="alert"><ul class="table-faults">${
         done.ok
           ? nothing
           : done.problems.slice(0, 8).map(({ message }) => html`<li class="problem error"><b>Error</b>: ${message}</li>`)
-      }</ul></section>`;
+      }</ul></div></div>`;
     const steps = model.steps.filter(({ cell }) => cells.has(cell));
     const count = (kind: string) => steps.filter((step) => step.kind === kind).length;
     const errors = model.problems.filter(
       ({ cell, severity, code }) => severity === 'error' && code !== 'waits-for' && cells.has(cell),
     );
     const unmet = steps.filter((step) => step.cases.some(({ met }) => met === false));
-    return html`<section aria-labelledby="block-lines"><h3 id="block-lines">The lines as they come</h3>
+    return html`<div class="part"><h3 id="block-lines">The lines as they come</h3>
       <p aria-live="polite">${words(count('given'), 'given', 'givens')}, ${words(count('derived') + count('sought'), 'formula', 'formulas')}, ${words(count('criterion'), 'criterion', 'criteria')}${unmet.length === 0 ? nothing : html`, <b class="not-met">${unmet.length} not met</b>`}${errors.length === 0 ? nothing : html`, <b class="not-met">${words(errors.length, 'line', 'lines')} with an error</b>`}.</p>
       ${done.notes.map(({ message }) => html`<p class="problem warning"><b>Warning</b>: ${message}</p>`)}
       ${errors.slice(0, 4).map(({ message }) => html`<p class="problem error"><b>Error</b>: ${message}</p>`)}
@@ -148,7 +148,7 @@ export class BlockElement extends PageElement {
               ({ result, met }) =>
                 html`<td class="number">${result === null ? html`<span class="quiet">no value</span>` : step.numeric ? quantity(result) : result}${met === undefined || met === null ? nothing : html` <b class=${met ? 'met' : 'not-met'}>${met ? 'met' : 'not met'}</b>`}</td>`,
             )}</tr>`,
-        )}</tbody></table></div></section>`;
+        )}</tbody></table></div></div>`;
   }
 
   #choose(key: string) {
