@@ -152,8 +152,8 @@ export interface Desk {
   /** Basis and source that stood beside the number before the last one. */
   formerProvenance(cell: string): Provenance | undefined;
   restoreProvenance(cell: string): void;
-  /** The sheet is read beside this template from now on. */
-  compareWith(template: Sheet): void;
+  /** The sheet is read beside the template that it came from; null: it was looked for and is not at hand. */
+  compareWith(template: Sheet | null): void;
   undo(): void;
   redo(): void;
   saved(): void;

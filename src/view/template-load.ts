@@ -29,5 +29,5 @@ export async function compareWithOrigin(session: Session, desk: Desk) {
   const found = await load()
     .then(({ templateOf }) => templateOf(template, session.house))
     .catch(() => null);
-  if (found !== null) desk.compareWith(found);
+  desk.compareWith(found);
 }
