@@ -114,10 +114,8 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
       editing = { ...next, problems: problemsOf(next.cell, next.at) };
       return;
     }
-    const candidate = applyEdit(kept, {
-      kind: 'set-cell',
-      cell: withValue(cell, caseId(next.at), next.text, next.forAll),
-    }).sheet;
+    const edited = withValue(cell, caseId(next.at), next.text, next.forAll);
+    const candidate = applyEdit(kept, { kind: 'set-cell', cell: edited }).sheet;
     const last = shown;
     const before = placesIn(calculation, kept);
     calculation.update(candidate);

@@ -225,6 +225,9 @@ describe('the desk', () => {
     }
     expect(tried).toBeGreaterThan(20);
     while (desk.undoLabel !== null) desk.undo();
+    // Of the template nothing is said before it has been looked for.
+    expect(desk.model.beside).toBeNull();
+    desk.compareWith(null);
     expect(desk.model).toEqual(makeRecord(calculate(example)));
   });
 });
