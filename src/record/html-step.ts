@@ -55,7 +55,7 @@ function source(step: Step, symbols: Symbols, span: number): string {
 function above(step: Step, symbols: Symbols): string {
   const tags = step.notes.filter(isOpenState).map((note) => `<span class="tag open">${escapeHtml(note)}</span>`);
   const states = tags.length === 0 ? '' : `<span class="states">${tags.join(' ')}</span>`;
-  const title = `<p class="t">${states}<span class="n">${escapeHtml(step.number)}</span> ${inlineText(step.title, symbols)}</p>`;
+  const title = `<p class="t"><span class="n">${escapeHtml(step.number)}</span> ${inlineText(step.title, symbols)}${states}</p>`;
   const notes = step.notes.filter((note) => note !== noSource && note !== step.basis && !isOpenState(note));
   const justification = step.justification === undefined ? [] : [`Justification: ${step.justification}`];
   return `${title}${problems(step)}${noteLines([...notes, ...justification], symbols)}`;

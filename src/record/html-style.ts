@@ -108,7 +108,7 @@ thead{display:table-header-group}
 .case,.mark{color:var(--ink);font-weight:700;font-size:8.5pt}
 .case{display:inline-block;min-width:1.3em}
 .long{break-inside:auto}
-.states{float:right;margin-left:.6em}
+.states{display:block;margin-top:.1em}
 .basis{white-space:nowrap}
 .basis::before{content:"· "}
 .legend{padding:0 .7rem;font-size:8.5pt;color:var(--second)}

@@ -33,12 +33,16 @@ function parts(step: Step): [string, string[]] {
   const { symbols, symbol } = step;
   if (symbol !== undefined && symbols.startsWith(`${symbol} `) && symbols.length > symbol.length + 1)
     return [symbol, [rest(symbols.slice(symbol.length))]];
+  if (step.kind === 'sought' && symbol !== undefined && symbols.startsWith(`${symbol}:`))
+    return [`${symbol}{:}`, [`{}${symbols.slice(symbol.length + 1)}`]];
   return [symbols, []];
 }
 
 function numbersOf(step: Step, each: StepCase): string[] {
   if (step.kind === 'criterion') return each.sides === undefined ? [] : [each.sides];
-  return each.substituted === '' ? [] : [rest(`= ${each.substituted}`)];
+  if (each.substituted === '') return [];
+  // Both sides of the equation with the value put back: no continuation of it.
+  return [step.kind === 'sought' ? `\\quad\\text{put back:}\\;${each.substituted}` : rest(`= ${each.substituted}`)];
 }
 
 /** A right-hand side that begins with its relation, and does not break behind it. */
