@@ -57,6 +57,10 @@ export class PageElementRoot extends PageElement {
   #desk: Desk | null = null;
   #trail: string[] = [];
   #drawing = false;
+  #telling = false;
+  #told: Session['told'] = null;
+  /** What the desk showed at the last change. */
+  #seen: Partial<Pick<Desk, 'editing' | 'drawn' | 'chosen'>> = {};
   #completing: ReturnType<typeof setTimeout> | undefined;
   #leave: (() => void) | undefined;
   #leaveSession: (() => void) | undefined;
@@ -112,7 +116,7 @@ export class PageElementRoot extends PageElement {
   protected override willUpdate(changed: PropertyValues<this>) {
     if (changed.has('session')) {
       this.#leaveSession?.();
-      this.#leaveSession = this.session?.subscribe(() => this.requestUpdate());
+      this.#leaveSession = this.session?.subscribe(this.#onSession);
     }
     const desk = this.session?.desk ?? null;
     if (desk === this.#desk) return;
@@ -123,10 +127,38 @@ export class PageElementRoot extends PageElement {
     this.#watch = undefined;
     this.#leave?.();
     this.#leave = desk?.subscribe(() => {
-      this.version += 1;
+      if (!this.#onlyTyped(desk)) this.version += 1;
       this.#drawLater();
     });
   }
+
+  /** True where nothing but the text of the open field has changed: its row is drawn alone, the rest with what follows from it. */
+  #onlyTyped(desk: Desk): boolean {
+    const { editing, drawn, chosen } = desk;
+    const before = this.#seen;
+    this.#seen = { editing, drawn, chosen };
+    if (editing === null || before.editing?.cell !== editing.cell || before.editing.field !== editing.field) return false;
+    if (before.editing.at !== editing.at || before.drawn !== drawn || before.chosen !== chosen) return false;
+    return this.#paper?.typed(editing) ?? false;
+  }
+
+  /** How far the sheet is kept may be told a frame later than what was typed is painted. */
+  #onSession = () => {
+    const { session } = this;
+    if (session === undefined || session.desk !== this.#desk || session.route.screen !== 'sheet' || session.told !== this.#told) {
+      this.#told = session?.told ?? null;
+      this.requestUpdate();
+      return;
+    }
+    if (this.#telling) return;
+    this.#telling = true;
+    requestAnimationFrame(() =>
+      setTimeout(() => {
+        this.#telling = false;
+        this.requestUpdate();
+      }),
+    );
+  };
 
   get desk(): Desk | null {
     return this.session?.desk ?? null;

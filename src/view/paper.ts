@@ -9,7 +9,7 @@ import { html, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Line } from '../record/index.ts';
 import type { CellProblem } from '../sheet/index.ts';
-import type { Desk, InPlace } from './desk.ts';
+import type { Desk, Editing, InPlace } from './desk.ts';
 import { editedAs } from './drafts.ts';
 import { isField, PageElement } from './element.ts';
 import { provenanceText } from './given.ts';
@@ -20,6 +20,7 @@ import { toldRow } from './line-actions.ts';
 import { type LineCommand, LineCommands } from './line-commands.ts';
 import { NewLines } from './new-lines.ts';
 import type { PaperHost } from './paper-host.ts';
+import type { RowElement } from './row.ts';
 import { type Section, sectionsOf, titleOf } from './sections.ts';
 import { cellOf } from './share.ts';
 import { type Stretch, Stretches } from './stretches.ts';
@@ -142,6 +143,14 @@ export class PaperElement extends PageElement {
           html`${this.#row(line, place)}${this.#below(line)}${heads !== null && index === 0 ? columnHeads(desk, heads) : nothing}`,
       ),
     );
+  }
+
+  /** The text of the open field has changed: its row alone is drawn. False where there is no such row. */
+  typed(editing: Editing): boolean {
+    const row = this.#rowOf(editing.cell) as RowElement | null;
+    if (row === null || this.printing) return false;
+    row.editing = editing;
+    return true;
   }
 
   #row(line: Line, place: Place) {
