@@ -7,6 +7,7 @@ import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
 import { type Cell, calculate, writeSheet } from '../../src/sheet/index.ts';
+import { solver } from '../../src/study/index.ts';
 import { connect, drop, example, idOf, type Opened, open, resultsOf, resultsOn } from './open.ts';
 
 let browser: Browser;
@@ -32,7 +33,7 @@ afterEach(async () => {
 const rowOf = (name: string) => page.locator(`ts-row[data-cell="${idOf(name)}"]`);
 const focusedRow = () => page.evaluate(() => document.activeElement?.closest('ts-row')?.getAttribute('data-cell'));
 const undoable = () => page.getByRole('button', { name: 'Undo' }).isEnabled();
-const recordOf = (cells: readonly Cell[]) => makeRecord(calculate({ ...example, cells }));
+const recordOf = (cells: readonly Cell[]) => makeRecord(calculate({ ...example, cells }, solver));
 const derived = (name: string) => {
   const cell = example.cells.find((one) => one.id === idOf(name));
   if (cell?.kind !== 'derived') throw new Error(`${name} is not derived`);

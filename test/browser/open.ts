@@ -6,6 +6,7 @@ import { type Browser, type BrowserContextOptions, chromium, type Page } from 'p
 import { inject } from 'vitest';
 import { makeRecord, type RecordModel } from '../../src/record/index.ts';
 import { calculate, readSheet, type Sheet } from '../../src/sheet/index.ts';
+import { solver } from '../../src/study/index.ts';
 
 export interface Opened {
   readonly page: Page;
@@ -77,7 +78,7 @@ export function recordWith(values: Readonly<Record<string, string>>): RecordMode
     } = cell;
     return { ...rest, value: changed.get(cell.name) ?? '' };
   });
-  return makeRecord(calculate({ ...example, cells }));
+  return makeRecord(calculate({ ...example, cells }, solver));
 }
 
 export const idOf = (name: string): string => {

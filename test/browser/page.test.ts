@@ -7,6 +7,7 @@ import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from
 import { makeRecord } from '../../src/record/index.ts';
 import { calculate, readSheet, writeSheet } from '../../src/sheet/index.ts';
 import { sheetFileName } from '../../src/store/index.ts';
+import { solver } from '../../src/study/index.ts';
 import { connect, drop, example, idOf, type Opened, open, recordWith, resultsOf, resultsOn } from './open.ts';
 
 let browser: Browser;
@@ -205,13 +206,13 @@ describe('by keyboard alone', () => {
     await page.keyboard.press('>');
     expect(await page.evaluate(() => document.activeElement?.closest('section')?.id)).toBe('use');
     // The drawing uses it first, then the speed of the driven pulley.
-    const uses = calculate(example).use(idOf('d_1'));
+    const uses = calculate(example, solver).use(idOf('d_1'));
     for (let step = 0; step < uses.indexOf(idOf('n_2')); step += 1) await page.keyboard.press('ArrowDown');
     await page.keyboard.press('Enter');
     await expect.poll(async () => (await at())[0]).toBe(idOf('n_2'));
     await page.keyboard.press('<');
     expect(await page.evaluate(() => document.activeElement?.closest('section')?.id)).toBe('origin');
-    const origins = calculate(example).origin(idOf('n_2'));
+    const origins = calculate(example, solver).origin(idOf('n_2'));
     for (let step = 0; step < origins.indexOf(idOf('d_1')); step += 1) await page.keyboard.press('ArrowDown');
     await page.keyboard.press('Enter');
     await expect.poll(async () => (await at())[0]).toBe(idOf('d_1'));
@@ -242,7 +243,7 @@ describe('origin and use', () => {
       const step = record.steps.find((one) => one.name === name);
       expect(names).toContainEqual(`${step?.title} ${step?.cases[0]?.result} ${step?.number}`);
     }
-    expect(await page.locator('#use li').count()).toBe(calculate(example).use(idOf('F_1min')).length);
+    expect(await page.locator('#use li').count()).toBe(calculate(example, solver).use(idOf('F_1min')).length);
   });
 });
 
@@ -267,7 +268,7 @@ describe('a narrow window', () => {
     await page.setViewportSize({ width: 800, height: 1000 });
     await rowOf('F_1min').locator('.label').click();
     await rowOf('F_1min').getByRole('button', { name: 'origin and use' }).click();
-    const origin = calculate(example).origin(idOf('F_1min'));
+    const origin = calculate(example, solver).origin(idOf('F_1min'));
     await expect.poll(() => rowOf('F_1min').locator('#origin li').count()).toBe(origin.length);
     await rowOf('F_1min').locator('#origin li button').first().click();
     await expect.poll(() => page.locator('ts-row.chosen').getAttribute('data-cell')).toBe(origin[0]);
@@ -304,7 +305,7 @@ describe('the file', () => {
     if (!read.ok) throw new Error('the template cannot be read');
     await drop(page, 'capstan.sheet.json', text);
     await expect.poll(() => page.locator('h1').textContent()).toBe(read.value.title);
-    const record = makeRecord(calculate(read.value));
+    const record = makeRecord(calculate(read.value, solver));
     await expect.poll(() => page.locator('ts-row.step').count()).toBe(record.steps.length);
     const printed = await resultsOn(page);
     for (const step of record.steps.filter((one) => one.kind === 'derived')) {
@@ -332,7 +333,7 @@ describe('the file', () => {
         .toBe(0);
       expect(await page.locator('.paper ts-math code').count(), name).toBe(0);
       const printed = await resultsOn(page);
-      const record = makeRecord(calculate(read.value));
+      const record = makeRecord(calculate(read.value, solver));
       for (const step of record.steps.filter((one) => one.kind === 'derived')) {
         expect(printed[step.cell], `${name} ${step.number}`).toEqual(step.cases.map((each) => each.result ?? 'no value'));
       }

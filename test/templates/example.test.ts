@@ -6,13 +6,14 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
 import { type Cell, calculate, type GivenCell, readSheet, writeSheet } from '../../src/sheet/index.ts';
+import { solver } from '../../src/study/index.ts';
 import { faultsOf, sheetOf } from './harness.ts';
 
 const text = readFileSync(new URL('../../src/view/example.sheet.json', import.meta.url), 'utf8');
 const read = readSheet(text);
 if (!read.ok) throw new Error(read.problems.map((problem) => problem.message).join('\n'));
 const sheet = read.value;
-const calculation = calculate(sheet);
+const calculation = calculate(sheet, solver);
 const record = makeRecord(calculation);
 const isGiven = (cell: Cell): cell is GivenCell => cell.kind === 'given';
 

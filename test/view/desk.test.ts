@@ -4,6 +4,7 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { makeRecord } from '../../src/record/index.ts';
 import { calculate, readSheet, type Sheet, writeSheet } from '../../src/sheet/index.ts';
+import { solver } from '../../src/study/index.ts';
 import { createDesk } from '../../src/view/desk.ts';
 import { cellOf } from '../../src/view/share.ts';
 import { countLines } from '../../src/view/waiting.ts';
@@ -218,7 +219,7 @@ describe('the desk', () => {
       desk.begin(cell.id, 'value', 0);
       desk.type(text);
       desk.finish();
-      const fresh = makeRecord(calculate(desk.sheet));
+      const fresh = makeRecord(calculate(desk.sheet, solver));
       expect(desk.model.lines, `after ${cell.name} = ${text}`).toEqual(fresh.lines);
       expect(desk.model.summary).toEqual(fresh.summary);
       tried += 1;
@@ -228,6 +229,6 @@ describe('the desk', () => {
     // Of the template nothing is said before it has been looked for.
     expect(desk.model.beside).toBeNull();
     desk.compareWith(null);
-    expect(desk.model).toEqual(makeRecord(calculate(example)));
+    expect(desk.model).toEqual(makeRecord(calculate(example, solver)));
   });
 });
