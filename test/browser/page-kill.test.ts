@@ -42,7 +42,7 @@ describe('the page, killed while somebody types into it', () => {
     async (round) => {
       const before = await start();
       const { page } = before;
-      await expect.poll(() => page.locator('.bar .kept').textContent(), 'this page writes').toMatch(/^kept /u);
+      await expect.poll(() => page.locator('.bar .kept').textContent(), { message: 'this page writes' }).toMatch(/^kept /u);
       await row(page).locator('.result').first().click();
       await page.keyboard.press('Escape');
       const value = await row(page).locator('.result .value').first().textContent();
