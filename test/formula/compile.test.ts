@@ -8,7 +8,6 @@ import {
   type Expr,
   evaluateTree,
   explain,
-  type FunctionName,
   type Lookup,
   makeMemory,
   ProgramBuilder,
@@ -16,6 +15,7 @@ import {
   type TableData,
 } from '../../src/formula/index.ts';
 import { readUnit } from '../../src/quantity/index.ts';
+import { functions } from './formulas.ts';
 import { formulaOf } from './scope.ts';
 
 const unit = (text: string) => {
@@ -49,27 +49,6 @@ const texts = ['s', 't'];
 const at = [0, 0] as const;
 
 const number = (value: number): Expr => ({ kind: 'number', text: String(value), value, at });
-const functions: readonly FunctionName[] = [
-  'exp',
-  'ln',
-  'log10',
-  'sqrt',
-  'cbrt',
-  'abs',
-  'sign',
-  'sin',
-  'cos',
-  'tan',
-  'asin',
-  'acos',
-  'atan',
-  'sinh',
-  'cosh',
-  'tanh',
-  'floor',
-  'ceil',
-  'round',
-];
 
 const { value: values, truth: truths } = fc.letrec<{ value: Expr; truth: Expr }>((tie) => ({
   value: fc.oneof(

@@ -2,7 +2,8 @@
 
 import fc from 'fast-check';
 
-const functions = [
+/** Functions of one argument. */
+export const functions = [
   'exp',
   'ln',
   'log10',
@@ -22,7 +23,7 @@ const functions = [
   'floor',
   'ceil',
   'round',
-];
+] as const;
 const pairs = ['min', 'max', 'atan2', 'hypot'];
 export const names = ['a', 'F_c', 'k', 'mu', 'theta_1', 'n', 'T', 'DeltaT', 'Ø_é', 'big'];
 
