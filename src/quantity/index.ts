@@ -51,7 +51,16 @@ export {
   zeroR,
 } from './rational.ts';
 export { type Rounding, roundAtPlace, roundSignificant } from './rounding.ts';
-export { type Counts, differenceUnit, isAngleUnit, isRatioUnit, one, type Unit, type UnitPart } from './unit.ts';
+export {
+  type Counts,
+  differenceUnit,
+  isAngleUnit,
+  isRatioUnit,
+  one,
+  turnsAgainstAngle,
+  type Unit,
+  type UnitPart,
+} from './unit.ts';
 export { nearestUnits } from './unit-nearest.ts';
 export { readUnit, unitNames, unitOf } from './unit-text.ts';
 export { readValue, type Tolerance, type Value } from './value.ts';

@@ -98,6 +98,13 @@ function readingOf(all: readonly Factor[]): Exact | undefined {
 }
 
 /** The number one, of which every dimensionless number is a multiple. */
+/** One counts revolutions or cycles, the other measures an angle: of one dimension, and apart by 2π. */
+export function turnsAgainstAngle(a: Unit, b: Unit): boolean {
+  const turns = ({ counts }: Unit) => counts.r.n !== 0 || counts.hz.n !== 0;
+  const angle = ({ counts }: Unit) => counts.rad.n !== 0;
+  return (turns(a) && angle(b)) || (angle(a) && turns(b));
+}
+
 export const one: Unit = { text: '1', dimension: dimensionless, factor: oneE, si: 1, counts: noCounts, parts: [] };
 
 const angles = new Set(['rad', 'mrad', 'µrad', '°', '′', '″', 'gon']);

@@ -3,7 +3,7 @@
 // Not here: reading of the values (reading.ts).
 
 import { nearestNames, typeOfUnit } from '../formula/index.ts';
-import { equalD, isAngleUnit, type Problem, type Unit, type Value, withArticle } from '../quantity/index.ts';
+import { equalD, isAngleUnit, type Problem, turnsAgainstAngle, type Unit, type Value, withArticle } from '../quantity/index.ts';
 import type { GivenCell } from './document.ts';
 import type { Node } from './node.ts';
 import { type Report, type Surroundings, waitsFor } from './surroundings.ts';
@@ -106,6 +106,13 @@ function unlikeValue(value: Value, unit: Unit): Problem | undefined {
       message: `${value.text} is ${withArticle(value.unit)}, this quantity is ${withArticle(unit)}; change one of the two`,
     };
   }
+  if (turnsAgainstAngle(value.unit, unit)) {
+    return {
+      code: 'unlike-value',
+      severity: 'error',
+      message: `${value.text} is ${withArticle(value.unit)}, this quantity is ${withArticle(unit)}, and one revolution is 2π rad; give the value in ${unit.text}`,
+    };
+  }
   if ((value.unit.reading === undefined) !== (unit.reading === undefined)) {
     return {
       code: 'unlike-value',
@@ -119,12 +126,13 @@ function unlikeValue(value: Value, unit: Unit): Problem | undefined {
 function checkRange(node: Node, cell: GivenCell, around: Surroundings, report: Report): void {
   const range = node.reading.range;
   if (range === undefined || node.unit === undefined) return;
-  if (!equalD(range.from.unit.dimension, node.unit.dimension) || !equalD(range.to.unit.dimension, node.unit.dimension)) {
+  const { unit } = node;
+  if ([range.from.unit, range.to.unit].some((end) => !equalD(end.dimension, unit.dimension) || turnsAgainstAngle(end, unit))) {
     report(
       {
         code: 'bad-range',
         severity: 'warning',
-        message: `the range “${cell.range}” is not one of ${withArticle(node.unit)} and is not checked`,
+        message: `the range “${cell.range}” is not one of ${withArticle(unit)} and is not checked`,
       },
       'range',
     );

@@ -3,7 +3,7 @@
 // Not here: the way between unknown and equation, solving (sought.ts).
 
 import { inferComparison, nearestNames, typeOfUnit } from '../formula/index.ts';
-import { equalD, type Problem, withArticle } from '../quantity/index.ts';
+import { equalD, type Problem, turnsAgainstAngle, withArticle } from '../quantity/index.ts';
 import type { SoughtCell } from './document.ts';
 import type { Node } from './node.ts';
 import { shifted } from './reading.ts';
@@ -39,7 +39,7 @@ export function analyseSought(node: Node, cell: SoughtCell, around: Surroundings
     [between.to.unit, 'the range to look in', 'between'],
     [varied?.unit, `the given ${cell.instead} varied for it`, 'instead'],
   ] as const) {
-    if (other === undefined || equalD(other.dimension, unit.dimension)) continue;
+    if (other === undefined || (equalD(other.dimension, unit.dimension) && !turnsAgainstAngle(other, unit))) continue;
     report(
       {
         code: 'unlike-unit',

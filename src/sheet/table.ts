@@ -6,7 +6,16 @@
 // Not here: looking a row up (src/formula).
 
 import { type TableColumnData, type TableData, typeOfUnit } from '../formula/index.ts';
-import { equalD, type Problem, readUnit, readValue, siOfNumeral, type Unit, withArticle } from '../quantity/index.ts';
+import {
+  equalD,
+  type Problem,
+  readUnit,
+  readValue,
+  siOfNumeral,
+  turnsAgainstAngle,
+  type Unit,
+  withArticle,
+} from '../quantity/index.ts';
 import type { TableCell, TableColumn } from './document.ts';
 import type { DecimalSign, FieldProblem } from './reading.ts';
 
@@ -114,7 +123,7 @@ export function readEntry(text: string, unit: Unit, decimalSign: DecimalSign): n
   if (!read.ok) return read.problem;
   const value = read.value;
   if (value.unit.text === '1' || value.unit.text === '') return siOfNumeral(value.numeral, unit);
-  if (equalD(value.unit.dimension, unit.dimension)) return value.si;
+  if (equalD(value.unit.dimension, unit.dimension) && !turnsAgainstAngle(value.unit, unit)) return value.si;
   return {
     code: 'unlike-entry',
     severity: 'error',

@@ -9,7 +9,16 @@
 // Not here: where templates are kept (src/cli, src/view).
 
 import { canonicalName, nearestNames } from '../formula/index.ts';
-import { equalD, type Problem, type Result, readUnit, readValue, type Unit, withArticle } from '../quantity/index.ts';
+import {
+  equalD,
+  type Problem,
+  type Result,
+  readUnit,
+  readValue,
+  turnsAgainstAngle,
+  type Unit,
+  withArticle,
+} from '../quantity/index.ts';
 import { calculate } from './calculation.ts';
 import { casesOf } from './cases.ts';
 import type { Cell, EarlierSheet, GivenCell, Sheet, TemplateOrigin, TitleBlock } from './document.ts';
@@ -204,11 +213,19 @@ function assignmentFault(cell: GivenCell, assignment: Assignment, sheet: Sheet, 
   const name = canonicalName(cell.name);
   if (!read.ok) return { ...read.problem, message: `${name}: ${read.problem.message}` };
   const held = heldUnit(cell, decimalSign);
-  if (held === undefined || equalD(held.dimension, read.value.unit.dimension)) return undefined;
+  if (held === undefined) return undefined;
+  const { unit } = read.value;
   const shown = clipped(assignment.value);
+  if (equalD(held.dimension, unit.dimension)) {
+    if (!turnsAgainstAngle(unit, held)) return undefined;
+    return error(
+      'unlike-value',
+      `${name} is ${withArticle(held)}, but ${shown} is ${withArticle(unit)}, and one revolution is 2π rad; give a value in ${held.text}`,
+    );
+  }
   return error(
     'unlike-value',
-    `${name} is ${withArticle(held)}, but ${shown} is ${withArticle(read.value.unit)}; give a value in ${held.text === '1' ? 'plain numbers' : held.text}`,
+    `${name} is ${withArticle(held)}, but ${shown} is ${withArticle(unit)}; give a value in ${held.text === '1' ? 'plain numbers' : held.text}`,
   );
 }
 

@@ -203,6 +203,13 @@ describe('a value that is set', () => {
     ['K_A', '1', 'strat', 'unknown-case', /no case strat; its cases are run, start/],
     ['d_1', '200 mN', undefined, 'unlike-value', /d_1 is a length.*but 200 mN is a force/],
     ['d_1', '200', undefined, 'unlike-value', /d_1 is a length.*give a value in mm/],
+    [
+      'n_1',
+      '20 rad/s',
+      undefined,
+      'unlike-value',
+      /n_1 is .*but 20 rad\/s is .*one revolution is 2π rad; give a value in r\/min/,
+    ],
     ['n_1', '10 m', undefined, 'unlike-value', /n_1 is .*but 10 m is a length/],
     ['d_1', '200 mmm', undefined, undefined, /^d_1: .*mmm/],
     ['d_1', 'two hundred', undefined, undefined, /^d_1: /],

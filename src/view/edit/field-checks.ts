@@ -11,6 +11,7 @@ import {
   readRange,
   readUnit,
   readValue,
+  turnsAgainstAngle,
   type Unit,
   withArticle,
 } from '../../quantity/index.ts';
@@ -63,7 +64,10 @@ function checkValue(text: string, cell: Cell, { style }: Calculation): FieldChec
   const read = readValue(text, style);
   if (!read.ok) return { problems: [read.problem], good: '' };
   const declared = unitOfCell(cell);
-  if (declared !== undefined && !equalD(declared.dimension, read.value.unit.dimension))
+  if (
+    declared !== undefined &&
+    (!equalD(declared.dimension, read.value.unit.dimension) || turnsAgainstAngle(declared, read.value.unit))
+  )
     return error(
       'unlike-value',
       `${text.trim()} is ${withArticle(read.value.unit)}, this quantity is ${withArticle(declared)}; change one of the two`,
