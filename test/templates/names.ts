@@ -75,7 +75,7 @@ export const publishedNames: ReadonlyMap<string, Names> = new Map<string, Names>
     {
       givens: 'F_U xi mu theta q_B q_G a_0 a_U s H F_r g',
       results: 'F_Umax k F_2slip F_sag_carry F_sag_return F_2 F_1 F_W',
-      further: 'i_gov mu_T',
+      further: 'i_gov mu_T F_WT',
     },
   ],
   [

@@ -66,6 +66,36 @@ describe('impossible geometry', () => {
   });
 });
 
+describe('a unit that is apart by 2π', () => {
+  test.each([
+    ['belt-creep', 'n_1', '20 rad/s', /^n_1: 20 rad\/s is .*one revolution is 2π rad; give the value in r\/min$/],
+    ['belt-creep', 'n_1', '1200 deg/s', /^n_1: .*one revolution is 2π rad/],
+    ['span-frequency', 'f', '200 rad/s', /^f: .*one revolution is 2π rad; give the value in Hz$/],
+    ['capstan', 'alpha', '0.5 r', /^alpha: .*one revolution is 2π rad/],
+  ] as const)('%s: %s = %s is refused', (id, name, value, sentence) => {
+    expect(troubleOf(withValue(id, name, value))[0]).toMatch(sentence);
+  });
+
+  test.each([
+    ['n_1', '24 r/s'],
+    ['n_1', '1450 1/min'],
+    ['n_1', '24 Hz'],
+  ] as const)('belt-creep: %s = %s is read', (name, value) => {
+    expect(troubleOf(withValue('belt-creep', name, value))).toEqual([]);
+  });
+});
+
+describe('a case that the method is not made for', () => {
+  test.each([
+    ['brake-stop-heat', 'h_drop', '-50 m', 'takes-up', /^The raised load stops the masses/],
+    ['conveyor-pulley', 'F_U', '-5 kN', 'pulls', /^The belt drives the pulley/],
+    ['traction-sheave', 'r', '1.5', 'whole', /^A reeving/],
+    ['v-belt', 'd_1', '300 mm', 'groove-size-1', /^A pulley of this size/],
+  ] as const)('%s: %s = %s is said to be one', (id, name, value, criterion, sentence) => {
+    expect(notMet(withValue(id, name, value), criterion)).toMatch(sentence);
+  });
+});
+
 describe('a brake that locks itself', () => {
   const sheet = withValue('band-brake-differential', 'mu', '0.45');
 
