@@ -67,7 +67,7 @@ const table: Readonly<Record<StoreCode, readonly [string, readonly WayOut[]]>> =
     ['keep as a new sheet', 'save as a file'],
   ],
   'not-here': [
-    'This sheet is not among those kept in this browser: it was removed, or it belongs to another browser. Look in the trash of the shelf, or open its file.',
+    'This sheet is not among those kept in this browser: it was removed, or it belongs to another browser. Look among the removed sheets of the shelf, or open its file.',
     [],
   ],
   overtaken: [

@@ -149,6 +149,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     told = null;
     kept = done.sheet;
     history = done.history;
+    if (chosen !== null && !kept.cells.some(({ id }) => id === chosen)) chosen = null;
     show(kept);
     announcement = `${word} ${done.label}; ${verdictWords()}`;
     changed();
@@ -248,8 +249,7 @@ export function createDesk(first: Sheet, firstHistory: History = emptyHistory): 
     lock(why) {
       locked = why;
       if (why !== null) {
-        editing = null;
-        inPlace = null;
+        [editing, inPlace, newLine] = [null, null, null];
         show(kept);
       }
       changed();

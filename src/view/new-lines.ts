@@ -3,6 +3,7 @@
 // 1. What was begun in such a place stays, whatever else is done, until it is kept or taken back there: the text lives here, not in the
 //    element, and moves to the last section if its own place goes.
 // 2. A line that was kept is followed by the next: the place moves down behind it.
+// 3. Where another tab writes nothing is open: what was begun went to that tab with the rest.
 // Not here: what is typed (edit/entry-line.ts), where the rows are (paper.ts).
 
 import type { TemplateResult } from 'lit';
@@ -24,6 +25,7 @@ export class NewLines {
 
   /** Texts whose place is gone go on at the foot of the last section. */
   settle(sections: readonly string[], cells: ReadonlySet<string>) {
+    if (this.#host.desk().locked !== null) this.#open.clear();
     const last = sections.at(-1) ?? '';
     for (const [key, text] of [...this.#open]) {
       const cell = key.startsWith('below ') ? key.slice('below '.length) : undefined;
@@ -78,15 +80,17 @@ export class NewLines {
     });
   }
 
-  /** What was typed before the page was loaded anew opens its place again. */
+  /** What was typed before the page was loaded anew, or in another tab, opens its place again. */
   #textOf(key: string): string | undefined {
     const { newLine } = this.#host.desk();
-    if (!this.#open.has(key) && newLine?.section === key && newLine.text !== '') this.#open.set(key, newLine.text);
+    if (!this.#open.get(key) && newLine?.section === key && newLine.text !== '') this.#open.set(key, newLine.text);
     return this.#open.get(key);
   }
 
   /** Opens the place at the foot of a section and puts the focus into it. */
   async enter(key: string) {
+    const desk = this.#host.desk();
+    if (desk.locked !== null) return desk.tell(desk.locked);
     await loadEditing();
     if (!this.#open.has(key)) this.#open.set(key, '');
     this.#host.redraw();

@@ -4,20 +4,21 @@
 // 2. One polite voice tells what a change did; nothing else speaks.
 // 3. Which screen it shows, and what is told above it, is the session's.
 // 4. Before print everything is typeset and every case has its numbers; after it the screen is as before.
-// Not here: moving in the rows (paper.ts).
+// 5. A note that is put away with the focus in it leaves the focus to the sheet or the shelf.
+// Not here: moving in the rows (paper.ts), the bar itself (bar.ts).
 
 import { html, nothing, type PropertyValues } from 'lit';
 import { guard } from 'lit/directives/guard.js';
 import { keyed } from 'lit/directives/keyed.js';
+import { bar, shelfBar } from './bar.ts';
 import { besideTemplate } from './beside-template.ts';
 import type { Desk } from './desk.ts';
 import { PageElement } from './element.ts';
 import { fitAll } from './fit.ts';
 import { keyDialog, showKeys } from './key-list.ts';
 import { commandOf } from './keys.ts';
-import { mark } from './mark.ts';
 import { typesetAll } from './math.ts';
-import { keptWord, notices } from './notices.ts';
+import { notices } from './notices.ts';
 import { outline } from './outline.ts';
 import type { PaperElement } from './paper.ts';
 import { inPause } from './pause.ts';
@@ -28,8 +29,6 @@ import { alike, cellOf } from './share.ts';
 import { droppedFiles, shelfScreen } from './shelf-load.ts';
 import { openPoints, originAndUse } from './side.ts';
 import { askForBlock, compareWithOrigin } from './template-load.ts';
-import { words } from './text.ts';
-import { countLines } from './waiting.ts';
 
 /** Milliseconds without a key stroke after which the lines that nobody looks at follow. */
 const restBeforeRest = 150;
@@ -67,9 +66,11 @@ export class PageElementRoot extends PageElement {
   #watch: IntersectionObserver | undefined;
   /** Sections under watch; one more or less begins it anew. */
   #watched: readonly string[] = [];
-  /** Another screen stands where the sheet was. */
+  /** Another screen, or another sheet, stands where the sheet was. */
   #away = false;
   #jumpTo: string | null = null;
+  /** The focus was in a note when the page began to draw. */
+  #inNotice = false;
   #width = matchMedia('(max-width: 70rem)');
 
   constructor() {
@@ -118,8 +119,11 @@ export class PageElementRoot extends PageElement {
       this.#leaveSession?.();
       this.#leaveSession = this.session?.subscribe(this.#onSession);
     }
+    this.#inNotice = document.activeElement?.closest('.notices') != null;
     const desk = this.session?.desk ?? null;
     if (desk === this.#desk) return;
+    // Another sheet after one that lay here: the focus goes with the old one.
+    if (this.#desk !== null) this.#away = true;
     this.#desk = desk;
     if (desk !== null && this.session !== undefined) void compareWithOrigin(this.session, desk);
     this.#trail = [];
@@ -169,10 +173,10 @@ export class PageElementRoot extends PageElement {
     if (session === undefined) return nothing;
     const told = notices(session);
     if (session.route.screen !== 'sheet')
-      return html`${this.#shelfBar(session)}<main id="shelf" class="shelf-desk">${told}${this.#shelf(session)}</main>
+      return html`${shelfBar(session)}<main id="shelf" class="shelf-desk">${told}${this.#shelf(session)}</main>
         <p class="unseen" role="status">${session.told?.trouble === false ? session.told.message : ''}</p>`;
     if (desk === null)
-      return html`${this.#shelfBar(session)}<main class="shelf-desk">${told}${session.keeping.kind === 'opening' ? html`<p class="loading">Opening the sheet …</p>` : nothing}</main>`;
+      return html`${shelfBar(session)}<main class="shelf-desk">${told}${session.keeping.kind === 'opening' ? html`<p class="loading">Opening the sheet …</p>` : nothing}</main>`;
     const { drawn: model } = desk;
     const goTo = (cell: string) => this.#goTo(cell);
     // These change with the lines or with what is chosen, not with every sign that is typed.
@@ -181,7 +185,7 @@ export class PageElementRoot extends PageElement {
     const points = guard([desk, model], () => html`${besideTemplate(model, goTo)}${openPoints(desk, goTo)}`);
     return html`
       <a class="skip" href="#paper" @click=${this.#skip}>To the sheet</a>
-      ${this.#bar(session, desk)}
+      ${bar(session, desk, { goTo, toOpenPoints: this.#toOpenPoints, showKeys: () => showKeys(this) })}
       <div class="desk ${this.dropping ? 'dropping' : ''}">
         ${
           this.narrow
@@ -203,17 +207,6 @@ export class PageElementRoot extends PageElement {
     return session.house === null
       ? html`<p class="loading">Opening the shelf …</p>`
       : shelfScreen(session, () => this.requestUpdate());
-  }
-
-  #shelfBar(session: Session) {
-    return html`<header class="bar">
-      <p class="brand">${mark()}<span>Tightside</span></p>
-      <p class="document"></p>
-      <div class="tools" role="group" aria-label="Shelf">
-        ${session.id === null ? nothing : html`<button type="button" @click=${() => session.go({ screen: 'sheet', id: session.id })}>Back to the sheet</button>`}
-        <button type="button" title="Open a sheet file" @click=${() => void session.openFile()}>Open a file</button>
-      </div>
-    </header>`;
   }
 
   /** What was typed is painted first; then what is looked at, once for all key strokes until then; the rest of a large sheet in a pause. */
@@ -239,44 +232,9 @@ export class PageElementRoot extends PageElement {
     if (desk === this.desk && desk.drawn !== desk.model) this.version += 1;
   }
 
-  #bar(session: Session, desk: Desk) {
-    const { drawn: model } = desk;
-    const { titleBlock: block } = model;
-    const failed = model.summary.filter((one) => one.cases.some((each) => each.met === false));
-    const { wrong, waiting } = countLines(model.problems);
-    const errors = wrong.length;
-    const toConfirm = model.openPoints.filter((point) => point.kind === 'to confirm' || point.kind === 'carried over').length;
-    const first = (cell: string | undefined) => () => cell !== undefined && this.#goTo(cell);
-    return html`<header class="bar">
-      <p class="brand">${mark()}<span>Tightside</span></p>
-      <p class="document"><b>${block.documentNumber ?? ''}</b> ${block.revision ? `rev ${block.revision} · ` : ''}${model.title} · ${model.status}</p>
-      <p class="state">
-        ${errors === 0 ? nothing : html`<button type="button" class="word not-met" @click=${first(wrong[0])}>${words(errors, 'line', 'lines')} with an error</button>`}
-        ${waiting === 0 ? nothing : html`<span>${words(waiting, 'line waits', 'lines wait')}</span>`}
-        ${
-          failed.length > 0
-            ? html`<button type="button" class="word not-met" @click=${first(failed[0]?.cell)}>${words(failed.length, 'criterion', 'criteria')} not met</button>`
-            : model.summary.length > 0 && errors === 0
-              ? html`<span>${model.summary.every((one) => one.cases.every((each) => each.met === true)) ? 'all criteria met' : 'no criterion fails'}</span>`
-              : nothing
-        }
-        ${toConfirm === 0 ? nothing : html`<button type="button" class="word" @click=${this.#toOpenPoints}>${toConfirm} to confirm</button>`}
-      </p>
-      ${keptWord(session)}
-      <div class="tools" role="group" aria-label="Sheet">
-        <button type="button" title="All sheets and templates" @click=${() => session.go({ screen: 'shelf' })}>Shelf</button>
-        <button type="button" ?disabled=${desk.undoLabel === null} title=${desk.undoLabel === null ? nothing : `Undo: ${desk.undoLabel}`} @click=${() => desk.undo()}>Undo</button>
-        <button type="button" ?disabled=${desk.redoLabel === null} title=${desk.redoLabel === null ? nothing : `Redo: ${desk.redoLabel}`} @click=${() => desk.redo()}>Redo</button>
-        <button type="button" title=${session.fileName === null ? 'Save the sheet as a file' : `Save the sheet in ${session.fileName}`} @click=${() => void session.saveFile()}>Save file</button>
-        ${session.id === null ? nothing : html`<button type="button" title="Keep this sheet as a template for similar jobs" @click=${() => session.go({ screen: 'keep', id: session.id! })}>Keep as template</button>`}
-        <button type="button" @click=${() => print()}>Print</button>
-        <button type="button" title="The keys of the page: ?" @click=${() => showKeys(this)}>Keys</button>
-      </div>
-    </header>`;
-  }
-
   protected override updated() {
     const { session, desk } = this;
+    if (this.#inNotice && document.activeElement === document.body) void this.#leaveNotice();
     if (session !== undefined && session.route.screen !== 'sheet')
       document.title = `${screenNames[session.route.screen]}, Tightside`;
     if (session?.route.screen !== 'sheet') this.#away = true;
@@ -320,8 +278,13 @@ export class PageElementRoot extends PageElement {
     this.#jumpTo = null;
     await this.#complete();
     if (cell !== null) return this.#goTo(cell);
-    if (document.activeElement === document.body)
-      this.querySelector<HTMLElement>('.grid [tabindex="0"]')?.focus({ preventScroll: true });
+    if (document.activeElement === document.body) this.#paper?.enter({ preventScroll: true });
+  }
+  async #leaveNotice() {
+    await this.#complete();
+    if (document.activeElement !== document.body) return;
+    if (this.#paper !== null) this.#paper.enter({ preventScroll: true });
+    else this.querySelector<HTMLElement>('main [tabindex="-1"], .tools button')?.focus();
   }
   #onJump = (event: Event) => {
     const { sheet, cell } = (event as CustomEvent<Jump>).detail;
@@ -384,7 +347,7 @@ export class PageElementRoot extends PageElement {
 
   #skip = (event: Event) => {
     event.preventDefault();
-    this.querySelector<HTMLElement>('.grid [tabindex="0"]')?.focus();
+    this.#paper?.enter();
   };
 
   #onKey = (event: KeyboardEvent) => {

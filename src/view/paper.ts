@@ -3,6 +3,7 @@
 // 1. The rows are a grid with one cell in the tab order; its keys are those of keys.ts.
 // 2. The cell that has the focus makes its row the chosen one.
 // 3. Leaving a field keeps what was typed; focus then stays where it was.
+// 4. A line that goes, or a field that is closed from elsewhere, leaves the focus to the line that stands in its place.
 // Not here: a single row (row.ts), what lies beside the paper (page.ts).
 
 import { html, nothing, type TemplateResult } from 'lit';
@@ -20,17 +21,13 @@ import { toldRow } from './line-actions.ts';
 import { type LineCommand, LineCommands } from './line-commands.ts';
 import { NewLines } from './new-lines.ts';
 import type { PaperHost } from './paper-host.ts';
+import { type Place, stillThere } from './place.ts';
 import type { RowElement } from './row.ts';
 import { type Section, sectionsOf, titleOf } from './sections.ts';
 import { cellOf } from './share.ts';
 import { type Stretch, Stretches } from './stretches.ts';
 import { titleBlock } from './title-block.ts';
 import { noLineProblems, problemsByLine } from './waiting.ts';
-
-interface Place {
-  readonly cell: string;
-  readonly column: number;
-}
 
 interface PlacedCell extends Place {
   readonly element: HTMLElement;
@@ -71,8 +68,9 @@ export class PaperElement extends PageElement {
     drawn: () => this.#drawn(),
   };
   readonly #newLines = new NewLines(this.#host);
-  readonly #lines = new LineCommands(this.#host);
+  readonly #commands = new LineCommands(this.#host);
   readonly stretches = new Stretches(() => this.requestUpdate());
+  #lines: readonly Line[] = [];
   #run: ReadonlySet<string> = new Set();
   #problems = noLineProblems;
 
@@ -109,6 +107,28 @@ export class PaperElement extends PageElement {
         )}
       </div>
       ${foot(desk, this.printing)}`;
+  }
+
+  protected override willUpdate() {
+    const { lines } = this.desk.drawn;
+    if (lines !== this.#lines) this.#place = stillThere(this.#place, this.#lines.map(cellOf), lines.map(cellOf));
+    this.#lines = lines;
+    const active = document.activeElement?.closest('.grid > *');
+    if (active != null && this.contains(active)) void this.#holdFocus();
+  }
+
+  /** Taken back, followed from another tab, printed: whatever went with the focus in it. */
+  async #holdFocus() {
+    await this.#drawn();
+    await this.querySelector<RowElement>('ts-row.chosen')?.updateComplete;
+    if (document.activeElement === document.body) this.enter();
+  }
+
+  /** The focus into the grid: the cell that is in the tab order, or the place of the first line. */
+  enter(how: FocusOptions = {}) {
+    const first =
+      this.querySelector<HTMLElement>('[data-column][tabindex="0"]') ?? this.querySelector<HTMLElement>('.grid .entry button');
+    first?.focus(how);
   }
 
   protected override updated() {
@@ -193,7 +213,7 @@ export class PaperElement extends PageElement {
     if (event.detail === 'edit' && at.row.classList.contains('given')) this.desk.begin(at.cell, 'value', this.desk.reading);
     else this.#does(event.detail, at);
   };
-  #onClipboard = (event: ClipboardEvent) => this.#lines.onClipboard(event);
+  #onClipboard = (event: ClipboardEvent) => this.#commands.onClipboard(event);
 
   /** With Shift a press makes the run of chosen lines reach to its row. */
   #onMouse = (event: MouseEvent) => {
@@ -377,7 +397,7 @@ export class PaperElement extends PageElement {
   };
 
   #does(command: LineCommand, at: PlacedCell): boolean {
-    if (this.#lines.do(command, at.column)) return true;
+    if (this.#commands.do(command, at.column)) return true;
     const cells = () => this.desk.drawn.lines.map(cellOf);
     const columns = [...at.row.querySelectorAll<HTMLElement>('[data-column]')].map((one) => Number(one.dataset['column']));
     const toRow = (index: number) => {
