@@ -176,7 +176,7 @@ export class PageElementRoot extends PageElement {
       return html`${shelfBar(session)}<main id="shelf" class="shelf-desk">${told}${this.#shelf(session)}</main>
         <p class="unseen" role="status">${session.told?.trouble === false ? session.told.message : ''}</p>`;
     if (desk === null)
-      return html`${shelfBar(session)}<main class="shelf-desk">${told}${session.keeping.kind === 'opening' ? html`<p class="loading">Opening the sheet …</p>` : nothing}</main>`;
+      return html`${shelfBar(session)}<main class="shelf-desk"><h1 class="unseen">Sheet</h1>${told}${session.keeping.kind === 'opening' ? html`<p class="loading">Opening the sheet …</p>` : nothing}</main>`;
     const { drawn: model } = desk;
     const goTo = (cell: string) => this.#goTo(cell);
     // These change with the lines or with what is chosen, not with every sign that is typed.

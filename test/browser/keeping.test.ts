@@ -145,6 +145,11 @@ describe('a second tab', () => {
     await two.keyboard.press('Escape');
     await expect.poll(() => notice(one)).toContain('Another tab has taken over this sheet');
     expect(await one.locator('.typing').count()).toBe(0);
+    const inGrid = (page: Page) => page.evaluate(() => document.activeElement?.closest('[role="grid"]') != null);
+    await expect.poll(() => inGrid(one)).toBe(true);
+    await one.keyboard.press('Alt+Enter');
+    await one.waitForTimeout(300);
+    expect(await one.locator('ts-entry-line').count()).toBe(0);
     await type(two, 'F_0', '1500 N');
     await expect.poll(() => value(one, 'F_0')).toBe('1 500 N');
     await undo(two).click();

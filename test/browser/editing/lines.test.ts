@@ -39,6 +39,7 @@ const takeBack = async (times = 1) => {
   for (let i = 0; i < times; i += 1) await page.keyboard.press('Control+z');
   await expect.poll(() => linesOn(page)).toEqual(order);
   await expect.poll(() => undoButton(page).isEnabled()).toBe(false);
+  await expect.poll(() => focusInGrid(page)).toBe(true);
 };
 
 describe('a run of lines', () => {
@@ -122,6 +123,23 @@ describe('a run of lines', () => {
     await page.keyboard.press('Control+v');
     await expect.poll(() => said(page)).toMatch(/^not pasted: /u);
     await takeBack();
+  });
+});
+
+describe('a line that is taken back with the focus in it', () => {
+  it('leaves the focus to the line in its place, and the way back in the bar keeps its own', async () => {
+    await toLine(page, first);
+    await page.keyboard.press('Control+Shift+Enter');
+    await expect.poll(() => focusedRow(page)).not.toBe(first);
+    await takeBack();
+    await expect.poll(() => focusedRow(page)).toBe(order[at + 1]);
+    await page.keyboard.press('Control+y');
+    await undoButton(page).focus();
+    await page.keyboard.press('Enter');
+    await expect.poll(() => linesOn(page)).toEqual(order);
+    expect(await page.evaluate(() => document.activeElement?.textContent)).toBe('Undo');
+    // The grid is still entered by Tab: one cell of it is in the order.
+    expect(await page.locator('[data-column][tabindex="0"]').count()).toBe(1);
   });
 });
 
