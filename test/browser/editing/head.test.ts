@@ -106,10 +106,10 @@ it('references are added, renamed with their citations, and removed', async () =
   await expect.poll(() => page.locator('a.reference', { hasText: '[B5]' }).count()).toBe(cited);
   expect(await page.locator('a.reference', { hasText: '[R5]' }).count()).toBe(0);
   await refs.getByRole('button', { name: 'Add a reference' }).click();
-  await expect.poll(() => page.evaluate(() => document.activeElement?.getAttribute('aria-label'))).toBe('Document of R12');
+  await expect.poll(() => page.evaluate(() => document.activeElement?.getAttribute('aria-label'))).toBe('Document of R13');
   await page.keyboard.type('Site notes 7');
   await page.keyboard.press('Enter');
-  await expect.poll(() => refs.locator('#ref-R12').textContent()).toContain('Site notes 7');
+  await expect.poll(() => refs.locator('#ref-R13').textContent()).toContain('Site notes 7');
   await refs.getByRole('button', { name: 'Remove: B5' }).click();
   await expect.poll(() => said(page)).toContain('B5 removed; it is still cited in');
   expect(await page.evaluate(() => document.activeElement?.closest('.references-part') !== null)).toBe(true);
